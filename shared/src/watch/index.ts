@@ -1,1 +1,18 @@
-export {};
+export type {
+  CatchTarget,
+  CrossingDirection,
+  CrossingForecast,
+  CrossingTarget,
+  ForecastPoint,
+  LadderAlert,
+  LadderStage,
+  TimerTarget,
+  WatchAct,
+  WatchActDone,
+  WatchConfig,
+  WatchEstimate,
+  WatchMode,
+  WatchReading,
+  WatchStatus,
+  WatchVerdict,
+} from './types.js';
