@@ -1,1 +1,3 @@
-export {};
+export * from './api.js';
+export * from './roles.js';
+export * from './sockets.js';

@@ -1,1 +1,2 @@
-export {};
+export * from './catalogue.js';
+export * from './problem.js';

@@ -1,1 +1,2 @@
-export {};
+export * from './events.js';
+export * from './state.js';

@@ -1,1 +1,3 @@
-export {};
+export * from './cautions.js';
+export * from './recipe.js';
+export * from './step.js';

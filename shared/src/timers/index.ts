@@ -1,1 +1,2 @@
-export {};
+export * from './run-clock.js';
+export * from './timer.js';
