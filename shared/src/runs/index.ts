@@ -1,2 +1,4 @@
+export * from './decide.js';
 export * from './events.js';
+export * from './fold.js';
 export * from './state.js';

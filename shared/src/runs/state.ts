@@ -12,8 +12,10 @@ export interface StepProgress {
   cause: 'hand' | 'temperature' | 'timer' | 'measurement' | null;
   /** The liquid when the step was done. */
   tempC: number | null;
-  /** The event that made it done: what "back one" undoes. */
+  /** The event that made it done. */
   doneEventId: string | null;
+  /** Later events that say the same again; "back one" takes all of them back. */
+  repeatEventIds: string[];
   /** A person took back an automatic "done": from then on this step waits for a hand. */
   isHandOnly: boolean;
   /** How often this step was undone; part of the id of an automatic "done". */
@@ -71,6 +73,8 @@ export interface Conflict {
 
 export interface RunState {
   runId: string | null;
+  startEventId: string | null;
+  endEventId: string | null;
   status: 'not-started' | 'running' | 'ended';
   title: string;
   batchId: string | null;
@@ -83,6 +87,8 @@ export interface RunState {
   endedAtMs: number | null;
   outcome: 'finished' | 'abandoned' | null;
   steps: StepProgress[];
+  /** Ids of the done steps, in the order in which they were done. */
+  doneOrder: string[];
   /** Running timers: of the current step, and those set by hand. */
   timers: Timer[];
   measurements: Measurement[];
