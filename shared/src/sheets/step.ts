@@ -100,6 +100,14 @@ export const stepAmountSchema = z.strictObject({
 });
 export type StepAmount = z.infer<typeof stepAmountSchema>;
 
+/** A number that a step sets; shown in the reader's units. */
+export const stepSettingSchema = z.strictObject({
+  label: z.string().min(1).max(40),
+  quantity: measuredQuantitySchema,
+  value: z.number(),
+});
+export type StepSetting = z.infer<typeof stepSettingSchema>;
+
 /** A small task to do while a step waits ("rinse the tea bag"). */
 export const meanwhileTaskSchema = z.strictObject({ id: z.string().min(1).max(60), text: z.string().min(1).max(160) });
 export type MeanwhileTask = z.infer<typeof meanwhileTaskSchema>;
@@ -121,6 +129,8 @@ export const stepSchema = z
     cautions: z.array(cautionSchema).max(6).default([]),
     /** Seconds this person needs from alert to act. */
     reachS: z.number().min(0).max(120).default(10),
+    /** What is set or filled, with its number: "gauge pressure 96 kPa". */
+    settings: z.array(stepSettingSchema).max(4).default([]),
     /** A measurement that the step asks for without waiting on its value. */
     asks: measuredQuantitySchema.optional(),
   })
