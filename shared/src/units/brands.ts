@@ -75,7 +75,8 @@ export function ratio(value: number): Ratio {
 
 /** @throws RangeError outside 0 to 100. */
 export function percent(value: number): Percent {
-  if (notNegative(value, 'A percentage') > 100) throw new RangeError(`A percentage must be from 0 to 100, got ${value}`);
+  if (notNegative(value, 'A percentage') > 100)
+    throw new RangeError(`A percentage must be from 0 to 100, got ${value}`);
   return value as Percent;
 }
 

@@ -1,1 +1,10 @@
 export * from './brands.js';
+export * from './duration.js';
+export * from './format.js';
+export * from './mass.js';
+export { MINUS, NO_BREAK_SPACE, NO_VALUE } from './number-text.js';
+export * from './preferences.js';
+export * from './pressure.js';
+export * from './significant.js';
+export * from './temperature.js';
+export * from './volume.js';
