@@ -2,3 +2,4 @@ export * from './decide.js';
 export * from './events.js';
 export * from './fold.js';
 export * from './state.js';
+export * from './selectors.js';

@@ -1,1 +1,1 @@
-export {};
+export * from './run-builders.js';

@@ -1,0 +1,135 @@
+import { formatTemp } from '../units/index.js';
+import type { Step, StepAmount } from '../sheets/index.js';
+import type { LogEntry, RunEvent } from './events.js';
+import { isUndoable, stageRank } from './fold.js';
+import type { Alert, RunState, StepProgress } from './state.js';
+
+/** The one thing to do now; `null` before the start and after the last step. */
+export function currentStep(state: RunState): StepProgress | null {
+  return state.steps.find(({ status }) => status === 'current') ?? null;
+}
+
+/** Steps after the current one that are not done, in order. */
+export function upcomingSteps(state: RunState, count: number): StepProgress[] {
+  return state.steps.filter(({ status }) => status === 'ahead').slice(0, count);
+}
+
+/** Place of the current step, counted from 1, for "8 of 14". */
+export function stepPosition(state: RunState): { number: number; count: number } {
+  const index = state.steps.findIndex(({ status }) => status === 'current');
+  return { number: index < 0 ? state.steps.length : index + 1, count: state.steps.length };
+}
+
+/** Alerts that still ask for a person, the most urgent first. */
+export function standingAlerts(state: RunState): Alert[] {
+  return state.alerts
+    .filter(({ isStanding }) => isStanding)
+    .sort((a, b) => stageRank(b.stage) - stageRank(a.stage) || a.raisedAtMs - b.raisedAtMs);
+}
+
+/** The newest act of a person that can be taken back and still counts; `null` when there is none. */
+export function lastUndoable(entries: readonly LogEntry[], state: RunState): LogEntry | null {
+  const undone = new Set(state.undoneEventIds);
+  return (
+    entries.findLast(
+      ({ id, type, by }) => by !== null && type !== 'event.undone' && isUndoable(type) && !undone.has(id),
+    ) ?? null
+  );
+}
+
+export interface AlertWords {
+  /** What to do: "Hops in". */
+  verb: string;
+  amounts: StepAmount[];
+  /** "62.0 °C", in the reader's unit; `null` when the alert is not about a level. */
+  number: string | null;
+  /** What a screen reader says, in one breath. */
+  sentence: string;
+}
+
+const stageWords = { 'coming-up': 'Coming up', 'stand-by': 'Stand by', now: 'Now', missed: 'Late' } as const;
+
+/** The words of an alert: verb, thing, number. */
+export function alertWords(state: RunState, alert: Alert, unit: 'C' | 'F' = 'C'): AlertWords {
+  if (alert.rule === 'signal') {
+    const verb = 'Check the probe';
+    return { verb, amounts: [], number: null, sentence: `${verb}. No reading comes in. Watch a thermometer by hand.` };
+  }
+  const act = state.steps.find(({ step }) => step.id === alert.actStepId)?.step;
+  const timer = state.timers.find(({ id }) => alert.key === `timer:${id}`);
+  const verb = act?.title ?? (timer ? `Timer: ${timer.label}` : 'Look at the sheet');
+  const number = alert.targetC === null ? null : formatTemp(alert.targetC, { unit });
+  const parts = [stageWords[alert.stage], verb, number].filter((part) => part !== null);
+  return { verb, amounts: act?.amounts ?? [], number, sentence: `${parts.join('. ')}.` };
+}
+
+const quantityWords = {
+  pH: (value: number) => `pH ${value}`,
+  tempC: (value: number, unit: 'C' | 'F') => formatTemp(value, { unit }),
+  volumeL: (value: number) => `${value} L`,
+  massG: (value: number) => `${value} g`,
+  pressureKPa: (value: number) => `${value} kPa`,
+  tasteScore: (value: number) => `taste ${value} of 9`,
+} as const;
+
+function titleOf(state: RunState, stepId: string | null): string {
+  return state.steps.find(({ step }) => step.id === stepId)?.step.title ?? 'a step';
+}
+
+function at(tempC: number | null, unit: 'C' | 'F'): string {
+  return tempC === null ? '' : ` at ${formatTemp(tempC, { unit })}`;
+}
+
+/** One line of words for the log. Who and when stand beside it. */
+export function describeEvent(entry: LogEntry, state: RunState, unit: 'C' | 'F' = 'C'): string {
+  const event = entry as RunEvent;
+  switch (event.type) {
+    case 'run.started':
+      return event.payload.isRehearsal ? 'Rehearsal started' : 'Run started';
+    case 'sound.checked':
+      return event.payload.isHeard ? 'Sound checked: heard' : 'Sound checked: not heard';
+    case 'step.done': {
+      const why = {
+        hand: 'done',
+        temperature: 'temperature reached',
+        timer: 'time is up',
+        measurement: 'measured in range',
+      }[event.payload.cause];
+      return `${titleOf(state, event.payload.stepId)}: ${why}${at(event.payload.tempC, unit)}`;
+    }
+    case 'event.undone':
+      return 'Taken back';
+    case 'task.ticked': {
+      const step: Step | undefined = state.steps.find((progress) => progress.step.id === event.payload.stepId)?.step;
+      const task = step?.meanwhile.find(({ id }) => id === event.payload.taskId);
+      return `Meanwhile: ${task?.text ?? 'a task'}`;
+    }
+    case 'note.added':
+      return `Note: ${event.payload.text}`;
+    case 'measurement.recorded':
+      return `Measured ${quantityWords[event.payload.quantity](event.payload.value, unit)}`;
+    case 'timer.started':
+      return `Timer set: ${event.payload.label}`;
+    case 'timer.stopped':
+      return 'Timer stopped';
+    case 'clock.changed':
+      return `Rehearsal clock at ${event.payload.clock.rate}×`;
+    case 'alert.raised': {
+      const alert = state.alerts.find(
+        ({ key, crossing }) => key === event.payload.key && crossing === event.payload.crossing,
+      );
+      const words = alert ? alertWords(state, alert, unit).verb : titleOf(state, event.payload.actStepId);
+      return `${stageWords[event.payload.stage]}: ${words}${at(event.payload.tempC, unit)}`;
+    }
+    case 'alert.acknowledged':
+      return 'Alert acknowledged';
+    case 'alert.cleared':
+      return 'Probe is back';
+    case 'run.ended':
+      return event.payload.outcome === 'finished'
+        ? 'Run finished'
+        : `Run given up${event.payload.reason ? `: ${event.payload.reason}` : ''}`;
+    default:
+      return 'Something a newer version wrote';
+  }
+}
