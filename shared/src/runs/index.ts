@@ -1,4 +1,5 @@
 export * from './decide.js';
+export * from './driver.js';
 export * from './events.js';
 export * from './fold.js';
 export * from './state.js';

@@ -1,0 +1,307 @@
+import { v5 as uuidV5 } from 'uuid';
+import type { Reading } from '../readings/index.js';
+import type { Step, VesselAct } from '../sheets/index.js';
+import {
+  estimateAt,
+  forecastCrossing,
+  startLadder,
+  startTimerLadder,
+  startWatch,
+  stepLadder,
+  stepTimerLadder,
+  watchAct,
+  watchReading,
+  type CrossingForecast,
+  type LadderAlert,
+  type LadderState,
+  type TimerLadderState,
+  type WatchConfig,
+  type WatchEstimate,
+  type WatchState,
+} from '../watch/index.js';
+import type { RunEvent, RunEventOf, RunEventType } from './events.js';
+import type { RunState, StepProgress } from './state.js';
+
+/** Names ids that several devices must come to alike. Any fixed UUID does; this one must never change. */
+const DERIVED_ID_NAMESPACE = '6e0f3a52-1d0c-4f0f-9a5e-7c1b2d94b3e8';
+
+/** Silence at the start counts from the first tick; the same 30 s that make a later silence an alert. */
+const FIRST_READING_DUE_MS = 30_000;
+
+export interface DriverConfig {
+  watch: WatchConfig;
+  /** False when temperatures are typed by hand: silence is then no fault. */
+  hasProbe: boolean;
+}
+
+/**
+ * What the hub and every tablet keep while a run is open: the watch over its readings and the ladders of what is armed.
+ * Plain data; give it back to `driveRun` with the next readings or tick.
+ */
+export interface RunDriver {
+  config: DriverConfig;
+  watch: WatchState;
+  ladders: Record<string, LadderState>;
+  timerLadders: Record<string, TimerLadderState>;
+  /** Acts told to the watch so far, as `event id/act`. */
+  toldActs: Record<string, { act: VesselAct; atMs: number }>;
+  firstTickMs: number | null;
+}
+
+/** A level or a deadline that an alert will come for. */
+export type Armed =
+  | {
+      by: 'temperature';
+      key: string;
+      stepId: string;
+      actStep: Step;
+      tempC: number;
+      direction: 'rising' | 'falling';
+    }
+  | { by: 'timer'; key: string; stepId: string | null; actStep: Step | null; endsAtMs: number };
+
+export interface DriveInput {
+  runId: string;
+  station: string;
+  /** New readings on the run clock, in the order in which they came. */
+  readings: readonly Reading[];
+  /** Run clock. */
+  nowMs: number;
+}
+
+export interface LiveView {
+  estimate: WatchEstimate;
+  /** The level that is waited for; `null` when none is. */
+  target: { stepId: string; actStepId: string; tempC: number; direction: 'rising' | 'falling' } | null;
+  forecast: CrossingForecast | null;
+}
+
+export function startDriver(config: DriverConfig): RunDriver {
+  const watch = startWatch(config.watch);
+  return { config, watch, ladders: {}, timerLadders: {}, toldActs: {}, firstTickMs: null };
+}
+
+/**
+ * One step of a run: readings and time in, facts out. Alerts and automatic "done" carry ids derived from what they say,
+ * so that the hub and any number of tablets that find the same thing store it once.
+ */
+export function driveRun(
+  driver: RunDriver,
+  state: RunState,
+  input: DriveInput,
+): { driver: RunDriver; events: RunEvent[] } {
+  if (state.status !== 'running') return { driver, events: [] };
+  let next = tellActs({ ...driver, firstTickMs: driver.firstTickMs ?? input.nowMs }, state);
+  const armed = armedIn(state);
+  const events: RunEvent[] = [];
+
+  const climb = (atMs: number) => {
+    for (const item of armed) {
+      const climbed = climbLadder(next, item, atMs);
+      next = climbed.driver;
+      events.push(...climbed.raised.map((alert) => raisedEvent(input, item, alert)));
+    }
+  };
+  for (const reading of input.readings) {
+    next = { ...next, watch: watchReading(next.watch, reading) };
+    if (reading.atMs <= input.nowMs) climb(reading.atMs);
+  }
+  climb(input.nowMs);
+
+  events.push(...automaticDone(next, state, input), ...signalEvents(next, state, armed, input));
+  return { driver: next, events };
+}
+
+/** What a screen shows of the watch at this run time. */
+export function liveView(driver: RunDriver, state: RunState, nowMs: number): LiveView {
+  const estimate = estimateAt(driver.watch, nowMs);
+  const level = armedIn(state).find((item) => item.by === 'temperature');
+  if (!level) return { estimate, target: null, forecast: null };
+  const { stepId, actStep, tempC, direction } = level;
+  return {
+    estimate,
+    target: { stepId, actStepId: actStep.id, tempC, direction },
+    forecast: forecastCrossing(driver.watch, { tempC, direction }, nowMs),
+  };
+}
+
+const reverseOf: Partial<Record<VesselAct, VesselAct>> = {
+  'heat-on': 'heat-off',
+  'heat-off': 'heat-on',
+  'lid-on': 'lid-off',
+  'lid-off': 'lid-on',
+  'chiller-on': 'chiller-off',
+  'chiller-off': 'chiller-on',
+};
+
+/** What was done to the vessel, as the done steps say; a step taken back takes its act back where that is possible. */
+function tellActs(driver: RunDriver, state: RunState): RunDriver {
+  const acts = new Map<string, { act: VesselAct; atMs: number }>();
+  for (const { step, doneEventId, doneAtMs } of state.steps) {
+    if (doneEventId === null || doneAtMs === null) continue;
+    for (const act of step.acts) acts.set(`${doneEventId}/${act}`, { act, atMs: doneAtMs });
+  }
+  const fresh = [...acts].filter(([key]) => !(key in driver.toldActs)).sort(([, a], [, b]) => a.atMs - b.atMs);
+  const gone = Object.entries(driver.toldActs).filter(([key]) => !acts.has(key));
+  if (fresh.length === 0 && gone.length === 0) return driver;
+
+  let { watch } = driver;
+  for (const [, { act, atMs }] of gone) {
+    const reverse = reverseOf[act];
+    if (reverse) watch = watchAct(watch, { act: reverse, atMs });
+  }
+  for (const [, act] of fresh) watch = watchAct(watch, act);
+  return { ...driver, watch, toldActs: Object.fromEntries(acts) };
+}
+
+/**
+ * What alerts are due for. Steps that only wait for a hand are looked through: somebody who forgot to tap "chiller on"
+ * still hears of the hops.
+ */
+export function armedIn(state: RunState): Armed[] {
+  const armed: Armed[] = state.timers
+    .filter(({ stepId }) => stepId === null)
+    .map(({ id, endsAtMs }) => ({ by: 'timer', key: `timer:${id}`, stepId: null, actStep: null, endsAtMs }));
+  const currentIndex = state.steps.findIndex(({ status }) => status === 'current');
+  if (currentIndex < 0) return armed;
+
+  // The step before waited for a level or a deadline and got it: what it called for is still to be done.
+  const before = state.steps[currentIndex - 1];
+  if (before && before.status === 'done' && before.cause !== 'hand')
+    armed.push(...armedBy(before, state.steps[currentIndex]));
+
+  for (let index = currentIndex; index < state.steps.length; index += 1) {
+    const progress = state.steps[index];
+    if (!progress || progress.status === 'done') continue;
+    const found = armedBy(progress, state.steps[index + 1]);
+    if (found.length > 0) return [...armed, ...found];
+    if (progress.step.done.by !== 'hand' && progress.step.done.by !== 'measurement') break;
+  }
+  return armed;
+}
+
+function armedBy(progress: StepProgress, following: StepProgress | undefined): Armed[] {
+  const { step } = progress;
+  if (step.start.by === 'temperature' && progress.status !== 'done') {
+    const { tempC, direction } = step.start;
+    return [{ by: 'temperature', key: keyOf(progress, progress), stepId: step.id, actStep: step, tempC, direction }];
+  }
+  const act = following ?? progress;
+  const shared = { key: keyOf(progress, act), stepId: step.id, actStep: act.step };
+  if (step.done.by === 'temperature') {
+    const { tempC, direction } = step.done;
+    return [{ by: 'temperature', ...shared, tempC, direction }];
+  }
+  if (step.done.by === 'timer' && progress.startedAtMs !== null) {
+    return [{ by: 'timer', ...shared, endsAtMs: progress.startedAtMs + step.done.durationS * 1000 }];
+  }
+  return [];
+}
+
+/** A step that was taken back is armed anew, under a name of its own. */
+function keyOf(watched: StepProgress, act: StepProgress): string {
+  const undoneCount = watched.undoneCount + (act === watched ? 0 : act.undoneCount);
+  return undoneCount === 0 ? watched.step.id : `${watched.step.id}~${undoneCount}`;
+}
+
+function climbLadder(driver: RunDriver, item: Armed, atMs: number): { driver: RunDriver; raised: LadderAlert[] } {
+  const { key } = item;
+  const reachS = item.actStep?.reachS ?? 0;
+  if (item.by === 'timer') {
+    const ladder = driver.timerLadders[key] ?? startTimerLadder({ key, endsAtMs: item.endsAtMs, reachS });
+    const climbed = stepTimerLadder(ladder, atMs);
+    return {
+      driver: { ...driver, timerLadders: { ...driver.timerLadders, [key]: climbed.ladder } },
+      raised: climbed.raised,
+    };
+  }
+  const { tempC, direction } = item;
+  const ladder = driver.ladders[key] ?? startLadder({ key, tempC, direction, reachS });
+  const climbed = stepLadder(ladder, driver.watch, atMs);
+  return { driver: { ...driver, ladders: { ...driver.ladders, [key]: climbed.ladder } }, raised: climbed.raised };
+}
+
+function derivedEvent<Type extends RunEventType>(
+  { runId, station }: DriveInput,
+  type: Type,
+  name: string,
+  atMs: number,
+  payload: RunEventOf<Type>['payload'],
+): RunEvent {
+  const id = uuidV5(`${runId}/${type}/${name}`, DERIVED_ID_NAMESPACE);
+  return { id, runId, type, v: 1, atMs: Math.round(atMs), by: null, station, payload } as RunEvent;
+}
+
+function raisedEvent(input: DriveInput, item: Armed, alert: LadderAlert): RunEvent {
+  const { key, crossing, stage, tempC } = alert;
+  const dueAtMs = item.by === 'timer' ? item.endsAtMs : alert.crossingAtMs;
+  return derivedEvent(input, 'alert.raised', `${key}/${crossing}/${stage}`, alert.atMs, {
+    key,
+    crossing,
+    rule: item.by,
+    stage,
+    stepId: item.stepId,
+    actStepId: item.actStep?.id ?? null,
+    tempC,
+    targetC: item.by === 'temperature' ? item.tempC : null,
+    direction: item.by === 'temperature' ? item.direction : null,
+    dueAtMs: dueAtMs === null ? null : Math.round(dueAtMs),
+  });
+}
+
+/** The current step where no hand is needed: level reached, or time over. */
+function automaticDone(driver: RunDriver, state: RunState, input: DriveInput): RunEvent[] {
+  const current = state.steps.find(({ status }) => status === 'current');
+  if (!current || current.isHandOnly || current.startedAtMs === null) return [];
+  const { id, done } = current.step;
+  const name = `${id}/${current.undoneCount}`;
+  const estimate = estimateAt(driver.watch, input.nowMs);
+  const tempC = estimate.status === 'live' ? estimate.tempC : null;
+  if (done.by === 'timer') {
+    const endsAtMs = current.startedAtMs + done.durationS * 1000;
+    if (input.nowMs < endsAtMs) return [];
+    return [derivedEvent(input, 'step.done', name, endsAtMs, { stepId: id, cause: 'timer', tempC })];
+  }
+  if (done.by === 'temperature' && estimate.status === 'live') {
+    const forecast = forecastCrossing(driver.watch, done, input.nowMs);
+    if (forecast.kind !== 'crossed') return [];
+    const atMs = Math.min(Math.max(forecast.atMs, current.startedAtMs), input.nowMs);
+    return [derivedEvent(input, 'step.done', name, atMs, { stepId: id, cause: 'temperature', tempC })];
+  }
+  return [];
+}
+
+/** Silence is the fault that matters most while a level is waited for. */
+function signalEvents(driver: RunDriver, state: RunState, armed: readonly Armed[], input: DriveInput): RunEvent[] {
+  if (!driver.config.hasProbe) return [];
+  const { status } = estimateAt(driver.watch, input.nowMs);
+  const earlier = state.alerts.filter(({ rule }) => rule === 'signal');
+  const open = earlier.find(({ clearedAtMs }) => clearedAtMs === null);
+  const level = armed.find((item) => item.by === 'temperature');
+
+  if (open) {
+    if (status !== 'live' && level) return [];
+    const { key, crossing } = open;
+    return [derivedEvent(input, 'alert.cleared', `${key}/${crossing}`, input.nowMs, { key, crossing })];
+  }
+  const isSilent =
+    status === 'stale' ||
+    status === 'lost' ||
+    (status === 'starting' && input.nowMs - (driver.firstTickMs ?? input.nowMs) >= FIRST_READING_DUE_MS);
+  if (!isSilent || !level) return [];
+  const crossing = earlier.length + 1;
+  return [
+    derivedEvent(input, 'alert.raised', `signal/${crossing}/now`, input.nowMs, {
+      key: 'signal',
+      crossing,
+      rule: 'signal',
+      stage: 'now',
+      stepId: level.stepId,
+      actStepId: null,
+      tempC: null,
+      targetC: null,
+      direction: null,
+      dueAtMs: null,
+    }),
+  ];
+}
