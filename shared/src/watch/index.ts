@@ -1,3 +1,17 @@
+export {
+  lagCorrectedDifferenceGain,
+  lagCorrectedLineGain,
+  lineCrossingSdS,
+  newtonCrossingSdS,
+  type LineBoundInput,
+  type NewtonBoundInput,
+} from './bounds.js';
+export { crossingLateByS, newtonAfter, newtonSecondsTo, secondsToFall, type CoolingLaw } from './cooling-law.js';
+export { estimateAt, learnedLag } from './estimate.js';
+export { forecastCrossing, forecastCurve } from './forecast.js';
+export { startLadder, stepLadder, type LadderState } from './ladder.js';
+export { startWatch, type WatchState } from './state.js';
+export { startTimerLadder, stepTimerLadder, type TimerLadderState } from './timer-ladder.js';
 export type {
   CatchTarget,
   CrossingDirection,
@@ -16,3 +30,4 @@ export type {
   WatchStatus,
   WatchVerdict,
 } from './types.js';
+export { watchAct, watchReading } from './watch.js';

@@ -1,0 +1,175 @@
+import { E, EE, ES, F, FE, FF, FS, LOG_WEIGHT, S, SS, STRIDE, T, TE, TF, TS, TT, EDDY_MEMORY_S } from './kalman.js';
+import { predict, update, type Hypothesis } from './kalman.js';
+import { slopeLaw, type Surroundings } from './slope-law.js';
+
+/** True lag over told lag: told is off by up to a quarter of the true one. */
+const LAG_RATIOS = [0.8, 0.89, 0.98, 1.08, 1.19, 1.31];
+const EDDIES_C = [0.08, 0.16, 0.27];
+/** No hypothesis is ever given up for good: kettles and probes change. */
+const LEAST_LOG_WEIGHT = -9;
+/** Longest single step of the filters; a gap is crossed in several. */
+const LONGEST_STEP_S = 2;
+
+export function hypotheses(lagS: number): Hypothesis[] {
+  const told = Math.max(lagS, 0.05);
+  return LAG_RATIOS.flatMap((ratio) => EDDIES_C.map((eddyC) => ({ lagS: told * ratio, eddyC })));
+}
+
+/** What the bank as a whole believes. */
+export interface Belief {
+  tempC: number;
+  rateCPerS: number;
+  tempVariance: number;
+  rateVariance: number;
+  /** Covariance of the two. */
+  crossVariance: number;
+  /** What the probe should read, and the variance of that without the reading's own noise. */
+  probeC: number;
+  probeVariance: number;
+}
+
+export function startBank(tempC: number, lagS: number): number[] {
+  const bank: number[] = [];
+  for (const { lagS: tau, eddyC } of hypotheses(lagS)) {
+    const filtered = (eddyC ** 2 * EDDY_MEMORY_S) / (EDDY_MEMORY_S + tau);
+    const one = new Array<number>(STRIDE).fill(0);
+    one[T] = tempC;
+    one[F] = tempC;
+    one[TT] = 0.5 ** 2;
+    one[TF] = 0.5 ** 2;
+    one[FF] = 0.5 ** 2 + filtered + 0.1 ** 2;
+    one[FE] = filtered;
+    one[EE] = eddyC ** 2;
+    one[SS] = 0.04 ** 2;
+    bank.push(...one);
+  }
+  return bank;
+}
+
+export function believe(bank: readonly number[]): Belief {
+  const count = bank.length / STRIDE;
+  let top = -Infinity;
+  for (let i = 0; i < count; i += 1) top = Math.max(top, bank[i * STRIDE + LOG_WEIGHT]!);
+  let sum = 0;
+  let t = 0;
+  let s = 0;
+  let f = 0;
+  let tt = 0;
+  let ss = 0;
+  let ts = 0;
+  let ff = 0;
+  // Spread is summed around the first hypothesis: squares of 80 °C would eat the digits.
+  const t0 = bank[T]!;
+  const s0 = bank[S]!;
+  const f0 = bank[F]!;
+  for (let i = 0; i < count; i += 1) {
+    const o = i * STRIDE;
+    const w = Math.exp(bank[o + LOG_WEIGHT]! - top);
+    const dt = bank[o + T]! - t0;
+    const ds = bank[o + S]! - s0;
+    const df = bank[o + F]! - f0;
+    sum += w;
+    t += w * dt;
+    s += w * ds;
+    f += w * df;
+    tt += w * (bank[o + TT]! + dt * dt);
+    ss += w * (bank[o + SS]! + ds * ds);
+    ts += w * (bank[o + TS]! + dt * ds);
+    ff += w * (bank[o + FF]! + df * df);
+  }
+  t /= sum;
+  s /= sum;
+  f /= sum;
+  return {
+    tempC: t0 + t,
+    rateCPerS: s0 + s,
+    tempVariance: tt / sum - t * t,
+    rateVariance: ss / sum - s * s,
+    crossVariance: ts / sum - t * s,
+    probeC: f0 + f,
+    probeVariance: ff / sum - f * f,
+  };
+}
+
+/** The bank, `durationS` later, with no reading. Changes `bank` in place: callers own a copy. */
+export function advanceBank(bank: number[], durationS: number, lagS: number, around: Surroundings): void {
+  const guesses = hypotheses(lagS);
+  const steps = Math.max(1, Math.ceil(durationS / LONGEST_STEP_S));
+  const dtS = durationS / steps;
+  for (let step = 0; step < steps; step += 1) {
+    for (const [i, guess] of guesses.entries()) {
+      const o = i * STRIDE;
+      predict(bank, o, dtS, guess, slopeLaw(bank[o + T]!, bank[o + S]!, around));
+    }
+  }
+}
+
+/** Takes in one reading. Changes `bank` in place. */
+export function updateBank(bank: number[], readingC: number, whiteVariance: number): void {
+  let top = -Infinity;
+  for (let o = 0; o < bank.length; o += STRIDE) {
+    update(bank, o, readingC, whiteVariance);
+    top = Math.max(top, bank[o + LOG_WEIGHT]!);
+  }
+  for (let o = 0; o < bank.length; o += STRIDE) {
+    bank[o + LOG_WEIGHT] = Math.max(LEAST_LOG_WEIGHT, bank[o + LOG_WEIGHT]! - top);
+  }
+}
+
+/** Something was done to the kettle: the liquid may have stepped and the slope may be another. */
+export interface Disturbance {
+  /** Standard deviation of the step in K. */
+  stepC: number;
+  /** Standard deviation of the change of slope in K/s. */
+  slopeCPerS: number;
+  /** The slope to expect from now on; leave out to keep it. */
+  newSlope?: { meanCPerS: number; sdCPerS: number };
+}
+
+/** Widens what the bank believes. Changes `bank` in place. */
+export function disturbBank(bank: number[], { stepC, slopeCPerS, newSlope }: Disturbance): void {
+  for (let o = 0; o < bank.length; o += STRIDE) {
+    bank[o + TT]! += stepC ** 2;
+    if (newSlope) {
+      bank[o + S] = newSlope.meanCPerS;
+      bank[o + SS] = newSlope.sdCPerS ** 2;
+      bank[o + TS] = 0;
+      bank[o + FS] = 0;
+      bank[o + ES] = 0;
+    }
+    bank[o + SS]! += slopeCPerS ** 2;
+  }
+}
+
+/** The probe itself jumped: start the tip afresh at what it reads, with the liquid wide open around it. */
+export function resettleBank(bank: number[], readingC: number, stepC: number): void {
+  for (let o = 0; o < bank.length; o += STRIDE) {
+    bank[o + T] = readingC;
+    bank[o + F] = readingC;
+    bank[o + E] = 0;
+    bank[o + TT] = stepC ** 2;
+    bank[o + TF] = 0;
+    bank[o + TE] = 0;
+    bank[o + TS] = 0;
+    bank[o + FF] = 0.3 ** 2;
+    bank[o + FE] = 0;
+    bank[o + FS] = 0;
+    bank[o + ES] = 0;
+    bank[o + SS]! += 0.05 ** 2;
+  }
+}
+
+/** Mean and spread of the lag over the bank, in seconds. */
+export function lagBelief(bank: readonly number[], lagS: number): { lagS: number; sdS: number } {
+  let sum = 0;
+  let mean = 0;
+  let square = 0;
+  for (const [i, guess] of hypotheses(lagS).entries()) {
+    const w = Math.exp(bank[i * STRIDE + LOG_WEIGHT]!);
+    sum += w;
+    mean += w * guess.lagS;
+    square += w * guess.lagS ** 2;
+  }
+  mean /= sum;
+  return { lagS: mean, sdS: Math.sqrt(Math.max(0, square / sum - mean * mean)) };
+}

@@ -1,0 +1,206 @@
+import { courseAt, courseOf, estimateAt, type Course } from './estimate.js';
+import { crossingOf, forecastCrossing, type Crossing } from './forecast.js';
+import type { WatchState } from './state.js';
+import type { CatchTarget, LadderAlert, LadderStage } from './types.js';
+
+const DEFAULT_COMING_UP_S = 120;
+const DEFAULT_STAND_BY_S = 30;
+/** Missed: this far past the target and this long after it, or simply so long after it that the moment is gone. */
+const MISSED_PAST_C = 1;
+const MISSED_AFTER_S = 15;
+const MISSED_AT_LATEST_S = 120;
+/** Armed when further past the target than this, there is nothing left to catch. */
+const FAR_PAST_C = 3;
+/** A return counts when the liquid is this far back on the near side, for this long. */
+const RETURN_C = 1;
+const RETURN_FOR_S = 10;
+/** A warning is called off when the crossing has been out of sight this long, or this many times further off than the warning was. */
+const OFF_FOR_S = 30;
+const OFF_TIMES = 3;
+/** Most that half a step may bring a `now` forward; steps are a reading apart, save in a fast rehearsal. */
+const LONGEST_HALF_STEP_S = 2;
+
+export interface LadderState {
+  readonly target: CatchTarget;
+  /** Highest rung climbed for this crossing. */
+  readonly stage: LadderStage | 'armed';
+  readonly crossing: number;
+  readonly lastStepAtMs: number | null;
+  /** False until the first step with an estimate. */
+  readonly seen: boolean;
+  /** Since `now`: the liquid has been on the far side. */
+  readonly passedAtMs: number | null;
+  /** Distance to the target on the near side when `now` was raised, K. */
+  readonly nearC: number;
+  readonly returnSinceMs: number | null;
+  readonly offSinceMs: number | null;
+}
+
+/** A ladder for one catch, armed: nothing raised yet. */
+export function startLadder(target: CatchTarget): LadderState {
+  return {
+    target,
+    stage: 'armed',
+    crossing: 1,
+    lastStepAtMs: null,
+    seen: false,
+    passedAtMs: null,
+    nearC: 0,
+    returnSinceMs: null,
+    offSinceMs: null,
+  };
+}
+
+interface Step {
+  nowMs: number;
+  tempC: number;
+  /** Positive on the near side of the target, K. */
+  nearC: number;
+  /** Positive towards the target, K/s. */
+  towardsCPerS: number;
+  crossing: Crossing | null;
+}
+
+/**
+ * Climbs the ladder as far as the watch's knowledge at `nowMs` (run clock) says. `now` is raised so that an addition
+ * `reachS` later lands on the target. Each stage is raised at most once for each crossing.
+ */
+export function stepLadder(
+  ladder: LadderState,
+  watch: WatchState,
+  nowMs: number,
+): { ladder: LadderState; raised: LadderAlert[] } {
+  const course = courseOf(watch);
+  const estimate = estimateAt(watch, nowMs);
+  const paused = course === null || estimate.status === 'starting' || estimate.status === 'lost';
+  if (paused) return { ladder: { ...ladder, lastStepAtMs: nowMs }, raised: [] };
+  const step = look(ladder.target, course, nowMs);
+  const arrived = ladder.seen ? ladder : { ...ladder, seen: true };
+  const settled = returned(calledOff(arrived, step), step);
+  const { stage, alerts } = climb(settled, watch, step, !ladder.seen);
+  const raised = alerts.map((raisedStage) => alertOf(settled, raisedStage, step));
+  const next = { ...settled, stage, lastStepAtMs: nowMs };
+  const isNow = alerts.includes('now') || alerts.includes('missed');
+  return { ladder: isNow ? afterNow(next, step) : passing(next, step), raised };
+}
+
+function look(target: CatchTarget, course: Course, nowMs: number): Step {
+  const at = courseAt(course, Math.max(0, (nowMs - course.startMs) / 1000));
+  const towards = target.direction === 'rising' ? 1 : -1;
+  return {
+    nowMs,
+    tempC: at.tempC,
+    nearC: (target.tempC - at.tempC) * towards,
+    towardsCPerS: at.rateCPerS * towards,
+    crossing: crossingOf(course, target),
+  };
+}
+
+function alertOf(ladder: LadderState, stage: LadderStage, step: Step): LadderAlert {
+  return {
+    key: ladder.target.key,
+    stage,
+    crossing: ladder.crossing,
+    atMs: step.nowMs,
+    tempC: step.tempC,
+    crossingAtMs: step.crossing?.atMs ?? null,
+    earlyMs: step.crossing?.earlyMs ?? null,
+    lateMs: step.crossing?.lateMs ?? null,
+  };
+}
+
+function climb(
+  ladder: LadderState,
+  watch: WatchState,
+  step: Step,
+  first: boolean,
+): { stage: LadderState['stage']; alerts: LadderStage[] } {
+  const { stage, target } = ladder;
+  const kept = { stage, alerts: [] };
+  if (stage === 'missed') return kept;
+  if (stage === 'now') return isMissed(ladder, step) ? { stage: 'missed', alerts: ['missed'] } : kept;
+  if (step.nearC <= 0) {
+    // Below a falling target and climbing is the way up, not a catch.
+    if (step.towardsCPerS < 0 && stage === 'armed') return kept;
+    if (first && -step.nearC > FAR_PAST_C) return { stage: 'missed', alerts: ['missed'] };
+    return { stage: 'now', alerts: first || stage !== 'armed' ? ['now'] : ['stand-by', 'now'] };
+  }
+  if (step.crossing === null) return kept;
+  const leftS = (step.crossing.atMs - step.nowMs) / 1000 - target.reachS;
+  if (leftS <= halfStepS(ladder, step.nowMs)) {
+    return { stage: 'now', alerts: stage === 'armed' ? ['stand-by', 'now'] : ['now'] };
+  }
+  if (stage === 'stand-by') return kept;
+  if (leftS <= (target.standByS ?? DEFAULT_STAND_BY_S)) return { stage: 'stand-by', alerts: ['stand-by'] };
+  if (stage === 'coming-up') return kept;
+  const comingUpS = target.comingUpS ?? DEFAULT_COMING_UP_S;
+  if (leftS <= comingUpS && isClear(watch, target, step, comingUpS))
+    return { stage: 'coming-up', alerts: ['coming-up'] };
+  return kept;
+}
+
+/** A first warning needs a forecast worth the name, or one whose late end is still soon. */
+function isClear(watch: WatchState, target: CatchTarget, step: Step, comingUpS: number): boolean {
+  if (forecastCrossing(watch, target, step.nowMs).kind === 'forecast') return true;
+  const lateS = ((step.crossing?.lateMs ?? Infinity) - step.nowMs) / 1000 - target.reachS;
+  return lateS <= comingUpS;
+}
+
+/** Of two steps the nearer one to the instant is the right one. */
+function halfStepS(ladder: LadderState, nowMs: number): number {
+  if (ladder.lastStepAtMs === null) return 0;
+  return Math.min(LONGEST_HALF_STEP_S, (nowMs - ladder.lastStepAtMs) / 2000);
+}
+
+function isMissed({ passedAtMs }: LadderState, { nowMs, nearC }: Step): boolean {
+  if (passedAtMs === null) return false;
+  const sinceS = (nowMs - passedAtMs) / 1000;
+  return sinceS >= MISSED_AT_LATEST_S || (sinceS >= MISSED_AFTER_S && -nearC >= MISSED_PAST_C);
+}
+
+function afterNow(ladder: LadderState, step: Step): LadderState {
+  return {
+    ...ladder,
+    nearC: Math.max(0, step.nearC),
+    passedAtMs: step.nearC <= 0 ? step.nowMs : ladder.passedAtMs,
+    returnSinceMs: null,
+    offSinceMs: null,
+  };
+}
+
+function passing(ladder: LadderState, step: Step): LadderState {
+  const over = ladder.stage === 'now' && ladder.passedAtMs === null && step.nearC <= 0;
+  return over ? { ...ladder, passedAtMs: step.nowMs } : ladder;
+}
+
+function rearmed(ladder: LadderState): LadderState {
+  return {
+    ...startLadder(ladder.target),
+    crossing: ladder.crossing + 1,
+    lastStepAtMs: ladder.lastStepAtMs,
+    seen: true,
+  };
+}
+
+/** After `now`: armed again once the liquid is truly back on the near side. */
+function returned(ladder: LadderState, step: Step): LadderState {
+  if (ladder.stage !== 'now' && ladder.stage !== 'missed') return ladder;
+  const backC = ladder.passedAtMs === null ? ladder.nearC + RETURN_C : RETURN_C;
+  const isBack = step.nearC >= backC && step.towardsCPerS <= 0.002;
+  if (!isBack) return ladder.returnSinceMs === null ? ladder : { ...ladder, returnSinceMs: null };
+  const since = ladder.returnSinceMs ?? step.nowMs;
+  if (step.nowMs - since >= RETURN_FOR_S * 1000) return rearmed(ladder);
+  return { ...ladder, returnSinceMs: since };
+}
+
+/** After a warning: armed again when the crossing has moved well out of sight. */
+function calledOff(ladder: LadderState, step: Step): LadderState {
+  if (ladder.stage !== 'coming-up' && ladder.stage !== 'stand-by') return ladder;
+  const { reachS, comingUpS = DEFAULT_COMING_UP_S } = ladder.target;
+  const leftS = step.crossing ? (step.crossing.atMs - step.nowMs) / 1000 - reachS : Infinity;
+  const isOff = step.nearC > 0.5 && leftS > OFF_TIMES * comingUpS;
+  if (!isOff) return ladder.offSinceMs === null ? ladder : { ...ladder, offSinceMs: null };
+  const since = ladder.offSinceMs ?? step.nowMs;
+  if (step.nowMs - since >= OFF_FOR_S * 1000) return rearmed(ladder);
+  return { ...ladder, offSinceMs: since };
+}

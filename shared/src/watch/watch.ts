@@ -1,0 +1,264 @@
+import { advanceBank, believe, disturbBank, resettleBank, startBank, updateBank, type Disturbance } from './bank.js';
+import { CHILLING_C_PER_S, type Surroundings } from './slope-law.js';
+import type { Suspect, WatchState } from './state.js';
+import type { WatchAct, WatchActDone, WatchReading, WatchVerdict } from './types.js';
+import { FASTEST_C_PER_S, isOffTheLine, isPowerOn, judgeRange } from './validate.js';
+
+/** Taken where nobody knows better. */
+const USUAL_ROOM_C = 21;
+const USUAL_COOLANT_C = 14;
+/** Readings that must agree before anything is believed. */
+const READINGS_TO_START = 3;
+/** Suspects in a row that agree make a step. */
+const SUSPECTS_TO_STEP = 3;
+/** Oldest suspect that still counts. */
+const SUSPECT_MEMORY_S = 15;
+/** Longest absence the filters bridge; after that the watch starts afresh. */
+const LONGEST_BRIDGE_S = 900;
+
+export function surroundings(state: WatchState): Surroundings {
+  return {
+    roomC: state.config.roomC ?? USUAL_ROOM_C,
+    coolantC: state.config.coolantC ?? USUAL_COOLANT_C,
+    kettle: state.kettle,
+  };
+}
+
+/** Time between readings that counts as a gap. */
+export function gapS(state: WatchState): number {
+  return Math.max(3 * state.config.samplePeriodS, 3);
+}
+
+/** Variance of one reading's own noise, the probe's resolution included. */
+export function readingVariance(state: WatchState): number {
+  return Math.max(state.whiteVariance, 0.03 ** 2) + state.config.resolutionC ** 2 / 12;
+}
+
+/** Notes something done to the kettle. Acts that come late are taken as of now: the estimate never runs backwards. */
+export function watchAct(state: WatchState, done: WatchActDone): WatchState {
+  const kettle = kettleAfter(state, done.act);
+  if (state.bank === null) return { ...state, kettle };
+  const bank = [...state.bank];
+  const atMs = Math.max(done.atMs, state.bankAtMs);
+  if (atMs > state.bankAtMs) {
+    advanceBank(
+      bank,
+      Math.min(LONGEST_BRIDGE_S, (atMs - state.bankAtMs) / 1000),
+      state.config.lagS,
+      surroundings(state),
+    );
+  }
+  const belief = believe(bank);
+  disturbBank(bank, disturbanceOf(done.act, belief, surroundings(state)));
+  return { ...state, kettle, bank, bankAtMs: atMs, disturbedAtMs: atMs, surpriseUp: 0, surpriseDown: 0 };
+}
+
+function kettleAfter({ kettle }: WatchState, act: WatchAct): WatchState['kettle'] {
+  switch (act) {
+    case 'chiller-on':
+      return { ...kettle, chilling: true, heating: false };
+    case 'chiller-off':
+      return { ...kettle, chilling: false };
+    case 'heat-on':
+      return { ...kettle, heating: true, chilling: false };
+    case 'heat-off':
+      return { ...kettle, heating: false };
+    case 'lid-on':
+    case 'lid-off':
+      return { ...kettle, lidOn: act === 'lid-on' };
+    default:
+      return kettle;
+  }
+}
+
+/** Rate constant of a kettle's chiller in 1/s: the middle and the spread of what coils do. */
+const CHILLER_PER_S = 2.1e-3;
+const CHILLER_SPREAD_PER_S = 0.9e-3;
+/** People tap a few seconds before or after they turn the tap. */
+const TAP_SPREAD_S = 1.8;
+
+function disturbanceOf(act: WatchAct, belief: { tempC: number; rateCPerS: number }, around: Surroundings): Disturbance {
+  const kept = { stepC: 0, slopeCPerS: 0 };
+  switch (act) {
+    case 'chiller-on': {
+      if (belief.rateCPerS < -CHILLING_C_PER_S) return { stepC: 0.1, slopeCPerS: 0.03 };
+      const drive = Math.max(5, belief.tempC - around.coolantC);
+      const meanCPerS = -CHILLER_PER_S * drive;
+      const sdCPerS = CHILLER_SPREAD_PER_S * drive;
+      return { stepC: -meanCPerS * TAP_SPREAD_S, slopeCPerS: 0, newSlope: { meanCPerS, sdCPerS } };
+    }
+    case 'chiller-off':
+      return { stepC: 0.2, slopeCPerS: 0, newSlope: { meanCPerS: -0.01, sdCPerS: 0.02 } };
+    case 'heat-on':
+      return { stepC: 0.1, slopeCPerS: 0, newSlope: { meanCPerS: 0.025, sdCPerS: 0.03 } };
+    case 'heat-off':
+      return { ...kept, newSlope: { meanCPerS: -0.005, sdCPerS: 0.02 } };
+    case 'coil-in':
+      return { stepC: 2.5, slopeCPerS: 0.03 };
+    case 'tea-in':
+      return { stepC: 0.5, slopeCPerS: 0.01 };
+    case 'stirred':
+      return { stepC: 0.3, slopeCPerS: 0.01 };
+    case 'lid-on':
+    case 'lid-off':
+      return { stepC: 0.05, slopeCPerS: 0.01 };
+    case 'tea-out':
+    case 'hops-in':
+    case 'hops-out':
+      return { stepC: 0.2, slopeCPerS: 0.005 };
+  }
+}
+
+/** Takes in one reading. Never throws, whatever the probe says. */
+export function watchReading(state: WatchState, reading: WatchReading): WatchState {
+  const { atMs } = reading;
+  if (!Number.isFinite(atMs) || (state.lastReadingAtMs !== null && atMs <= state.lastReadingAtMs)) {
+    return judged(state, 'late');
+  }
+  const seen = { ...state, lastReadingAtMs: atMs };
+  const range = judgeRange(reading.tempC);
+  if (range !== 'good' || reading.tempC === null) return judged(seen, range);
+  const { tempC } = reading;
+  const lastGood = state.recent.at(-1) ?? null;
+  const powerOn = isPowerOn(
+    { atMs, tempC },
+    {
+      lastGood,
+      lastReadingAtMs: state.lastReadingAtMs,
+      gapS: gapS(state),
+      noiseC: Math.sqrt(readingVariance(state)),
+    },
+  );
+  if (powerOn) return judged(seen, 'power-on');
+  if (state.bank === null) return starting(seen, { atMs, tempC });
+
+  const elapsedS = (atMs - state.bankAtMs) / 1000;
+  if (elapsedS > LONGEST_BRIDGE_S) return starting({ ...seen, bank: null, recent: [], suspects: [] }, { atMs, tempC });
+  const bank = [...state.bank];
+  if (elapsedS > 0) advanceBank(bank, elapsedS, state.config.lagS, surroundings(state));
+  const belief = believe(bank);
+  const variance = readingVariance(state);
+  const sdC = Math.sqrt(belief.probeVariance + variance);
+  if (isOffTheLine(tempC, belief.probeC, sdC)) return suspected(seen, bank, { atMs, tempC });
+  return accepted(seen, bank, { atMs, tempC }, (tempC - belief.probeC) / sdC, belief.rateCPerS);
+}
+
+function judged(state: WatchState, verdict: WatchVerdict): WatchState {
+  return {
+    ...state,
+    lastVerdict: verdict,
+    verdictCounts: { ...state.verdictCounts, [verdict]: state.verdictCounts[verdict] + 1 },
+  };
+}
+
+/** Before the bank: wait until the newest readings lie within reach of each other. */
+function starting(state: WatchState, good: Suspect): WatchState {
+  const recent = [...state.recent, good].slice(-READINGS_TO_START);
+  const next = judged({ ...state, recent }, 'good');
+  if (recent.length < READINGS_TO_START || !agree(recent)) return next;
+  const middle = [...recent].sort((a, b) => a.tempC - b.tempC)[1]!;
+  return {
+    ...next,
+    bank: startBank(middle.tempC, state.config.lagS),
+    bankAtMs: good.atMs,
+    firstGoodAtMs: state.firstGoodAtMs ?? good.atMs,
+    lastGoodAtMs: good.atMs,
+    suspects: [],
+    trail: [...state.trail, { atMs: good.atMs, tempC: middle.tempC }],
+  };
+}
+
+/** True when no two neighbours are further apart than a kettle moves between them, noise allowed. */
+function agree(readings: readonly Suspect[]): boolean {
+  return readings.every((reading, i) => {
+    const before = readings[i - 1];
+    if (!before) return true;
+    const spanS = Math.min(10, (reading.atMs - before.atMs) / 1000);
+    return Math.abs(reading.tempC - before.tempC) <= 1 + FASTEST_C_PER_S * spanS;
+  });
+}
+
+/** A reading off the line: a spike, unless it is the third in a row that says the same. */
+function suspected(state: WatchState, bank: number[], suspect: Suspect): WatchState {
+  const fresh = state.suspects.filter((s) => suspect.atMs - s.atMs <= SUSPECT_MEMORY_S * 1000);
+  const suspects = [...fresh, suspect].slice(-SUSPECTS_TO_STEP);
+  if (suspects.length < SUSPECTS_TO_STEP || !agree(suspects)) return judged({ ...state, suspects }, 'spike');
+  resettleBank(bank, suspect.tempC, 3);
+  return judged(
+    {
+      ...state,
+      bank,
+      bankAtMs: suspect.atMs,
+      suspects: [],
+      recent: suspects,
+      lastGoodAtMs: suspect.atMs,
+      disturbedAtMs: suspect.atMs,
+      surpriseUp: 0,
+      surpriseDown: 0,
+    },
+    'good',
+  );
+}
+
+/** Surprise a good model gathers each reading, taken off the sums, and the sum at which the slope is taken to have changed. */
+const SURPRISE_ALLOWED = 0.5;
+const SURPRISE_LIMIT = 8;
+/** Readings the white-noise estimate remembers. */
+const WHITE_MEMORY = 120;
+
+function accepted(state: WatchState, bank: number[], good: Suspect, surprise: number, rateCPerS: number): WatchState {
+  const recent = [...state.recent.slice(-2), good];
+  const white = whiteNoise(state, recent);
+  const capped = Math.max(-3, Math.min(3, surprise));
+  let surpriseUp = Math.max(0, state.surpriseUp + capped - SURPRISE_ALLOWED);
+  let surpriseDown = Math.max(0, state.surpriseDown - capped - SURPRISE_ALLOWED);
+  let disturbedAtMs = state.disturbedAtMs;
+  if (surpriseUp > SURPRISE_LIMIT || surpriseDown > SURPRISE_LIMIT) {
+    disturbBank(bank, { stepC: 0.3, slopeCPerS: 0.01 + 0.4 * Math.abs(rateCPerS) });
+    surpriseUp = 0;
+    surpriseDown = 0;
+    disturbedAtMs = good.atMs;
+  }
+  updateBank(bank, good.tempC, readingVariance({ ...state, ...white }));
+  return judged(
+    {
+      ...state,
+      ...white,
+      bank,
+      bankAtMs: good.atMs,
+      recent,
+      suspects: [],
+      lastGoodAtMs: good.atMs,
+      surpriseUp,
+      surpriseDown,
+      disturbedAtMs,
+      trail: trailAfter(state, bank, good.atMs),
+    },
+    'good',
+  );
+}
+
+/** White noise from second differences: the liquid and the eddies hardly bend within three readings. */
+function whiteNoise(state: WatchState, recent: readonly Suspect[]): Pick<WatchState, 'whiteVariance' | 'whiteCount'> {
+  const [a, b, c] = recent;
+  if (!a || !b || !c || (c.atMs - a.atMs) / 1000 > 2 * gapS(state)) return state;
+  const share = (b.atMs - a.atMs) / (c.atMs - a.atMs);
+  const bend = b.tempC - a.tempC - share * (c.tempC - a.tempC);
+  const gain = 1 + share ** 2 + (1 - share) ** 2;
+  const one = Math.min(bend ** 2 / gain, 9 * state.whiteVariance);
+  const whiteCount = Math.min(WHITE_MEMORY, state.whiteCount + 1);
+  // Twenty readings' worth of the starting guess keeps the first few from deciding.
+  return { whiteCount, whiteVariance: state.whiteVariance + (one - state.whiteVariance) / (20 + whiteCount) };
+}
+
+const TRAIL_STEP_S = 5;
+const TRAIL_LENGTH = 240;
+
+/** The estimate every few seconds; when full, every second point of the older half goes. */
+function trailAfter(state: WatchState, bank: readonly number[], atMs: number): WatchState['trail'] {
+  const last = state.trail.at(-1);
+  if (last && atMs - last.atMs < TRAIL_STEP_S * 1000) return state.trail;
+  const trail = [...state.trail, { atMs, tempC: believe(bank).tempC }];
+  if (trail.length <= TRAIL_LENGTH) return trail;
+  return trail.filter((_, i) => i > TRAIL_LENGTH / 2 || i % 2 === 0);
+}
