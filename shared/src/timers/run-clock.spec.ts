@@ -8,7 +8,7 @@ const span = fc.integer({ min: -86_400_000, max: 86_400_000 });
 
 describe(runTimeAt, () => {
   it('is wall time in a real run', () => {
-    fc.assert(fc.property(span, (ms) => expect(runTimeAt(wallClock(WALL_MS), WALL_MS + ms)).toBe(WALL_MS + ms)));
+    fc.assert(fc.property(span, (ms) => runTimeAt(wallClock(WALL_MS), WALL_MS + ms) === WALL_MS + ms));
   });
 
   it('moves thirty times as fast in a rehearsal at thirty', () => {
