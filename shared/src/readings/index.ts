@@ -1,2 +1,3 @@
-
+export * from './downsample.js';
+export * from './gaps.js';
 export * from './reading.js';
