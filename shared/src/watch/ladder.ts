@@ -17,6 +17,9 @@ const RETURN_FOR_S = 10;
 /** A warning is called off when the crossing has been out of sight this long, or this many times further off than the warning was. */
 const OFF_FOR_S = 30;
 const OFF_TIMES = 3;
+/** A liquid leaving the target faster than this (0.3 K/min) is on its way up to be caught later. */
+const LEAVING_C_PER_S = 0.005;
+const SLOPE_WAIT_S = 30;
 /** Most that half a step may bring a `now` forward; steps are a reading apart, save in a fast rehearsal. */
 const LONGEST_HALF_STEP_S = 2;
 
@@ -26,8 +29,10 @@ export interface LadderState {
   readonly stage: LadderStage | 'armed';
   readonly crossing: number;
   readonly lastStepAtMs: number | null;
-  /** False until the first step with an estimate. */
-  readonly seen: boolean;
+  /** When there was an estimate first. */
+  readonly seenAtMs: number | null;
+  /** The liquid has been on the near side; `way-up` when it was found on the far side and moving away, as in heating up. */
+  readonly side: 'unknown' | 'near' | 'way-up';
   /** Since `now`: the liquid has been on the far side. */
   readonly passedAtMs: number | null;
   /** Distance to the target on the near side when `now` was raised, K. */
@@ -43,7 +48,8 @@ export function startLadder(target: CatchTarget): LadderState {
     stage: 'armed',
     crossing: 1,
     lastStepAtMs: null,
-    seen: false,
+    seenAtMs: null,
+    side: 'unknown',
     passedAtMs: null,
     nearC: 0,
     returnSinceMs: null,
@@ -58,6 +64,7 @@ interface Step {
   nearC: number;
   /** Positive towards the target, K/s. */
   towardsCPerS: number;
+  rateSdCPerS: number;
   crossing: Crossing | null;
 }
 
@@ -75,9 +82,8 @@ export function stepLadder(
   const paused = course === null || estimate.status === 'starting' || estimate.status === 'lost';
   if (paused) return { ladder: { ...ladder, lastStepAtMs: nowMs }, raised: [] };
   const step = look(ladder.target, course, nowMs);
-  const arrived = ladder.seen ? ladder : { ...ladder, seen: true };
-  const settled = returned(calledOff(arrived, step), step);
-  const { stage, alerts } = climb(settled, watch, step, !ladder.seen);
+  const settled = returned(calledOff(placed(ladder, watch, step), step), step);
+  const { stage, alerts } = climb(settled, watch, step);
   const raised = alerts.map((raisedStage) => alertOf(settled, raisedStage, step));
   const next = { ...settled, stage, lastStepAtMs: nowMs };
   const isNow = alerts.includes('now') || alerts.includes('missed');
@@ -92,6 +98,7 @@ function look(target: CatchTarget, course: Course, nowMs: number): Step {
     tempC: at.tempC,
     nearC: (target.tempC - at.tempC) * towards,
     towardsCPerS: at.rateCPerS * towards,
+    rateSdCPerS: Math.sqrt(Math.max(0, course.belief.rateVariance)),
     crossing: crossingOf(course, target),
   };
 }
@@ -109,21 +116,37 @@ function alertOf(ladder: LadderState, stage: LadderStage, step: Step): LadderAle
   };
 }
 
+/** On which side of the target the liquid was met. */
+function placed(ladder: LadderState, watch: WatchState, step: Step): LadderState {
+  const seenAtMs = ladder.seenAtMs ?? step.nowMs;
+  if (step.nearC > 0) return { ...ladder, seenAtMs, side: 'near' };
+  if (ladder.side !== 'unknown') return ladder;
+  const leaving = ladder.target.direction === 'falling' && watch.kettle.heating;
+  const isSure = -step.towardsCPerS > 2 * step.rateSdCPerS && -step.towardsCPerS > LEAVING_C_PER_S;
+  return { ...ladder, seenAtMs, side: leaving || isSure ? 'way-up' : 'unknown' };
+}
+
+/** A slope of a few readings is a guess: wait this long for it before calling a target on the far side passed. */
+function isUnsure(ladder: LadderState, step: Step): boolean {
+  const waitedS = (step.nowMs - (ladder.seenAtMs ?? step.nowMs)) / 1000;
+  return waitedS < SLOPE_WAIT_S && step.rateSdCPerS > LEAVING_C_PER_S && step.towardsCPerS < 2 * step.rateSdCPerS;
+}
+
 function climb(
   ladder: LadderState,
   watch: WatchState,
   step: Step,
-  first: boolean,
 ): { stage: LadderState['stage']; alerts: LadderStage[] } {
-  const { stage, target } = ladder;
+  const { stage, target, side } = ladder;
   const kept = { stage, alerts: [] };
   if (stage === 'missed') return kept;
   if (stage === 'now') return isMissed(ladder, step) ? { stage: 'missed', alerts: ['missed'] } : kept;
   if (step.nearC <= 0) {
-    // Below a falling target and climbing is the way up, not a catch.
-    if (step.towardsCPerS < 0 && stage === 'armed') return kept;
-    if (first && -step.nearC > FAR_PAST_C) return { stage: 'missed', alerts: ['missed'] };
-    return { stage: 'now', alerts: first || stage !== 'armed' ? ['now'] : ['stand-by', 'now'] };
+    if (side === 'way-up') return kept;
+    if (side === 'near') return { stage: 'now', alerts: stage === 'armed' ? ['stand-by', 'now'] : ['now'] };
+    if (isUnsure(ladder, step)) return kept;
+    const found: LadderStage = -step.nearC > FAR_PAST_C ? 'missed' : 'now';
+    return { stage: found, alerts: [found] };
   }
   if (step.crossing === null) return kept;
   const leftS = (step.crossing.atMs - step.nowMs) / 1000 - target.reachS;
@@ -174,12 +197,8 @@ function passing(ladder: LadderState, step: Step): LadderState {
 }
 
 function rearmed(ladder: LadderState): LadderState {
-  return {
-    ...startLadder(ladder.target),
-    crossing: ladder.crossing + 1,
-    lastStepAtMs: ladder.lastStepAtMs,
-    seen: true,
-  };
+  const { target, crossing, lastStepAtMs, seenAtMs } = ladder;
+  return { ...startLadder(target), crossing: crossing + 1, lastStepAtMs, seenAtMs, side: 'near' };
 }
 
 /** After `now`: armed again once the liquid is truly back on the near side. */
