@@ -1,0 +1,64 @@
+import { createBrowserRouter, type RouteObject } from 'react-router-dom';
+import { DeskLayout } from './desk-layout.tsx';
+import { NotFoundPage } from './not-found-page.tsx';
+import { RouteError } from './route-error.tsx';
+import { SignedIn } from './signed-in.tsx';
+import { Starting } from './starting.tsx';
+
+/** Every page that is fetched on its own. All are fetched soon after the first paint, so that none is missing later. */
+const pages = {
+  signIn: () => import('./routes/sign-in.tsx').then(({ SignInRoute }) => SignInRoute),
+  home: () => import('./routes/home.tsx').then(({ HomeRoute }) => HomeRoute),
+  recipes: () => import('./routes/recipes.tsx').then(({ RecipesRoute }) => RecipesRoute),
+  recipe: () => import('./routes/recipe.tsx').then(({ RecipeRoute }) => RecipeRoute),
+  batches: () => import('./routes/batches.tsx').then(({ BatchesRoute }) => BatchesRoute),
+  batch: () => import('./routes/batch.tsx').then(({ BatchRoute }) => BatchRoute),
+  record: () => import('./routes/record.tsx').then(({ RecordRoute }) => RecordRoute),
+  run: () => import('./routes/run.tsx').then(({ RunRoute }) => RunRoute),
+  house: () => import('./routes/house.tsx').then(({ HouseRoute }) => HouseRoute),
+  about: () => import('./routes/about.tsx').then(({ AboutRoute }) => AboutRoute),
+};
+
+function page(name: keyof typeof pages): Pick<RouteObject, 'lazy' | 'errorElement' | 'hydrateFallbackElement'> {
+  return {
+    lazy: async () => ({ Component: await pages[name]() }),
+    errorElement: <RouteError />,
+    hydrateFallbackElement: <Starting />,
+  };
+}
+
+export const router = createBrowserRouter([
+  { path: '/sign-in', ...page('signIn') },
+  {
+    element: <SignedIn />,
+    errorElement: <RouteError />,
+    hydrateFallbackElement: <Starting />,
+    children: [
+      { path: '/runs/:runId', ...page('run') },
+      {
+        element: <DeskLayout />,
+        errorElement: <RouteError />,
+        children: [
+          { path: '/', ...page('home') },
+          { path: '/recipes', ...page('recipes') },
+          { path: '/recipes/:recipeId', ...page('recipe') },
+          { path: '/batches', ...page('batches') },
+          { path: '/batches/:batchId', ...page('batch') },
+          { path: '/runs/:runId/record', ...page('record') },
+          { path: '/house', ...page('house') },
+          { path: '/about', ...page('about') },
+          { path: '*', element: <NotFoundPage />, errorElement: <RouteError /> },
+        ],
+      },
+    ],
+  },
+]);
+
+function prefetchPages(): void {
+  for (const load of Object.values(pages)) void load().catch(() => undefined);
+}
+
+// Safari has no requestIdleCallback.
+const whenIdle = (window as Partial<Window>).requestIdleCallback;
+if (whenIdle) whenIdle(prefetchPages, { timeout: 4000 });
+else setTimeout(prefetchPages, 2500);

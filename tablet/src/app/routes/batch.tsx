@@ -1,0 +1,5 @@
+import { BatchPage } from '#features/batches/batch-page.tsx';
+
+export function BatchRoute() {
+  return <BatchPage />;
+}

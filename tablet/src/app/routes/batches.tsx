@@ -1,0 +1,5 @@
+import { BatchesPage } from '#features/batches/batches-page.tsx';
+
+export function BatchesRoute() {
+  return <BatchesPage />;
+}

@@ -1,0 +1,5 @@
+import { HousePage } from '#features/house/house-page.tsx';
+
+export function HouseRoute() {
+  return <HousePage />;
+}

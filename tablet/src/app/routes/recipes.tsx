@@ -1,0 +1,5 @@
+import { RecipesPage } from '#features/recipes/recipes-page.tsx';
+
+export function RecipesRoute() {
+  return <RecipesPage />;
+}

@@ -1,0 +1,5 @@
+import { RunSheetPage } from '#features/run-sheet/run-sheet-page.tsx';
+
+export function RunRoute() {
+  return <RunSheetPage />;
+}

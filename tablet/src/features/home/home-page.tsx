@@ -1,0 +1,5 @@
+import { Page } from '#components/page.tsx';
+
+export function HomePage() {
+  return <Page title="HomePage">{null}</Page>;
+}

@@ -1,0 +1,5 @@
+import { Page } from '#components/page.tsx';
+
+export function RecipesPage() {
+  return <Page title="RecipesPage">{null}</Page>;
+}
