@@ -232,6 +232,8 @@ export const startRehearsalSchema = z
     rate: z.number().min(1).max(60),
     /** Which recipe to practise; the newest revision of the house's first recipe when left out. */
     revisionId: id.optional(),
+    /** Readings come from this probe, such as a trace that is played back, in place of the simulated kettle. */
+    probeId: id.optional(),
     /** Makes the simulated kettle repeatable. */
     seed: z.int().min(1).max(2_147_483_647).optional(),
   })
