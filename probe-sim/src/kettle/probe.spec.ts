@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { followLiquid, shownC, startProbe, wander } from './probe.js';
-import { nextUniform, seedRandom } from './random.js';
+import { nextUniform, seedRandom } from '../random.js';
 import { defaultKettle } from './setup.js';
 
 const setup = { ...defaultKettle().probe, noiseC: 0 };

@@ -1,4 +1,4 @@
-import { nextNormal, seedRandom, type RandomState } from './random.js';
+import { nextNormal, seedRandom, type RandomState } from '../random.js';
 import type { ProbeSetup } from './setup.js';
 
 /** A temperature of the liquid that the probe has not felt yet. */

@@ -1,0 +1,2 @@
+export * from './pace.js';
+export * from './wall-clock.js';

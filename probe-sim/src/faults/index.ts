@@ -1,0 +1,2 @@
+export * from './fault.js';
+export * from './fault-text.js';
