@@ -1,0 +1,27 @@
+import { Module, type DynamicModule } from '@nestjs/common';
+import { AuthModule } from './auth/auth.module.js';
+import { CommonModule } from './common/common.module.js';
+import { ConfigModule } from './config/config.module.js';
+import type { HubConfig } from './config/environment.js';
+import { DatabaseModule } from './database/database.module.js';
+import { HealthModule } from './health/health.module.js';
+import { HousesModule } from './houses/houses.module.js';
+import { MembersModule } from './members/members.module.js';
+
+@Module({})
+export class AppModule {
+  static forRoot(config: HubConfig): DynamicModule {
+    return {
+      module: AppModule,
+      imports: [
+        ConfigModule.forRoot(config),
+        DatabaseModule,
+        CommonModule,
+        HealthModule,
+        HousesModule,
+        MembersModule,
+        AuthModule,
+      ],
+    };
+  }
+}

@@ -1,0 +1,32 @@
+import { Controller, Get } from '@nestjs/common';
+import { ApiBearerAuth, ApiTags } from '@nestjs/swagger';
+import { houseSchema, memberSchema, type House, type Member } from '@steepfall/shared/contracts';
+import { z } from 'zod';
+import { SignedIn } from '../common/access/access.decorators.js';
+import { Actor } from '../common/access/actor.js';
+import { Answers } from '../common/http/answers.decorator.js';
+import { HousesService, presentHouse } from '../houses/houses.service.js';
+import { MembersService, presentMember } from '../members/members.service.js';
+
+const meSchema = z.object({ member: memberSchema, house: houseSchema }).meta({ id: 'Me' });
+
+@ApiTags('auth')
+@ApiBearerAuth()
+@Controller('me')
+export class MeController {
+  constructor(
+    private readonly members: MembersService,
+    private readonly houses: HousesService,
+  ) {}
+
+  @Get()
+  @SignedIn()
+  @Answers(meSchema)
+  async get(@Actor() actor: Actor): Promise<{ member: Member; house: House }> {
+    const [member, house] = await Promise.all([
+      this.members.get(actor.houseId, actor.memberId),
+      this.houses.get(actor.houseId),
+    ]);
+    return { member: presentMember(member), house: presentHouse(house) };
+  }
+}

@@ -1,0 +1,68 @@
+import { ConsoleLogger } from '@nestjs/common';
+import { NestFactory } from '@nestjs/core';
+import type { NestExpressApplication } from '@nestjs/platform-express';
+import cookieParser from 'cookie-parser';
+import { json } from 'express';
+import helmet from 'helmet';
+import { AppModule } from './app.module.js';
+import type { HubConfig } from './config/environment.js';
+import { serveOpenApi } from './open-api.js';
+import { serveTablet } from './serve-tablet.js';
+
+/** The device door takes ten thousand readings in one call, the runs door five hundred events. */
+const WIDE_DOORS = ['/api/device', '/api/runs'];
+const WIDE_BODY = '2mb';
+const USUAL_BODY = '256kb';
+
+/** The whole hub, ready to listen. Tests start the same one. */
+export async function createApp(config: HubConfig): Promise<NestExpressApplication> {
+  const app = await NestFactory.create<NestExpressApplication>(AppModule.forRoot(config), {
+    bodyParser: false,
+    abortOnError: false,
+    forceCloseConnections: true,
+    logger: new ConsoleLogger({
+      json: true,
+      logLevels: config.logLevels,
+      flattenParams: true,
+      redact: ['password', 'accessToken', 'deviceToken', 'refreshToken', 'authorization', 'cookie'],
+    }),
+  });
+  app.enableShutdownHooks();
+  app.set('query parser', 'simple');
+  app.disable('x-powered-by');
+  app.use(
+    helmet({
+      contentSecurityPolicy: {
+        useDefaults: false,
+        directives: {
+          defaultSrc: ["'self'"],
+          scriptSrc: ["'self'"],
+          // Positions and sizes of charts and pop-ups are set as styles of elements.
+          styleSrc: ["'self'", "'unsafe-inline'"],
+          imgSrc: ["'self'", 'data:', 'blob:'],
+          fontSrc: ["'self'"],
+          connectSrc: ["'self'"],
+          mediaSrc: ["'self'", 'data:', 'blob:'],
+          workerSrc: ["'self'", 'blob:'],
+          manifestSrc: ["'self'"],
+          objectSrc: ["'none'"],
+          baseUri: ["'none'"],
+          formAction: ["'self'"],
+          frameAncestors: ["'none'"],
+        },
+      },
+      // The hub itself speaks HTTP on a local network; whoever puts HTTPS in front of it also sends this header.
+      strictTransportSecurity: false,
+      // Both need a secure context and only warn without one.
+      crossOriginOpenerPolicy: false,
+      originAgentCluster: false,
+    }),
+  );
+  app.use(WIDE_DOORS, json({ limit: WIDE_BODY }));
+  app.use(json({ limit: USUAL_BODY }));
+  app.use(cookieParser());
+  app.setGlobalPrefix('api');
+  if (config.tabletDist !== null) serveTablet(app, config.tabletDist);
+  serveOpenApi(app);
+  return app;
+}
