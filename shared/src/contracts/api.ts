@@ -85,6 +85,16 @@ export const createEquipmentSchema = z
   .meta({ id: 'CreateEquipment' });
 export type CreateEquipment = z.infer<typeof createEquipmentSchema>;
 
+/** The whole of it, with the version it was read at. The kind stays what it was. */
+export const updateEquipmentSchema = z
+  .discriminatedUnion('kind', [
+    z.strictObject({ kind: z.literal('kettle'), name, facts: equipmentShapes.kettle, version: z.int() }),
+    z.strictObject({ kind: z.literal('chiller'), name, facts: equipmentShapes.chiller, version: z.int() }),
+    z.strictObject({ kind: z.literal('keg'), name, facts: equipmentShapes.keg, version: z.int() }),
+  ])
+  .meta({ id: 'UpdateEquipment' });
+export type UpdateEquipment = z.infer<typeof updateEquipmentSchema>;
+
 const equipmentRow = { id, version: z.int() };
 export const equipmentSchema = z
   .discriminatedUnion('kind', [
