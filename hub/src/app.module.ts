@@ -1,12 +1,15 @@
 import { Module, type DynamicModule } from '@nestjs/common';
 import { AuthModule } from './auth/auth.module.js';
+import { BatchesModule } from './batches/batches.module.js';
 import { CommonModule } from './common/common.module.js';
 import { ConfigModule } from './config/config.module.js';
 import type { HubConfig } from './config/environment.js';
 import { DatabaseModule } from './database/database.module.js';
+import { EquipmentModule } from './equipment/equipment.module.js';
 import { HealthModule } from './health/health.module.js';
 import { HousesModule } from './houses/houses.module.js';
 import { MembersModule } from './members/members.module.js';
+import { RecipesModule } from './recipes/recipes.module.js';
 
 @Module({})
 export class AppModule {
@@ -21,6 +24,9 @@ export class AppModule {
         HousesModule,
         MembersModule,
         AuthModule,
+        EquipmentModule,
+        RecipesModule,
+        BatchesModule,
       ],
     };
   }

@@ -2,6 +2,7 @@ import { Injectable } from '@nestjs/common';
 import { InjectConnection, InjectModel } from '@nestjs/sequelize';
 import type { House as HouseAnswer, UpdateHouse } from '@steepfall/shared/contracts';
 import { ProblemError } from '@steepfall/shared/problems';
+import type { Transaction } from 'sequelize';
 import { Sequelize } from 'sequelize-typescript';
 import { AuditService } from '../audit/audit.service.js';
 import type { Actor } from '../common/access/actor.js';
@@ -24,6 +25,11 @@ export class HousesService {
     const house = await this.houses.findByPk(houseId);
     if (!house) throw new ProblemError('not-found', 'There is no such house.');
     return house;
+  }
+
+  /** Holds the row until the transaction ends: whoever counts something per house waits here in line. */
+  async lock(houseId: string, transaction: Transaction): Promise<void> {
+    await this.houses.findByPk(houseId, { attributes: ['id'], transaction, lock: transaction.LOCK.UPDATE });
   }
 
   async update(actor: Actor, { version, ...values }: UpdateHouse): Promise<House> {

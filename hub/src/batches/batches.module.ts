@@ -1,0 +1,17 @@
+import { Module } from '@nestjs/common';
+import { SequelizeModule } from '@nestjs/sequelize';
+import { AuditModule } from '../audit/audit.module.js';
+import { EquipmentModule } from '../equipment/equipment.module.js';
+import { HousesModule } from '../houses/houses.module.js';
+import { RecipesModule } from '../recipes/recipes.module.js';
+import { BatchesController } from './batches.controller.js';
+import { BatchesService } from './batches.service.js';
+import { Batch } from './models/batch.model.js';
+
+@Module({
+  imports: [SequelizeModule.forFeature([Batch]), HousesModule, RecipesModule, EquipmentModule, AuditModule],
+  controllers: [BatchesController],
+  providers: [BatchesService],
+  exports: [BatchesService],
+})
+export class BatchesModule {}
