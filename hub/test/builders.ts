@@ -1,12 +1,17 @@
 import { getModelToken } from '@nestjs/sequelize';
-import type { Role } from '@steepfall/shared/contracts';
+import type { CreateEquipment, Role } from '@steepfall/shared/contracts';
+import type { RecipeDocument } from '@steepfall/shared/sheets';
 import type { Model, ModelStatic } from 'sequelize';
 import type { Actor } from '../src/common/access/actor.js';
+import { Batch } from '../src/batches/models/batch.model.js';
 import { newId } from '../src/common/ids.js';
 import { hashPassword } from '../src/common/passwords.js';
+import { Equipment } from '../src/equipment/models/equipment.model.js';
 import { House } from '../src/houses/models/house.model.js';
 import { Membership } from '../src/members/models/membership.model.js';
 import { User } from '../src/members/models/user.model.js';
+import { RecipeRevision } from '../src/recipes/models/recipe-revision.model.js';
+import { Recipe } from '../src/recipes/models/recipe.model.js';
 import { AccessTokensService } from '../src/sessions/access-tokens.service.js';
 import { SessionsService } from '../src/sessions/sessions.service.js';
 import type { TestApp } from './create-test-app.js';
@@ -68,6 +73,131 @@ export async function buildMember(testApp: TestApp, overrides: MemberOverrides =
     createdAtMs: Date.now() + serial,
   });
   return { house, user, member, email, password: TEST_PASSWORD };
+}
+
+const usualEquipment = {
+  kettle: {
+    kind: 'kettle',
+    name: 'Kettle',
+    facts: { volumeL: 30, diameterM: 0.36, massKg: 4, heaterPowerW: 3000, heaterEfficiency: 0.9 },
+  },
+  chiller: { kind: 'chiller', name: 'Coil', facts: { metal: 'stainless', lengthM: 7.6, coolantC: 13 } },
+  keg: { kind: 'keg', name: 'Keg', facts: { volumeL: 19, tareG: 4200, ratedKPa: 900 } },
+} satisfies Record<string, CreateEquipment>;
+
+export function usualEquipmentOf<Kind extends keyof typeof usualEquipment>(kind: Kind): (typeof usualEquipment)[Kind] {
+  return usualEquipment[kind];
+}
+
+export function buildEquipment(
+  testApp: TestApp,
+  house: House,
+  kind: CreateEquipment['kind'],
+  overrides: { name?: string } = {},
+): Promise<Equipment> {
+  return modelOf(testApp, Equipment).create({
+    id: newId(),
+    houseId: house.id,
+    ...usualEquipment[kind],
+    createdAtMs: Date.now(),
+    ...overrides,
+  });
+}
+
+export const usualDocument: RecipeDocument = {
+  volumeL: 20,
+  waterName: 'Reverse-osmosis water',
+  waterL: 22,
+  additions: [
+    { id: 'citric', kind: 'acid', name: 'citric acid', massG: 4 },
+    { id: 'tea', kind: 'tea', name: 'green tea', massG: 100, bag: 'bag 1' },
+    { id: 'hops', kind: 'hops', name: 'hops', massG: 60, bag: 'bag 2' },
+  ],
+  targetPh: { min: 4, max: 4.4 },
+  steep: { tempC: 76, durationS: 180 },
+  hops: { inC: 62, outC: 30 },
+  transferC: 20,
+  gas: { volumes: 2.8, tempC: 4 },
+};
+
+/** A recipe with as many revisions as documents are given; one without any. */
+export async function buildRecipe(
+  testApp: TestApp,
+  overrides: { author?: BuiltMember; name?: string; documents?: RecipeDocument[] } = {},
+): Promise<{ recipe: Recipe; revisions: RecipeRevision[]; author: BuiltMember }> {
+  serial += 1;
+  const author = overrides.author ?? (await buildMember(testApp));
+  const houseId = author.house.id;
+  const recipe = await modelOf(testApp, Recipe).create({
+    id: newId(),
+    houseId,
+    name: overrides.name ?? `Recipe ${serial}`,
+    summary: 'For specs.',
+    createdAtMs: Date.now() + serial,
+  });
+  const revisions: RecipeRevision[] = [];
+  for (const [index, document] of (overrides.documents ?? [usualDocument]).entries()) {
+    const revision = await modelOf(testApp, RecipeRevision).create({
+      id: newId(),
+      houseId,
+      recipeId: recipe.id,
+      number: index + 1,
+      note: `Revision ${index + 1}`,
+      createdAtMs: Date.now(),
+      createdBy: author.member.id,
+      volumeL: document.volumeL,
+      document,
+    });
+    revisions.push(revision);
+  }
+  return { recipe, revisions, author };
+}
+
+export interface BatchParts {
+  revisionId: string;
+  kettleId: string;
+  chillerId: string;
+  kegId: string;
+  plannedOn: string;
+  probeId: string | null;
+}
+
+/** What `POST /api/batches` takes: a recipe and the equipment to brew it on, in the house of the author. */
+export async function buildBatchParts(testApp: TestApp, author: BuiltMember): Promise<BatchParts> {
+  const { revisions } = await buildRecipe(testApp, { author });
+  const [kettle, chiller, keg] = await Promise.all(
+    (['kettle', 'chiller', 'keg'] as const).map((kind) => buildEquipment(testApp, author.house, kind)),
+  );
+  return {
+    revisionId: revisions[0]!.id,
+    kettleId: kettle!.id,
+    chillerId: chiller!.id,
+    kegId: keg!.id,
+    plannedOn: '2026-05-04',
+    probeId: null,
+  };
+}
+
+/** A planned batch, with everything it needs. */
+export async function buildBatch(
+  testApp: TestApp,
+  overrides: { author?: BuiltMember; probeId?: string } = {},
+): Promise<{ batch: Batch; author: BuiltMember; parts: BatchParts }> {
+  serial += 1;
+  const author = overrides.author ?? (await buildMember(testApp));
+  const parts = { ...(await buildBatchParts(testApp, author)), probeId: overrides.probeId ?? null };
+  const batch = await modelOf(testApp, Batch).create({
+    id: newId(),
+    houseId: author.house.id,
+    ...parts,
+    year: 2025,
+    numberInYear: serial,
+    batchNumber: `25-${serial}`,
+    volumeL: usualDocument.volumeL,
+    createdAtMs: Date.now(),
+    createdBy: author.member.id,
+  });
+  return { batch, author, parts };
 }
 
 export interface SignedInMember extends BuiltMember {
