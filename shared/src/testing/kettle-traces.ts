@@ -72,6 +72,9 @@ function drawFrom(seed: number): Draw {
 const GRID_S = 0.1;
 const AFTER_CROSSING_S = 120;
 const LONGEST_S = 2400;
+/** Later than this before the crossing nothing can be learned of a change in time. */
+const LEAST_AFTER_CHANGE_S = 50;
+const LEAST_CHILL_S = 50;
 
 interface Kettle {
   startC: number;
@@ -177,7 +180,7 @@ function drawProbe(draw: Draw): Probe {
     eddyC: draw.uniform(0.06, 0.3),
     eddyMemoryS: draw.uniform(4, 11),
     whiteC: draw.uniform(0.03, 0.14),
-    resolutionC: draw.pick([0.01, 0.0625]),
+    resolutionC: draw.pick([0.01, 0.0625, 0.1]),
     periodS: draw.pick([0.75, 1, 1, 1, 2]),
   };
 }
@@ -227,7 +230,8 @@ export function makeTrace(family: TraceFamily, seed: number): KettleTrace {
     const liquid = simulateLiquid(kettle);
     if (liquid === null) continue;
     const { grid, crossingS } = liquid;
-    if (kettle.flowChange && kettle.flowChange.atS > crossingS - 40) continue;
+    if (kettle.flowChange && kettle.flowChange.atS > crossingS - LEAST_AFTER_CHANGE_S) continue;
+    if (Number.isFinite(kettle.chillFromS) && kettle.chillFromS > crossingS - LEAST_CHILL_S) continue;
     const probe = drawProbe(draw);
     const plain = read(grid, probe, draw);
     const faulty =

@@ -1,5 +1,5 @@
 import { E, EE, ES, F, FE, FF, FS, LOG_WEIGHT, S, SS, STRIDE, T, TE, TF, TS, TT, EDDY_MEMORY_S } from './kalman.js';
-import { predict, update, type Hypothesis } from './kalman.js';
+import { predict, transition, update } from './kalman.js';
 import { slopeLaw, type Surroundings } from './slope-law.js';
 
 /** True lag over told lag: told is off by up to a quarter of the true one. */
@@ -10,9 +10,12 @@ const LEAST_LOG_WEIGHT = -9;
 /** Longest single step of the filters; a gap is crossed in several. */
 const LONGEST_STEP_S = 2;
 
-export function hypotheses(lagS: number): Hypothesis[] {
-  const told = Math.max(lagS, 0.05);
-  return LAG_RATIOS.flatMap((ratio) => EDDIES_C.map((eddyC) => ({ lagS: told * ratio, eddyC })));
+/** Least lag that is told apart from none. */
+const LEAST_LAG_S = 0.05;
+
+/** Lag of the hypotheses from `LAG_RATIOS[i]`, which lie side by side in the bank, one for each of `EDDIES_C`. */
+function lagOf(i: number, toldS: number): number {
+  return Math.max(toldS, LEAST_LAG_S) * LAG_RATIOS[i]!;
 }
 
 /** What the bank as a whole believes. */
@@ -30,8 +33,9 @@ export interface Belief {
 
 export function startBank(tempC: number, lagS: number): number[] {
   const bank: number[] = [];
-  for (const { lagS: tau, eddyC } of hypotheses(lagS)) {
-    const filtered = (eddyC ** 2 * EDDY_MEMORY_S) / (EDDY_MEMORY_S + tau);
+  for (let i = 0; i < LAG_RATIOS.length * EDDIES_C.length; i += 1) {
+    const eddyC = EDDIES_C[i % EDDIES_C.length]!;
+    const filtered = (eddyC ** 2 * EDDY_MEMORY_S) / (EDDY_MEMORY_S + lagOf(Math.floor(i / EDDIES_C.length), lagS));
     const one = new Array<number>(STRIDE).fill(0);
     one[T] = tempC;
     one[F] = tempC;
@@ -48,8 +52,6 @@ export function startBank(tempC: number, lagS: number): number[] {
 
 export function believe(bank: readonly number[]): Belief {
   const count = bank.length / STRIDE;
-  let top = -Infinity;
-  for (let i = 0; i < count; i += 1) top = Math.max(top, bank[i * STRIDE + LOG_WEIGHT]!);
   let sum = 0;
   let t = 0;
   let s = 0;
@@ -64,7 +66,7 @@ export function believe(bank: readonly number[]): Belief {
   const f0 = bank[F]!;
   for (let i = 0; i < count; i += 1) {
     const o = i * STRIDE;
-    const w = Math.exp(bank[o + LOG_WEIGHT]! - top);
+    const w = Math.exp(bank[o + LOG_WEIGHT]!);
     const dt = bank[o + T]! - t0;
     const ds = bank[o + S]! - s0;
     const df = bank[o + F]! - f0;
@@ -93,27 +95,45 @@ export function believe(bank: readonly number[]): Belief {
 
 /** The bank, `durationS` later, with no reading. Changes `bank` in place: callers own a copy. */
 export function advanceBank(bank: number[], durationS: number, lagS: number, around: Surroundings): void {
-  const guesses = hypotheses(lagS);
   const steps = Math.max(1, Math.ceil(durationS / LONGEST_STEP_S));
   const dtS = durationS / steps;
   for (let step = 0; step < steps; step += 1) {
-    for (const [i, guess] of guesses.entries()) {
-      const o = i * STRIDE;
-      predict(bank, o, dtS, guess, slopeLaw(bank[o + T]!, bank[o + S]!, around));
+    const { tempC, rateCPerS } = believe(bank);
+    const law = slopeLaw(tempC, rateCPerS, around);
+    let o = 0;
+    for (let i = 0; i < LAG_RATIOS.length; i += 1) {
+      const move = transition(dtS, lagOf(i, lagS), law);
+      for (let j = 0; j < EDDIES_C.length; j += 1) {
+        predict(bank, o, move, EDDIES_C[j]!);
+        o += STRIDE;
+      }
     }
   }
 }
 
-/** Takes in one reading. Changes `bank` in place. */
-export function updateBank(bank: number[], readingC: number, whiteVariance: number): void {
+/** Natural logarithm of the sum of the weights. */
+function logTotal(bank: readonly number[]): number {
+  let sum = 0;
+  for (let o = LOG_WEIGHT; o < bank.length; o += STRIDE) sum += Math.exp(bank[o]!);
+  return Math.log(sum);
+}
+
+/**
+ * Takes in one reading. Changes `bank` in place.
+ *
+ * @returns the logarithm of how likely the bank thought that reading.
+ */
+export function updateBank(bank: number[], readingC: number, whiteVariance: number): number {
+  const before = logTotal(bank);
   let top = -Infinity;
   for (let o = 0; o < bank.length; o += STRIDE) {
     update(bank, o, readingC, whiteVariance);
     top = Math.max(top, bank[o + LOG_WEIGHT]!);
   }
-  for (let o = 0; o < bank.length; o += STRIDE) {
-    bank[o + LOG_WEIGHT] = Math.max(LEAST_LOG_WEIGHT, bank[o + LOG_WEIGHT]! - top);
-  }
+  for (let o = LOG_WEIGHT; o < bank.length; o += STRIDE) bank[o]! -= top;
+  const evidence = top + logTotal(bank) - before;
+  for (let o = LOG_WEIGHT; o < bank.length; o += STRIDE) bank[o] = Math.max(LEAST_LOG_WEIGHT, bank[o]!);
+  return evidence;
 }
 
 /** Something was done to the kettle: the liquid may have stepped and the slope may be another. */
@@ -160,15 +180,16 @@ export function resettleBank(bank: number[], readingC: number, stepC: number): v
 }
 
 /** Mean and spread of the lag over the bank, in seconds. */
-export function lagBelief(bank: readonly number[], lagS: number): { lagS: number; sdS: number } {
+export function lagBelief(bank: readonly number[], toldS: number): { lagS: number; sdS: number } {
   let sum = 0;
   let mean = 0;
   let square = 0;
-  for (const [i, guess] of hypotheses(lagS).entries()) {
+  for (let i = 0; i < bank.length / STRIDE; i += 1) {
     const w = Math.exp(bank[i * STRIDE + LOG_WEIGHT]!);
+    const lagS = lagOf(Math.floor(i / EDDIES_C.length), toldS);
     sum += w;
-    mean += w * guess.lagS;
-    square += w * guess.lagS ** 2;
+    mean += w * lagS;
+    square += w * lagS ** 2;
   }
   mean /= sum;
   return { lagS: mean, sdS: Math.sqrt(Math.max(0, square / sum - mean * mean)) };

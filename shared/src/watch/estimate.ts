@@ -1,4 +1,5 @@
-import { believe, lagBelief, type Belief } from './bank.js';
+import { lagBelief, type Belief } from './bank.js';
+import { blend } from './rivals.js';
 import { slopeLaw } from './slope-law.js';
 import type { WatchState } from './state.js';
 import type { WatchEstimate, WatchMode, WatchStatus } from './types.js';
@@ -29,7 +30,7 @@ export interface Course {
 
 export function courseOf(state: WatchState): Course | null {
   if (state.bank === null) return null;
-  const belief = believe(state.bank);
+  const belief = blend(state.bank, state.rivals);
   const law = slopeLaw(belief.tempC, belief.rateCPerS, surroundings(state));
   return {
     startMs: state.bankAtMs,

@@ -24,13 +24,6 @@ export const ES = 13;
 export const SS = 14;
 export const STRIDE = 15;
 
-/** What a hypothesis holds to be so. */
-export interface Hypothesis {
-  lagS: number;
-  /** Standard deviation of the eddies in K. */
-  eddyC: number;
-}
-
 /** How the slope itself changes: it decays at `decayPerS`, and wanders. */
 export interface SlopeLaw {
   decayPerS: number;
@@ -45,28 +38,61 @@ export const EDDY_MEMORY_S = 7;
 /** Variance in K^2 that the liquid gains each second for all that the model leaves out. */
 const LIQUID_WANDER = 4e-6;
 
-/** Moves one hypothesis `dtS` ahead; `dtS` is at most a few seconds. */
-export function predict(x: number[], o: number, dtS: number, { lagS, eddyC }: Hypothesis, law: SlopeLaw): void {
+/** One step in time for all hypotheses of the same lag. */
+export interface Transition {
+  dtS: number;
+  /** What F keeps of itself, and takes of T, E and S. */
+  keep: number;
+  fromT: number;
+  fromE: number;
+  fromS: number;
+  /** What E keeps of itself. */
+  memory: number;
+  /** What T gains of S, what S keeps of itself, and what it keeps of its error. */
+  run: number;
+  slopeKeep: number;
+  slopeGain: number;
+  slopeVariance: number;
+  /** Variance that F, and F with E, gain for each K^2 that E gains. */
+  stirF: number;
+  stirFE: number;
+}
+
+/** `dtS` is at most a few seconds: eddies within a step are only roughly accounted for. */
+export function transition(dtS: number, lagS: number, law: SlopeLaw): Transition {
   const keep = Math.exp(-dtS / lagS);
   const memory = Math.exp(-dtS / EDDY_MEMORY_S);
   // The closed form divides by the difference of the two time constants.
-  const gap = EDDY_MEMORY_S - lagS;
-  const fromE = Math.abs(gap) < 1e-3 ? (dtS / lagS) * keep : (EDDY_MEMORY_S / gap) * (memory - keep);
-  const fromT = 1 - keep;
-  const fromS = dtS - lagS * fromT;
+  const apart = EDDY_MEMORY_S - lagS;
   const decay = law.decayPerS * dtS;
-  const slopeKeep = 1 - decay + 0.5 * decay * decay;
-  const run = dtS * (1 - 0.5 * decay);
-  const slopeGain = 1 - (1 + law.decayGrows) * decay;
+  const share = dtS / lagS;
+  return {
+    dtS,
+    keep,
+    fromT: 1 - keep,
+    fromE: Math.abs(apart) < 1e-3 ? share * keep : (EDDY_MEMORY_S / apart) * (memory - keep),
+    fromS: dtS - lagS * (1 - keep),
+    memory,
+    run: dtS * (1 - 0.5 * decay),
+    slopeKeep: 1 - decay + 0.5 * decay * decay,
+    slopeGain: 1 - (1 + law.decayGrows) * decay,
+    slopeVariance: law.wander * dtS,
+    stirF: (share * share) / (3 * (1 + share * share)),
+    stirFE: share / (2 * (1 + share)),
+  };
+}
 
+/** Moves one hypothesis, whose eddies have the standard deviation `eddyC`, ahead by `step`. */
+export function predict(x: number[], o: number, step: Transition, eddyC: number): void {
+  const { dtS, keep, fromT, fromE, fromS, memory, slopeGain } = step;
   const t = x[o + T]!;
   const f = x[o + F]!;
   const e = x[o + E]!;
   const s = x[o + S]!;
-  x[o + T] = t + run * s;
+  x[o + T] = t + step.run * s;
   x[o + F] = keep * f + fromT * t + fromE * e + fromS * s;
   x[o + E] = memory * e;
-  x[o + S] = slopeKeep * s;
+  x[o + S] = step.slopeKeep * s;
 
   const tt = x[o + TT]!;
   const tf = x[o + TF]!;
@@ -88,17 +114,16 @@ export function predict(x: number[], o: number, dtS: number, { lagS, eddyC }: Hy
   const b3 = fromT * te + keep * fe + fromE * ee + fromS * es;
   const b4 = fromT * ts + keep * fs + fromE * es + fromS * ss;
   const stir = eddyC * eddyC * (1 - memory * memory);
-  const share = dtS / lagS;
   x[o + TT] = a1 + dtS * a4 + LIQUID_WANDER * dtS;
   x[o + TF] = fromT * a1 + keep * a2 + fromE * a3 + fromS * a4;
   x[o + TE] = memory * a3;
   x[o + TS] = slopeGain * a4;
-  x[o + FF] = fromT * b1 + keep * b2 + fromE * b3 + fromS * b4 + (stir * share * share) / (3 * (1 + share * share));
-  x[o + FE] = memory * b3 + (stir * share) / (2 * (1 + share));
+  x[o + FF] = fromT * b1 + keep * b2 + fromE * b3 + fromS * b4 + stir * step.stirF;
+  x[o + FE] = memory * b3 + stir * step.stirFE;
   x[o + FS] = slopeGain * b4;
   x[o + EE] = memory * memory * ee + stir;
   x[o + ES] = slopeGain * memory * es;
-  x[o + SS] = slopeGain * slopeGain * ss + law.wander * dtS;
+  x[o + SS] = slopeGain * slopeGain * ss + step.slopeVariance;
 }
 
 /** A reading more than this many standard deviations out counts as this many; the tails of real noise are heavy. */

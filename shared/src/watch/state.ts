@@ -1,3 +1,4 @@
+import type { Rival } from './rivals.js';
 import type { WatchConfig, WatchVerdict } from './types.js';
 
 /** What the kettle is taken to be doing, from the steps done; the slope has the last word. */
@@ -33,9 +34,7 @@ export interface WatchState {
   /** Running estimate of the variance of the white part of the noise, and how many readings it rests on. */
   readonly whiteVariance: number;
   readonly whiteCount: number;
-  /** Two one-sided sums of normalised surprises: they grow when the slope has changed. */
-  readonly surpriseUp: number;
-  readonly surpriseDown: number;
+  readonly rivals: readonly Rival[];
   /** Last instant at which the liquid was disturbed or the slope found changed. */
   readonly disturbedAtMs: number | null;
   /** The estimate so far, thinned, to say when a target was crossed. */
@@ -68,8 +67,7 @@ export function startWatch(config: WatchConfig): WatchState {
     bankAtMs: 0,
     whiteVariance: 0.1 ** 2,
     whiteCount: 0,
-    surpriseUp: 0,
-    surpriseDown: 0,
+    rivals: [],
     disturbedAtMs: null,
     trail: [],
   };

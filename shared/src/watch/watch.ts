@@ -1,4 +1,5 @@
 import { advanceBank, believe, disturbBank, resettleBank, startBank, updateBank, type Disturbance } from './bank.js';
+import { advanceRivals, updateRivals } from './rivals.js';
 import { CHILLING_C_PER_S, type Surroundings } from './slope-law.js';
 import type { Suspect, WatchState } from './state.js';
 import type { WatchAct, WatchActDone, WatchReading, WatchVerdict } from './types.js';
@@ -50,7 +51,7 @@ export function watchAct(state: WatchState, done: WatchActDone): WatchState {
   }
   const belief = believe(bank);
   disturbBank(bank, disturbanceOf(done.act, belief, surroundings(state)));
-  return { ...state, kettle, bank, bankAtMs: atMs, disturbedAtMs: atMs, surpriseUp: 0, surpriseDown: 0 };
+  return { ...state, kettle, bank, bankAtMs: atMs, disturbedAtMs: atMs, rivals: [] };
 }
 
 function kettleAfter({ kettle }: WatchState, act: WatchAct): WatchState['kettle'] {
@@ -136,11 +137,13 @@ export function watchReading(state: WatchState, reading: WatchReading): WatchSta
   if (elapsedS > LONGEST_BRIDGE_S) return starting({ ...seen, bank: null, recent: [], suspects: [] }, { atMs, tempC });
   const bank = [...state.bank];
   if (elapsedS > 0) advanceBank(bank, elapsedS, state.config.lagS, surroundings(state));
-  const belief = believe(bank);
-  const variance = readingVariance(state);
-  const sdC = Math.sqrt(belief.probeVariance + variance);
-  if (isOffTheLine(tempC, belief.probeC, sdC)) return suspected(seen, bank, { atMs, tempC });
-  return accepted(seen, bank, { atMs, tempC }, (tempC - belief.probeC) / sdC, belief.rateCPerS);
+  const rivals = advanceRivals(state.rivals, elapsedS, atMs, state.config.lagS, surroundings(state));
+  const white = readingVariance(state);
+  const isOff = [bank, ...rivals.map((rival) => rival.bank)].every((opinion) => {
+    const { probeC, probeVariance } = believe(opinion);
+    return isOffTheLine(tempC, probeC, Math.sqrt(probeVariance + white));
+  });
+  return isOff ? suspected(seen, bank, { atMs, tempC }) : accepted(seen, bank, rivals, { atMs, tempC });
 }
 
 function judged(state: WatchState, verdict: WatchVerdict): WatchState {
@@ -193,46 +196,39 @@ function suspected(state: WatchState, bank: number[], suspect: Suspect): WatchSt
       recent: suspects,
       lastGoodAtMs: suspect.atMs,
       disturbedAtMs: suspect.atMs,
-      surpriseUp: 0,
-      surpriseDown: 0,
+      rivals: [],
     },
     'good',
   );
 }
 
-/** Surprise a good model gathers each reading, taken off the sums, and the sum at which the slope is taken to have changed. */
-const SURPRISE_ALLOWED = 0.5;
-const SURPRISE_LIMIT = 8;
 /** Readings the white-noise estimate remembers. */
 const WHITE_MEMORY = 120;
 
-function accepted(state: WatchState, bank: number[], good: Suspect, surprise: number, rateCPerS: number): WatchState {
+function accepted(
+  state: WatchState,
+  bank: number[],
+  rivals: ReturnType<typeof advanceRivals>,
+  good: Suspect,
+): WatchState {
   const recent = [...state.recent.slice(-2), good];
   const white = whiteNoise(state, recent);
-  const capped = Math.max(-3, Math.min(3, surprise));
-  let surpriseUp = Math.max(0, state.surpriseUp + capped - SURPRISE_ALLOWED);
-  let surpriseDown = Math.max(0, state.surpriseDown - capped - SURPRISE_ALLOWED);
-  let disturbedAtMs = state.disturbedAtMs;
-  if (surpriseUp > SURPRISE_LIMIT || surpriseDown > SURPRISE_LIMIT) {
-    disturbBank(bank, { stepC: 0.3, slopeCPerS: 0.01 + 0.4 * Math.abs(rateCPerS) });
-    surpriseUp = 0;
-    surpriseDown = 0;
-    disturbedAtMs = good.atMs;
-  }
-  updateBank(bank, good.tempC, readingVariance({ ...state, ...white }));
+  const variance = readingVariance({ ...state, ...white });
+  const evidence = updateBank(bank, good.tempC, variance);
+  const contest = updateRivals(rivals, bank, evidence, good, variance);
+  const standing = contest.winner ?? bank;
   return judged(
     {
       ...state,
       ...white,
-      bank,
+      bank: standing,
       bankAtMs: good.atMs,
+      rivals: contest.rivals,
       recent,
       suspects: [],
       lastGoodAtMs: good.atMs,
-      surpriseUp,
-      surpriseDown,
-      disturbedAtMs,
-      trail: trailAfter(state, bank, good.atMs),
+      disturbedAtMs: contest.winner ? good.atMs : state.disturbedAtMs,
+      trail: trailAfter(state, standing, good.atMs),
     },
     'good',
   );
