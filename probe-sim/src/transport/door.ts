@@ -52,12 +52,16 @@ export function errorOfProblem(problem: Problem, retryAfterMs: number | null = n
   return new BatchRefusedError(detail, problem.status === 413);
 }
 
-/** The address of a hub from what a person typed, without a slash at the end. */
+/**
+ * The address of a hub from what a person typed.
+ *
+ * @throws RangeError when it is no web address, or goes on after the host: a hub has the host to itself.
+ */
 export function hubAddress(text: string): string {
   const address = text.includes('://') ? text : `http://${text}`;
   const url = URL.canParse(address) ? new URL(address) : null;
-  if (!url || !['http:', 'https:'].includes(url.protocol)) {
+  if (!url || !['http:', 'https:'].includes(url.protocol) || url.pathname !== '/' || url.search || url.hash) {
     throw new RangeError(`"${text}" is no address of a hub. Write http://host:port.`);
   }
-  return url.href.replace(/\/+$/, '');
+  return url.origin;
 }

@@ -171,7 +171,7 @@ describe(hubAddress, () => {
   it('takes what people type', () => {
     expect(hubAddress('localhost:4680')).toBe('http://localhost:4680');
     expect(hubAddress('https://hub.example/')).toBe('https://hub.example');
-    for (const wrong of ['ftp://hub', 'http://', '://', 'http://a b'])
+    for (const wrong of ['ftp://hub', 'http://', '://', 'http://a b', 'http://hub/run?a=b'])
       expect(() => hubAddress(wrong)).toThrow(RangeError);
   });
 });
