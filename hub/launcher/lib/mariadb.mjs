@@ -323,7 +323,7 @@ function endWithParent() {
  * @param {number} from
  */
 async function waitUntilReady(server, paths, from) {
-  for (const untilMs = performance.now() + startLimitMs; performance.now() < untilMs; ) {
+  for (const untilMs = performance.now() + startLimitMs; performance.now() < untilMs;) {
     await sleep(40);
     if (server.exitCode !== null || server.signalCode !== null) return new Promise(() => {});
     const said = readLog(paths.log, from);

@@ -1,6 +1,6 @@
 import { spawn } from 'node:child_process';
 import { once } from 'node:events';
-import { readFileSync } from 'node:fs';
+import { readdirSync, readFileSync } from 'node:fs';
 import { setTimeout as sleep } from 'node:timers/promises';
 import { root } from './paths.mjs';
 import { LauncherError } from './launcher-error.mjs';
@@ -17,7 +17,8 @@ import { LauncherError } from './launcher-error.mjs';
  */
 export async function run(command, args, { isQuiet = false, env = process.env } = {}) {
   const code = await runToCode(command, args, { isQuiet, env });
-  if (code !== 0) throw new LauncherError(`"${[command, ...args].join(' ')}" failed (${code}). Its output above says why.`);
+  if (code !== 0)
+    throw new LauncherError(`"${[command, ...args].join(' ')}" failed (${code}). Its output above says why.`);
 }
 
 /**
@@ -27,7 +28,11 @@ export async function run(command, args, { isQuiet = false, env = process.env } 
  * @returns {Promise<number>} the exit code
  */
 export async function runToCode(command, args, { isQuiet = false, env = process.env } = {}) {
-  const child = spawn(command, args, { cwd: root, env, stdio: ['ignore', isQuiet ? 'pipe' : 'inherit', isQuiet ? 'pipe' : 'inherit'] });
+  const child = spawn(command, args, {
+    cwd: root,
+    env,
+    stdio: ['ignore', isQuiet ? 'pipe' : 'inherit', isQuiet ? 'pipe' : 'inherit'],
+  });
   let output = '';
   child.stdout?.on('data', (chunk) => (output += chunk));
   child.stderr?.on('data', (chunk) => (output += chunk));
@@ -49,7 +54,8 @@ export async function outputOf(command, args, env = process.env) {
   let output = '';
   child.stdout.on('data', (chunk) => (output += chunk));
   const [code] = await once(child, 'close');
-  if (code !== 0) throw new LauncherError(`"${[command, ...args].join(' ')}" failed (${code}). Its output above says why.`);
+  if (code !== 0)
+    throw new LauncherError(`"${[command, ...args].join(' ')}" failed (${code}). Its output above says why.`);
   return output;
 }
 
@@ -84,26 +90,56 @@ export function isAlive(pid) {
 }
 
 /**
+ * What tells a process from a later one with the same id: the moment it started.
  * @param {number} pid
- * @returns {string} its command line; empty when it is gone
+ * @returns {string | null} null when there is no such process
  */
-export function commandLineOf(pid) {
+export function startMark(pid) {
   try {
-    return readFileSync(`/proc/${pid}/cmdline`, 'utf8').replaceAll('\0', ' ');
+    // The name in parentheses may hold spaces; the start time is the twentieth field after it.
+    return (
+      readFileSync(`/proc/${pid}/stat`, 'utf8')
+        .replace(/^.*\) /s, '')
+        .split(' ')[19] ?? null
+    );
   } catch {
-    return '';
+    return null;
   }
 }
 
 /**
- * Stops a process that an earlier start left behind, known by its id and by what its command line must hold.
- *
- * @param {number} pid
- * @param {string} mark
+ * @param {string} argument
+ * @returns {number[]} processes that were started with exactly this argument
  */
-export async function stopLeftover(pid, mark) {
-  if (!commandLineOf(pid).includes(mark)) return;
-  process.kill(pid, 'SIGTERM');
-  for (let waitedMs = 0; isAlive(pid) && waitedMs < 30_000; waitedMs += 100) await sleep(100);
-  if (isAlive(pid)) process.kill(pid, 'SIGKILL');
+export function findByArgument(argument) {
+  return readdirSync('/proc')
+    .map(Number)
+    .filter((pid) => pid > 0 && pid !== process.pid && argumentsOf(pid).includes(argument) && isAlive(pid));
+}
+
+/**
+ * @param {number} pid
+ * @returns {string[]}
+ */
+function argumentsOf(pid) {
+  try {
+    return readFileSync(`/proc/${pid}/cmdline`, 'utf8').split('\0');
+  } catch {
+    return [];
+  }
+}
+
+/**
+ * Ends one process by its id: asks first, insists after the grace.
+ * @param {number} pid
+ * @param {number} graceMs
+ */
+export async function endProcess(pid, graceMs) {
+  const mark = startMark(pid);
+  const isThere = () => isAlive(pid) && startMark(pid) === mark;
+  for (const signal of /** @type {const} */ (['SIGTERM', 'SIGKILL'])) {
+    if (!isThere()) return;
+    process.kill(pid, signal);
+    for (let waitedMs = 0; isThere() && waitedMs < graceMs; waitedMs += 50) await sleep(50);
+  }
 }
