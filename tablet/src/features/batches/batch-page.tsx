@@ -1,5 +1,66 @@
+import { useQuery } from '@tanstack/react-query';
+import { formatVolume } from '@steepfall/shared/units';
+import { useParams } from 'react-router-dom';
+import { ButtonLink } from '#components/button.tsx';
+import { EmptyState } from '#components/empty-state.tsx';
 import { Page } from '#components/page.tsx';
+import { Failed, Waiting } from '#components/quiet-state.tsx';
+import { batchQuery } from '#lib/hub-queries.ts';
+import { HubProblemError } from '#lib/http.ts';
+import { useMay } from '#lib/session.ts';
+import { calendarDay, failureWords } from '#lib/words.ts';
+import { BatchStatus } from './batch-status.tsx';
+import { RunRecord } from './run-record.tsx';
 
 export function BatchPage() {
-  return <Page title="BatchPage">{null}</Page>;
+  const { batchId = '' } = useParams();
+  const may = useMay();
+  const batch = useQuery({ ...batchQuery(batchId), refetchInterval: 15_000 });
+  if (!batch.data) {
+    const isGone = batch.error instanceof HubProblemError && batch.error.problem.status === 404;
+    return (
+      <Page title={isGone ? 'No such batch' : 'Batch'}>
+        {batch.error ? (
+          <Failed title="The batch could not be fetched" onRetry={() => void batch.refetch()}>
+            {failureWords(batch.error)}
+          </Failed>
+        ) : (
+          <Waiting>Fetching the batch.</Waiting>
+        )}
+      </Page>
+    );
+  }
+  const { batchNumber, recipeName, recipeId, revisionNumber, plannedOn, volumeL, status, run } = batch.data;
+  return (
+    <Page
+      title={recipeName}
+      tabTitle={`Batch ${batchNumber}`}
+      above={
+        <span className="flex flex-wrap items-center gap-x-5">
+          <span className="font-medium text-text tabular-nums">batch {batchNumber}</span>
+          <BatchStatus status={status} />
+        </span>
+      }
+      lead={`${calendarDay(plannedOn)} · ${formatVolume(volumeL, { unit: 'L' })} · revision ${revisionNumber}`}
+      action={
+        run?.status === 'running' && may('runs:read') ? (
+          <ButtonLink look="primary" size="sheet" to={`/runs/${run.id}`}>
+            Open the run sheet
+          </ButtonLink>
+        ) : may('recipes:read') ? (
+          <ButtonLink to={`/recipes/${recipeId}`}>The recipe</ButtonLink>
+        ) : null
+      }
+    >
+      {run && may('runs:read') ? (
+        <RunRecord run={run} />
+      ) : run ? (
+        <p className="max-w-prose text-lead text-soft">How the day went is shown to those who brew.</p>
+      ) : (
+        <EmptyState action={<ButtonLink to="/">Go to today</ButtonLink>}>
+          This batch has not been run yet. Its line is drawn here while it runs, and stays.
+        </EmptyState>
+      )}
+    </Page>
+  );
 }

@@ -1,0 +1,243 @@
+import { useEffect, useMemo, useRef, useState } from 'react';
+import { formatTemp } from '@steepfall/shared/units';
+import uPlot from 'uplot';
+import 'uplot/dist/uPlot.min.css';
+import { directionDress } from '#components/direction-dress.ts';
+import type { LinePoint, Stretch } from '#lib/liquid-line.ts';
+import { useGround } from '#lib/theme.ts';
+import { clockTime } from '#lib/words.ts';
+import { layoutFlags, PENNANT_PX, type Flag } from './flag-layout.ts';
+
+export interface Level {
+  tempC: number;
+  title: string;
+}
+
+interface CurveProps {
+  line: readonly LinePoint[];
+  stretches: readonly Stretch[];
+  levels: readonly Level[];
+  flags: readonly Flag[];
+  /** The part of the run that is shown. */
+  fromMs: number;
+  toMs: number;
+}
+
+interface Geometry {
+  left: number;
+  top: number;
+  width: number;
+  height: number;
+  minC: number;
+  maxC: number;
+}
+
+const LANE_PX = 30;
+const NARROW_PX = 620;
+
+function cssColor(name: string): string {
+  return getComputedStyle(document.documentElement).getPropertyValue(name).trim();
+}
+
+function hueAlong(stretches: readonly Stretch[]) {
+  return (plot: uPlot): string | CanvasGradient => {
+    const { left, width } = plot.bbox;
+    if (!(width > 0) || stretches.length === 0) return cssColor('--text');
+    const gradient = plot.ctx.createLinearGradient(left, 0, left + width, 0);
+    const share = (atMs: number) => Math.min(1, Math.max(0, (plot.valToPos(atMs, 'x', true) - left) / width));
+    for (const { doing, fromMs, toMs } of stretches) {
+      const color = cssColor(directionDress[doing].line.slice(4, -1));
+      gradient.addColorStop(share(fromMs), color);
+      gradient.addColorStop(share(toMs), color);
+    }
+    return gradient;
+  };
+}
+
+function temperatureAt(line: readonly LinePoint[], atMs: number): number | null {
+  const index = line.findIndex((point) => point.atMs >= atMs);
+  if (index < 0) return line.at(-1)?.tempC ?? null;
+  const after = line[index]!;
+  const before = line[index - 1] ?? after;
+  const span = after.atMs - before.atMs;
+  return span <= 0 ? after.tempC : before.tempC + ((after.tempC - before.tempC) * (atMs - before.atMs)) / span;
+}
+
+/** The recorded line with its levels, and what happened on it as flags. The drawing only: its words and its table stand beside it. */
+export function Curve({ line, stretches, levels, flags, fromMs, toMs }: CurveProps) {
+  const host = useRef<HTMLDivElement>(null);
+  const readout = useRef<HTMLParagraphElement>(null);
+  const [geometry, setGeometry] = useState<Geometry | null>(null);
+  const ground = useGround();
+
+  useEffect(() => {
+    const element = host.current;
+    if (!element) return;
+    const size = () => ({ width: element.clientWidth, height: element.clientHeight });
+    const temps = [
+      ...line.filter(({ atMs }) => atMs >= fromMs && atMs <= toMs).map(({ tempC }) => tempC),
+      ...levels.map(({ tempC }) => tempC),
+    ];
+    const low = Math.min(...temps);
+    const high = Math.max(...temps);
+    const margin = Math.max(1, (high - low) * 0.06);
+    const axis: uPlot.Axis = {
+      stroke: cssColor('--soft'),
+      font: "15px 'Space Grotesk Variable', 'Space Grotesk Fallback', sans-serif",
+      ticks: { show: false },
+    };
+    const options: uPlot.Options = {
+      ...size(),
+      ms: 1,
+      padding: [4 * LANE_PX + 12, 12, 0, 0],
+      legend: { show: false },
+      cursor: { drag: { x: false, y: false }, y: false, points: { size: 12 } },
+      scales: {
+        x: { time: true, range: [fromMs, toMs] },
+        y: { range: [low - margin, high + margin] },
+      },
+      series: [{}, { stroke: hueAlong(stretches), width: 4, points: { show: false }, spanGaps: false }],
+      axes: [
+        { ...axis, grid: { show: false }, space: 90, values: (_plot, splits) => splits.map((atMs) => clockTime(atMs)) },
+        {
+          ...axis,
+          grid: { stroke: cssColor('--hair'), width: 1 },
+          size: 52,
+          values: (_plot, splits) => splits.map((tempC) => `${tempC}°`),
+        },
+      ],
+      hooks: {
+        draw: [
+          (plot) => {
+            const ratio = plot.bbox.width / plot.over.clientWidth || 1;
+            const next: Geometry = {
+              left: plot.bbox.left / ratio,
+              top: plot.bbox.top / ratio,
+              width: plot.over.clientWidth,
+              height: plot.over.clientHeight,
+              minC: plot.scales['y']?.min ?? 0,
+              maxC: plot.scales['y']?.max ?? 1,
+            };
+            setGeometry((known) => (JSON.stringify(known) === JSON.stringify(next) ? known : next));
+          },
+        ],
+        setCursor: [
+          (plot) => {
+            if (!readout.current) return;
+            const index = plot.cursor.idx;
+            const point = index === null || index === undefined ? undefined : line[index];
+            readout.current.textContent = point
+              ? `${clockTime(point.atMs)}  ${formatTemp(point.tempC, { unit: 'C' })}`
+              : '';
+          },
+        ],
+      },
+    };
+    const data: uPlot.AlignedData = [line.map(({ atMs }) => atMs), line.map(({ tempC }) => tempC)];
+    const plot = new uPlot(options, data, element);
+    const observer = new ResizeObserver(() => plot.setSize(size()));
+    observer.observe(element);
+    return () => {
+      observer.disconnect();
+      plot.destroy();
+    };
+  }, [line, stretches, levels, fromMs, toMs, ground]);
+
+  return (
+    <div className="relative" aria-hidden="true">
+      <div ref={host} className="h-[26rem] w-full sm:h-[32rem]" />
+      <p ref={readout} className="absolute right-3 top-0 whitespace-pre text-body font-medium tabular-nums" />
+      {geometry ? <Overlay {...{ geometry, line, levels, flags, fromMs, toMs }} /> : null}
+    </div>
+  );
+}
+
+function Overlay({
+  geometry,
+  line,
+  levels,
+  flags,
+  fromMs,
+  toMs,
+}: Omit<CurveProps, 'stretches'> & { geometry: Geometry }) {
+  const { left, top, width, height, minC, maxC } = geometry;
+  const isNarrow = width < NARROW_PX;
+  const xOf = (atMs: number) => ((atMs - fromMs) / (toMs - fromMs)) * width;
+  const yOf = (tempC: number) => height * (1 - (tempC - minC) / (maxC - minC));
+  const placed = useMemo(
+    () => layoutFlags(flags, { width, lanes: 4, hasLabels: !isNarrow, xOf }),
+    // eslint-disable-next-line react-hooks/exhaustive-deps -- xOf follows from the others
+    [flags, width, isNarrow, fromMs, toMs],
+  );
+  return (
+    <svg className="pointer-events-none absolute inset-0 h-full w-full overflow-visible" fontFamily="inherit">
+      <g transform={`translate(${left} ${top})`}>
+        {levels.map(({ tempC, title }) => (
+          <g key={`${tempC}${title}`}>
+            <path d={`M0 ${yOf(tempC)}H${width}`} stroke="var(--edge)" strokeWidth="1.5" strokeDasharray="8 8" />
+            <text
+              x={width - 4}
+              y={yOf(tempC) - 7}
+              textAnchor="end"
+              fontSize="15"
+              fill="var(--soft)"
+              stroke="var(--ground)"
+              strokeWidth="5"
+              paintOrder="stroke"
+            >
+              {isNarrow ? formatTemp(tempC, { unit: 'C' }) : `${title} ${formatTemp(tempC, { unit: 'C' })}`}
+            </text>
+          </g>
+        ))}
+        {placed.map((flag) => {
+          const y = -(flag.lane + 1) * LANE_PX;
+          const foot = temperatureAt(line, flag.atMs);
+          return (
+            <g key={flag.id} transform={`translate(${flag.x} 0)`}>
+              <path
+                d={`M0 ${y}V${foot === null ? height : yOf(foot) - 8}`}
+                stroke="var(--text)"
+                strokeWidth="1.5"
+                opacity="0.55"
+              />
+              {foot === null ? null : (
+                <path
+                  d="M0-7l7 7-7 7-7-7z"
+                  transform={`translate(0 ${yOf(foot)})`}
+                  fill="var(--ground)"
+                  stroke="var(--text)"
+                  strokeWidth="2.5"
+                />
+              )}
+              <g transform={`translate(0 ${y}) scale(${flag.isLeftward ? -1 : 1} 1)`}>
+                <path d={`M0 0H${PENNANT_PX - 5}l5 11-5 11H0z`} fill="var(--text)" />
+              </g>
+              <text
+                x={(flag.isLeftward ? -1 : 1) * 13}
+                y={y + 16}
+                textAnchor="middle"
+                fontSize="14"
+                fontWeight="600"
+                fill="var(--ground)"
+              >
+                {flag.number}
+              </text>
+              {flag.hasLabel ? (
+                <text
+                  x={(flag.isLeftward ? -1 : 1) * (PENNANT_PX + 5)}
+                  y={y + 16}
+                  textAnchor={flag.isLeftward ? 'end' : 'start'}
+                  fontSize="15"
+                  fontWeight={flag.isVital ? 600 : 400}
+                  fill="var(--text)"
+                >
+                  {flag.title}
+                </text>
+              ) : null}
+            </g>
+          );
+        })}
+      </g>
+    </svg>
+  );
+}

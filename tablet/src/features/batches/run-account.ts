@@ -1,0 +1,147 @@
+import type { Alert, LogEntry, RunEventOf, RunState, StepProgress } from '@steepfall/shared/runs';
+import { alertWords } from '@steepfall/shared/runs';
+import { formatDuration, formatTemp } from '@steepfall/shared/units';
+import { spanWords } from '#lib/words.ts';
+import type { LinePoint } from '#lib/liquid-line.ts';
+
+const unit = 'C' as const;
+
+export interface AccountRow {
+  stepId: string;
+  title: string;
+  planned: string;
+  happened: string;
+  /** How far off, with its sign; empty when that says nothing. */
+  difference: string;
+}
+
+/** "+0.4", "−1.2": a difference always carries its sign. */
+function signed(value: number, digits: number): string {
+  const text = Math.abs(value).toFixed(digits);
+  if (Number(text) === 0) return text;
+  return value < 0 ? `−${text}` : `+${text}`;
+}
+
+function rowOf({ step, status, tempC, startedAtMs, doneAtMs }: StepProgress, state: RunState): AccountRow | null {
+  const base = { stepId: step.id, title: step.title };
+  const isDone = status === 'done';
+  const level = step.done.by === 'temperature' ? step.done : step.start.by === 'temperature' ? step.start : null;
+  if (level) {
+    const isKnown = isDone && tempC !== null;
+    return {
+      ...base,
+      planned: `${formatTemp(level.tempC, { unit })}, ${level.direction}`,
+      happened: isKnown ? formatTemp(tempC, { unit }) : isDone ? 'not measured' : 'not done',
+      difference: isKnown ? `${signed(tempC - level.tempC, 1)} °C` : '',
+    };
+  }
+  if (step.done.by === 'timer') {
+    const isKnown = isDone && startedAtMs !== null && doneAtMs !== null;
+    const tookS = isKnown ? (doneAtMs - startedAtMs) / 1000 : null;
+    return {
+      ...base,
+      planned: formatDuration(step.done.durationS),
+      happened: tookS === null ? 'not done' : formatDuration(tookS),
+      difference: tookS === null ? '' : `${signed(tookS - step.done.durationS, 0)} s`,
+    };
+  }
+  const asked = step.done.by === 'measurement' ? step.done.quantity : step.asks;
+  if (!asked) return null;
+  const measured = state.measurements.findLast(({ stepId, quantity }) => stepId === step.id && quantity === asked);
+  const range = step.done.by === 'measurement' ? rangeWords(step.done.min, step.done.max) : '';
+  return {
+    ...base,
+    planned: range,
+    happened: measured ? measurementWords(measured.quantity, measured.value) : 'not measured',
+    difference: '',
+  };
+}
+
+function rangeWords(min: number | undefined, max: number | undefined): string {
+  if (min !== undefined && max !== undefined) return `${min} to ${max}`;
+  if (min !== undefined) return `${min} or more`;
+  return max === undefined ? '' : `${max} or less`;
+}
+
+export function measurementWords(quantity: RunState['measurements'][number]['quantity'], value: number): string {
+  const words: Record<typeof quantity, string> = {
+    pH: `pH ${value}`,
+    tempC: formatTemp(value, { unit }),
+    volumeL: `${value} L`,
+    massG: `${value} g`,
+    pressureKPa: `${value} kPa`,
+    tasteScore: `${value} of 9`,
+  };
+  return words[quantity];
+}
+
+/** Every step that was planned with a number, and the number that came of it. */
+export function accountOf(state: RunState): AccountRow[] {
+  return state.steps.flatMap((progress) => rowOf(progress, state) ?? []);
+}
+
+export interface AlertRow {
+  id: string;
+  verb: string;
+  number: string | null;
+  /** Run clock of each stage that was raised. */
+  stages: { stage: Alert['stage']; atMs: number }[];
+  /** From "now" to the act, s; `null` when it never came to "now" or was not acted on. */
+  waitS: number | null;
+  outcome: string;
+}
+
+/** Every alert with its climb, and how long it waited for a person. */
+export function alertRowsOf(log: readonly LogEntry[], state: RunState): AlertRow[] {
+  const raised = log.filter((entry): entry is LogEntry & RunEventOf<'alert.raised'> => entry.type === 'alert.raised');
+  return state.alerts.map((alert) => {
+    const own = raised.filter(({ payload }) => payload.key === alert.key && payload.crossing === alert.crossing);
+    const stages = own.map(({ payload: { stage }, atMs }) => ({ stage, atMs })).sort((a, b) => a.atMs - b.atMs);
+    const nowAtMs = stages.find(({ stage }) => stage === 'now')?.atMs ?? null;
+    const actedAtMs = state.steps.find(({ step }) => step.id === alert.actStepId)?.doneAtMs ?? null;
+    const answers = [alert.acknowledgedAtMs, actedAtMs].filter((atMs) => atMs !== null);
+    const answeredAtMs = answers.length > 0 ? Math.min(...answers) : null;
+    const words = alertWords(state, alert);
+    const waitS = nowAtMs === null || answeredAtMs === null ? null : Math.max(0, (answeredAtMs - nowAtMs) / 1000);
+    return {
+      id: `${alert.key}/${alert.crossing}`,
+      verb: words.verb,
+      number: words.number,
+      stages,
+      waitS,
+      outcome:
+        alert.rule === 'signal' && alert.clearedAtMs !== null
+          ? `the probe came back after ${spanWords((alert.clearedAtMs - alert.raisedAtMs) / 1000)}`
+          : waitS !== null
+            ? `answered after ${formatDuration(waitS)}`
+            : answeredAtMs !== null
+              ? 'done before it was due'
+              : 'not answered',
+    };
+  });
+}
+
+/** What the drawing shows, in a breath: for those who do not see it, and for those in a hurry. */
+export function summaryOf(state: RunState, line: readonly LinePoint[]): string {
+  const sentences: string[] = [];
+  if (state.startedAtMs !== null && state.endedAtMs !== null) {
+    sentences.push(`The run took ${spanWords((state.endedAtMs - state.startedAtMs) / 1000)}.`);
+  }
+  const first = line[0];
+  if (first) {
+    const hottest = line.reduce((best, point) => (point.tempC > best.tempC ? point : best), first);
+    const last = line.at(-1) ?? first;
+    sentences.push(
+      `The liquid went from ${formatTemp(first.tempC, { unit })} up to ${formatTemp(hottest.tempC, { unit })}, and was at ${formatTemp(last.tempC, { unit })} when it was last measured.`,
+    );
+  } else {
+    sentences.push('No temperature was recorded.');
+  }
+  for (const { step, status, tempC } of state.steps) {
+    if (step.kind !== 'catch' || step.start.by !== 'temperature' || status !== 'done' || tempC === null) continue;
+    sentences.push(
+      `${step.title} at ${formatTemp(tempC, { unit })}; ${formatTemp(step.start.tempC, { unit })} was wanted.`,
+    );
+  }
+  return sentences.join(' ');
+}

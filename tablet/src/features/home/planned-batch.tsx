@@ -1,0 +1,105 @@
+import { useState } from 'react';
+import { useMutation, useQueryClient } from '@tanstack/react-query';
+import { runSummarySchema, type Batch } from '@steepfall/shared/contracts';
+import { formatVolume } from '@steepfall/shared/units';
+import { format } from 'date-fns';
+import { Link, useNavigate } from 'react-router-dom';
+import { Banner } from '#components/banner.tsx';
+import { Button } from '#components/button.tsx';
+import { Dialog } from '#components/dialog.tsx';
+import { callHubFor } from '#lib/api-client.ts';
+import { useMay } from '#lib/session.ts';
+import { failureWords, localDate } from '#lib/words.ts';
+
+/** What is looked at with the own eyes before the first step. */
+const kitWords = [
+  'The keg is sanitised, purged and vented.',
+  'The kettle is clean, and the chiller is at hand.',
+  'The probe reads 0 °C in ice water.',
+];
+
+/** A batch that waits for its day. */
+export function PlannedBatch({ batch }: { batch: Batch }) {
+  const may = useMay();
+  const [isAsking, setIsAsking] = useState(false);
+  const day = localDate(batch.plannedOn);
+  return (
+    <li className="flex flex-wrap items-center gap-x-7 gap-y-4 border-t-2 border-hair py-5">
+      <p className="w-20 shrink-0">
+        <span className="block text-note text-soft">{format(day, 'EEE, MMM')}</span>
+        <span className="block text-display tabular-nums">{format(day, 'd')}</span>
+      </p>
+      <div className="min-w-56 flex-1">
+        <p className="text-title">
+          <Link to={`/batches/${batch.id}`} className="hover:underline hover:decoration-2 hover:underline-offset-4">
+            {batch.recipeName}
+          </Link>
+        </p>
+        <p className="mt-1 text-body text-soft">
+          batch {batch.batchNumber} · {formatVolume(batch.volumeL, { unit: 'L' })} · revision {batch.revisionNumber}
+        </p>
+      </div>
+      {may('runs:act') ? (
+        <Button look="primary" size="sheet" onClick={() => setIsAsking(true)}>
+          Start the run
+        </Button>
+      ) : null}
+      <StartRunDialog batch={batch} isOpen={isAsking} onClose={() => setIsAsking(false)} />
+    </li>
+  );
+}
+
+function StartRunDialog({ batch, isOpen, onClose }: { batch: Batch; isOpen: boolean; onClose: () => void }) {
+  const navigate = useNavigate();
+  const client = useQueryClient();
+  const start = useMutation({
+    mutationFn: () => callHubFor(runSummarySchema, `batches/${batch.id}/runs`, { method: 'POST' }),
+    onSuccess: (run) => {
+      void client.invalidateQueries({ queryKey: ['runs'] });
+      void client.invalidateQueries({ queryKey: ['batches'] });
+      void navigate(`/runs/${run.id}`);
+    },
+  });
+  return (
+    <Dialog
+      isOpen={isOpen}
+      onClose={onClose}
+      title="Is the kit ready?"
+      actions={
+        <>
+          <Button
+            look="primary"
+            size="sheet"
+            onClick={() => start.mutate()}
+            isBusy={start.isPending}
+            busyLabel="Starting"
+          >
+            It is ready, start
+          </Button>
+          <Button size="sheet" onClick={onClose}>
+            Not yet
+          </Button>
+        </>
+      }
+    >
+      <p className="text-soft">
+        {batch.recipeName}, batch {batch.batchNumber}
+      </p>
+      <ul className="mt-4 grid gap-3 text-lead">
+        {kitWords.map((words) => (
+          <li key={words} className="flex gap-3">
+            <span aria-hidden="true" className="mt-[0.7em] h-0.5 w-5 shrink-0 bg-edge" />
+            {words}
+          </li>
+        ))}
+      </ul>
+      {start.isError ? (
+        <div className="mt-6">
+          <Banner tone="act" title="The run did not start">
+            {failureWords(start.error)}
+          </Banner>
+        </div>
+      ) : null}
+    </Dialog>
+  );
+}

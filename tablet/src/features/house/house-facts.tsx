@@ -1,0 +1,82 @@
+import { useState } from 'react';
+import { zodResolver } from '@hookform/resolvers/zod';
+import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
+import { houseSchema, updateHouseSchema, type House, type UpdateHouse } from '@steepfall/shared/contracts';
+import { useForm } from 'react-hook-form';
+import { Banner } from '#components/banner.tsx';
+import { Button } from '#components/button.tsx';
+import { Dialog } from '#components/dialog.tsx';
+import { TextField } from '#components/field.tsx';
+import { LevelRule } from '#components/level-rule.tsx';
+import { callHubFor } from '#lib/api-client.ts';
+import { houseQuery } from '#lib/hub-queries.ts';
+import { noteHouse, useKnown, useMay } from '#lib/session.ts';
+import { failureWords } from '#lib/words.ts';
+
+/** Name and altitude. The altitude sets the gas pressure and the boiling point. */
+export function HouseFacts() {
+  const known = useKnown();
+  const may = useMay();
+  const [isOpen, setIsOpen] = useState(false);
+  const { data: house = known.house } = useQuery(houseQuery);
+  return (
+    <section aria-labelledby="facts" className="grid gap-4">
+      <LevelRule
+        id="facts"
+        aside={may('house:manage') ? <Button onClick={() => setIsOpen(true)}>Change</Button> : null}
+      >
+        The place
+      </LevelRule>
+      <p className="text-lead">
+        {house.altitudeM} m above the sea.{' '}
+        <span className="text-soft">Gas pressures and the boiling point are computed for that height.</span>
+      </p>
+      {isOpen ? <HouseDialog house={house} onClose={() => setIsOpen(false)} /> : null}
+    </section>
+  );
+}
+
+function HouseDialog({ house, onClose }: { house: House; onClose: () => void }) {
+  const client = useQueryClient();
+  const { register, handleSubmit, formState } = useForm<UpdateHouse>({
+    resolver: zodResolver(updateHouseSchema),
+    defaultValues: { name: house.name, altitudeM: house.altitudeM, version: house.version },
+  });
+  const save = useMutation({
+    mutationFn: (body: UpdateHouse) => callHubFor(houseSchema, 'house', { method: 'PATCH', body }),
+    onSuccess: (saved) => {
+      client.setQueryData(houseQuery.queryKey, saved);
+      noteHouse(saved);
+      onClose();
+    },
+  });
+  return (
+    <Dialog isOpen onClose={onClose} title="The place">
+      <form
+        noValidate
+        className="grid gap-5"
+        onSubmit={(event) => void handleSubmit((body) => save.mutate(body))(event)}
+      >
+        <TextField label="Name of the house" error={formState.errors.name?.message} {...register('name')} />
+        <TextField
+          label="Height above the sea"
+          inputMode="numeric"
+          unit="m"
+          error={formState.errors.altitudeM ? 'A whole number from −430 to 6000.' : undefined}
+          {...register('altitudeM', { valueAsNumber: true })}
+        />
+        {save.isError ? (
+          <Banner tone="act" title="It was not saved">
+            {failureWords(save.error)}
+          </Banner>
+        ) : null}
+        <div className="flex flex-wrap gap-3">
+          <Button look="primary" type="submit" isBusy={save.isPending} busyLabel="Saving">
+            Save
+          </Button>
+          <Button onClick={onClose}>Close</Button>
+        </div>
+      </form>
+    </Dialog>
+  );
+}

@@ -1,0 +1,121 @@
+import { queryOptions } from '@tanstack/react-query';
+import {
+  batchSchema,
+  equipmentSchema,
+  houseSchema,
+  memberSchema,
+  probeSchema,
+  recipeSchema,
+  recipeSummarySchema,
+  runReadingsSchema,
+  runSummarySchema,
+  type RunReadingsQuery,
+} from '@steepfall/shared/contracts';
+import type { LogEntry } from '@steepfall/shared/runs';
+import { z } from 'zod';
+import { callHubFor } from './api-client.ts';
+
+/** An event as the log shows it: the envelope is checked, the rest is the fold's business, so that newer types come through. */
+const storedEntrySchema = z.looseObject({
+  id: z.string(),
+  runId: z.string(),
+  type: z.string(),
+  v: z.number(),
+  atMs: z.number(),
+  by: z.string().nullable(),
+  station: z.string(),
+  seq: z.number(),
+  receivedAtMs: z.number(),
+  sentBy: z.string().nullable(),
+  payload: z.unknown(),
+});
+export type StoredEntry = LogEntry & Pick<z.infer<typeof storedEntrySchema>, 'seq' | 'receivedAtMs' | 'sentBy'>;
+const logSchema = z.object({ runId: z.string(), events: z.array(storedEntrySchema) });
+
+export const houseQuery = queryOptions({
+  queryKey: ['house'],
+  queryFn: ({ signal }) => callHubFor(houseSchema, 'house', { signal }),
+});
+
+export const membersQuery = queryOptions({
+  queryKey: ['members'],
+  queryFn: ({ signal }) => callHubFor(z.array(memberSchema), 'members', { signal }),
+});
+
+export const equipmentQuery = queryOptions({
+  queryKey: ['equipment'],
+  queryFn: ({ signal }) => callHubFor(z.array(equipmentSchema), 'equipment', { signal }),
+});
+
+export const probesQuery = queryOptions({
+  queryKey: ['probes'],
+  queryFn: ({ signal }) => callHubFor(z.array(probeSchema), 'probes', { signal }),
+});
+
+export const recipesQuery = queryOptions({
+  queryKey: ['recipes'],
+  queryFn: ({ signal }) => callHubFor(z.array(recipeSummarySchema), 'recipes', { signal }),
+});
+
+export function recipeQuery(recipeId: string) {
+  return queryOptions({
+    queryKey: ['recipes', recipeId],
+    queryFn: ({ signal }) => callHubFor(recipeSchema, `recipes/${recipeId}`, { signal }),
+  });
+}
+
+export const batchesQuery = queryOptions({
+  queryKey: ['batches'],
+  queryFn: ({ signal }) => callHubFor(z.array(batchSchema), 'batches', { signal }),
+});
+
+export function batchQuery(batchId: string) {
+  return queryOptions({
+    queryKey: ['batches', batchId],
+    queryFn: ({ signal }) => callHubFor(batchSchema, `batches/${batchId}`, { signal }),
+  });
+}
+
+export const runningRunsQuery = queryOptions({
+  queryKey: ['runs', 'running'],
+  queryFn: ({ signal }) => callHubFor(z.array(runSummarySchema), 'runs', { signal, query: { status: 'running' } }),
+});
+
+export const endedRunsQuery = queryOptions({
+  queryKey: ['runs', 'ended'],
+  queryFn: ({ signal }) => callHubFor(z.array(runSummarySchema), 'runs', { signal, query: { status: 'ended' } }),
+});
+
+export function runQuery(runId: string) {
+  return queryOptions({
+    queryKey: ['runs', runId],
+    queryFn: ({ signal }) => callHubFor(runSummarySchema, `runs/${runId}`, { signal }),
+  });
+}
+
+/** The log of a run for looking at afterwards. The run sheet keeps its own copy and never reads this one. */
+export function runLogQuery(runId: string) {
+  return queryOptions({
+    queryKey: ['runs', runId, 'log'],
+    queryFn: async ({ signal }): Promise<StoredEntry[]> => {
+      const { events } = await callHubFor(logSchema, `runs/${runId}/events`, { signal });
+      return events as unknown as StoredEntry[];
+    },
+  });
+}
+
+export function runReadingsQuery(runId: string, window: RunReadingsQuery) {
+  return queryOptions({
+    queryKey: ['runs', runId, 'readings', window],
+    queryFn: ({ signal }) => callHubFor(runReadingsSchema, `runs/${runId}/readings`, { signal, query: { ...window } }),
+  });
+}
+
+/** The last minutes of a running run: where to begin is asked anew each time, so the key stays the same. */
+export function recentReadingsQuery(runId: string, fromMs: () => number) {
+  return queryOptions({
+    queryKey: ['runs', runId, 'readings', 'recent'],
+    queryFn: ({ signal }) =>
+      callHubFor(runReadingsSchema, `runs/${runId}/readings`, { signal, query: { fromMs: fromMs() } }),
+  });
+}
