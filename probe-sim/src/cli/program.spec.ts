@@ -101,6 +101,16 @@ describe('what is printed', () => {
     expect(host.readings.filter(inGap)).toEqual([]);
   });
 
+  it.each(['chill-0.csv', 'spikes-1.csv'])(
+    'replay tells %s as it was recorded, faults of the probe included',
+    async (name) => {
+      const host = new FakeHost();
+      await host.run('replay', trace(name), '--dry-run');
+      const recorded = (await readFile(trace(name), 'utf8')).trim().split('\n').slice(1);
+      expect(host.readings.map(({ tempC }) => tempC)).toEqual(recorded.map((row) => Number(row.split(',')[1])));
+    },
+  );
+
   it('--help lists commands, faults, keys and exit codes', async () => {
     const host = new FakeHost();
     expect(await host.run('--help')).toBe(0);
