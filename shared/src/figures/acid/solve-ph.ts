@@ -1,10 +1,11 @@
 import { settledStrength } from './settle.js';
 import { chargeAt, prepared, type AcidSolution, type PreparedSolution } from './solution.js';
 
-const LOWEST_PH = -1;
-const HIGHEST_PH = 15;
-/** Newton steps inside a bracket that is halved when they stray: this many end well below 1e-12. */
-const STEPS = 100;
+const LOWEST_PH = -2;
+const HIGHEST_PH = 17;
+/** Every second step at least halves the bracket or the step before: far fewer are ever used. */
+const STEPS = 200;
+const CLOSE_PH = 1e-12;
 
 export interface PhResult {
   /** On the activity scale: what a meter shows. */
@@ -21,16 +22,22 @@ export function phAtStrength(solution: PreparedSolution, ionicStrength: number, 
   let low = LOWEST_PH;
   let high = HIGHEST_PH;
   let ph = start;
+  let stepBefore = high - low;
+  let lastStep = stepBefore;
   for (let step = 0; step < STEPS; step += 1) {
     const { leftEqPerL, bufferEqPerLPerPh } = chargeAt(solution, ph, ionicStrength);
     if (leftEqPerL === 0) return ph;
     if (leftEqPerL > 0) low = ph;
     else high = ph;
-    const newton = ph + leftEqPerL / bufferEqPerLPerPh;
-    // Far off, Newton creeps; every fourth step halves, so the bracket is sure to close.
-    const next = step % 4 === 3 || !(newton > low && newton < high) ? (low + high) / 2 : newton;
-    if (Math.abs(next - ph) < 1e-13) return next;
-    ph = next;
+    const newton = leftEqPerL / bufferEqPerLPerPh;
+    // Newton while it stays inside and closes in; otherwise the middle, so that the end is sure.
+    const closes = ph + newton > low && ph + newton < high && Math.abs(newton) < Math.abs(stepBefore) / 2;
+    const move = closes ? newton : (low + high) / 2 - ph;
+    stepBefore = lastStep;
+    lastStep = move;
+    if (ph + move === ph) return ph;
+    ph += move;
+    if (Math.abs(move) < CLOSE_PH) return ph;
   }
   return ph;
 }
