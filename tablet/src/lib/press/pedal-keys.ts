@@ -1,0 +1,34 @@
+export type PedalAct = 'next' | 'back';
+
+/** Page-turn pedals and clickers are keyboards, and each maker sends other keys. */
+const acts: Record<string, PedalAct> = {
+  PageDown: 'next',
+  ArrowRight: 'next',
+  ArrowDown: 'next',
+  ' ': 'next',
+  Enter: 'next',
+  PageUp: 'back',
+  ArrowLeft: 'back',
+  ArrowUp: 'back',
+};
+
+export interface PedalKey {
+  key: string;
+  isRepeat: boolean;
+  hasModifier: boolean;
+  /** Somebody types into a field. */
+  isTyping: boolean;
+  /** A dialog is open: keys belong to it alone. */
+  isDialogOpen: boolean;
+  /** Somebody went to a button with Tab: Space and Enter press that button. */
+  isOnTabbedControl: boolean;
+}
+
+/** What a key does on the run sheet; `null`: it is none of ours and goes where it goes. */
+export function pedalActOf(input: PedalKey): PedalAct | null {
+  const act = acts[input.key];
+  if (!act || input.hasModifier || input.isTyping || input.isDialogOpen) return null;
+  const isPressKey = input.key === ' ' || input.key === 'Enter';
+  if (isPressKey && input.isOnTabbedControl) return null;
+  return act;
+}

@@ -1,0 +1,69 @@
+import type { RunSummary } from '@steepfall/shared/contracts';
+import type { Reading } from '@steepfall/shared/readings';
+import {
+  driveRun,
+  foldRun,
+  inLogOrder,
+  startDriver,
+  type DriverConfig,
+  type LogEntry,
+  type RunDriver,
+  type RunEvent,
+} from '@steepfall/shared/runs';
+
+/** Older turns than this many do not change what the watch believes now. */
+const TURNS = 24;
+
+export function driverConfigOf(summary: RunSummary): DriverConfig {
+  const { probeId, probeLagS, probeResolutionC, probeSamplePeriodS, roomC, coolantC } = summary;
+  return {
+    hasProbe: probeId !== null,
+    watch: {
+      lagS: probeLagS,
+      resolutionC: probeResolutionC,
+      samplePeriodS: probeSamplePeriodS,
+      roomC,
+      coolantC,
+    },
+  };
+}
+
+interface BootInput {
+  config: DriverConfig;
+  entries: readonly LogEntry[];
+  /** The last quarter of an hour, in order of time. */
+  readings: readonly Reading[];
+  /** Run clock. */
+  nowMs: number;
+  runId: string;
+  station: string;
+}
+
+/**
+ * A driver that has seen the readings at hand, each under the state of the run at its time: what the kettle was told decides
+ * how the watch reads a slope. Facts that follow from what was before the last turn are old news and left out.
+ */
+export function bootDriver({ config, entries, readings, nowMs, runId, station }: BootInput): {
+  driver: RunDriver;
+  events: RunEvent[];
+} {
+  const ordered = inLogOrder(entries);
+  const firstMs = readings[0]?.atMs ?? nowMs;
+  const turns = ordered
+    .filter(({ type, atMs }) => (type === 'step.done' || type === 'event.undone') && atMs > firstMs)
+    .map(({ atMs }) => atMs)
+    .slice(-TURNS);
+
+  let driver = startDriver(config);
+  let from = 0;
+  for (const turnMs of new Set(turns.sort((a, b) => a - b))) {
+    let to = from;
+    while (to < readings.length && readings[to]!.atMs < turnMs) to += 1;
+    if (to === from) continue;
+    const state = foldRun(ordered.filter(({ atMs }) => atMs < turnMs));
+    const part = readings.slice(from, to);
+    driver = driveRun(driver, state, { runId, station, readings: part, nowMs: part.at(-1)!.atMs }).driver;
+    from = to;
+  }
+  return driveRun(driver, foldRun(ordered), { runId, station, readings: readings.slice(from), nowMs });
+}
