@@ -1,23 +1,31 @@
-/** Something the person at the keyboard can put right: the message is one sentence of what is wrong and one of what to do. */
+/**
+ * Something a person can put right. The message is one sentence that says what is wrong and what to do; it is printed
+ * without a stack.
+ */
 export class LauncherError extends Error {
   /** @override */
   name = 'LauncherError';
 }
 
 /**
- * Words for what the disk refuses.
- *
+ * Turns the failures of a disk into the sentence for a person; other errors pass as they are.
  * @param {unknown} error
- * @param {string} path
- * @returns {unknown} a LauncherError where the cause is known, the error itself otherwise
+ * @param {string} path what was to be written
+ * @returns {unknown}
  */
 export function explainDiskError(error, path) {
-  const code = /** @type {NodeJS.ErrnoException} */ (error).code;
-  if (code === 'EACCES' || code === 'EPERM' || code === 'EROFS')
-    return new LauncherError(
-      `${path} cannot be written. Give this user the right to write there, or move the checkout.`,
-    );
-  if (code === 'ENOSPC')
-    return new LauncherError(`The disk is full, so ${path} cannot be written. Make room and start again.`);
-  return error;
+  const { code, path: failed } = /** @type {NodeJS.ErrnoException} */ (error);
+  switch (code) {
+    case 'EACCES':
+    case 'EPERM':
+    case 'EROFS':
+      return new LauncherError(
+        `${failed ?? path} cannot be written by this user; make it writable, or start as the user who owns it.`,
+      );
+    case 'ENOSPC':
+    case 'EDQUOT':
+      return new LauncherError(`The disk that holds ${path} is full; free at least 500 MB and start again.`);
+    default:
+      return error;
+  }
 }

@@ -4,8 +4,20 @@ import { join, resolve } from 'node:path';
 export const root = resolve(import.meta.dirname, '../../..');
 
 /** Everything that is stored; git-ignored. Tests point it elsewhere. */
-export const dataDir = process.env['STEEPFALL_DATA_DIR'] ?? join(root, '.data');
+export const dataDir = resolve(process.env['STEEPFALL_DATA_DIR'] ?? join(root, '.data'));
 
-export const hubEntry = join(root, 'hub/dist/main.js');
-export const hubCli = join(root, 'hub/dist/cli.js');
+/** Scratch files of tests; git-ignored. */
+export const testDataDir = join(root, '.test-data');
+
+/** Tests of the launcher put a smaller hub in the place of the built one; such a hub is not built. */
+const hubFolder = process.env['STEEPFALL_HUB_DIR'];
+export const isHubBuilt = hubFolder === undefined;
+export const hubEntry = join(hubFolder ?? join(root, 'hub/dist'), 'main.js');
+export const hubCli = join(hubFolder ?? join(root, 'hub/dist'), 'cli.js');
 export const tabletDist = join(root, 'tablet/dist');
+
+/**
+ * The program behind a command of an npm package, to be run by this very Node.
+ * @param {string} path below node_modules
+ */
+export const packageBin = (path) => join(root, 'node_modules', path);

@@ -3,134 +3,74 @@ import { once } from 'node:events';
 import { readdirSync, readFileSync } from 'node:fs';
 import { setTimeout as sleep } from 'node:timers/promises';
 import { root } from './paths.mjs';
-import { LauncherError } from './launcher-error.mjs';
+import { findProgram } from './programs.mjs';
 
 /** @typedef {import('node:child_process').ChildProcess} ChildProcess */
 
 /**
- * Runs a command to its end, with its output on ours.
- *
+ * Runs a command to its end.
  * @param {string} command
  * @param {readonly string[]} args
- * @param {{ isQuiet?: boolean, env?: NodeJS.ProcessEnv }} [options] quiet: output is shown only when the command fails
- * @returns {Promise<void>}
+ * @param {object} [options]
+ * @param {boolean} [options.isQuiet] its output is returned instead of shown
+ * @param {NodeJS.ProcessEnv} [options.env]
+ * @param {AbortSignal} [options.signal] ends the command early
+ * @returns {Promise<{ code: number, stdout: string, output: string }>} `output` holds both streams as they came
  */
-export async function run(command, args, { isQuiet = false, env = process.env } = {}) {
-  const code = await runToCode(command, args, { isQuiet, env });
-  if (code !== 0)
-    throw new LauncherError(`"${[command, ...args].join(' ')}" failed (${code}). Its output above says why.`);
-}
-
-/**
- * @param {string} command
- * @param {readonly string[]} args
- * @param {{ isQuiet?: boolean, env?: NodeJS.ProcessEnv }} [options]
- * @returns {Promise<number>} the exit code
- */
-export async function runToCode(command, args, { isQuiet = false, env = process.env } = {}) {
-  const child = spawn(command, args, {
+export async function run(command, args, { isQuiet = false, env = process.env, signal } = {}) {
+  const stream = isQuiet ? 'pipe' : 'inherit';
+  const child = spawn(...endingWithParent(command, args), {
     cwd: root,
     env,
-    stdio: ['ignore', isQuiet ? 'pipe' : 'inherit', isQuiet ? 'pipe' : 'inherit'],
+    stdio: ['ignore', stream, stream],
+    signal,
   });
+  let stdout = '';
   let output = '';
-  child.stdout?.on('data', (chunk) => (output += chunk));
+  child.stdout?.on('data', (chunk) => {
+    stdout += chunk;
+    output += chunk;
+  });
   child.stderr?.on('data', (chunk) => (output += chunk));
+  // `close` follows `error` as well, and after it nothing of the command is left.
+  child.on('error', (error) => (output += `${error.message}\n`));
   const [code] = await once(child, 'close');
-  if (code !== 0 && isQuiet) process.stderr.write(output);
-  return code ?? 1;
+  return { code: code ?? 1, stdout, output };
 }
 
 /**
- * The standard output of a command.
- *
- * @param {string} command
+ * What goes before a program so that the system asks it to end when the process that started it is killed without a
+ * chance to do so. Where the tool is missing, the next start finds what was left behind.
+ * @param {string} program
  * @param {readonly string[]} args
- * @param {NodeJS.ProcessEnv} [env]
- * @returns {Promise<string>}
+ * @returns {[string, string[]]}
  */
-export async function outputOf(command, args, env = process.env) {
-  const child = spawn(command, args, { cwd: root, env, stdio: ['ignore', 'pipe', 'inherit'] });
-  let output = '';
-  child.stdout.on('data', (chunk) => (output += chunk));
-  const [code] = await once(child, 'close');
-  if (code !== 0)
-    throw new LauncherError(`"${[command, ...args].join(' ')}" failed (${code}). Its output above says why.`);
-  return output;
+export function endingWithParent(program, args) {
+  const setpriv = findProgram(['setpriv']);
+  return setpriv ? [setpriv, ['--pdeathsig', 'TERM', program, ...args]] : [program, [...args]];
 }
 
 /**
- * Stops one process that we started: asks first, insists later.
- *
+ * Ends a child of ours: asks first, insists after the grace.
  * @param {ChildProcess} child
- * @param {{ patienceMs?: number }} [options]
+ * @param {number} graceMs
  */
-export async function stopChild(child, { patienceMs = 15_000 } = {}) {
-  if (child.exitCode !== null || child.signalCode !== null) return;
+export async function endChild(child, graceMs) {
+  if (hasEnded(child)) return;
   const ended = once(child, 'exit');
   child.kill('SIGTERM');
-  const isPatient = await Promise.race([ended.then(() => false), sleep(patienceMs, true, { ref: false })]);
-  if (!isPatient) return;
-  child.kill('SIGKILL');
+  const insist = setTimeout(() => child.kill('SIGKILL'), graceMs);
   await ended;
+  clearTimeout(insist);
+}
+
+/** @param {ChildProcess} child */
+export function hasEnded(child) {
+  return child.pid === undefined || child.exitCode !== null || child.signalCode !== null;
 }
 
 /**
- * @param {number} pid
- * @returns {boolean}
- */
-export function isAlive(pid) {
-  try {
-    process.kill(pid, 0);
-    // A zombie still has an id and does nothing any more.
-    return !/^State:\s+Z/m.test(readFileSync(`/proc/${pid}/status`, 'utf8'));
-  } catch (error) {
-    return /** @type {NodeJS.ErrnoException} */ (error).code === 'EPERM';
-  }
-}
-
-/**
- * What tells a process from a later one with the same id: the moment it started.
- * @param {number} pid
- * @returns {string | null} null when there is no such process
- */
-export function startMark(pid) {
-  try {
-    // The name in parentheses may hold spaces; the start time is the twentieth field after it.
-    return (
-      readFileSync(`/proc/${pid}/stat`, 'utf8')
-        .replace(/^.*\) /s, '')
-        .split(' ')[19] ?? null
-    );
-  } catch {
-    return null;
-  }
-}
-
-/**
- * @param {string} argument
- * @returns {number[]} processes that were started with exactly this argument
- */
-export function findByArgument(argument) {
-  return readdirSync('/proc')
-    .map(Number)
-    .filter((pid) => pid > 0 && pid !== process.pid && argumentsOf(pid).includes(argument) && isAlive(pid));
-}
-
-/**
- * @param {number} pid
- * @returns {string[]}
- */
-function argumentsOf(pid) {
-  try {
-    return readFileSync(`/proc/${pid}/cmdline`, 'utf8').split('\0');
-  } catch {
-    return [];
-  }
-}
-
-/**
- * Ends one process by its id: asks first, insists after the grace.
+ * Ends a process that is no child of ours, by its id: asks first, insists after the grace.
  * @param {number} pid
  * @param {number} graceMs
  */
@@ -141,5 +81,68 @@ export async function endProcess(pid, graceMs) {
     if (!isThere()) return;
     process.kill(pid, signal);
     for (let waitedMs = 0; isThere() && waitedMs < graceMs; waitedMs += 50) await sleep(50);
+  }
+}
+
+/**
+ * Whether a process runs; one that has ended and waits to be collected does not.
+ * @param {number} pid
+ */
+export function isAlive(pid) {
+  try {
+    process.kill(pid, 0);
+  } catch (error) {
+    if (/** @type {NodeJS.ErrnoException} */ (error).code !== 'EPERM') return false;
+  }
+  return statFields(pid)?.[0] !== 'Z';
+}
+
+/**
+ * What tells a process from a later one with the same id: the moment it started.
+ * @param {number} pid
+ * @returns {string | null} null when there is no such process, or no /proc
+ */
+export function startMark(pid) {
+  return statFields(pid)?.[19] ?? null;
+}
+
+/**
+ * The fields of /proc/PID/stat after the name of the command, which may itself hold blanks and brackets.
+ * @param {number} pid
+ */
+function statFields(pid) {
+  try {
+    return readFileSync(`/proc/${pid}/stat`, 'latin1')
+      .replace(/^.*\) /s, '')
+      .split(' ');
+  } catch {
+    return null;
+  }
+}
+
+/**
+ * The processes that were started with exactly this argument.
+ * @param {string} argument
+ * @returns {number[]}
+ */
+export function findByArgument(argument) {
+  /** @type {string[]} */
+  let entries = [];
+  try {
+    entries = readdirSync('/proc');
+  } catch {
+    // No /proc on this system: leftovers are not found, and the lock of the database files tells of them instead.
+  }
+  return entries
+    .map(Number)
+    .filter((pid) => pid > 0 && pid !== process.pid && argumentsOf(pid).includes(argument) && isAlive(pid));
+}
+
+/** @param {number} pid */
+function argumentsOf(pid) {
+  try {
+    return readFileSync(`/proc/${pid}/cmdline`, 'utf8').split('\0');
+  } catch {
+    return [];
   }
 }
