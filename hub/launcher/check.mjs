@@ -1,0 +1,3 @@
+import './lib/require-node.mjs';
+
+import('./lib/run-checks.mjs').then(({ runChecks }) => runChecks());
