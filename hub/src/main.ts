@@ -2,6 +2,7 @@ import 'reflect-metadata';
 import { readProcessEnvironment } from './config/environment.js';
 import { createApp } from './create-app.js';
 import { migrateDatabase } from './database/migrate.js';
+import { ensureDemo } from './demo/demo.js';
 
 /** One line a machine can read: what starts the hub waits for `hub.listening`, or tells the reason of `hub.failed`. */
 function say(event: string, facts: Record<string, unknown>): void {
@@ -22,6 +23,7 @@ async function start(): Promise<void> {
   const config = readProcessEnvironment();
   const ran = await migrateDatabase(config.databaseUrl);
   if (ran.length > 0) say('hub.migrated', { migrations: ran });
+  if (config.isDemo && (await ensureDemo(config.databaseUrl, Date.now())) === 'made') say('demo.made', {});
   const app = await createApp(config);
   try {
     await app.listen(config.port, config.host);

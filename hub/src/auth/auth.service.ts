@@ -1,6 +1,7 @@
 import { Injectable } from '@nestjs/common';
 import type { Session, SignIn } from '@steepfall/shared/contracts';
 import { ProblemError } from '@steepfall/shared/problems';
+import { HubConfig } from '../config/environment.js';
 import { isPasswordRight } from '../common/passwords.js';
 import { HousesService, presentHouse } from '../houses/houses.service.js';
 import { MembersService, presentMember } from '../members/members.service.js';
@@ -21,13 +22,14 @@ export class AuthService {
     private readonly houses: HousesService,
     private readonly sessions: SessionsService,
     private readonly accessTokens: AccessTokensService,
+    private readonly config: HubConfig,
   ) {}
 
   /** Signs in to the house in which the person has been a member longest. Every way to fail looks the same from outside. */
   async signIn({ email, password }: SignIn, userAgent: string): Promise<SignedIn> {
     const account = await this.members.findAccount(email);
     const isRight = await isPasswordRight(password, account?.user.passwordHash ?? null);
-    const membership = account?.memberships[0];
+    const membership = await this.firstOpen(account?.memberships ?? []);
     if (!isRight || !membership) throw new ProblemError('wrong-credentials', 'Check both and try again.');
     const opened = await this.sessions.open({ houseId: membership.houseId, memberId: membership.id }, userAgent);
     return this.present(opened);
@@ -42,10 +44,20 @@ export class AuthService {
     await this.sessions.closeByToken(refreshToken);
   }
 
+  private async firstOpen<M extends { houseId: string }>(memberships: M[]): Promise<M | null> {
+    for (const membership of memberships) if (this.isOpen(await this.houses.get(membership.houseId))) return membership;
+    return null;
+  }
+
+  /** The passwords of the demo house are no secret: it is open only where the demo is wanted. */
+  private isOpen({ isDemo }: { isDemo: boolean }): boolean {
+    return !isDemo || this.config.isDemo;
+  }
+
   private async present(opened: OpenedSession): Promise<SignedIn> {
     const { houseId, memberId, sessionId, refreshToken, refreshExpiresAtMs } = opened;
     const [member, house] = await Promise.all([this.members.get(houseId, memberId), this.houses.get(houseId)]);
-    if (!member.isActive) throw new ProblemError('session-expired', 'Sign in again.');
+    if (!member.isActive || !this.isOpen(house)) throw new ProblemError('session-expired', 'Sign in again.');
     const { userId, role } = member;
     const { accessToken, expiresAtMs } = await this.accessTokens.sign({ userId, memberId, houseId, role, sessionId });
     return {

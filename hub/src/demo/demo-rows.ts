@@ -1,0 +1,260 @@
+import { compileSheet } from '@steepfall/shared/sheets';
+import { wallClock } from '@steepfall/shared/timers';
+import { formatBatchNumber } from '../batches/batch-number.js';
+import { hashPassword } from '../common/passwords.js';
+import { kettleSetupOf } from '../equipment/kettle-setup.js';
+import { demoEquipment, demoHouse, demoId, demoMemberId, demoProbe, demoRecipe, demoSignIns } from './demo-house.js';
+import { recordDay } from './recorded-day.js';
+
+export type Row = Record<string, string | number | boolean | null>;
+/** Rows by table, parents before children. */
+export type Tables = [table: string, rows: Row[]][];
+
+const DAY_MS = 24 * 3_600_000;
+/** A hand with its gloves on, from alert to act. */
+const REACH_S = 10;
+const ROOM_C = 21;
+const SEED = 7;
+
+/** The calendar date at this place, `YYYY-MM-DD`. */
+export function localDate(atMs: number): string {
+  const date = new Date(atMs);
+  const part = (value: number) => String(value).padStart(2, '0');
+  return `${date.getFullYear()}-${part(date.getMonth() + 1)}-${part(date.getDate())}`;
+}
+
+function localTime(atMs: number, hour: number, minute: number): number {
+  return new Date(atMs).setHours(hour, minute, 0, 0);
+}
+
+/** The whole demo house as of this instant: one finished batch five days ago, one planned for today. */
+export async function demoTables(nowMs: number): Promise<Tables> {
+  const houseId = demoHouse.id;
+  const owned = { house_id: houseId };
+  const brewedAtMs = localTime(nowMs - 5 * DAY_MS, 8, 14);
+  const madeAtMs = localTime(nowMs - 9 * DAY_MS, 19, 30);
+  const createdBy = demoMemberId('brewer');
+  const probeId = demoId('probe');
+  const brewed = { id: demoId('batch/brewed'), revision: demoRecipe.revisions[0] };
+  const finished = finishedRun(brewed.id, batchNumberOf(brewedAtMs, 1), brewedAtMs, probeId);
+  const endedAtMs = finished.run['ended_at_ms'] as number;
+  const today = plannedBatch(demoId('batch/today'), nowMs, isSameYear(brewedAtMs, nowMs) ? 2 : 1);
+
+  return [
+    [
+      'houses',
+      [{ id: houseId, name: demoHouse.name, altitude_m: demoHouse.altitudeM, is_demo: true, created_at_ms: madeAtMs }],
+    ],
+    [
+      'users',
+      await Promise.all(
+        demoSignIns.map(async ({ role, email, password }) => ({
+          id: demoId(`user/${role}`),
+          email,
+          password_hash: await hashPassword(password),
+          created_at_ms: madeAtMs,
+        })),
+      ),
+    ],
+    [
+      'memberships',
+      demoSignIns.map(({ role, displayName }) => ({
+        ...owned,
+        id: demoMemberId(role),
+        user_id: demoId(`user/${role}`),
+        display_name: displayName,
+        role,
+        created_at_ms: madeAtMs,
+      })),
+    ],
+    [
+      'equipment',
+      Object.entries(demoEquipment).map(([key, { kind, name, facts }]) => ({
+        ...owned,
+        id: demoId(`equipment/${key}`),
+        kind,
+        name,
+        facts: JSON.stringify(facts),
+        created_at_ms: madeAtMs,
+      })),
+    ],
+    [
+      'probes',
+      [
+        {
+          ...owned,
+          id: probeId,
+          name: demoProbe.name,
+          lag_s: demoProbe.lagS,
+          resolution_c: demoProbe.resolutionC,
+          sample_period_s: demoProbe.samplePeriodS,
+          created_at_ms: madeAtMs,
+        },
+      ],
+    ],
+    [
+      'recipes',
+      [{ ...owned, id: demoRecipe.id, name: demoRecipe.name, summary: demoRecipe.summary, created_at_ms: madeAtMs }],
+    ],
+    [
+      'recipe_revisions',
+      demoRecipe.revisions.map(({ id, note, document }, index) => ({
+        ...owned,
+        id,
+        recipe_id: demoRecipe.id,
+        number: index + 1,
+        note,
+        created_at_ms: index === 0 ? madeAtMs : endedAtMs + 600_000,
+        created_by: createdBy,
+        volume_l: document.volumeL,
+        document: JSON.stringify(document),
+      })),
+    ],
+    [
+      'batches',
+      [
+        {
+          ...plannedBatch(brewed.id, brewedAtMs, 1),
+          revision_id: brewed.revision.id,
+          created_at_ms: madeAtMs + 600_000,
+        },
+        today,
+      ],
+    ],
+    ['runs', [finished.run]],
+    ['run_events', finished.events],
+    ['readings', finished.readings],
+  ];
+}
+
+function isSameYear(aMs: number, bMs: number): boolean {
+  return localDate(aMs).slice(0, 4) === localDate(bMs).slice(0, 4);
+}
+
+function batchNumberOf(atMs: number, numberInYear: number): string {
+  return formatBatchNumber({ year: Number(localDate(atMs).slice(0, 4)), numberInYear });
+}
+
+/** A batch of the newest revision, planned for the day of this instant. */
+export function plannedBatch(id: string, atMs: number, numberInYear: number): Row {
+  const newest = demoRecipe.revisions[1];
+  return {
+    id,
+    house_id: demoHouse.id,
+    year: Number(localDate(atMs).slice(0, 4)),
+    number_in_year: numberInYear,
+    batch_number: batchNumberOf(atMs, numberInYear),
+    revision_id: newest.id,
+    planned_on: localDate(atMs),
+    kettle_id: demoId('equipment/kettle'),
+    chiller_id: demoId('equipment/coil'),
+    keg_id: demoId('equipment/kegA'),
+    probe_id: demoId('probe'),
+    volume_l: newest.document.volumeL,
+    created_at_ms: atMs,
+    created_by: demoMemberId('brewer'),
+  };
+}
+
+function finishedRun(
+  batchId: string,
+  batchNumber: string,
+  startedAtMs: number,
+  probeId: string,
+): { run: Row; events: Row[]; readings: Row[] } {
+  const { altitudeM } = demoHouse;
+  const revision = demoRecipe.revisions[0];
+  const { document } = revision;
+  const coolantC = demoEquipment.coil.facts.coolantC;
+  const runId = demoId('run');
+  const memberId = demoMemberId('brewer');
+  const title = `${demoRecipe.name} ${document.volumeL} L`;
+  const clock = wallClock(startedAtMs);
+  let serial = 0;
+  const newId = () => {
+    serial += 1;
+    return demoId(`run/event/${serial}`);
+  };
+  const sheet = compileSheet(document, { altitudeM, reachS: REACH_S });
+  const day = recordDay({
+    started: {
+      id: newId(),
+      runId,
+      type: 'run.started',
+      v: 1,
+      atMs: startedAtMs,
+      by: memberId,
+      station: 'hub',
+      payload: { title, batchId, batchNumber, revisionId: revision.id, isRehearsal: false, sheet, clock },
+    },
+    kettle: kettleSetupOf({
+      kettle: demoEquipment.kettle,
+      chiller: demoEquipment.coil,
+      document,
+      altitudeM,
+      seed: SEED,
+    }),
+    driver: {
+      watch: {
+        lagS: demoProbe.lagS,
+        resolutionC: demoProbe.resolutionC,
+        samplePeriodS: demoProbe.samplePeriodS,
+        roomC: ROOM_C,
+        coolantC,
+      },
+      hasProbe: true,
+    },
+    memberId,
+    station: 'tablet',
+    newId,
+  });
+
+  const run: Row = {
+    id: runId,
+    house_id: demoHouse.id,
+    batch_id: batchId,
+    batch_number: batchNumber,
+    revision_id: revision.id,
+    title,
+    is_rehearsal: false,
+    seed: null,
+    probe_id: probeId,
+    probe_lag_s: demoProbe.lagS,
+    probe_resolution_c: demoProbe.resolutionC,
+    probe_sample_period_s: demoProbe.samplePeriodS,
+    room_c: ROOM_C,
+    coolant_c: coolantC,
+    status: 'ended',
+    outcome: 'finished',
+    started_at_ms: startedAtMs,
+    ended_at_ms: day.events.at(-1)?.atMs ?? startedAtMs,
+    started_by: memberId,
+    clock_anchor_wall_ms: clock.anchorWallMs,
+    clock_anchor_run_ms: clock.anchorRunMs,
+    clock_rate: clock.rate,
+    last_seq: day.events.length,
+    current_step_title: null,
+    alert_stage: null,
+    created_at_ms: startedAtMs,
+  };
+  const events = day.events.map(({ seq, id, type, v, atMs, by, station, sentBy, receivedAtMs, payload }) => ({
+    run_id: runId,
+    seq,
+    id,
+    type,
+    v,
+    at_ms: atMs,
+    by,
+    station,
+    sent_by: sentBy,
+    received_at_ms: receivedAtMs,
+    payload: JSON.stringify(payload),
+  }));
+  const readings = day.readings.map(({ atMs, tempC }) => ({
+    probe_id: probeId,
+    at_ms: atMs,
+    temp_c: tempC,
+    received_at_ms: atMs,
+  }));
+  return { run, events, readings };
+}

@@ -1,0 +1,96 @@
+import { QueryTypes } from 'sequelize';
+import { Sequelize } from 'sequelize-typescript';
+import request from 'supertest';
+import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { buildBatch, signInAs } from '../../test/builders.js';
+import { createTestApp, type TestApp } from '../../test/create-test-app.js';
+import { expectProblem } from '../../test/problem-matcher.js';
+import { demoSignIns } from './demo-house.js';
+import { localDate } from './demo-rows.js';
+import { ensureDemo, resetDemo } from './demo.js';
+
+const DAY_MS = 24 * 3_600_000;
+const signIn = (url: string, email: string, password: string) =>
+  request(url).post('/api/auth/sign-in').send({ email, password });
+
+describe('the demo house', () => {
+  let testApp: TestApp;
+  beforeAll(async () => {
+    testApp = await createTestApp({ DEMO: 'on' });
+  });
+  afterAll(() => testApp.close());
+
+  const counts = async () => {
+    const rows: Record<string, number> = {};
+    for (const table of [
+      'houses',
+      'users',
+      'memberships',
+      'batches',
+      'runs',
+      'run_events',
+      'readings',
+      'recipe_revisions',
+    ]) {
+      const [row] = await testApp.app
+        .get(Sequelize)
+        .query<{ count: number }>(`SELECT COUNT(*) AS count FROM ${table}`, { type: QueryTypes.SELECT });
+      rows[table] = row?.count ?? 0;
+    }
+    return rows;
+  };
+  const batches = async () => {
+    const { email, password } = demoSignIns[1]!;
+    const { accessToken } = (await signIn(testApp.url, email, password)).body as { accessToken: string };
+    const listed = await request(testApp.url).get('/api/batches').set('authorization', `Bearer ${accessToken}`);
+    return listed.body as { batchNumber: string; plannedOn: string; status: string }[];
+  };
+
+  it('is made once, whoever asks again', async () => {
+    const nowMs = Date.now() - 3 * DAY_MS;
+    expect(await ensureDemo(testApp.databaseUrl, nowMs)).toBe('made');
+    const first = await counts();
+    expect(first).toMatchObject({ houses: 1, users: 5, memberships: 5, batches: 2, runs: 1, recipe_revisions: 2 });
+    expect(first['readings']).toBeGreaterThan(3000);
+    expect(await ensureDemo(testApp.databaseUrl, nowMs)).toBe('kept');
+    expect(await counts()).toEqual(first);
+  });
+
+  it('has a batch for today, also days later', async () => {
+    const nowMs = Date.now();
+    await ensureDemo(testApp.databaseUrl, nowMs);
+    expect((await batches()).find(({ status }) => status === 'planned')).toMatchObject({ plannedOn: localDate(nowMs) });
+    const before = (await counts())['batches'];
+    await ensureDemo(testApp.databaseUrl, nowMs);
+    expect((await counts())['batches']).toBe(before);
+  });
+
+  it('lets everybody on its list in', async () => {
+    for (const { email, password, role } of demoSignIns)
+      expect((await signIn(testApp.url, email, password)).body).toMatchObject({ member: { role } });
+  });
+
+  it('is made anew, and takes nothing of another house with it', async () => {
+    const { author } = await buildBatch(testApp);
+    const stranger = await signInAs(testApp, 'brewer', { house: author.house });
+    const before = await counts();
+    await resetDemo(testApp.databaseUrl, Date.now());
+    expect(await counts()).toEqual(before);
+    const kept = await request(testApp.url).get('/api/batches').set('authorization', stranger.bearer);
+    expect(kept.body).toHaveLength(1);
+  });
+});
+
+describe('where the demo is switched off', () => {
+  let testApp: TestApp;
+  beforeAll(async () => {
+    testApp = await createTestApp({ DEMO: 'off' });
+    await ensureDemo(testApp.databaseUrl, Date.now());
+  });
+  afterAll(() => testApp.close());
+
+  it('its well-known passwords open no door', async () => {
+    for (const { email, password } of demoSignIns)
+      expectProblem(await signIn(testApp.url, email, password), 'wrong-credentials');
+  });
+});
