@@ -8,5 +8,7 @@ export default defineConfig({
     environment: 'jsdom',
     include: ['src/**/*.spec.{ts,tsx}'],
     setupFiles: ['src/testing/setup.ts'],
+    // Otherwise a style sheet is empty, also when it is read as text.
+    css: true,
   },
 });

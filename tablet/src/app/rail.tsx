@@ -61,7 +61,7 @@ export function Rail() {
               </li>
             ))}
           <li className="flex-1 md:mt-auto md:flex-none md:pb-5">
-            <RailLink to="/about" word="About" drawing={<path d="M4 26h24M16 12v9M16 5v2.500" />} />
+            <RailLink to="/about" word="Station" drawing={<path d="M4 26h24M16 12v9M16 5v2.500" />} />
           </li>
         </ul>
       </div>

@@ -1,6 +1,7 @@
 import { flexRender, type RowData, type Table } from '@tanstack/react-table';
 import { Button } from './button.tsx';
 import { classNames } from './class-names.ts';
+import { SelectField } from './field.tsx';
 
 declare module '@tanstack/react-table' {
   // The names of the type parameters are those of the library's own declaration.
@@ -28,6 +29,7 @@ export function DataTable<Row extends RowData>({ table, caption, countWord }: Da
   const rows = table.getRowModel().rows;
   return (
     <div className="min-w-0">
+      <CardOrder table={table} />
       <table role="table" className="block w-full border-collapse text-left text-body sm:table">
         <caption className="sr-only">{caption}</caption>
         <thead role="rowgroup" className="hidden sm:table-header-group">
@@ -97,6 +99,38 @@ export function DataTable<Row extends RowData>({ table, caption, countWord }: Da
         </tbody>
       </table>
       <Pages table={table} countWord={countWord} />
+    </div>
+  );
+}
+
+/** On a phone there are no column heads to press. */
+function CardOrder<Row extends RowData>({ table }: { table: Table<Row> }) {
+  const columns = table.getAllLeafColumns().filter((column) => column.getCanSort());
+  const [sorted] = table.getState().sorting;
+  if (columns.length === 0) return null;
+  return (
+    <div className="mb-4 flex items-end gap-3 sm:hidden">
+      <div className="flex-1">
+        <SelectField
+          label="Order by"
+          value={sorted?.id ?? ''}
+          onChange={(event) => table.setSorting([{ id: event.target.value, desc: sorted?.desc ?? false }])}
+        >
+          {sorted ? null : <option value="">as it came</option>}
+          {columns.map(({ id, columnDef: { header } }) => (
+            <option key={id} value={id}>
+              {typeof header === 'string' ? header : id}
+            </option>
+          ))}
+        </SelectField>
+      </div>
+      <Button
+        disabled={!sorted}
+        aria-label={sorted?.desc ? 'Descending; turn around' : 'Ascending; turn around'}
+        onClick={() => sorted && table.setSorting([{ ...sorted, desc: !sorted.desc }])}
+      >
+        <SortGlyph sorted={sorted ? (sorted.desc ? 'desc' : 'asc') : false} />
+      </Button>
     </div>
   );
 }

@@ -19,7 +19,7 @@ export function Page({ title, tabTitle, above, lead, action, children }: PagePro
   return (
     <div className="mx-auto w-full max-w-[84rem] px-5 pb-16 pt-6 sm:px-8 lg:px-12 lg:pt-9">
       <header className="flex flex-wrap items-end justify-between gap-x-8 gap-y-5">
-        <div className="min-w-0 max-w-full">
+        <div className="min-w-0 flex-1 basis-80">
           {above ? <div className="mb-2 text-body text-soft">{above}</div> : null}
           <h1 tabIndex={-1} className="text-display text-balance break-words">
             {title}

@@ -9,23 +9,23 @@ export function FallDrawing({ className }: { className?: string }) {
       fill="none"
     >
       <g stroke="var(--edge)" strokeWidth="2" strokeDasharray="10 10">
-        <path d="M0 250h252M292 250h428M0 470h432M474 470h246M0 650h596M640 650h80" />
+        <path d="M0 250H720M0 470H400M506 470H720M0 650H720" />
       </g>
       <g fontSize="26" fill="var(--soft)" fontFamily="inherit">
-        <text x="700" y="238" textAnchor="end">
+        <text x="650" y="236" textAnchor="end">
           tea in
         </text>
-        <text x="700" y="458" textAnchor="end">
+        <text x="650" y="456" textAnchor="end">
           hops in
         </text>
-        <text x="24" y="638">
+        <text x="250" y="690">
           into the keg
         </text>
       </g>
-      <path d="M-20 780C60 640 110 330 190 240" stroke="var(--copper-line)" strokeWidth="12" />
-      <path d="M190 240C205 224 240 226 272 228" stroke="var(--leaf-line)" strokeWidth="12" />
-      <path d="M272 228C330 232 380 360 452 468C520 570 590 640 740 680" stroke="var(--tarn-line)" strokeWidth="12" />
-      <path d="M453 440l30 30-30 30-30-30z" fill="var(--ground)" stroke="var(--text)" strokeWidth="6" />
+      <path d="M-20 800C60 660 110 340 196 240" stroke="var(--copper-line)" strokeWidth="12" />
+      <path d="M192 244C210 222 240 226 276 228" stroke="var(--leaf-line)" strokeWidth="12" />
+      <path d="M274 228C330 230 384 362 453 470C516 568 590 640 740 684" stroke="var(--tarn-line)" strokeWidth="12" />
+      <path d="M453 438l32 32-32 32-32-32z" fill="var(--ground)" stroke="var(--text)" strokeWidth="6" />
     </svg>
   );
 }

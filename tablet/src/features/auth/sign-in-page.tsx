@@ -25,10 +25,10 @@ export function SignInPage() {
   const reason = session.status === 'signed-out' ? reasons[session.reason] : null;
   return (
     <div className="grid min-h-dvh md:grid-cols-[1.15fr_1fr]">
-      <div className="relative min-h-44 overflow-hidden md:min-h-0">
+      <header className="relative min-h-44 overflow-hidden md:min-h-0">
         <FallDrawing className="absolute inset-0 h-full w-full" />
         <Wordmark className="absolute left-6 top-6 text-[1.75rem] sm:left-10 sm:top-9 md:text-[2.25rem]" />
-      </div>
+      </header>
       <main className="flex items-start border-edge px-6 pb-12 pt-8 sm:px-10 md:items-center md:border-l-2 lg:px-16">
         <div className="w-full max-w-md">
           <h1 className="text-display">Sign in</h1>

@@ -6,7 +6,7 @@ import { directionDress } from '#components/direction-dress.ts';
 import type { LinePoint, Stretch } from '#lib/liquid-line.ts';
 import { useGround } from '#lib/theme.ts';
 import { clockTime } from '#lib/words.ts';
-import { layoutFlags, PENNANT_PX, type Flag } from './flag-layout.ts';
+import { layoutFlags, PENNANT_PX, type Flag, type PlacedFlag } from './flag-layout.ts';
 
 export interface Level {
   tempC: number;
@@ -33,6 +33,7 @@ interface Geometry {
 }
 
 const LANE_PX = 30;
+const LANES = 5;
 const NARROW_PX = 620;
 
 function cssColor(name: string): string {
@@ -89,7 +90,7 @@ export function Curve({ line, stretches, levels, flags, fromMs, toMs }: CurvePro
     const options: uPlot.Options = {
       ...size(),
       ms: 1,
-      padding: [4 * LANE_PX + 12, 12, 0, 0],
+      padding: [LANES * LANE_PX + 12, 12, 0, 0],
       legend: { show: false },
       cursor: { drag: { x: false, y: false }, y: false, points: { size: 12 } },
       scales: {
@@ -164,8 +165,11 @@ function Overlay({
   const isNarrow = width < NARROW_PX;
   const xOf = (atMs: number) => ((atMs - fromMs) / (toMs - fromMs)) * width;
   const yOf = (tempC: number) => height * (1 - (tempC - minC) / (maxC - minC));
+  const endC = temperatureAt(line, toMs);
+  /** The line runs just above the level where its label stands: the label goes below. */
+  const isCrowdedAbove = (tempC: number) => endC !== null && endC >= tempC && yOf(tempC) - yOf(endC) < 30;
   const placed = useMemo(
-    () => layoutFlags(flags, { width, lanes: 4, hasLabels: !isNarrow, xOf }),
+    () => layoutFlags(flags, { width, lanes: LANES, hasLabels: !isNarrow, xOf }),
     // eslint-disable-next-line react-hooks/exhaustive-deps -- xOf follows from the others
     [flags, width, isNarrow, fromMs, toMs],
   );
@@ -173,71 +177,78 @@ function Overlay({
     <svg className="pointer-events-none absolute inset-0 h-full w-full overflow-visible" fontFamily="inherit">
       <g transform={`translate(${left} ${top})`}>
         {levels.map(({ tempC, title }) => (
-          <g key={`${tempC}${title}`}>
-            <path d={`M0 ${yOf(tempC)}H${width}`} stroke="var(--edge)" strokeWidth="1.5" strokeDasharray="8 8" />
-            <text
-              x={width - 4}
-              y={yOf(tempC) - 7}
-              textAnchor="end"
-              fontSize="15"
-              fill="var(--soft)"
-              stroke="var(--ground)"
-              strokeWidth="5"
-              paintOrder="stroke"
-            >
-              {isNarrow ? formatTemp(tempC, { unit: 'C' }) : `${title} ${formatTemp(tempC, { unit: 'C' })}`}
-            </text>
-          </g>
+          <path
+            key={`${tempC}${title}`}
+            d={`M0 ${yOf(tempC)}H${width}`}
+            stroke="var(--edge)"
+            strokeWidth="1.5"
+            strokeDasharray="8 8"
+          />
         ))}
         {placed.map((flag) => {
-          const y = -(flag.lane + 1) * LANE_PX;
           const foot = temperatureAt(line, flag.atMs);
+          const footY = foot === null ? null : yOf(foot);
           return (
             <g key={flag.id} transform={`translate(${flag.x} 0)`}>
-              <path
-                d={`M0 ${y}V${foot === null ? height : yOf(foot) - 8}`}
-                stroke="var(--text)"
-                strokeWidth="1.5"
-                opacity="0.55"
-              />
-              {foot === null ? null : (
+              {flag.lane === null ? null : <Pennant flag={flag} lane={flag.lane} footY={footY ?? height} />}
+              {footY === null ? null : (
                 <path
-                  d="M0-7l7 7-7 7-7-7z"
-                  transform={`translate(0 ${yOf(foot)})`}
+                  d={flag.isVital ? 'M0-8l8 8-8 8-8-8z' : 'M0-5l5 5-5 5-5-5z'}
+                  transform={`translate(0 ${footY})`}
                   fill="var(--ground)"
                   stroke="var(--text)"
                   strokeWidth="2.5"
                 />
               )}
-              <g transform={`translate(0 ${y}) scale(${flag.isLeftward ? -1 : 1} 1)`}>
-                <path d={`M0 0H${PENNANT_PX - 5}l5 11-5 11H0z`} fill="var(--text)" />
-              </g>
-              <text
-                x={(flag.isLeftward ? -1 : 1) * 13}
-                y={y + 16}
-                textAnchor="middle"
-                fontSize="14"
-                fontWeight="600"
-                fill="var(--ground)"
-              >
-                {flag.number}
-              </text>
-              {flag.hasLabel ? (
-                <text
-                  x={(flag.isLeftward ? -1 : 1) * (PENNANT_PX + 5)}
-                  y={y + 16}
-                  textAnchor={flag.isLeftward ? 'end' : 'start'}
-                  fontSize="15"
-                  fontWeight={flag.isVital ? 600 : 400}
-                  fill="var(--text)"
-                >
-                  {flag.title}
-                </text>
-              ) : null}
             </g>
           );
         })}
+        {levels.map(({ tempC, title }) => (
+          <text
+            key={`${tempC}${title}`}
+            x={width - 4}
+            y={yOf(tempC) + (isCrowdedAbove(tempC) ? 20 : -7)}
+            textAnchor="end"
+            fontSize="15"
+            fill="var(--soft)"
+            stroke="var(--ground)"
+            strokeWidth="6"
+            paintOrder="stroke"
+          >
+            {isNarrow ? formatTemp(tempC, { unit: 'C' }) : `${title} ${formatTemp(tempC, { unit: 'C' })}`}
+          </text>
+        ))}
       </g>
     </svg>
+  );
+}
+
+function Pennant({ flag, lane, footY }: { flag: PlacedFlag; lane: number; footY: number }) {
+  const y = (lane - LANES) * LANE_PX;
+  const side = flag.isLeftward ? -1 : 1;
+  return (
+    <>
+      <path d={`M0 ${y}V${footY}`} stroke="var(--text)" strokeWidth="1.5" opacity="0.5" />
+      <path
+        d={`M0 0H${PENNANT_PX - 5}l5 11-5 11H0z`}
+        fill="var(--text)"
+        transform={`translate(0 ${y}) scale(${side} 1)`}
+      />
+      <text x={side * 13} y={y + 16} textAnchor="middle" fontSize="14" fontWeight="600" fill="var(--ground)">
+        {flag.number}
+      </text>
+      {flag.hasLabel ? (
+        <text
+          x={side * (PENNANT_PX + 5)}
+          y={y + 16}
+          textAnchor={flag.isLeftward ? 'end' : 'start'}
+          fontSize="15"
+          fontWeight={flag.isVital ? 600 : 400}
+          fill="var(--text)"
+        >
+          {flag.title}
+        </text>
+      ) : null}
+    </>
   );
 }

@@ -10,9 +10,10 @@ export interface Flag {
 
 export interface PlacedFlag extends Flag {
   x: number;
-  lane: number;
+  /** Counted from the top; `null` when there was no room, and only the spot on the line is marked. */
+  lane: number | null;
   hasLabel: boolean;
-  /** The label runs to the left of the pole: the right edge is near. */
+  /** The flag flies to the left of its pole: the right edge is near. */
   isLeftward: boolean;
 }
 
@@ -26,15 +27,19 @@ interface Room {
 
 export const PENNANT_PX = 30;
 const LETTER_PX = 8.4;
-const GAP_PX = 10;
+const GAP_PX = 12;
 
 interface Taken {
   lane: number;
+  poleX: number;
   from: number;
   to: number;
 }
 
-/** Gives each flag a lane in which it covers no other. Vital ones choose first; what finds no room for its words keeps its number. */
+/**
+ * Gives each flag a lane in which it covers no other, and no pole runs through a label. Vital ones choose first; what finds no
+ * room for its words shows its number, and what finds none for that is only marked on the line.
+ */
 export function layoutFlags(flags: readonly Flag[], room: Room): PlacedFlag[] {
   const taken: Taken[] = [];
   const placed = flags
@@ -43,10 +48,15 @@ export function layoutFlags(flags: readonly Flag[], room: Room): PlacedFlag[] {
     .sort((a, b) => Number(b.isVital) - Number(a.isVital) || a.x - b.x)
     .map((flag) => {
       const labelPx = PENNANT_PX + flag.title.length * LETTER_PX + GAP_PX;
-      const label = room.hasLabels ? fit(flag.x, labelPx, room, taken) : null;
-      const spot = label ?? fit(flag.x, PENNANT_PX, room, taken) ?? crowded(flag.x);
-      taken.push(spot);
-      return { ...flag, lane: spot.lane, hasLabel: label !== null, isLeftward: spot.from < flag.x - 1 };
+      const withLabel = room.hasLabels ? fit(flag.x, labelPx, room, taken) : null;
+      const spot = withLabel ?? fit(flag.x, PENNANT_PX, room, taken);
+      if (spot) taken.push(spot);
+      return {
+        ...flag,
+        lane: spot?.lane ?? null,
+        hasLabel: withLabel !== null,
+        isLeftward: spot !== null && spot.from < flag.x - 1,
+      };
     });
   return placed.sort((a, b) => a.x - b.x);
 }
@@ -55,17 +65,17 @@ function fit(x: number, width: number, { lanes, width: roomPx }: Room, taken: re
   const spans = [
     { from: x, to: x + width },
     { from: x - width, to: x },
-  ].filter(({ from, to }) => from >= -1 && to <= roomPx + PENNANT_PX / 2);
+  ].filter(({ from, to }) => from >= -1 && to <= roomPx + GAP_PX);
   for (let lane = 0; lane < lanes; lane += 1) {
-    const span = spans.find(({ from, to }) =>
-      taken.every((other) => other.lane !== lane || to <= other.from || from >= other.to),
-    );
-    if (span) return { lane, ...span };
+    const span = spans.find(({ from, to }) => taken.every((other) => isClear({ lane, poleX: x, from, to }, other)));
+    if (span) return { lane, poleX: x, ...span };
   }
   return null;
 }
 
-/** No room at all: on top of the others in the last resort, where the log still tells them apart. */
-function crowded(x: number): Taken {
-  return { lane: 0, from: x, to: x + PENNANT_PX };
+function isClear(flag: Taken, other: Taken): boolean {
+  if (flag.lane === other.lane) return flag.to <= other.from || flag.from >= other.to;
+  // The pole of the upper one runs down past the lower one.
+  const [upper, lower] = flag.lane < other.lane ? [flag, other] : [other, flag];
+  return upper.poleX <= lower.from || upper.poleX >= lower.to;
 }

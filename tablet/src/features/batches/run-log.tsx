@@ -62,6 +62,14 @@ export function RunLog({ log, state, flags, members }: RunLogProps) {
                 ) : null}
               </span>
               <p className={classNames('text-body', flag && 'font-medium', isUndone && 'line-through decoration-2')}>
+                {flag ? (
+                  <span
+                    aria-hidden="true"
+                    className="mr-2 inline-block min-w-6 bg-text px-1 text-center text-note text-ground sm:hidden"
+                  >
+                    {flag.number}
+                  </span>
+                ) : null}
                 {wordsOf(entry, log, state)}
                 {isUndone ? <span className="sr-only"> (taken back later)</span> : null}
               </p>

@@ -24,10 +24,7 @@ export function GuestHome() {
         Hello, {member.displayName}. You taste for {house.name}, and you taste blind: recipes, batches and runs are not
         shown to you, so that the glass is all you judge.
       </p>
-      <p className="text-lead text-soft">
-        There is nothing to do here until the brewer calls you to a glass. Come without coffee or mint in the last half
-        hour.
-      </p>
+      <p className="text-lead text-soft">There is nothing to do here until the brewer calls you to a glass.</p>
     </div>
   );
 }

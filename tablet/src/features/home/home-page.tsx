@@ -82,7 +82,7 @@ function Board() {
 function Running({ runs }: { runs: RunSummary[] | undefined }) {
   if (!runs || runs.length === 0) return null;
   return (
-    <section aria-labelledby="running" className="grid gap-8">
+    <section aria-labelledby="running" className="grid gap-7">
       <LevelRule id="running">Running now</LevelRule>
       {runs.map((run) => (
         <RunningRun key={run.id} run={run} />

@@ -23,6 +23,7 @@ export function PlannedBatch({ batch }: { batch: Batch }) {
   const may = useMay();
   const [isAsking, setIsAsking] = useState(false);
   const day = localDate(batch.plannedOn);
+  const isDue = day.getTime() <= Date.now();
   return (
     <li className="flex flex-wrap items-center gap-x-7 gap-y-4 border-t-2 border-hair py-5">
       <p className="w-20 shrink-0">
@@ -40,7 +41,7 @@ export function PlannedBatch({ batch }: { batch: Batch }) {
         </p>
       </div>
       {may('runs:act') ? (
-        <Button look="primary" size="sheet" onClick={() => setIsAsking(true)}>
+        <Button look={isDue ? 'primary' : 'plain'} size="sheet" onClick={() => setIsAsking(true)}>
           Start the run
         </Button>
       ) : null}

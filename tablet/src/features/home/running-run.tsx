@@ -25,14 +25,14 @@ export function RunningRun({ run }: { run: RunSummary }) {
   const log = useQuery({ ...runLogQuery(run.id), staleTime: 60_000 });
   const levels = useMemo(() => levelsOf(log.data ?? []), [log.data]);
   return (
-    <article aria-label={run.title} className="border-t-4 border-text pt-6">
-      <div className="grid gap-x-10 gap-y-6 lg:grid-cols-[1fr_auto]">
-        <div className="grid content-start justify-items-start gap-4">
+    <article aria-label={run.title} className="grid gap-6">
+      <div className="grid gap-x-10 gap-y-5 md:grid-cols-[1fr_auto]">
+        <div className="grid content-start gap-4">
           <p className="flex flex-wrap items-center gap-x-5 gap-y-1 text-body text-soft">
             <span>{run.title}</span>
             {run.isRehearsal ? (
               <StatusChip shape="dash" tone="text">
-                Rehearsal at {run.clock.rate}×
+                rehearsal at {run.clock.rate}×
               </StatusChip>
             ) : (
               <span>batch {run.batchNumber}</span>
@@ -41,23 +41,26 @@ export function RunningRun({ run }: { run: RunSummary }) {
           </p>
           <h3 className="text-display">{run.currentStepTitle ?? 'Every step is done'}</h3>
           {run.alertStage ? (
-            <StatusChip
-              shape="diamond"
-              tone={run.alertStage === 'now' || run.alertStage === 'missed' ? 'ember' : 'text'}
-              className="text-lead"
-            >
-              {stageWords[run.alertStage]}
-            </StatusChip>
+            <p className="text-lead">
+              <StatusChip
+                shape={run.alertStage === 'coming-up' ? 'ring' : 'diamond'}
+                tone={run.alertStage === 'now' || run.alertStage === 'missed' ? 'ember' : 'text'}
+              >
+                {stageWords[run.alertStage]}
+              </StatusChip>
+            </p>
           ) : null}
-          <ButtonLink look="primary" size="sheet" to={`/runs/${run.id}`} className="mt-2">
-            Open the run sheet
-          </ButtonLink>
         </div>
         <Temperature liquid={liquid} />
       </div>
-      {liquid.line.length > 2 ? (
-        <LiquidSketch line={liquid.line} levels={levels} hasEnd className="mr-3 mt-6 h-36 lg:h-44" />
-      ) : null}
+      <div className="flex flex-col-reverse gap-6 md:flex-row md:items-center md:gap-10">
+        <ButtonLink look="primary" size="sheet" to={`/runs/${run.id}`} className="shrink-0">
+          Open the run sheet
+        </ButtonLink>
+        {liquid.line.length > 2 ? (
+          <LiquidSketch line={liquid.line} levels={levels} hasEnd className="mr-3 h-32 min-w-0 md:h-36 md:flex-1" />
+        ) : null}
+      </div>
     </article>
   );
 }
@@ -75,7 +78,7 @@ function Temperature({ liquid: { estimate } }: { liquid: Liquid }) {
   const { word, shape, tone } = directionDress[estimate.mode];
   const isLive = estimate.status === 'live' || estimate.status === 'starting';
   return (
-    <div className="lg:text-right">
+    <div className="md:text-right">
       <p className="text-figure whitespace-nowrap">
         {formatTemp(estimate.tempC, { unit: 'C', showUnit: false })}
         <span className="text-[0.45em] text-soft"> °C</span>

@@ -73,11 +73,11 @@ export function MembersSection() {
               {member.isActive ? (
                 <>
                   <span className="font-medium">{member.role}</span>
-                  <span className="hidden text-soft lg:inline">, {roleTells[member.role]}</span>
+                  <span className="hidden text-soft xl:inline">, {roleTells[member.role]}</span>
                 </>
               ) : (
                 <StatusChip shape="ring" tone="soft">
-                  signed out for good
+                  no access
                 </StatusChip>
               )}
             </p>

@@ -46,7 +46,13 @@ export function PlannedLine({ document: { steep, hops, transferC } }: { document
         strokeWidth="6"
         strokeLinejoin="round"
       />
-      <g fill="var(--text)" fontSize="19" stroke="var(--ground)" strokeWidth="6" paintOrder="stroke">
+      <g
+        className="text-[19px] max-sm:text-[32px]"
+        fill="var(--text)"
+        stroke="var(--ground)"
+        strokeWidth="6"
+        paintOrder="stroke"
+      >
         <text x="180" y={y(steep.tempC) - 16}>
           tea in {formatTemp(steep.tempC, { unit: 'C', digits: 0 })}, for {formatDuration(steep.durationS)}
         </text>

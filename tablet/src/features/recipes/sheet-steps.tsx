@@ -35,11 +35,14 @@ function settingWords({ label, quantity, value }: Step['settings'][number]): str
 /** The steps as they will be asked for. */
 export function SheetSteps({ sheet }: { sheet: RunSheet }) {
   return (
-    <ol className="grid gap-x-14 lg:grid-cols-2">
+    <ol className="gap-x-14 lg:columns-2">
       {sheet.steps.map((step, index) => {
         const dress = doing[step.kind];
         return (
-          <li key={step.id} className="grid grid-cols-[2.5rem_1fr] gap-x-3 border-b border-hair py-4">
+          <li
+            key={step.id}
+            className="grid break-inside-avoid grid-cols-[2.5rem_1fr] gap-x-3 border-b border-hair py-4"
+          >
             <span className="text-lead tabular-nums text-soft">{index + 1}</span>
             <div>
               <p className="flex flex-wrap items-baseline gap-x-3 text-lead">
