@@ -14,7 +14,6 @@ const acts: Record<string, PedalAct> = {
 
 export interface PedalKey {
   key: string;
-  isRepeat: boolean;
   hasModifier: boolean;
   /** Somebody types into a field. */
   isTyping: boolean;
@@ -22,6 +21,8 @@ export interface PedalKey {
   isDialogOpen: boolean;
   /** Somebody went to a button with Tab: Space and Enter press that button. */
   isOnTabbedControl: boolean;
+  /** … or to a choice, where the arrows choose. */
+  isOnTabbedChoice: boolean;
 }
 
 /** What a key does on the run sheet; `null`: it is none of ours and goes where it goes. */
@@ -30,5 +31,6 @@ export function pedalActOf(input: PedalKey): PedalAct | null {
   if (!act || input.hasModifier || input.isTyping || input.isDialogOpen) return null;
   const isPressKey = input.key === ' ' || input.key === 'Enter';
   if (isPressKey && input.isOnTabbedControl) return null;
+  if (input.key.startsWith('Arrow') && input.isOnTabbedChoice) return null;
   return act;
 }

@@ -14,17 +14,20 @@ export function usePedal(onAct: (act: PedalAct) => void): void {
   useEffect(() => {
     let hasTabbed = false;
     let lastMs = Number.NEGATIVE_INFINITY;
-    const onKeyDown = (event: KeyboardEvent) => {
-      if (event.key === 'Tab') hasTabbed = true;
+    const actOf = (event: KeyboardEvent) => {
       const focused = document.activeElement;
-      const act = pedalActOf({
+      return pedalActOf({
         key: event.key,
-        isRepeat: event.repeat,
         hasModifier: event.ctrlKey || event.altKey || event.metaKey || event.shiftKey,
         isTyping: focused?.matches(FIELDS) ?? false,
         isDialogOpen: document.querySelector('[role="dialog"], [role="alertdialog"]') !== null,
         isOnTabbedControl: hasTabbed && (focused?.matches(CONTROLS) ?? false),
+        isOnTabbedChoice: hasTabbed && (focused?.matches('[role="radio"]') ?? false),
       });
+    };
+    const onKeyDown = (event: KeyboardEvent) => {
+      if (event.key === 'Tab') hasTabbed = true;
+      const act = actOf(event);
       if (!act) return;
       event.preventDefault();
       event.stopPropagation();
@@ -34,17 +37,7 @@ export function usePedal(onAct: (act: PedalAct) => void): void {
     };
     // A focused button is pressed when the key comes up: that belongs to the pedal as well.
     const onKeyUp = (event: KeyboardEvent) => {
-      if (event.key !== ' ') return;
-      const focused = document.activeElement;
-      const isOurs = pedalActOf({
-        key: event.key,
-        isRepeat: false,
-        hasModifier: false,
-        isTyping: focused?.matches(FIELDS) ?? false,
-        isDialogOpen: document.querySelector('[role="dialog"], [role="alertdialog"]') !== null,
-        isOnTabbedControl: hasTabbed && (focused?.matches(CONTROLS) ?? false),
-      });
-      if (isOurs) event.preventDefault();
+      if (event.key === ' ' && actOf(event)) event.preventDefault();
     };
     const onPointerDown = () => {
       hasTabbed = false;

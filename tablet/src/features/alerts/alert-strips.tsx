@@ -1,0 +1,57 @@
+import { alertWords, standingAlerts, type Alert } from '@steepfall/shared/runs';
+import { PressButton } from '#components/press-button.tsx';
+import { ShapeGlyph } from '#components/shapes.tsx';
+import { alarmSounds } from '#lib/audio/alarm-sounds.ts';
+import { useLive, useRunState, useRunStore } from '#lib/run-store/run-context.tsx';
+import { useStoredPart } from '#lib/value-store.ts';
+import { dueText } from './alert-level.ts';
+
+const stageWords = { 'coming-up': 'Coming up', 'stand-by': 'Stand by', now: 'Now', missed: 'Late' } as const;
+
+/** What is on its way, or a sound that is off: one calm line, at the place kept for it. */
+export function AlertStrips() {
+  const state = useRunState();
+  const isTaken = standingAlerts(state).some(({ stage }) => stage === 'now' || stage === 'missed');
+  const next = standingAlerts(state)[0];
+  if (next && !isTaken) return <Strip alert={next} />;
+  return isTaken ? null : <SoundOffStrip />;
+}
+
+function Strip({ alert }: { alert: Alert }) {
+  const state = useRunState();
+  const store = useRunStore();
+  const due = useLive(({ nowMs }) => dueText(alert, nowMs));
+  const { verb, number } = alertWords(state, alert);
+  const { key, crossing, stage } = alert;
+  return (
+    <div className="strip" data-stage={stage}>
+      <ShapeGlyph shape="diamond" className="size-7 shrink-0" />
+      <p className="strip-text">
+        <strong>{stageWords[stage]}:</strong> {verb}
+        {number ? ` at ${number}` : ''}
+        {due ? <span className="tabular-nums">, {due}</span> : null}
+      </p>
+      <span className="sr-only" role="status">
+        {stageWords[stage]}: {verb}
+      </span>
+      <PressButton className="strip-act" onPress={() => void store.act({ type: 'acknowledgeAlert', key, crossing })}>
+        Heard it
+      </PressButton>
+    </div>
+  );
+}
+
+/** A browser keeps a page silent until somebody taps, and again after calls and locks. Nobody would know. */
+function SoundOffStrip() {
+  const health = useStoredPart(alarmSounds.state, ({ health: now }) => now);
+  const { status } = useRunState();
+  if (status !== 'running' || health === 'fine' || health === 'unsupported') return null;
+  return (
+    <PressButton className="strip strip-button" onPress={() => void alarmSounds.unlock()}>
+      <ShapeGlyph shape="ring" className="size-7 shrink-0" />
+      <span className="strip-text">
+        <strong>Sound is off:</strong> tap to enable
+      </span>
+    </PressButton>
+  );
+}

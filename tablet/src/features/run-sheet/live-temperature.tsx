@@ -1,0 +1,82 @@
+import { formatDuration, formatRate, formatTemp } from '@steepfall/shared/units';
+import { ShapeGlyph, type Shape } from '#components/shapes.tsx';
+import { useLive, useRun } from '#lib/run-store/run-context.tsx';
+import type { LiveState } from '#lib/run-store/run-store.ts';
+
+type Look = 'climbing' | 'holding' | 'falling' | 'unsure' | 'silent';
+
+const shapeOf: Record<Look, Shape> = {
+  climbing: 'up',
+  holding: 'flat',
+  falling: 'down',
+  unsure: 'dash',
+  silent: 'ring',
+};
+const hueOf: Record<Look, string> = {
+  climbing: 'text-copper-strong',
+  holding: 'text-leaf-strong',
+  falling: 'text-tarn-strong',
+  unsure: 'text-text',
+  silent: 'text-soft',
+};
+
+function lookOf({ view, newest }: LiveState): Look {
+  if (!view) return newest?.tempC == null ? 'silent' : 'unsure';
+  const { status, mode } = view.estimate;
+  if (status === 'live') return mode;
+  return status === 'starting' && newest?.tempC != null ? 'unsure' : 'silent';
+}
+
+/** The liquid itself, the lag of the probe taken out; the bare reading while there are too few of them. */
+function figureOf(live: LiveState): string {
+  const look = lookOf(live);
+  if (look === 'silent') return '–';
+  const tempC = look === 'unsure' ? live.newest?.tempC : live.view?.estimate.tempC;
+  return formatTemp(tempC, { unit: 'C', showUnit: false });
+}
+
+function rateOf(live: LiveState): string {
+  const look = lookOf(live);
+  if (look === 'silent') {
+    const atMs = live.view?.estimate.lastGoodAtMs ?? live.newest?.atMs ?? null;
+    if (atMs === null) return 'no reading yet';
+    return `no signal for ${formatDuration(Math.floor((live.nowMs - atMs) / 1000))}`;
+  }
+  if (look === 'unsure') return 'settling';
+  if (look === 'holding') return 'holding';
+  return formatRate(live.view?.estimate.rateCPerMin, { unit: 'C' });
+}
+
+/** The number to be read from three metres. Each part is a leaf: a reading changes its text and nothing else. */
+export function LiveTemperature() {
+  const { summary } = useRun();
+  const look = useLive(lookOf);
+  if (summary && summary.probeId === null) {
+    return (
+      <div className="live-temp">
+        <p className="live-rate text-soft">No probe on this run. Type temperatures with “Measure”.</p>
+      </div>
+    );
+  }
+  return (
+    <div className="live-temp" data-look={look}>
+      <p className={`live-figure ${hueOf[look]}`}>
+        <LiveFigure />
+        <span className="live-unit">°C</span>
+      </p>
+      <p className={`live-rate ${hueOf[look]}`}>
+        <ShapeGlyph shape={shapeOf[look]} className="size-[0.8em]" />
+        <span className="sr-only">{look} </span>
+        <LiveRate />
+      </p>
+    </div>
+  );
+}
+
+function LiveFigure() {
+  return <span>{useLive(figureOf)}</span>;
+}
+
+function LiveRate() {
+  return <span>{useLive(rateOf)}</span>;
+}

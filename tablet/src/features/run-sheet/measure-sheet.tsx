@@ -1,0 +1,94 @@
+import { useState, type FormEvent } from 'react';
+import { measurableRange, isInRange, type Decision, type RunCommand } from '@steepfall/shared/runs';
+import type { DoneCondition, MeasuredQuantity } from '@steepfall/shared/sheets';
+import { Button } from '#components/button.tsx';
+import { Segmented } from '#components/segmented.tsx';
+import { NumberPad, typed } from './number-pad.tsx';
+import { quantityWords } from './quantities.ts';
+
+interface MeasureSheetProps {
+  quantity: MeasuredQuantity;
+  stepId: string | null;
+  done: DoneCondition | null;
+  tempC: number | null;
+  onRecord: (command: RunCommand) => Promise<Decision>;
+  onClose: () => void;
+}
+
+const offered: readonly MeasuredQuantity[] = ['pH', 'tempC', 'volumeL'];
+
+/** One number, typed on keys that a wet finger hits. */
+export function MeasureSheet({ quantity: first, stepId, done, tempC, onRecord, onClose }: MeasureSheetProps) {
+  const [quantity, setQuantity] = useState(first);
+  const [text, setText] = useState('');
+  const [error, setError] = useState<string | null>(null);
+  const { name, unit } = quantityWords[quantity];
+  const value = text === '' ? Number.NaN : Number(text);
+  const choices = offered.includes(first) ? offered : [first, ...offered];
+  const wanted = done?.by === 'measurement' && done.quantity === quantity ? done : null;
+  const isWanted = wanted !== null && isInRange(wanted, quantity, value);
+
+  const record = async (event: FormEvent) => {
+    event.preventDefault();
+    const { min, max } = measurableRange[quantity];
+    if (!Number.isFinite(value)) return setError(`Type a number from ${min} to ${max}.`);
+    const decision = await onRecord({ type: 'recordMeasurement', quantity, value, stepId, tempC });
+    if (decision.ok) onClose();
+    else setError(decision.problem.detail);
+  };
+
+  return (
+    <form className="measure" onSubmit={(event) => void record(event)}>
+      <div className="measure-side">
+        <Segmented
+          label="What was measured"
+          isLabelHidden
+          value={quantity}
+          onChange={(next) => {
+            setQuantity(next);
+            setError(null);
+          }}
+          segments={choices.map((choice) => ({ value: choice, label: quantityWords[choice].name }))}
+        />
+        <label className="measure-value">
+          <span className="sr-only">
+            {name} {unit}
+          </span>
+          <input
+            value={text}
+            inputMode="none"
+            autoComplete="off"
+            autoFocus
+            placeholder="–"
+            onChange={({ target }) => {
+              if (/^\d{0,7}\.?\d{0,4}$/.test(target.value)) setText(target.value);
+            }}
+          />
+          <span aria-hidden="true">{quantity === 'pH' ? 'pH' : unit}</span>
+        </label>
+        <p className="text-lead" role="status">
+          {error ? <span className="text-ember">{error}</span> : null}
+          {!error && wanted ? (
+            <span className="text-soft">
+              Wanted: {wanted.min ?? 'any'} to {wanted.max ?? 'any'}.{' '}
+              {Number.isFinite(value)
+                ? isWanted
+                  ? 'In range: the step is done then.'
+                  : 'Out of range: it is kept, and the step waits.'
+                : ''}
+            </span>
+          ) : null}
+        </p>
+        <Button type="submit" look="primary" size="sheet" className="measure-save">
+          Keep it
+        </Button>
+      </div>
+      <NumberPad
+        onKey={(key) => {
+          setError(null);
+          setText((before) => typed(before, key));
+        }}
+      />
+    </form>
+  );
+}

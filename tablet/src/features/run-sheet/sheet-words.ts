@@ -1,0 +1,70 @@
+import type { Step } from '@steepfall/shared/sheets';
+import { formatDuration, formatTemp } from '@steepfall/shared/units';
+import type { Conflict, LogEntry, RunState } from '@steepfall/shared/runs';
+import type { CrossingForecast } from '@steepfall/shared/watch';
+
+/** A level without false digits: "62 °C", "62.5 °C". */
+export function levelText(tempC: number, showUnit = true): string {
+  return formatTemp(tempC, { unit: 'C', digits: Number.isInteger(tempC) ? 0 : 1, showUnit });
+}
+
+/** When a step is to be done, in words: "at 62 °C, falling". */
+export function conditionText(step: Step): string | null {
+  const condition = step.start.by === 'temperature' ? step.start : step.done.by === 'temperature' ? step.done : null;
+  return condition ? `at ${levelText(condition.tempC)}, ${condition.direction}` : null;
+}
+
+/** What makes the step done when nobody taps. */
+export function selfDoneText(step: Step): string | null {
+  const { done } = step;
+  if (done.by === 'temperature') return `goes on by itself at ${levelText(done.tempC)}`;
+  if (done.by === 'timer') return 'goes on by itself when the time is up';
+  return null;
+}
+
+/** An estimate promises no more than it knows: seconds at the end, tens of seconds before, whole minutes far off. */
+export function aboutText(leftS: number): string {
+  if (leftS >= 3600) return `about ${Math.round(leftS / 360) / 10} h`;
+  if (leftS >= 600) return `about ${Math.round(leftS / 60)} min`;
+  if (leftS >= 120) return formatDuration(Math.round(leftS / 10) * 10);
+  return formatDuration(Math.max(0, Math.round(leftS)));
+}
+
+/** The forecast in a few words; `null` when there is nothing to say. */
+export function forecastText(forecast: CrossingForecast | null, nowMs: number): string | null {
+  if (!forecast) return null;
+  switch (forecast.kind) {
+    case 'forecast': {
+      const leftS = (forecast.atMs - nowMs) / 1000;
+      const text = aboutText(leftS);
+      return text.startsWith('about') ? `in ${text}` : `in about ${text}`;
+    }
+    case 'crossed':
+      return 'reached';
+    case 'never':
+      return 'not as it goes now';
+    case 'too-early':
+      return 'too early to say when';
+  }
+}
+
+function clockText(atMs: number): string {
+  return new Date(atMs).toLocaleTimeString([], { hour: '2-digit', minute: '2-digit' });
+}
+
+/** What two devices say differently, in a sentence. Nothing was dropped: the first one counts. */
+export function conflictText(conflict: Conflict, state: RunState, entries: readonly LogEntry[]): string {
+  const title = state.steps.find(({ step }) => step.id === conflict.stepId)?.step.title ?? 'A step';
+  const [first, second] = conflict.eventIds.map((id) => entries.find((entry) => entry.id === id));
+  const times = first && second ? `: at ${clockText(first.atMs)} and at ${clockText(second.atMs)}` : '';
+  switch (conflict.kind) {
+    case 'step-done-twice':
+      return `“${title}” was marked done twice${times}. The first counts. If it went in twice, write a note.`;
+    case 'after-end':
+      return `“${title}” was marked done after the run had ended${times}.`;
+    case 'ended-twice':
+      return `The run was ended twice${times}. The first counts.`;
+    case 'started-twice':
+      return `The run was started twice${times}. The first counts.`;
+  }
+}

@@ -1,0 +1,97 @@
+import { useState } from 'react';
+import { Link } from 'react-router-dom';
+import { Mark } from '#components/mark.tsx';
+import { ShapeGlyph, type Shape } from '#components/shapes.tsx';
+import { alarmSounds, type SoundState } from '#lib/audio/alarm-sounds.ts';
+import { useLive, useRun } from '#lib/run-store/run-context.tsx';
+import type { LiveState } from '#lib/run-store/run-store.ts';
+import { useSession } from '#lib/session.ts';
+import { useStored, useStoredPart } from '#lib/value-store.ts';
+import { wakeState, type WakeState } from '#lib/wake-lock/wake-lock.ts';
+import { StatusSheet } from './status-sheet.tsx';
+
+export interface ChipLook {
+  shape: Shape;
+  word: string;
+  isBad: boolean;
+}
+
+const STALE_S = 30;
+
+export function probeChip({ nowMs, newest }: LiveState): string {
+  if (!newest) return 'none yet';
+  const ageS = Math.max(0, (nowMs - newest.atMs) / 1000);
+  if (newest.tempC === null) return 'no signal';
+  return ageS < 10 ? `${ageS.toFixed(1)} s ago` : `${Math.floor(ageS)} s ago`;
+}
+
+export function isProbeBad({ nowMs, newest }: LiveState): boolean {
+  return !newest || newest.tempC === null || nowMs - newest.atMs > STALE_S * 1000;
+}
+
+const soundLook: Record<SoundState['health'], ChipLook> = {
+  fine: { shape: 'dot', word: 'on', isBad: false },
+  untested: { shape: 'ring', word: 'tap to enable', isBad: true },
+  blocked: { shape: 'ring', word: 'off', isBad: true },
+  unsupported: { shape: 'ring', word: 'unsupported', isBad: true },
+};
+
+const wakeLook: Record<WakeState, ChipLook> = {
+  idle: { shape: 'ring', word: 'screen may sleep', isBad: false },
+  awake: { shape: 'dot', word: 'Awake', isBad: false },
+  'https-needed': { shape: 'ring', word: 'HTTPS needed', isBad: true },
+  unsupported: { shape: 'ring', word: 'Unsupported', isBad: true },
+  refused: { shape: 'ring', word: 'Refused', isBad: true },
+};
+
+/** One line that says whether this tablet can be relied on. Words and shapes; a tap says why. */
+export function StatusLine() {
+  const { state, summary, isJoined, pendingCount, parked, isDurable } = useRun();
+  const { known } = useSession();
+  const [isOpen, setIsOpen] = useState(false);
+  const health = useStoredPart(alarmSounds.state, ({ health: now }) => now);
+  const wake = useStored(wakeState);
+  const time = useLive(() => new Date().toLocaleTimeString([], { hour: '2-digit', minute: '2-digit' }));
+  const sound = soundLook[health];
+  const heard =
+    state.soundCheck?.isHeard === false && !sound.isBad ? { ...sound, word: 'not heard', isBad: true } : sound;
+  const hasProbe = summary === null || summary.probeId !== null;
+  return (
+    <header className="status">
+      <Link to="/" className="status-home">
+        <Mark className="size-8 shrink-0" />
+        <span className="status-title">
+          {known ? <span className="status-house">{known.house.name} · </span> : null}
+          {state.batchNumber ?? state.title}
+        </span>
+      </Link>
+      <button type="button" className="status-chips" onClick={() => setIsOpen(true)} aria-haspopup="dialog">
+        {hasProbe ? <ProbeChip /> : <Chip name="probe" shape="dash" word="none" isBad={false} />}
+        <Chip name="hub" shape={isJoined ? 'dot' : 'ring'} word={isJoined ? 'live' : 'away'} isBad={!isJoined} />
+        {pendingCount > 0 ? <Chip name="to send" shape="dash" word={String(pendingCount)} isBad={false} /> : null}
+        {parked.length > 0 ? <Chip name="refused" shape="diamond" word={String(parked.length)} isBad /> : null}
+        {isDurable ? null : <Chip name="records" shape="ring" word="not kept" isBad />}
+        <Chip name="sound" {...heard} />
+        <Chip name="screen" {...wakeLook[wake]} />
+      </button>
+      <span className="status-time">{time}</span>
+      <StatusSheet isOpen={isOpen} onClose={() => setIsOpen(false)} />
+    </header>
+  );
+}
+
+function ProbeChip() {
+  const word = useLive(probeChip);
+  const isBad = useLive(isProbeBad);
+  return <Chip name="probe" shape={isBad ? 'ring' : 'dot'} word={word} isBad={isBad} />;
+}
+
+function Chip({ name, shape, word, isBad }: { name: string } & ChipLook) {
+  return (
+    <span className="chip" data-bad={isBad || undefined}>
+      <span className="chip-name">{name}</span>
+      <ShapeGlyph shape={shape} className="size-3.5 shrink-0" />
+      <span className="chip-word">{word}</span>
+    </span>
+  );
+}

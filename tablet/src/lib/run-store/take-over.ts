@@ -1,0 +1,12 @@
+import { standingAlerts, type Alert, type RunState } from '@steepfall/shared/runs';
+
+/** The alert that takes the screen: the most urgent one that says "now" or later. Lower stages stay at the edge. */
+export function takeOverAlert(state: RunState): Alert | null {
+  const worst = standingAlerts(state)[0];
+  return worst && (worst.stage === 'now' || worst.stage === 'missed') ? worst : null;
+}
+
+/** Names one stage of one alert, for keys and for the ringer. */
+export function alertStageId({ key, crossing, stage }: Alert): string {
+  return `${key}/${crossing}/${stage}`;
+}
