@@ -2,7 +2,7 @@ import { ConsoleLogger } from '@nestjs/common';
 import { NestFactory } from '@nestjs/core';
 import type { NestExpressApplication } from '@nestjs/platform-express';
 import cookieParser from 'cookie-parser';
-import { json } from 'express';
+import { json, type NextFunction, type Request, type Response } from 'express';
 import helmet from 'helmet';
 import { AppModule } from './app.module.js';
 import type { HubConfig } from './config/environment.js';
@@ -58,6 +58,11 @@ export async function createApp(config: HubConfig): Promise<NestExpressApplicati
       originAgentCluster: false,
     }),
   );
+  // Answers of the API are of this moment and of this member: nothing in between keeps them.
+  app.use('/api', (_: Request, response: Response, next: NextFunction) => {
+    response.setHeader('Cache-Control', 'no-store');
+    next();
+  });
   app.use(WIDE_DOORS, json({ limit: WIDE_BODY }));
   app.use(json({ limit: USUAL_BODY }));
   app.use(cookieParser());

@@ -2,7 +2,7 @@ import { Injectable, Logger } from '@nestjs/common';
 import { InjectConnection, InjectModel } from '@nestjs/sequelize';
 import { ProblemError } from '@steepfall/shared/problems';
 import { Subject, type Observable } from 'rxjs';
-import type { Transaction } from 'sequelize';
+import { Op, type Transaction } from 'sequelize';
 import { Sequelize } from 'sequelize-typescript';
 import { Clock } from '../common/clock.js';
 import { acrossHouses, inHouse } from '../common/house-scope/in-house.js';
@@ -78,6 +78,10 @@ export class SessionsService {
         await this.markRevoked(session, 'token-reused', transaction);
         return { reusedSession: session };
       }
+      await this.tokens.destroy({
+        where: { sessionId: session.id, expiresAtMs: { [Op.lte]: nowMs } },
+        transaction,
+      });
       if (token.rotatedAtMs === null) await token.update({ rotatedAtMs: nowMs }, { transaction });
       return { opened: await this.issue(session, token.tokenHash, transaction) };
     });
