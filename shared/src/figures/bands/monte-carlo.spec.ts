@@ -17,6 +17,8 @@ describe('monteCarlo', () => {
   it.each<[Unsure, number, number, number]>([
     [{ kind: 'sure', value: 3 }, 3, 3, 3],
     [{ kind: 'even', low: 10, high: 20, grade: 'measured' }, 10.5, 15, 19.5],
+    [{ kind: 'peaked', low: 20, value: 35, high: 50, grade: 'measured' }, 24.74, 35, 45.26],
+    [{ kind: 'peaked', low: 5, value: 5, high: 5, grade: 'measured' }, 5, 5, 5],
     [{ kind: 'factor', value: 8, factor: 2, grade: 'judged' }, 4, 8, 16],
     [{ kind: 'spread', value: 5, spread: 1, grade: 'measured' }, 4, 5, 6],
   ])('finds the nine-in-ten range of %j', (input, low, value, high) => {

@@ -8,7 +8,7 @@ export type Draw = () => number;
  * Seeded numbers: the same seed gives the same answer everywhere, so a band never flickers.
  *
  * @param seed any number; its whole 32 bits count.
- * @see T. Ettinger, mulberry32 (public domain).
+ * @see mulberry32 (public domain).
  */
 export function seededDraw(seed: number): Draw {
   let state = seed >>> 0;
@@ -25,6 +25,8 @@ export type Unsure =
   | { kind: 'sure'; value: number }
   /** Anything between is as likely. */
   | { kind: 'even'; low: number; high: number; grade: Grade }
+  /** Between the ends, most likely at the value: a triangle. */
+  | { kind: 'peaked'; low: number; value: number; high: number; grade: Grade }
   /** Nine times out of ten within a factor of the middle. */
   | { kind: 'factor'; value: number; factor: number; grade: Grade }
   /** Nine times out of ten within plus or minus. */
@@ -37,9 +39,18 @@ function normal(draw: Draw): number {
   return Math.sqrt(-2 * Math.log(1 - draw())) * Math.cos(2 * Math.PI * draw());
 }
 
+function triangle({ low, value, high }: { low: number; value: number; high: number }, share: number): number {
+  const width = high - low;
+  if (width <= 0) return value;
+  const peak = (value - low) / width;
+  if (share < peak) return low + Math.sqrt(share * width * (value - low));
+  return high - Math.sqrt((1 - share) * width * (high - value));
+}
+
 function one(input: Unsure, draw: Draw): number {
   if (input.kind === 'sure') return input.value;
   if (input.kind === 'even') return input.low + (input.high - input.low) * draw();
+  if (input.kind === 'peaked') return triangle(input, draw());
   if (input.kind === 'spread') return input.value + (normal(draw) * notNegative(input.spread, 'A spread')) / NINETY;
   return input.value * Math.max(1, positive(input.factor, 'A factor')) ** (normal(draw) / NINETY);
 }

@@ -1,0 +1,95 @@
+/**
+ * How long the figures take: all figures of one recipe as they are computed at every key press at the desk, and the sums over
+ * a recorded curve of ten hours at one reading a second. It reports; the specs never assert on time.
+ */
+import { performance } from 'node:perf_hooks';
+import * as figures from '../dist/figures/index.js';
+
+const chiller = { kind: 'cool', surroundC: 15, kPerS: 0.08 / 60 };
+const heat = {
+  kind: 'heat',
+  toC: 82,
+  heatCapacityJPerK: 85_000,
+  powerW: 3500,
+  efficiency: 0.9,
+  lossWPerK: 8,
+  roomC: 20,
+};
+
+/** A recipe with two salts, two acids, two teas and two hops, and a whole planned day. */
+function recipe(step) {
+  const day = figures.planCurve(15, [
+    { id: 'heat', ...heat },
+    { id: 'coil', kind: 'mix', toC: 80 },
+    { id: 'steep', kind: 'hold', durationS: 240 + (step % 60) },
+    { id: 'chill', ...chiller, toC: 60 },
+    { id: 'hops', ...chiller, toC: 30 },
+    { id: 'cold', ...chiller, toC: 21 },
+  ]);
+  const mark = (id) => day.marks.find((one) => one.id === id);
+  const steep = { inAtMs: mark('steep').fromMs, outAtMs: mark('steep').toMs };
+  const hops = { inAtMs: mark('hops').fromMs, outAtMs: mark('hops').toMs };
+  return figures.drinkFigures({
+    waterL: 20,
+    source: { ca: 20, mg: 4, na: 12, k: 1, cl: 18, so4: 22, hco3: 51 },
+    salts: [
+      { salt: 'calciumChlorideDihydrate', massG: 6 + (step % 10) / 10 },
+      { salt: 'gypsum', massG: 2.4 },
+    ],
+    acids: [
+      { acid: 'citricAnhydrous', massG: 7 + (step % 7) / 10 },
+      { acid: 'lactic', massG: 1, strengthPercent: 80 },
+    ],
+    teas: [
+      { kind: 'white', form: 'whole', massG: 80, ...steep },
+      { kind: 'black', form: 'broken', massG: 20, ...steep },
+    ],
+    hops: [
+      { massG: 40, alphaPercent: 9, ...hops },
+      { massG: 20, alphaPercent: 6, storageIndex: 0.45, ...hops },
+    ],
+    curve: day.curve,
+    evaporatedL: figures.evaporatedL(day.curve, { openM2: 0.07 }),
+    deadSpaceL: 0.2,
+    servingMl: 355,
+    gas: { volumes: 3, tempC: 4, stationKPa: 98 },
+  });
+}
+
+const HOURS = 10;
+const recorded = Array.from({ length: HOURS * 3600 + 1 }, (_, second) => ({
+  atMs: second * 1000,
+  tempC: 4 + 88 * Math.exp(-second / 9000) + 0.05 * Math.sin(second),
+}));
+
+/** Every sum that a recorded curve feeds, over the whole of it. */
+function account() {
+  return [
+    figures.leafExtraction(recorded, 'whole'),
+    figures.steepDoseMin(recorded),
+    figures.isomerise(recorded, { alphaMgPerL: 270, ph: 3.8 }),
+    figures.evaporatedL(recorded, { openM2: 0.07 }),
+    figures.pasteurisationUnits(recorded),
+    figures.coolingRule(recorded),
+  ];
+}
+
+function measure(name, limitMs, runs, warm, work) {
+  for (let run = 0; run < warm; run += 1) work(run);
+  const times = Array.from({ length: runs }, (_, run) => {
+    const start = performance.now();
+    work(run);
+    return performance.now() - start;
+  }).sort((a, b) => a - b);
+  const at = (share) => times[Math.min(runs - 1, Math.floor(share * runs))].toFixed(2);
+  console.log(
+    `${name}: p50 ${at(0.5)} ms, p99 ${at(0.99)} ms, slowest ${times.at(-1).toFixed(2)} ms over ${runs} runs (limit ${limitMs} ms)`,
+  );
+}
+
+const cold = performance.now();
+recipe(0);
+console.log(`all figures of a recipe, first time in a fresh process: ${(performance.now() - cold).toFixed(2)} ms`);
+measure('all figures of a recipe', 16, 500, 20, recipe);
+measure(`all sums over a ${HOURS} h curve at 1 Hz`, 50, 60, 3, account);
+measure(`steep dose over a ${HOURS} h curve at 1 Hz`, 50, 60, 3, () => figures.steepDoseMin(recorded));
