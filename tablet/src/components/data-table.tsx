@@ -1,3 +1,4 @@
+/* eslint-disable jsx-a11y/no-redundant-roles, jsx-a11y/no-interactive-element-to-noninteractive-role -- as cards the rows are no table boxes, and Safari then drops the roles that they would have by themselves */
 import { flexRender, type RowData, type Table } from '@tanstack/react-table';
 import { Button } from './button.tsx';
 import { classNames } from './class-names.ts';

@@ -99,7 +99,7 @@ export function runLogQuery(runId: string) {
     queryKey: ['runs', runId, 'log'],
     queryFn: async ({ signal }): Promise<StoredEntry[]> => {
       const { events } = await callHubFor(logSchema, `runs/${runId}/events`, { signal });
-      return events as unknown as StoredEntry[];
+      return events;
     },
   });
 }
@@ -112,10 +112,10 @@ export function runReadingsQuery(runId: string, window: RunReadingsQuery) {
 }
 
 /** The last minutes of a running run: where to begin is asked anew each time, so the key stays the same. */
-export function recentReadingsQuery(runId: string, fromMs: () => number) {
+export function recentReadingsQuery(runId: string, fromMsAt: (nowMs: number) => number) {
   return queryOptions({
     queryKey: ['runs', runId, 'readings', 'recent'],
     queryFn: ({ signal }) =>
-      callHubFor(runReadingsSchema, `runs/${runId}/readings`, { signal, query: { fromMs: fromMs() } }),
+      callHubFor(runReadingsSchema, `runs/${runId}/readings`, { signal, query: { fromMs: fromMsAt(Date.now()) } }),
   });
 }

@@ -100,7 +100,7 @@ function Book({ batches }: { batches: Batch[] }) {
     () => (status === 'all' ? [] : [{ id: 'status', value: status }]),
     [status],
   );
-  // eslint-disable-next-line react-hooks/incompatible-library
+  // eslint-disable-next-line react-hooks/incompatible-library -- its functions are used in this render only
   const table = useReactTable({
     data: batches.length > 0 ? batches : none,
     columns,

@@ -46,6 +46,7 @@ export function LineTable({ line, flags, startedAtMs }: LineTableProps) {
     ],
     [startedAtMs],
   );
+  // eslint-disable-next-line react-hooks/incompatible-library -- its functions are used in this render only
   const table = useReactTable({
     data: rows,
     columns,

@@ -1,5 +1,6 @@
 import { useQuery } from '@tanstack/react-query';
 import type { Batch, RunSummary } from '@steepfall/shared/contracts';
+import { format } from 'date-fns';
 import { ButtonLink } from '#components/button.tsx';
 import { EmptyState } from '#components/empty-state.tsx';
 import { LevelRule } from '#components/level-rule.tsx';
@@ -31,6 +32,7 @@ function newestFirst(a: Batch, b: Batch): number {
 }
 
 function Board() {
+  const today = format(new Date(), 'yyyy-MM-dd');
   const may = useMay();
   const runs = useQuery({ ...runningRunsQuery, refetchInterval: LOOK_MS });
   const batches = useQuery({ ...batchesQuery, refetchInterval: 30_000 });
@@ -59,7 +61,7 @@ function Board() {
           {planned.length > 0 ? (
             <ul>
               {planned.map((batch) => (
-                <PlannedBatch key={batch.id} batch={batch} />
+                <PlannedBatch key={batch.id} batch={batch} today={today} />
               ))}
             </ul>
           ) : batches.data ? (

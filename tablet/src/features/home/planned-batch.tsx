@@ -19,11 +19,11 @@ const kitWords = [
 ];
 
 /** A batch that waits for its day. */
-export function PlannedBatch({ batch }: { batch: Batch }) {
+export function PlannedBatch({ batch, today }: { batch: Batch; today: string }) {
   const may = useMay();
   const [isAsking, setIsAsking] = useState(false);
   const day = localDate(batch.plannedOn);
-  const isDue = day.getTime() <= Date.now();
+  const isDue = batch.plannedOn <= today;
   return (
     <li className="flex flex-wrap items-center gap-x-7 gap-y-4 border-t-2 border-hair py-5">
       <p className="w-20 shrink-0">

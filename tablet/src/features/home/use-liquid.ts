@@ -30,7 +30,7 @@ function estimateOf(run: RunSummary, readings: readonly Reading[]): WatchEstimat
 /** What the liquid of a running run is doing, at a glance. The run sheet has the live one. */
 export function useLiquid(run: RunSummary): Liquid {
   const recent = useQuery({
-    ...recentReadingsQuery(run.id, () => Math.max(0, runTimeAt(run.clock, Date.now()) - RECENT_MS)),
+    ...recentReadingsQuery(run.id, (nowMs) => Math.max(0, runTimeAt(run.clock, nowMs) - RECENT_MS)),
     refetchInterval: LOOK_MS,
   });
   const whole = useQuery({ ...runReadingsQuery(run.id, { buckets: 240 }), refetchInterval: REDRAW_MS });

@@ -51,6 +51,8 @@ function Copyable({ label, text }: { label: string; text: string }) {
   return (
     <div className="mt-3 grid gap-2">
       <pre
+        // A long line is scrolled sideways: the keyboard must get to it.
+        // eslint-disable-next-line jsx-a11y/no-noninteractive-tabindex
         tabIndex={0}
         aria-label={label}
         className="overflow-x-auto whitespace-pre-wrap break-all border-2 border-edge bg-sunken p-4 font-[ui-monospace,monospace] text-note select-all"
