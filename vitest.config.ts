@@ -1,5 +1,5 @@
 import { defineConfig } from 'vitest/config';
 
 export default defineConfig({
-  test: { projects: ['shared', 'probe-sim', 'hub', 'tablet'] },
+  test: { projects: ['shared', 'probe-sim', 'hub', 'tablet', 'hub/launcher', 'tablet/e2e'] },
 });

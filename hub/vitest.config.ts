@@ -11,6 +11,8 @@ export default defineConfig({
     isolate: true,
     // Each file boots a hub on a database of its own; more at once than this only makes them wait for each other.
     maxWorkers: 2,
+    // After the specs without a database, and not among them.
+    sequence: { groupOrder: 1 },
     hookTimeout: 60_000,
     testTimeout: 20_000,
   },

@@ -1,0 +1,3 @@
+import { createLintConfig } from './hub/launcher/lint/config.js';
+
+export default createLintConfig({ root: import.meta.dirname });

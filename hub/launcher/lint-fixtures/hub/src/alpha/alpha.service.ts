@@ -1,0 +1,5 @@
+import { problem } from '../common/problem.js';
+
+export class AlphaService {
+  readonly problem = problem;
+}

@@ -1,0 +1,4 @@
+// planted: no-restricted-imports
+import { tempC } from '../../../shared/src/units/temperature.js';
+
+export const found = tempC;

@@ -1,0 +1,4 @@
+// planted: boundaries/dependencies
+import { BetaController } from '../beta/beta.controller.js';
+
+export const found = BetaController;

@@ -1,0 +1,3 @@
+import { AlphaService } from '../alpha/alpha.service.js';
+
+export class BetaService extends AlphaService {}

@@ -1,0 +1,2 @@
+// planted: no-restricted-properties
+export const chance = Math.random();

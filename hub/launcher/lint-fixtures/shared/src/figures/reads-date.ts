@@ -1,0 +1,2 @@
+// planted: no-restricted-syntax
+export const now = new Date();

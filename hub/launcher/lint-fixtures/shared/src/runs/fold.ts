@@ -1,0 +1,3 @@
+import { tempC } from '../units/temperature.js';
+
+export const fold = tempC;

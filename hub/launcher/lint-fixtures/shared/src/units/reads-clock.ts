@@ -1,0 +1,2 @@
+// planted: no-restricted-properties
+export const nowMs = Date.now();

@@ -1,0 +1,4 @@
+// planted: boundaries/dependencies
+import { alpha } from '#features/alpha/alpha.ts';
+
+export const found = alpha;

@@ -1,0 +1,3 @@
+import { rule } from '#components/rule.ts';
+
+export const alpha = rule;

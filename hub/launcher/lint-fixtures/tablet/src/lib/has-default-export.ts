@@ -1,0 +1,2 @@
+// planted: import-x/no-default-export
+export default 'nameless';

@@ -1,0 +1,4 @@
+// planted: boundaries/dependencies
+import { rule } from '#components/rule.ts';
+
+export const found = rule;
