@@ -64,6 +64,7 @@ export * from './hops/alpha-solubility.js';
 export * from './hops/bitterness.js';
 export * from './hops/freshness.js';
 export * from './hops/headspace.js';
+export * from './hops/hop-contact.js';
 export * from './hops/isomerisation.js';
 export * from './numeric/constants.js';
 export * from './recipe/acid-figures.js';

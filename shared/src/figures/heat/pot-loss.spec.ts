@@ -27,4 +27,13 @@ describe('potLossW', () => {
     expect(potLossW({ ...pot, tempC: 22, humidityRatio: 1, lid: false })).toBe(0);
     expect(() => potLossW({ ...pot, tempC: 60, depthM: 0, lid: true })).toThrow(RangeError);
   });
+
+  it.each([
+    [true, 0.9],
+    [false, 4.8],
+  ])('Shah 2002 and natural convection, computed: from 85 °C in 6 min, lid %s, it falls %s K', (lid, fallK) => {
+    let tempC = 85;
+    for (let second = 0; second < 360; second += 1) tempC -= potLossW({ ...pot, tempC, lid }) / 40_700;
+    expect(Math.abs(85 - tempC - fallK)).toBeLessThan(0.1);
+  });
 });

@@ -2,7 +2,7 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { chargeBalance } from './charge-balance.js';
 import { ionMeqPerL, ions, pureWater, type Ion } from './ions.js';
-import { saltAlkalinityMeqPerG, saltIonMgPerG, saltKinds, saltedWater, type Salt } from './salts.js';
+import { saltAlkalinityMeqPerG, saltIonMgPerG, saltKinds, saltedWater, undissolvedSalts, type Salt } from './salts.js';
 
 const salts = Object.keys(saltKinds) as Salt[];
 /** 2.5 US gal of pure water with the usual two salts. */
@@ -76,6 +76,20 @@ describe('salts', () => {
         },
       ),
     );
+  });
+
+  it('solubility (from memory): says what stays on the floor', () => {
+    const much = [
+      { salt: 'gypsum', massG: 2 },
+      { salt: 'gypsum', massG: 1 },
+      { salt: 'calciumCarbonate', massG: 0.5 },
+      { salt: 'sodiumChloride', massG: 50 },
+    ] as const;
+    expect(undissolvedSalts(1, much)).toEqual([
+      { salt: 'gypsum', leftG: expect.closeTo(0.6, 9) as number },
+      { salt: 'calciumCarbonate', leftG: expect.closeTo(0.487, 9) as number },
+    ]);
+    expect(undissolvedSalts(20, [{ salt: 'gypsum', massG: 2.4 }])).toEqual([]);
   });
 
   it('refuses nothing to dissolve in, an empty jar, and an unknown salt', () => {

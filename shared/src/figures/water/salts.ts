@@ -82,3 +82,22 @@ export function saltedWater(
   }
   return sum;
 }
+
+/**
+ * Salts that will not all dissolve in plain water, with what stays on the floor, g. Chalk and slaked lime dissolve by eating
+ * acid: put them in with it, or leave them.
+ *
+ * @param volumeL above 0, L.
+ * @throws RangeError when a mass is negative or the volume not above 0.
+ * @see solubilities at 25 °C, from memory.
+ */
+export function undissolvedSalts(volumeL: number, salts: readonly SaltAddition[]): { salt: Salt; leftG: number }[] {
+  const liters = positive(volumeL, 'A volume of water', 'L');
+  const totals = new Map<Salt, number>();
+  for (const { salt, massG } of salts)
+    totals.set(salt, (totals.get(salt) ?? 0) + notNegative(massG, 'A mass of salt', 'g'));
+  return [...totals].flatMap(([salt, massG]) => {
+    const leftG = massG - (kindOf(salt).dissolvesToGPerL ?? Infinity) * liters;
+    return leftG > 0 ? [{ salt, leftG }] : [];
+  });
+}
