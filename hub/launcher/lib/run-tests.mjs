@@ -8,6 +8,7 @@ import { ensureMariadbInstalled } from './mariadb.mjs';
 import { packageBin, testDataDir } from './paths.mjs';
 import { run } from './processes.mjs';
 import { Session } from './session.mjs';
+import { countTests } from './test-report.mjs';
 
 /**
  * `npm test`: sets up what the specs need and runs them. The last line is `N passed, N failed`, whatever happens.
@@ -76,20 +77,15 @@ async function runVitest({ signal }, args) {
       ],
       { signal },
     );
-    return countsOf(readReport(report), code);
+    return countTests(readReport(report), code);
   } finally {
     rmSync(report, { force: true });
   }
 }
 
 /**
- * @typedef {object} Report
- * @property {number} numTotalTests
- * @property {number} numPassedTests
- * @property {number} numFailedTests
- * @property {{ status: string, assertionResults: { status: string }[] }[]} testResults
  * @param {string} file
- * @returns {Report}
+ * @returns {import('./test-report.mjs').Report}
  */
 function readReport(file) {
   try {
@@ -97,25 +93,4 @@ function readReport(file) {
   } catch {
     throw new LauncherError('Vitest ended without a report; the reason is printed above.');
   }
-}
-
-/**
- * @param {Report} report
- * @param {number} code with which Vitest ended
- */
-function countsOf({ numTotalTests, numPassedTests, numFailedTests, testResults }, code) {
-  // A file that does not load holds no test, and must not pass for that.
-  const brokenFiles = testResults.filter(
-    ({ status, assertionResults }) =>
-      status === 'failed' && !assertionResults.some((assertion) => assertion.status === 'failed'),
-  ).length;
-  if (numTotalTests === 0 && brokenFiles === 0)
-    throw new LauncherError('No test ran; look at the names after "npm test --".');
-  const failed = numFailedTests + brokenFiles;
-  return {
-    passed: numPassedTests,
-    // Vitest also fails for errors that belong to no test.
-    failed: failed === 0 && code !== 0 ? 1 : failed,
-    skipped: numTotalTests - numPassedTests - numFailedTests,
-  };
 }

@@ -1,0 +1,240 @@
+import { spawn, type ChildProcess } from 'node:child_process';
+import { once } from 'node:events';
+import {
+  existsSync,
+  mkdirSync,
+  mkdtempSync,
+  readFileSync,
+  rmSync,
+  statSync,
+  truncateSync,
+  writeFileSync,
+} from 'node:fs';
+import { createServer, type AddressInfo } from 'node:net';
+import { join } from 'node:path';
+import { afterEach, beforeEach, describe, expect, test } from 'vitest';
+import { findByArgument, isAlive } from './lib/processes.mjs';
+import { root, testDataDir } from './lib/paths.mjs';
+
+/** `npm start` on a data folder of its own, with the smallest hub there is. */
+class Launcher {
+  printed = '';
+  private readonly child: ChildProcess;
+
+  constructor(dataDir: string, args: string[], nodeArgs: string[] = []) {
+    this.child = spawn(process.execPath, [...nodeArgs, join(root, 'hub/launcher/start.mjs'), ...args], {
+      cwd: root,
+      env: {
+        ...process.env,
+        STEEPFALL_DATA_DIR: dataDir,
+        STEEPFALL_HUB_DIR: join(root, 'hub/launcher/test-hub'),
+      },
+      stdio: ['ignore', 'pipe', 'pipe'],
+    });
+    for (const stream of [this.child.stdout, this.child.stderr])
+      stream?.on('data', (chunk: Buffer) => (this.printed += chunk.toString()));
+  }
+
+  /** Waits for words on its output. */
+  async says(words: string): Promise<void> {
+    while (!this.printed.includes(words)) {
+      if (this.child.exitCode !== null) throw new Error(`It ended without saying "${words}": ${this.printed}`);
+      await new Promise((resolve) => setTimeout(resolve, 20));
+    }
+  }
+
+  async ends(): Promise<number | null> {
+    if (this.child.exitCode === null && this.child.signalCode === null) await once(this.child, 'close');
+    return this.child.exitCode;
+  }
+
+  signal(signal: NodeJS.Signals): void {
+    this.child.kill(signal);
+  }
+}
+
+let dataDir: string;
+const launchers: Launcher[] = [];
+const hubPids: number[] = [];
+
+function launch(args: string[] = [], nodeArgs: string[] = []): Launcher {
+  const launcher = new Launcher(dataDir, args, nodeArgs);
+  launchers.push(launcher);
+  return launcher;
+}
+
+async function launchUntilReady(): Promise<Launcher> {
+  const launcher = launch(['--port', String(await freePort())]);
+  await launcher.says('Steepfall is ready');
+  hubPids.push(hubPid());
+  return launcher;
+}
+
+async function freePort(): Promise<number> {
+  const listener = createServer().listen(0, '127.0.0.1');
+  await once(listener, 'listening');
+  const { port } = listener.address() as AddressInfo;
+  listener.close();
+  await once(listener, 'close');
+  return port;
+}
+
+const databasePid = () => Number(readFileSync(join(dataDir, 'mariadb/mariadbd.pid'), 'utf8'));
+const hubPid = () => (JSON.parse(readFileSync(join(dataDir, 'hub.pid.json'), 'utf8')) as { pid: number }).pid;
+const runningProcesses = () => [...findByArgument(`--datadir=${join(dataDir, 'mariadb')}`), ...hubPids.filter(isAlive)];
+
+async function untilGone(pids: number[]): Promise<void> {
+  while (pids.some(isAlive)) await new Promise((resolve) => setTimeout(resolve, 20));
+}
+
+beforeEach(() => {
+  mkdirSync(testDataDir, { recursive: true });
+  dataDir = mkdtempSync(join(testDataDir, 'launcher-'));
+});
+
+afterEach(async () => {
+  for (const launcher of launchers.splice(0)) {
+    launcher.signal('SIGTERM');
+    await launcher.ends();
+  }
+  hubPids.length = 0;
+  rmSync(dataDir, { recursive: true, force: true });
+});
+
+describe('npm start: what it is asked', () => {
+  test('--help lists the options and starts nothing', async () => {
+    const launcher = launch(['--help']);
+    expect(await launcher.ends()).toBe(0);
+    for (const option of ['--port', '--no-demo', '--reset-demo', '--help']) expect(launcher.printed).toContain(option);
+    expect(existsSync(join(dataDir, 'mariadb'))).toBe(false);
+  });
+
+  test.each([
+    [['--prot', '8080'], 'There is no option \'--prot\'; "npm start -- --help" lists what there is.\n'],
+    [['8080'], 'There is nothing to do with \'8080\'; "npm start -- --help" lists what there is.\n'],
+    [['--port'], '--port needs a value after it; "npm start -- --help" lists what there is.\n'],
+    [['--port', 'x'], '"x" is not a port; give a number from 1 to 65535, such as: npm start -- --port 8080\n'],
+    [['--port', '0'], '"0" is not a port; give a number from 1 to 65535, such as: npm start -- --port 8080\n'],
+    [['--no-demo', '--reset-demo'], '--no-demo and --reset-demo ask for opposite things; give one of them.\n'],
+  ])('%j is answered in one sentence', async (args, sentence) => {
+    const launcher = launch(args);
+    expect(await launcher.ends()).toBe(1);
+    expect(launcher.printed).toBe(sentence);
+  });
+
+  test('an older Node is told which one is needed', async () => {
+    const pretend = `Object.defineProperty(process, 'versions', { value: { ...process.versions, node: '18.20.4' } })`;
+    const launcher = launch([], ['--import', `data:text/javascript,${encodeURIComponent(pretend)}`]);
+    expect(await launcher.ends()).toBe(1);
+    expect(launcher.printed).toMatch(
+      /^Steepfall needs Node 20 from 20\.19 on, and this is Node 18\.20\.4; install .+\.\n$/,
+    );
+  });
+});
+
+describe('npm start: a stay', () => {
+  test('prints the address and the sign-ins, and Ctrl-C leaves nothing running', async () => {
+    const launcher = await launchUntilReady();
+    expect(launcher.printed).toMatch(/http:\/\/localhost:\d+/);
+    expect(launcher.printed).toContain('brewer@wrenfold.example');
+    expect(runningProcesses()).toHaveLength(2);
+    launcher.signal('SIGINT');
+    launcher.signal('SIGINT');
+    expect(await launcher.ends()).toBe(0);
+    expect(runningProcesses()).toEqual([]);
+    expect(existsSync(join(dataDir, 'launcher.lock'))).toBe(false);
+  });
+
+  test('keeps what it stores from other users of the machine', async () => {
+    await launchUntilReady();
+    const modeOf = (name: string) => (statSync(join(dataDir, name)).mode & 0o777).toString(8);
+    expect(['mariadb', 'mariadb.credentials.json', 'jwt-secret'].map(modeOf)).toEqual(['700', '600', '600']);
+    expect(existsSync(join(dataDir, 'mariadb.accounts.sql'))).toBe(false);
+  });
+
+  test('a second start in the same checkout says so', async () => {
+    const first = await launchUntilReady();
+    const second = launch(['--port', String(await freePort())]);
+    expect(await second.ends()).toBe(1);
+    expect(second.printed).toMatch(/^Steepfall runs from this checkout already \(process \d+\); .+\.\n$/);
+    first.signal('SIGTERM');
+    expect(await first.ends()).toBe(0);
+  });
+
+  test('Ctrl-C during the start leaves nothing running', async () => {
+    const launcher = launch(['--port', String(await freePort())]);
+    await launcher.says('Making a database.');
+    launcher.signal('SIGINT');
+    expect(await launcher.ends()).toBe(0);
+    expect(launcher.printed).not.toContain('ready');
+    expect(runningProcesses()).toEqual([]);
+  });
+});
+
+describe('npm start: what goes wrong', () => {
+  test('a port that is taken', async () => {
+    const other = createServer().listen(0, '127.0.0.1');
+    await once(other, 'listening');
+    const { port } = other.address() as AddressInfo;
+    const launcher = launch(['--port', String(port)]);
+    expect(await launcher.ends()).toBe(1);
+    expect(launcher.printed).toBe(
+      `Port ${port} is taken by another program; stop that one, or choose another port: npm start -- --port 8080\n`,
+    );
+    expect(runningProcesses()).toEqual([]);
+    other.close();
+  });
+
+  test('a folder that cannot be written', async () => {
+    rmSync(dataDir, { recursive: true });
+    // Nobody makes files there, not even root.
+    dataDir = '/sys/steepfall-data';
+    const launcher = launch();
+    expect(await launcher.ends()).toBe(1);
+    expect(launcher.printed).toMatch(
+      /^\/sys\/steepfall-data cannot be written by this user; make it writable, or .+\.\n$/,
+    );
+  });
+
+  test('a damaged database', async () => {
+    const first = await launchUntilReady();
+    first.signal('SIGTERM');
+    await first.ends();
+    truncateSync(join(dataDir, 'mariadb/ibdata1'), 0);
+    writeFileSync(join(dataDir, 'mariadb/ibdata1'), Buffer.alloc(12 * 1024 * 1024, 0x5a));
+    const second = launch(['--port', String(await freePort())]);
+    expect(await second.ends()).toBe(1);
+    expect(second.printed).toMatch(
+      /^The database in .+ does not start and looks damaged \(.+\); put a copy .+: mv \S+ \S+\n$/,
+    );
+    expect(runningProcesses()).toEqual([]);
+  });
+
+  test('the database dies', async () => {
+    const launcher = await launchUntilReady();
+    process.kill(databasePid(), 'SIGKILL');
+    expect(await launcher.ends()).toBe(1);
+    expect(launcher.printed).toContain('The database ended by itself (signal SIGKILL), so Steepfall stops;');
+    expect(runningProcesses()).toEqual([]);
+  });
+
+  test('the hub dies', async () => {
+    const launcher = await launchUntilReady();
+    process.kill(hubPid(), 'SIGKILL');
+    expect(await launcher.ends()).toBe(1);
+    expect(launcher.printed).toContain('The hub ended by itself (signal SIGKILL), so Steepfall stops;');
+    expect(runningProcesses()).toEqual([]);
+  });
+
+  test('the launcher is killed: the next start finds its way', async () => {
+    const first = await launchUntilReady();
+    const pids = [databasePid(), hubPid()];
+    first.signal('SIGKILL');
+    await first.ends();
+    const second = await launchUntilReady();
+    expect(pids.filter(isAlive)).toEqual([]);
+    second.signal('SIGTERM');
+    expect(await second.ends()).toBe(0);
+    await untilGone(pids);
+  });
+});
