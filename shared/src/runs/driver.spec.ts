@@ -120,6 +120,19 @@ describe(driveRun, () => {
     expect(drive.stages('hops-in~1')).toContain('now');
   });
 
+  it('counts on from the log when it starts late: a second climb is not taken for the first', () => {
+    const drive = new Drive(toCatch());
+    const raised = (crossing: number) => ({
+      ...{ key: 'hops-in', crossing, rule: 'temperature', stage: 'now', stepId: 'hops-in', actStepId: 'hops-in' },
+      ...{ tempC: 63, targetC: 62, direction: 'falling', dueAtMs: null },
+    });
+    drive.log.add('alert.raised', raised(1) as RunEventOf<'alert.raised'>['payload'], { by: null });
+    drive.log.add('alert.raised', raised(2) as RunEventOf<'alert.raised'>['payload'], { by: null });
+    drive.along(110, falling(80));
+    const found = drive.found.filter((event) => event.type === 'alert.raised');
+    expect(found.map(({ payload }) => payload.crossing)).toEqual([2, 2, 2]);
+  });
+
   it('makes a silent probe an alert while a level is waited for, and clears it when it is back', () => {
     const drive = new Drive(toCatch()).along(20, falling(80)).along(40, () => null);
     expect(standingAlerts(drive.state)[0]).toMatchObject({ key: 'signal', rule: 'signal', stage: 'now', crossing: 1 });

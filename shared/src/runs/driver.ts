@@ -57,6 +57,8 @@ export type Armed =
       actStep: Step;
       tempC: number;
       direction: 'rising' | 'falling';
+      /** Which time through the level the log has come to: a driver that starts late counts on from there. */
+      crossing: number;
     }
   | { by: 'timer'; key: string; stepId: string | null; actStep: Step | null; endsAtMs: number };
 
@@ -168,29 +170,33 @@ export function armedIn(state: RunState): Armed[] {
   // The step before waited for a level or a deadline and got it: what it called for is still to be done.
   const before = state.steps[currentIndex - 1];
   if (before && before.status === 'done' && before.cause !== 'hand')
-    armed.push(...armedBy(before, state.steps[currentIndex]));
+    armed.push(...armedBy(state, before, state.steps[currentIndex]));
 
   for (let index = currentIndex; index < state.steps.length; index += 1) {
     const progress = state.steps[index];
     if (!progress || progress.status === 'done') continue;
-    const found = armedBy(progress, state.steps[index + 1]);
+    const found = armedBy(state, progress, state.steps[index + 1]);
     if (found.length > 0) return [...armed, ...found];
     if (progress.step.done.by !== 'hand' && progress.step.done.by !== 'measurement') break;
   }
   return armed;
 }
 
-function armedBy(progress: StepProgress, following: StepProgress | undefined): Armed[] {
+function armedBy(state: RunState, progress: StepProgress, following: StepProgress | undefined): Armed[] {
   const { step } = progress;
+  const crossingOf = (key: string) =>
+    Math.max(1, ...state.alerts.filter((alert) => alert.key === key).map(({ crossing }) => crossing));
   if (step.start.by === 'temperature' && progress.status !== 'done') {
     const { tempC, direction } = step.start;
-    return [{ by: 'temperature', key: keyOf(progress, progress), stepId: step.id, actStep: step, tempC, direction }];
+    const key = keyOf(progress, progress);
+    const crossing = crossingOf(key);
+    return [{ by: 'temperature', key, stepId: step.id, actStep: step, tempC, direction, crossing }];
   }
   const act = following ?? progress;
   const shared = { key: keyOf(progress, act), stepId: step.id, actStep: act.step };
   if (step.done.by === 'temperature') {
     const { tempC, direction } = step.done;
-    return [{ by: 'temperature', ...shared, tempC, direction }];
+    return [{ by: 'temperature', ...shared, tempC, direction, crossing: crossingOf(shared.key) }];
   }
   if (step.done.by === 'timer' && progress.startedAtMs !== null) {
     return [{ by: 'timer', ...shared, endsAtMs: progress.startedAtMs + step.done.durationS * 1000 }];
@@ -215,8 +221,8 @@ function climbLadder(driver: RunDriver, item: Armed, atMs: number): { driver: Ru
       raised: climbed.raised,
     };
   }
-  const { tempC, direction } = item;
-  const ladder = driver.ladders[key] ?? startLadder({ key, tempC, direction, reachS });
+  const { tempC, direction, crossing } = item;
+  const ladder = driver.ladders[key] ?? { ...startLadder({ key, tempC, direction, reachS }), crossing };
   const climbed = stepLadder(ladder, driver.watch, atMs);
   return { driver: { ...driver, ladders: { ...driver.ladders, [key]: climbed.ladder } }, raised: climbed.raised };
 }

@@ -1,3 +1,4 @@
+export * from './boot-driver.js';
 export * from './decide.js';
 export * from './driver.js';
 export * from './events.js';

@@ -2,6 +2,7 @@ import type { RunSummary } from '@steepfall/shared/contracts';
 import type { Problem } from '@steepfall/shared/problems';
 import type { Reading } from '@steepfall/shared/readings';
 import {
+  bootDriver,
   decide,
   driveRun,
   foldRun,
@@ -21,7 +22,7 @@ import type { EventStore, OutboxItem } from '../event-store/event-store.ts';
 import { HubProblemError } from '../http.ts';
 import type { HubLink } from '../socket/hub-link.ts';
 import { ValueStore } from '../value-store.ts';
-import { bootDriver, driverConfigOf } from './boot-driver.ts';
+import { driverConfigOf } from './driver-config.ts';
 import type { Outbox } from './outbox.ts';
 import { ReadingRing } from './reading-ring.ts';
 

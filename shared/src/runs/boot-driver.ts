@@ -1,34 +1,12 @@
-import type { RunSummary } from '@steepfall/shared/contracts';
-import type { Reading } from '@steepfall/shared/readings';
-import {
-  driveRun,
-  foldRun,
-  inLogOrder,
-  startDriver,
-  type DriverConfig,
-  type LogEntry,
-  type RunDriver,
-  type RunEvent,
-} from '@steepfall/shared/runs';
+import type { Reading } from '../readings/index.js';
+import { driveRun, startDriver, type DriverConfig, type RunDriver } from './driver.js';
+import type { LogEntry, RunEvent } from './events.js';
+import { foldRun, inLogOrder } from './fold.js';
 
 /** Older turns than this many do not change what the watch believes now. */
 const TURNS = 24;
 
-export function driverConfigOf(summary: RunSummary): DriverConfig {
-  const { probeId, probeLagS, probeResolutionC, probeSamplePeriodS, roomC, coolantC } = summary;
-  return {
-    hasProbe: probeId !== null,
-    watch: {
-      lagS: probeLagS,
-      resolutionC: probeResolutionC,
-      samplePeriodS: probeSamplePeriodS,
-      roomC,
-      coolantC,
-    },
-  };
-}
-
-interface BootInput {
+export interface BootInput {
   config: DriverConfig;
   entries: readonly LogEntry[];
   /** The last quarter of an hour, in order of time. */
