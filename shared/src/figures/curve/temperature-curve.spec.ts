@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { checkedCurve, curveBetween, curveTempC } from './temperature-curve.js';
+import { checkedCurve, curveBetween, curveFromReadings, curveTempC } from './temperature-curve.js';
 
 const curve = [
   { atMs: 0, tempC: 80 },
@@ -33,6 +33,19 @@ describe('temperature curve', () => {
       { atMs: 300, tempC: 60 },
     ]);
     expect(curveBetween([], 0, 1)).toEqual([]);
+  });
+
+  it('comes from readings in any order, without those that have no signal', () => {
+    const readings = [
+      { atMs: 20, tempC: 61 },
+      { atMs: 10, tempC: null },
+      { atMs: 0, tempC: 62 },
+    ];
+    expect(curveFromReadings(readings)).toEqual([
+      { atMs: 0, tempC: 62 },
+      { atMs: 20, tempC: 61 },
+    ]);
+    expect(() => curveFromReadings([{ atMs: 0, tempC: Number.NaN }])).toThrow(RangeError);
   });
 
   it('refuses holes and disorder', () => {

@@ -56,3 +56,14 @@ export function curveBetween(curve: TemperatureCurve, fromMs: number, toMs: numb
     ...(last === null ? [] : [{ atMs: toMs, tempC: last }]),
   ];
 }
+
+/**
+ * A curve from recorded readings: those without a temperature are left out, the rest put in order of time. Judge them first
+ * (the watch does): a driver code such as -127 is a number like any other here.
+ */
+export function curveFromReadings(
+  readings: readonly { readonly atMs: number; readonly tempC: number | null }[],
+): TemperatureCurve {
+  const points = readings.flatMap(({ atMs, tempC }) => (tempC === null ? [] : [{ atMs, tempC }]));
+  return checkedCurve(points.sort((a, b) => a.atMs - b.atMs));
+}
