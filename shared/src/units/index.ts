@@ -1,6 +1,7 @@
 export * from './brands.js';
 export * from './duration.js';
 export * from './format.js';
+export * from './in-unit.js';
 export * from './mass.js';
 export { MINUS, NO_BREAK_SPACE, NO_VALUE } from './number-text.js';
 export * from './preferences.js';
