@@ -132,7 +132,7 @@ export async function stopLeftoverHub(pidFile, log) {
  * @returns {{ event?: string, reason?: string, detail?: string } | null}
  */
 function eventOf(line) {
-  if (!line.startsWith('{"event":"hub.')) return null;
+  if (!/^\{"event":"(hub|demo)\./.test(line)) return null;
   try {
     return JSON.parse(line);
   } catch {

@@ -54,6 +54,9 @@ async function start(session, { port, isDemo, isResetDemo }) {
     await askHub('reset-demo', env);
     signal.throwIfAborted();
   }
+  // Asked beside the start of the hub, which takes as long.
+  const signIns = isDemo ? demoSignIns(env) : Promise.resolve('');
+  signIns.catch(() => {});
   const hub = session.keep(await startHub({ entry: hubEntry, pidFile: hubPidFile, env, port }), (started) =>
     started.stop(),
   );
@@ -62,10 +65,9 @@ async function start(session, { port, isDemo, isResetDemo }) {
       `The hub ended by itself (${how}), so Steepfall stops; what was confirmed is on disk. Start again; the reason is printed above.`,
     ),
   );
+  const printed = await signIns;
   signal.throwIfAborted();
-  const signIns = isDemo ? await demoSignIns(env) : '';
-  signal.throwIfAborted();
-  log(`\nSteepfall is ready: http://localhost:${port}\n${signIns}\nCtrl-C stops it.`);
+  log(`\nSteepfall is ready: http://localhost:${port}\n${printed}\nCtrl-C stops it.`);
 }
 
 /**
