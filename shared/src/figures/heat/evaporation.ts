@@ -24,15 +24,25 @@ export interface EvaporationConditions {
  * @see M. M. Shah, HVAC&R Research 8(1), 125-131, 2002 (7 to 94 °C, mean deviation 18 %); constants from memory.
  * @example evaporationKgPerM2H({ waterC: 70, roomC: 22, humidityRatio: 0.5 }) // 5.2
  */
-export function evaporationKgPerM2H(conditions: EvaporationConditions): number {
-  const waterC = within(conditions.waterC, 'A water temperature', 7, 95, '°C');
-  const roomC = within(conditions.roomC, 'A room temperature', 0, 45, '°C');
-  const pressureKPa = within(conditions.stationKPa ?? KPA_PER_ATM, 'A station pressure', 50, 110, 'kPa');
-  const room = air(roomC, within(conditions.humidityRatio, 'A relative humidity', 0, 1), pressureKPa);
-  const surface = air(waterC, 1, pressureKPa);
-  const lift = room.dryAirKgPerM3 - surface.dryAirKgPerM3;
-  const moisture = surface.vapourPerDryAir - room.vapourPerDryAir;
-  return lift > 0 && moisture > 0 ? 35 * surface.dryAirKgPerM3 * Math.cbrt(lift) * moisture : 0;
+export function evaporationKgPerM2H({ waterC, ...room }: EvaporationConditions): number {
+  return evaporationInto(room)(waterC);
+}
+
+/**
+ * The same for one room and any water temperature: the room is worked out once, for sums over a curve.
+ *
+ * @throws RangeError as above; the returned function for water outside 7 to 95 °C.
+ */
+export function evaporationInto(room: Omit<EvaporationConditions, 'waterC'>): (waterC: number) => number {
+  const roomC = within(room.roomC, 'A room temperature', 0, 45, '°C');
+  const pressureKPa = within(room.stationKPa ?? KPA_PER_ATM, 'A station pressure', 50, 110, 'kPa');
+  const around = air(roomC, within(room.humidityRatio, 'A relative humidity', 0, 1), pressureKPa);
+  return (waterC) => {
+    const surface = air(within(waterC, 'A water temperature', 7, 95, '°C'), 1, pressureKPa);
+    const lift = around.dryAirKgPerM3 - surface.dryAirKgPerM3;
+    const moisture = surface.vapourPerDryAir - around.vapourPerDryAir;
+    return lift > 0 && moisture > 0 ? 35 * surface.dryAirKgPerM3 * Math.cbrt(lift) * moisture : 0;
+  };
 }
 
 function air(tempC: number, humidity: number, pressureKPa: number) {

@@ -16,12 +16,15 @@ const CRITICAL_KPA = 22_064;
 export function waterVapourPressureKPa(tempC: number): number {
   const kelvin = celsiusToKelvin(within(tempC, 'A water temperature', 0, 373.9, '°C'));
   const th = 1 - kelvin / CRITICAL_K;
+  // Powers by half steps: this is called for every point of a recorded curve, and `**` with a fraction is slow.
+  const root = Math.sqrt(th);
+  const cube = th * th * th;
   const series =
     -7.85951783 * th +
-    1.84408259 * th ** 1.5 -
-    11.7866497 * th ** 3 +
-    22.6807411 * th ** 3.5 -
-    15.9618719 * th ** 4 +
-    1.80122502 * th ** 7.5;
+    1.84408259 * th * root -
+    11.7866497 * cube +
+    22.6807411 * cube * root -
+    15.9618719 * cube * th +
+    1.80122502 * cube * cube * th * root;
   return CRITICAL_KPA * Math.exp((CRITICAL_K / kelvin) * series);
 }

@@ -1,6 +1,6 @@
 import { curveIntegralMin } from '../curve/curve-integral.js';
 import type { TemperatureCurve } from '../curve/temperature-curve.js';
-import { evaporationKgPerM2H } from '../heat/evaporation.js';
+import { evaporationInto } from '../heat/evaporation.js';
 import { notNegative } from '../numeric/guard.js';
 
 /** End of the evaporation formula, °C. */
@@ -24,7 +24,7 @@ export function evaporatedL(
   const { roomC = 20, humidityRatio = 0.5 } = surface;
   const openM2 = notNegative(surface.openM2, 'An open surface', 'm²');
   if (openM2 === 0) return 0;
-  const ratePerMin = (tempC: number) =>
-    tempC < FROM_C ? 0 : evaporationKgPerM2H({ waterC: Math.min(TO_C, tempC), roomC, humidityRatio }) / 60;
+  const kgPerM2H = evaporationInto({ roomC, humidityRatio });
+  const ratePerMin = (tempC: number) => (tempC < FROM_C ? 0 : kgPerM2H(Math.min(TO_C, tempC)) / 60);
   return openM2 * curveIntegralMin(curve, ratePerMin);
 }
