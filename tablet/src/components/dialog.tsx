@@ -28,7 +28,7 @@ export function Dialog({ isOpen, onClose, title, children, actions, role = 'dial
           >
             <DialogTitle className="text-title">{title}</DialogTitle>
             <div className="mt-4 text-body">{children}</div>
-            {actions ? <div className="mt-8 flex flex-row-reverse flex-wrap justify-end gap-3">{actions}</div> : null}
+            {actions ? <div className="mt-8 flex flex-wrap gap-3">{actions}</div> : null}
           </DialogPanel>
         </div>
       </div>

@@ -23,6 +23,8 @@ export function Menu({
     <HeadlessMenu>
       <MenuButton className={buttonClass(look)}>{label}</MenuButton>
       <MenuItems
+        // Not modal: what stands around a short list stays readable.
+        modal={false}
         anchor={{ to: 'bottom end', gap: 6 }}
         className="z-50 min-w-56 rounded-lg border-2 border-text bg-raised p-1.5 text-text focus:outline-none"
       >

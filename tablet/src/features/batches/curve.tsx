@@ -35,6 +35,8 @@ interface Geometry {
 const LANE_PX = 30;
 const LANES = 5;
 const NARROW_PX = 620;
+/** From here to the right edge the labels of the levels stand. */
+const LABEL_SHARE = 0.8;
 
 function cssColor(name: string): string {
   return getComputedStyle(document.documentElement).getPropertyValue(name).trim();
@@ -165,9 +167,12 @@ function Overlay({
   const isNarrow = width < NARROW_PX;
   const xOf = (atMs: number) => ((atMs - fromMs) / (toMs - fromMs)) * width;
   const yOf = (tempC: number) => height * (1 - (tempC - minC) / (maxC - minC));
-  const endC = temperatureAt(line, toMs);
-  /** The line runs just above the level where its label stands: the label goes below. */
-  const isCrowdedAbove = (tempC: number) => endC !== null && endC >= tempC && yOf(tempC) - yOf(endC) < 30;
+  /** Where the line runs close to a level at the right, the label of that level moves to the left. */
+  const isCrowded = (tempC: number) =>
+    line.some((point) => {
+      const x = xOf(point.atMs);
+      return x > width * LABEL_SHARE && x <= width && Math.abs(yOf(point.tempC) - yOf(tempC) + 10) < 22;
+    });
   const placed = useMemo(
     () => layoutFlags(flags, { width, lanes: LANES, hasLabels: !isNarrow, xOf }),
     // eslint-disable-next-line react-hooks/exhaustive-deps -- xOf follows from the others
@@ -206,9 +211,9 @@ function Overlay({
         {levels.map(({ tempC, title }) => (
           <text
             key={`${tempC}${title}`}
-            x={width - 4}
-            y={yOf(tempC) + (isCrowdedAbove(tempC) ? 20 : -7)}
-            textAnchor="end"
+            x={isCrowded(tempC) ? 6 : width - 4}
+            y={yOf(tempC) - 7}
+            textAnchor={isCrowded(tempC) ? 'start' : 'end'}
             fontSize="15"
             fill="var(--soft)"
             stroke="var(--ground)"
