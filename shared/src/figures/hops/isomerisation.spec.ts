@@ -1,5 +1,4 @@
 import { describe, expect, it } from 'vitest';
-import { alphaSolubilityMgPerL } from './alpha-solubility.js';
 import { isoLossPerMin, isomerisationPerMin, isomerisationTurns, isomerise } from './isomerisation.js';
 
 const hold = (tempC: number, minutes: number) => [
@@ -42,13 +41,6 @@ describe('isomerisation', () => {
     expect(Math.abs(turns / isomerisationPerMin(60) - 3.03)).toBeLessThan(0.02);
   });
 
-  it.each([
-    [60, 3.7, 20.3],
-    [100, 5.2, 66.8],
-  ])('judgement (factor of three): at %s °C and pH %s %s mg/L dissolve', (tempC, ph, mgPerL) => {
-    expect(Math.abs(alphaSolubilityMgPerL(tempC, ph) / mgPerL - 1)).toBeLessThan(0.01);
-  });
-
   it('Malowicki and Shellhammer 2005 and judgement: 270 mg/L of alpha on the fall make 0.014 mg/L, at most 0.23', () => {
     const contact = { alphaMgPerL: 270, ph: 3.78 };
     expect(isomerise(fall, contact).isoMgPerL).toBeCloseTo(0.014, 3);
@@ -64,6 +56,5 @@ describe('isomerisation', () => {
   it('refuses steam and a negative alpha', () => {
     expect(() => isomerisationPerMin(131)).toThrow(RangeError);
     expect(() => isomerise(fall, { alphaMgPerL: -1, ph: 4 })).toThrow(RangeError);
-    expect(() => alphaSolubilityMgPerL(60, Number.NaN)).toThrow(RangeError);
   });
 });

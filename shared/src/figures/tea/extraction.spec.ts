@@ -1,7 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { arrheniusFactor } from '../numeric/arrhenius.js';
 import { extractionTurns, leafExtraction } from './extraction.js';
-import { leafSizeRateFactor, molarMassRateRatio } from './leaf-size.js';
 
 const hold = (tempC: number, minutes: number) => [
   { atMs: 0, tempC },
@@ -41,18 +40,8 @@ describe('tea extraction', () => {
     expect(extractionTurns(hold(2, 60), 1, 40)).toBe(extractionTurns(hold(5, 60), 1, 40));
   });
 
-  it('Price and Spiro 1985: 2.2 times between 925 and 550 µm is a power of 1.52', () => {
-    expect(Math.abs(Math.log(2.2) / Math.log(925 / 550) - 1.52)).toBeLessThan(0.01);
-    expect(leafSizeRateFactor(550, 925)).toBeCloseTo(2.2, 1);
-  });
-
-  it('Price and Spitzer 1994: EGCG against EC is 0.796', () => {
-    expect(Math.abs(molarMassRateRatio(458.37, 290.27) - 0.796)).toBeLessThan(0.002);
-  });
-
   it('refuses an unknown form and a rate of 0', () => {
     expect(() => leafExtraction(hold(82, 4), 'powder' as 'dust')).toThrow(/one of dust, broken, whole/);
     expect(() => leafExtraction(hold(82, 4), 'whole', { rateFactor: 0 })).toThrow(RangeError);
-    expect(() => leafSizeRateFactor(0, 1)).toThrow(RangeError);
   });
 });
