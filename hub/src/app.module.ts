@@ -1,4 +1,5 @@
 import { Module, type DynamicModule } from '@nestjs/common';
+import { AlertsModule } from './alerts/alerts.module.js';
 import { AuthModule } from './auth/auth.module.js';
 import { BatchesModule } from './batches/batches.module.js';
 import { CommonModule } from './common/common.module.js';
@@ -9,7 +10,12 @@ import { EquipmentModule } from './equipment/equipment.module.js';
 import { HealthModule } from './health/health.module.js';
 import { HousesModule } from './houses/houses.module.js';
 import { MembersModule } from './members/members.module.js';
+import { ProbesModule } from './probes/probes.module.js';
+import { ReadingsModule } from './readings/readings.module.js';
+import { RealtimeModule } from './realtime/realtime.module.js';
 import { RecipesModule } from './recipes/recipes.module.js';
+import { RehearsalsModule } from './rehearsals/rehearsals.module.js';
+import { RunsModule } from './runs/runs.module.js';
 
 @Module({})
 export class AppModule {
@@ -27,6 +33,12 @@ export class AppModule {
         EquipmentModule,
         RecipesModule,
         BatchesModule,
+        ProbesModule,
+        RunsModule,
+        ReadingsModule,
+        AlertsModule,
+        RehearsalsModule,
+        RealtimeModule,
       ],
     };
   }

@@ -12,7 +12,9 @@ import { newId } from '../common/ids.js';
 import { inTransaction } from '../database/retry-transaction.js';
 import { EquipmentService } from '../equipment/equipment.service.js';
 import { HousesService } from '../houses/houses.service.js';
+import { ProbesService } from '../probes/probes.service.js';
 import { RecipesService, type NamedRevision } from '../recipes/recipes.service.js';
+import { RunSummariesService } from '../runs/run-summaries.service.js';
 import { formatBatchNumber } from './batch-number.js';
 import { Batch } from './models/batch.model.js';
 
@@ -40,6 +42,8 @@ export class BatchesService {
     private readonly houses: HousesService,
     private readonly recipes: RecipesService,
     private readonly equipment: EquipmentService,
+    private readonly probes: ProbesService,
+    private readonly runSummaries: RunSummariesService,
     private readonly audit: AuditService,
     private readonly clock: Clock,
   ) {}
@@ -118,10 +122,11 @@ export class BatchesService {
 
   /** Looks at every id before anything is refused, so that all that is wrong is said at once. */
   private async checkParts(houseId: string, values: CreateBatch): Promise<NamedRevision> {
-    const { revisionId, kettleId, chillerId, kegId } = values;
-    const [revision, equipment] = await Promise.all([
+    const { revisionId, kettleId, chillerId, kegId, probeId } = values;
+    const [revision, equipment, probe] = await Promise.all([
       this.recipes.findRevision(houseId, revisionId),
       this.equipment.findMany(houseId, [kettleId, kegId, ...(chillerId === null ? [] : [chillerId])]),
+      probeId === null ? null : this.probes.find(houseId, probeId),
     ]);
     const errors: { pointer: string; detail: string }[] = [];
     const miss = (pointer: string, detail: string) => errors.push({ pointer, detail });
@@ -133,6 +138,8 @@ export class BatchesService {
     if (!isUsable(kettleId, 'kettle')) miss('/kettleId', 'There is no such kettle.');
     if (chillerId !== null && !isUsable(chillerId, 'chiller')) miss('/chillerId', 'There is no such chiller.');
     if (!isUsable(kegId, 'keg')) miss('/kegId', 'There is no such keg.');
+    if (probeId !== null && (!probe || probe.isSimulated || probe.revokedAtMs !== null))
+      miss('/probeId', 'There is no such probe.');
     if (!revision || errors.length > 0)
       throw new ProblemError('not-valid', 'The batch names something that is not there.', { errors });
     return revision;
@@ -147,8 +154,13 @@ export class BatchesService {
   }
 
   private async present(houseId: string, rows: Batch[]): Promise<BatchAnswer[]> {
-    const runs = new Map<string, RunSummary>();
-    const revisions = await this.recipes.findRevisions(houseId, [...new Set(rows.map(({ revisionId }) => revisionId))]);
+    const [revisions, runs] = await Promise.all([
+      this.recipes.findRevisions(houseId, [...new Set(rows.map(({ revisionId }) => revisionId))]),
+      this.runSummaries.ofBatches(
+        houseId,
+        rows.map(({ id }) => id),
+      ),
+    ]);
     return rows.map((row) => presentBatch(row, revisions.get(row.revisionId), runs.get(row.id) ?? null));
   }
 }

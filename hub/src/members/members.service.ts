@@ -1,6 +1,6 @@
 import { Injectable } from '@nestjs/common';
 import { InjectConnection, InjectModel } from '@nestjs/sequelize';
-import type { CreateMember, Member, UpdateMember } from '@steepfall/shared/contracts';
+import type { CreateMember, Member, Role, UpdateMember } from '@steepfall/shared/contracts';
 import { ProblemError } from '@steepfall/shared/problems';
 import { Sequelize } from 'sequelize-typescript';
 import { AuditService } from '../audit/audit.service.js';
@@ -48,6 +48,21 @@ export class MembersService {
   async displayNames(houseId: string): Promise<Map<string, string>> {
     const rows = await inHouse(this.memberships, houseId).findAll();
     return new Map(rows.map((row) => [row.id, row.displayName]));
+  }
+
+  /** Ids of everybody who is or was a member of the house. */
+  async everIn(houseId: string): Promise<ReadonlySet<string>> {
+    const rows = await inHouse(this.memberships, houseId).findAll({}, { attributes: ['id'] });
+    return new Set(rows.map(({ id }) => id));
+  }
+
+  /** The roles of those of these members who are active in their house. */
+  async rolesOf(memberIds: string[]): Promise<Map<string, Role>> {
+    const rows = await acrossHouses(this.memberships).findAll({
+      where: { id: memberIds, isActive: true },
+      attributes: ['id', 'role'],
+    });
+    return new Map(rows.map(({ id, role }) => [id, role]));
   }
 
   /** The account of an address with its active memberships, the oldest first: for signing in. */

@@ -94,6 +94,15 @@ export class SessionsService {
     throw new ProblemError('session-expired', 'Sign in again.');
   }
 
+  /** Of these sessions, the ones that go on. */
+  async openAmong(sessionIds: string[]): Promise<Set<string>> {
+    const rows = await acrossHouses(this.sessions).findAll({
+      where: { id: sessionIds, revokedAtMs: null },
+      attributes: ['id'],
+    });
+    return new Set(rows.map(({ id }) => id));
+  }
+
   /** Ends the session of this refresh token; an unknown token is no error. */
   async closeByToken(refreshToken: string): Promise<void> {
     const token = await this.tokens.findByPk(hashSecret(refreshToken));

@@ -1,5 +1,6 @@
 import type { Sequelize } from 'sequelize-typescript';
 import { foundation } from './0001-foundation.js';
+import { runsAndProbes } from './0002-runs-and-probes.js';
 
 export interface Migration {
   name: string;
@@ -7,4 +8,4 @@ export interface Migration {
 }
 
 /** One line, forwards only: a new migration goes to the end. */
-export const migrations: Migration[] = [foundation];
+export const migrations: Migration[] = [foundation, runsAndProbes];

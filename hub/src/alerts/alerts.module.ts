@@ -1,0 +1,7 @@
+import { Module } from '@nestjs/common';
+import { ReadingsModule } from '../readings/readings.module.js';
+import { RunsModule } from '../runs/runs.module.js';
+import { RunSupervisor } from './run-supervisor.service.js';
+
+@Module({ imports: [RunsModule, ReadingsModule], providers: [RunSupervisor] })
+export class AlertsModule {}

@@ -1,0 +1,32 @@
+import type { CreationOptional, InferAttributes, InferCreationAttributes } from 'sequelize';
+import { Column, DataType, Table } from 'sequelize-typescript';
+import { HouseOwnedModel } from '../../common/house-scope/house-owned.model.js';
+
+/** A thermometer that sends readings, real or simulated. Never deleted: curves of the past hang on it. */
+@Table({ tableName: 'probes' })
+export class Probe extends HouseOwnedModel<InferAttributes<Probe>, InferCreationAttributes<Probe>> {
+  @Column({ type: DataType.STRING(80), allowNull: false })
+  declare name: string;
+
+  /** `null`: no token opens the door for it (simulated, or revoked). */
+  @Column({ type: DataType.STRING(64) })
+  declare tokenHash: CreationOptional<string | null>;
+
+  @Column({ type: DataType.DOUBLE, allowNull: false })
+  declare lagS: number;
+
+  @Column({ type: DataType.DOUBLE, allowNull: false })
+  declare resolutionC: number;
+
+  @Column({ type: DataType.DOUBLE, allowNull: false })
+  declare samplePeriodS: number;
+
+  @Column({ type: DataType.BOOLEAN, allowNull: false, defaultValue: false })
+  declare isSimulated: CreationOptional<boolean>;
+
+  @Column({ type: DataType.BIGINT, allowNull: false })
+  declare createdAtMs: number;
+
+  @Column({ type: DataType.BIGINT })
+  declare revokedAtMs: CreationOptional<number | null>;
+}

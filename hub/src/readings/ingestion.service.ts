@@ -1,0 +1,65 @@
+import { Injectable, type BeforeApplicationShutdown } from '@nestjs/common';
+import type { PushedReadings } from '@steepfall/shared/contracts';
+import type { Reading } from '@steepfall/shared/readings';
+import { runTimeAt, wallClock, type RunClock } from '@steepfall/shared/timers';
+import { Subject, type Observable } from 'rxjs';
+import { Clock } from '../common/clock.js';
+import { RunLogService } from '../runs/run-log.service.js';
+import type { RunLog } from '../runs/run-log.js';
+import { judgeReadings } from './judge-readings.js';
+import { ReadingBuffer } from './reading-buffer.js';
+import { ReadingsStore } from './readings.store.js';
+
+export interface AcceptedReadings {
+  log: RunLog;
+  /** In the order in which they came. */
+  readings: Reading[];
+  /** Run clock. */
+  nowMs: number;
+  /** Hub wall time. */
+  acceptedMs: number;
+}
+
+/** The one way in for readings, whichever door they come through and whether their probe is real. */
+@Injectable()
+export class IngestionService implements BeforeApplicationShutdown {
+  private readonly buffer: ReadingBuffer;
+  private readonly accepts = new Subject<AcceptedReadings>();
+  /** Readings of open runs as they are accepted, before they are on disk: for eyes and for alerts, not for records. */
+  readonly accepted$: Observable<AcceptedReadings> = this.accepts.asObservable();
+
+  constructor(
+    store: ReadingsStore,
+    private readonly logs: RunLogService,
+    private readonly clock: Clock,
+  ) {
+    this.buffer = new ReadingBuffer({ write: (rows) => store.write(rows) });
+  }
+
+  async beforeApplicationShutdown(): Promise<void> {
+    await this.buffer.close();
+  }
+
+  /** Resolves after commit. A refused reading will never be taken. */
+  async ingest(probeId: string, readings: readonly Reading[]): Promise<PushedReadings> {
+    this.buffer.assertRoom();
+    const log = this.logs.attachedTo(probeId);
+    const acceptedMs = this.clock.nowMs();
+    const nowMs = log ? runTimeAt(log.clock, acceptedMs) : acceptedMs;
+    const { accepted, refused } = judgeReadings(readings, nowMs);
+    if (log && accepted.length > 0) this.accepts.next({ log, readings: accepted, nowMs, acceptedMs });
+    const keptUnder = log?.facts.probeId ?? probeId;
+    const counts = await this.buffer.add(accepted.map(({ atMs, tempC }) => ({ probeId: keptUnder, atMs, tempC })));
+    return { ...counts, refused };
+  }
+
+  /** The clock that the readings of this probe are stamped with: that of its run, or wall time. */
+  clockOf(probeId: string): RunClock {
+    return this.logs.attachedTo(probeId)?.clock ?? wallClock(this.clock.nowMs());
+  }
+
+  /** Resolves when everything that was accepted before is on disk. */
+  async settle(): Promise<void> {
+    await this.buffer.settle();
+  }
+}
