@@ -1,17 +1,22 @@
 import { getModelToken } from '@nestjs/sequelize';
-import type { CreateEquipment, Role } from '@steepfall/shared/contracts';
+import type { CreateEquipment, Role, RunSummary } from '@steepfall/shared/contracts';
+import type { RunEvent, RunEventOf, RunEventType } from '@steepfall/shared/runs';
 import type { RecipeDocument } from '@steepfall/shared/sheets';
 import type { Model, ModelStatic } from 'sequelize';
 import type { Actor } from '../src/common/access/actor.js';
 import { Batch } from '../src/batches/models/batch.model.js';
 import { newId } from '../src/common/ids.js';
 import { hashPassword } from '../src/common/passwords.js';
+import { hashSecret } from '../src/common/secrets.js';
 import { Equipment } from '../src/equipment/models/equipment.model.js';
 import { House } from '../src/houses/models/house.model.js';
 import { Membership } from '../src/members/models/membership.model.js';
 import { User } from '../src/members/models/user.model.js';
+import { newDeviceToken } from '../src/probes/device-token.js';
+import { Probe } from '../src/probes/models/probe.model.js';
 import { RecipeRevision } from '../src/recipes/models/recipe-revision.model.js';
 import { Recipe } from '../src/recipes/models/recipe.model.js';
+import { RunsService } from '../src/runs/runs.service.js';
 import { AccessTokensService } from '../src/sessions/access-tokens.service.js';
 import { SessionsService } from '../src/sessions/sessions.service.js';
 import type { TestApp } from './create-test-app.js';
@@ -22,7 +27,7 @@ let serial = 0;
 
 /** The model as the running hub uses it. */
 export function modelOf<M extends Model>({ app }: TestApp, model: ModelStatic<M>): ModelStatic<M> {
-  return app.get<ModelStatic<M>>(getModelToken(model as never), { strict: false });
+  return app.get<ModelStatic<M>>(getModelToken(model), { strict: false });
 }
 
 export function buildHouse(testApp: TestApp, overrides: { name?: string; altitudeM?: number } = {}): Promise<House> {
@@ -221,4 +226,51 @@ export async function signInAs(
   const identity = { memberId: member.id, userId: user.id, houseId: house.id, role, sessionId: session.sessionId };
   const { accessToken, expiresAtMs } = await testApp.app.get(AccessTokensService, { strict: false }).sign(identity);
   return { ...built, actor: { ...identity, expiresAtMs }, accessToken, bearer: `Bearer ${accessToken}` };
+}
+
+/** A probe with a token that opens the door for it. */
+export async function buildProbe(
+  testApp: TestApp,
+  house: House,
+  overrides: { name?: string; lagS?: number; samplePeriodS?: number } = {},
+): Promise<{ probe: Probe; deviceToken: string; bearer: string }> {
+  serial += 1;
+  const id = newId();
+  const deviceToken = newDeviceToken(id);
+  const probe = await modelOf(testApp, Probe).create({
+    id,
+    houseId: house.id,
+    name: `Probe ${serial}`,
+    lagS: 7.5,
+    resolutionC: 0.0625,
+    samplePeriodS: 1,
+    tokenHash: hashSecret(deviceToken),
+    createdAtMs: Date.now(),
+    ...overrides,
+  });
+  return { probe, deviceToken, bearer: `Bearer ${deviceToken}` };
+}
+
+/** A run of a planned batch that has just begun, with a probe in its kettle. */
+export async function buildRun(
+  testApp: TestApp,
+  overrides: { author?: SignedInMember } = {},
+): Promise<{ run: RunSummary; author: SignedInMember; batch: Batch; probe: Probe; deviceToken: string }> {
+  const author = overrides.author ?? (await signInAs(testApp, 'brewer'));
+  const { probe, deviceToken } = await buildProbe(testApp, author.house);
+  const { batch } = await buildBatch(testApp, { author, probeId: probe.id });
+  const run = await testApp.app.get(RunsService, { strict: false }).startBatch(author.actor, batch.id);
+  return { run, author, batch, probe, deviceToken };
+}
+
+/** What a tablet writes: an act of this member in this run, now. */
+export function buildEvent<Type extends RunEventType>(
+  run: Pick<RunSummary, 'id'>,
+  by: SignedInMember | null,
+  type: Type,
+  payload: RunEventOf<Type>['payload'],
+  overrides: Partial<Pick<RunEvent, 'id' | 'runId' | 'atMs' | 'station'>> = {},
+): RunEventOf<Type> {
+  const envelope = { id: newId(), runId: run.id, v: 1, atMs: Date.now(), by: by?.member.id ?? null, station: 'tablet' };
+  return { ...envelope, type, payload, ...overrides } as RunEventOf<Type>;
 }

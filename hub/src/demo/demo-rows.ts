@@ -1,8 +1,10 @@
+import { foldRun } from '@steepfall/shared/runs';
 import { compileSheet } from '@steepfall/shared/sheets';
 import { wallClock } from '@steepfall/shared/timers';
 import { formatBatchNumber } from '../batches/batch-number.js';
 import { hashPassword } from '../common/passwords.js';
 import { kettleSetupOf } from '../equipment/kettle-setup.js';
+import { projectionOf } from '../runs/projection.js';
 import { demoEquipment, demoHouse, demoId, demoMemberId, demoProbe, demoRecipe, demoSignIns } from './demo-house.js';
 import { recordDay } from './recorded-day.js';
 
@@ -209,6 +211,7 @@ function finishedRun(
     newId,
   });
 
+  const projection = projectionOf(foldRun(day.events));
   const run: Row = {
     id: runId,
     house_id: demoHouse.id,
@@ -224,17 +227,18 @@ function finishedRun(
     probe_sample_period_s: demoProbe.samplePeriodS,
     room_c: ROOM_C,
     coolant_c: coolantC,
-    status: 'ended',
-    outcome: 'finished',
+    status: projection.status,
+    outcome: projection.outcome,
     started_at_ms: startedAtMs,
-    ended_at_ms: day.events.at(-1)?.atMs ?? startedAtMs,
+    ended_at_ms: projection.endedAtMs,
     started_by: memberId,
-    clock_anchor_wall_ms: clock.anchorWallMs,
-    clock_anchor_run_ms: clock.anchorRunMs,
-    clock_rate: clock.rate,
-    last_seq: day.events.length,
-    current_step_title: null,
-    alert_stage: null,
+    clock_anchor_wall_ms: projection.clockAnchorWallMs,
+    clock_anchor_run_ms: projection.clockAnchorRunMs,
+    clock_rate: projection.clockRate,
+    last_seq: projection.lastSeq,
+    current_step_title: projection.currentStepTitle,
+    alert_stage: projection.alertStage,
+    probe_out_at_ms: projection.probeOutAtMs,
     created_at_ms: startedAtMs,
   };
   const events = day.events.map(({ seq, id, type, v, atMs, by, station, sentBy, receivedAtMs, payload }) => ({

@@ -1,3 +1,5 @@
+import type { RunEvents, RunSummary } from '@steepfall/shared/contracts';
+import { foldRun } from '@steepfall/shared/runs';
 import { QueryTypes } from 'sequelize';
 import { Sequelize } from 'sequelize-typescript';
 import request from 'supertest';
@@ -63,6 +65,22 @@ describe('the demo house', () => {
     const before = (await counts())['batches'];
     await ensureDemo(testApp.databaseUrl, nowMs);
     expect((await counts())['batches']).toBe(before);
+  });
+
+  it('has a finished batch in the book, with its log and its curve', async () => {
+    const { email, password } = demoSignIns[1]!;
+    const { accessToken } = (await signIn(testApp.url, email, password)).body as { accessToken: string };
+    const get = async (path: string) =>
+      (await request(testApp.url).get(path).set('authorization', `Bearer ${accessToken}`).expect(200)).body as unknown;
+    const listed = (await get('/api/batches')) as { status: string; run: RunSummary | null }[];
+    const finished = listed.find(({ status }) => status === 'finished');
+    expect(finished?.run).toMatchObject({ outcome: 'finished', currentStepTitle: null, alertStage: null });
+    const { id, lastSeq } = finished!.run!;
+    const { events } = (await get(`/api/runs/${id}/events?afterSeq=0`)) as RunEvents;
+    expect(events).toHaveLength(lastSeq);
+    expect(foldRun(events)).toMatchObject({ status: 'ended', conflicts: [] });
+    const { readings } = (await get(`/api/runs/${id}/readings`)) as { readings: { tempC: number | null }[] };
+    expect(Math.max(...readings.map(({ tempC }) => tempC ?? 0))).toBeGreaterThan(76);
   });
 
   it('lets everybody on its list in', async () => {

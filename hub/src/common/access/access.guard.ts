@@ -40,7 +40,7 @@ export class AccessGuard extends AuthGuard('jwt') {
     return true;
   }
 
-  override handleRequest<User = Actor>(error: unknown, user: User | false, info: unknown): User {
+  override handleRequest<User = Actor>(error: Error | null, user: User | false, info: unknown): User {
     if (error) throw error;
     if (user) return user;
     if (info instanceof Error && info.name === 'TokenExpiredError')

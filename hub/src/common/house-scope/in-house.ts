@@ -6,11 +6,11 @@ import type {
   CreationAttributes,
   DestroyOptions,
   FindOptions,
+  ModelStatic,
   Transaction,
   UpdateOptions,
   WhereOptions,
 } from 'sequelize';
-import type { ModelStatic } from 'sequelize';
 import type { HouseOwnedModel } from './house-owned.model.js';
 
 // The attributes of a model differ per feature; what all of them have is the house.
@@ -67,7 +67,7 @@ export class HouseRows<M extends AnyHouseOwned> {
     values: Partial<Attributes<M>>,
     options: Scoped<UpdateOptions<Attributes<M>>> = {},
   ): Promise<number> {
-    const [changed] = await this.model.update(values as never, { ...options, where: this.scope(where) });
+    const [changed] = await this.model.update(values, { ...options, where: this.scope(where) });
     return changed;
   }
 
