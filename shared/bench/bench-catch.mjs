@@ -76,13 +76,17 @@ function report(title, traces) {
   const replays = traces.map((trace) => ({ trace, ...replayTrace(trace, { forecasts: true }) }));
   const ways = [
     { name: 'the watch', scores: replays.map(({ trace, alerts }) => scoreCatch(trace, alerts)) },
+    {
+      name: 'the watch, with a clock between readings',
+      scores: traces.map((trace) => scoreCatch(trace, replayTrace(trace, { clock: true }).alerts)),
+    },
     { name: 'straight line', scores: traces.map((trace) => scoreCatch(trace, straightLine(trace))) },
     { name: 'threshold', scores: traces.map((trace) => scoreCatch(trace, threshold(trace))) },
   ];
   for (const { name, scores } of ways) {
     const lines = scoreLines(scores);
     console.log(`\n${name}`);
-    console.log((name === 'the watch' ? lines : lines.slice(-1)).map((line) => `  ${line}`).join('\n'));
+    console.log((name.startsWith('the watch') ? lines : lines.slice(-1)).map((line) => `  ${line}`).join('\n'));
   }
   console.log('\nwhere the additions went in, K off the target');
   for (const { name, scores } of ways)

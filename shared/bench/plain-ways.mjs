@@ -1,4 +1,4 @@
-/** What a kettle is watched with today, to compare with: neither knows of lag, faults or reach beyond what is said here. */
+/** What a kettle is watched with today, to compare with: neither knows more than is said here. */
 
 /** Length of the straight line. */
 const LINE_S = 20;
@@ -21,7 +21,7 @@ export function threshold(trace) {
 }
 
 /**
- * A straight line through the last twenty seconds, drawn on by the person's reach.
+ * A straight line through the last twenty seconds, drawn on by the probe's lag as told and the person's reach.
  *
  * @param {import('./traces.mjs').Trace} trace
  * @returns {import('./replay-trace.mjs').Catch[]}
@@ -38,7 +38,7 @@ export function straightLine(trace) {
     const slope =
       recent.reduce((sum, [x, y]) => sum + (x - meanT) * (y - meanC), 0) /
       recent.reduce((sum, [x]) => sum + (x - meanT) ** 2, 0);
-    if (isPast(trace, meanC + slope * (t + trace.reachS - meanT))) return [{ t, stage: 'now' }];
+    if (isPast(trace, meanC + slope * (t + trace.lagS + trace.reachS - meanT))) return [{ t, stage: 'now' }];
   }
   return [];
 }

@@ -21,10 +21,11 @@ const RESOLUTION_C = 0.0625;
 
 /**
  * @param {import('./traces.mjs').Trace} trace
- * @param {{ forecasts?: boolean }} [options]
+ * @param {{ forecasts?: boolean, clock?: boolean }} [options] `clock` steps the ladder every second between readings too, as the
+ *   hub and the tablets do: in a gap they need not wait for the next reading.
  * @returns {{ alerts: Catch[], forecasts: Forecast[], watch: import('../dist/watch/index.js').WatchState }}
  */
-export function replayTrace(trace, { forecasts: wanted = false } = {}) {
+export function replayTrace(trace, { forecasts: wanted = false, clock = false } = {}) {
   const target = { tempC: trace.targetC, direction: trace.direction };
   const acts = [...trace.actions].sort((a, b) => a.t - b.t);
   let watch = startWatch({
@@ -39,16 +40,23 @@ export function replayTrace(trace, { forecasts: wanted = false } = {}) {
   const alerts = [];
   /** @type {Forecast[]} */
   const forecasts = [];
+  /** @param {number} t */
+  const climb = (t) => {
+    const step = stepLadder(ladder, watch, Math.round(t * 1000));
+    ladder = step.ladder;
+    for (const { stage } of step.raised) alerts.push({ t, stage });
+  };
+  let before = trace.readings[0]?.[0] ?? 0;
   for (const [t, celsius] of trace.readings) {
     const atMs = Math.round(t * 1000);
+    if (clock) for (let tick = before + 1; tick < t; tick += 1) climb(tick);
+    before = t;
     while (acts[0] && acts[0].t <= t) {
       const { act, t: tappedS } = /** @type {import('./traces.mjs').Trace['actions'][number]} */ (acts.shift());
       watch = watchAct(watch, { act, atMs: Math.round(tappedS * 1000) });
     }
     watch = watchReading(watch, { atMs, tempC: Number.isFinite(celsius) ? celsius : null });
-    const step = stepLadder(ladder, watch, atMs);
-    ladder = step.ladder;
-    for (const { stage } of step.raised) alerts.push({ t, stage });
+    climb(t);
     if (!wanted) continue;
     const forecast = forecastCrossing(watch, target, atMs);
     if (forecast.kind === 'forecast') {

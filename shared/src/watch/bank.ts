@@ -1,9 +1,13 @@
 import { E, EE, ES, F, FE, FF, FS, LOG_WEIGHT, S, SS, STRIDE, T, TE, TF, TS, TT, EDDY_MEMORY_S } from './kalman.js';
 import { predict, transition, update } from './kalman.js';
+import type { WatchConfig } from './types.js';
 import { slopeLaw, type Surroundings } from './slope-law.js';
 
-/** True lag over told lag: told is off by up to a quarter of the true one. */
+/** True lag over told lag when told is off by up to a quarter of the true one. */
 const LAG_RATIOS = [0.8, 0.89, 0.98, 1.08, 1.19, 1.31];
+const USUAL_LAG_ERROR = 0.25;
+/** However well a lag was learned, stirring and depth change it. */
+const LEAST_LAG_ERROR = 0.05;
 const EDDIES_C = [0.08, 0.16, 0.27];
 /** No hypothesis is ever given up for good: kettles and probes change. */
 const LEAST_LOG_WEIGHT = -9;
@@ -13,9 +17,13 @@ const LONGEST_STEP_S = 2;
 /** Least lag that is told apart from none. */
 const LEAST_LAG_S = 0.05;
 
-/** Lag of the hypotheses from `LAG_RATIOS[i]`, which lie side by side in the bank, one for each of `EDDIES_C`. */
-function lagOf(i: number, toldS: number): number {
-  return Math.max(toldS, LEAST_LAG_S) * LAG_RATIOS[i]!;
+/** What was told of the probe's lag. */
+export type ToldLag = Pick<WatchConfig, 'lagS' | 'lagErrorRatio'>;
+
+/** Lag of the `i`th group of hypotheses, which lie side by side in the bank, one for each of `EDDIES_C`. */
+function lagOf(i: number, told: ToldLag): number {
+  const error = Math.min(USUAL_LAG_ERROR, Math.max(LEAST_LAG_ERROR, told.lagErrorRatio ?? USUAL_LAG_ERROR));
+  return Math.max(told.lagS, LEAST_LAG_S) * LAG_RATIOS[i]! ** (error / USUAL_LAG_ERROR);
 }
 
 /** What the bank as a whole believes. */
@@ -31,11 +39,11 @@ export interface Belief {
   probeVariance: number;
 }
 
-export function startBank(tempC: number, lagS: number): number[] {
+export function startBank(tempC: number, told: ToldLag): number[] {
   const bank: number[] = [];
   for (let i = 0; i < LAG_RATIOS.length * EDDIES_C.length; i += 1) {
     const eddyC = EDDIES_C[i % EDDIES_C.length]!;
-    const filtered = (eddyC ** 2 * EDDY_MEMORY_S) / (EDDY_MEMORY_S + lagOf(Math.floor(i / EDDIES_C.length), lagS));
+    const filtered = (eddyC ** 2 * EDDY_MEMORY_S) / (EDDY_MEMORY_S + lagOf(Math.floor(i / EDDIES_C.length), told));
     const one = new Array<number>(STRIDE).fill(0);
     one[T] = tempC;
     one[F] = tempC;
@@ -94,7 +102,7 @@ export function believe(bank: readonly number[]): Belief {
 }
 
 /** The bank, `durationS` later, with no reading. Changes `bank` in place: callers own a copy. */
-export function advanceBank(bank: number[], durationS: number, lagS: number, around: Surroundings): void {
+export function advanceBank(bank: number[], durationS: number, told: ToldLag, around: Surroundings): void {
   const steps = Math.max(1, Math.ceil(durationS / LONGEST_STEP_S));
   const dtS = durationS / steps;
   for (let step = 0; step < steps; step += 1) {
@@ -102,7 +110,7 @@ export function advanceBank(bank: number[], durationS: number, lagS: number, aro
     const law = slopeLaw(tempC, rateCPerS, around);
     let o = 0;
     for (let i = 0; i < LAG_RATIOS.length; i += 1) {
-      const move = transition(dtS, lagOf(i, lagS), law);
+      const move = transition(dtS, lagOf(i, told), law);
       for (let j = 0; j < EDDIES_C.length; j += 1) {
         predict(bank, o, move, EDDIES_C[j]!);
         o += STRIDE;
@@ -111,12 +119,13 @@ export function advanceBank(bank: number[], durationS: number, lagS: number, aro
   }
 }
 
-/** Natural logarithm of the sum of the weights. */
-function logTotal(bank: readonly number[]): number {
-  let sum = 0;
-  for (let o = LOG_WEIGHT; o < bank.length; o += STRIDE) sum += Math.exp(bank[o]!);
-  return Math.log(sum);
-}
+/**
+ * Share of a reading's likelihood that goes into the weights. Real eddies are not quite those of the model; taken at full
+ * value their colour would be read as news of the lag.
+ */
+const TRUST = 0.5;
+/** What a weight keeps from one reading to the next, so that hours of a quiet pot do not add up to a certainty. */
+const WEIGHT_KEPT = 0.998;
 
 /**
  * Takes in one reading. Changes `bank` in place.
@@ -124,16 +133,19 @@ function logTotal(bank: readonly number[]): number {
  * @returns the logarithm of how likely the bank thought that reading.
  */
 export function updateBank(bank: number[], readingC: number, whiteVariance: number): number {
-  const before = logTotal(bank);
+  let before = 0;
+  let after = 0;
   let top = -Infinity;
   for (let o = 0; o < bank.length; o += STRIDE) {
-    update(bank, o, readingC, whiteVariance);
+    const weight = Math.exp(bank[o + LOG_WEIGHT]!);
+    const likelihood = update(bank, o, readingC, whiteVariance);
+    before += weight;
+    after += weight * Math.exp(likelihood);
+    bank[o + LOG_WEIGHT] = WEIGHT_KEPT * bank[o + LOG_WEIGHT]! + TRUST * likelihood;
     top = Math.max(top, bank[o + LOG_WEIGHT]!);
   }
-  for (let o = LOG_WEIGHT; o < bank.length; o += STRIDE) bank[o]! -= top;
-  const evidence = top + logTotal(bank) - before;
-  for (let o = LOG_WEIGHT; o < bank.length; o += STRIDE) bank[o] = Math.max(LEAST_LOG_WEIGHT, bank[o]!);
-  return evidence;
+  for (let o = LOG_WEIGHT; o < bank.length; o += STRIDE) bank[o] = Math.max(LEAST_LOG_WEIGHT, bank[o]! - top);
+  return Math.log(after / before);
 }
 
 /** Something was done to the kettle: the liquid may have stepped and the slope may be another. */
@@ -180,13 +192,13 @@ export function resettleBank(bank: number[], readingC: number, stepC: number): v
 }
 
 /** Mean and spread of the lag over the bank, in seconds. */
-export function lagBelief(bank: readonly number[], toldS: number): { lagS: number; sdS: number } {
+export function lagBelief(bank: readonly number[], told: ToldLag): { lagS: number; sdS: number } {
   let sum = 0;
   let mean = 0;
   let square = 0;
   for (let i = 0; i < bank.length / STRIDE; i += 1) {
     const w = Math.exp(bank[i * STRIDE + LOG_WEIGHT]!);
-    const lagS = lagOf(Math.floor(i / EDDIES_C.length), toldS);
+    const lagS = lagOf(Math.floor(i / EDDIES_C.length), told);
     sum += w;
     mean += w * lagS;
     square += w * lagS ** 2;

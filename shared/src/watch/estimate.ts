@@ -1,5 +1,4 @@
-import { lagBelief, type Belief } from './bank.js';
-import { blend } from './rivals.js';
+import { believe, type Belief } from './bank.js';
 import { slopeLaw } from './slope-law.js';
 import type { WatchState } from './state.js';
 import type { WatchEstimate, WatchMode, WatchStatus } from './types.js';
@@ -30,7 +29,7 @@ export interface Course {
 
 export function courseOf(state: WatchState): Course | null {
   if (state.bank === null) return null;
-  const belief = blend(state.bank, state.rivals);
+  const belief = believe(state.bank);
   const law = slopeLaw(belief.tempC, belief.rateCPerS, surroundings(state));
   return {
     startMs: state.bankAtMs,
@@ -98,9 +97,4 @@ export function estimateAt(state: WatchState, atMs: number): WatchEstimate {
     mode: modeOf(at.rateCPerS, Math.sqrt(Math.max(0, course.belief.rateVariance))),
     lastGoodAtMs,
   };
-}
-
-/** What the run has taught of the probe: its lag, with one standard deviation. null before there is a bank. */
-export function learnedLag(state: WatchState): { lagS: number; sdS: number } | null {
-  return state.bank === null ? null : lagBelief(state.bank, state.config.lagS);
 }

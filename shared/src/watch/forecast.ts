@@ -12,11 +12,11 @@ const NARROW_C = 1;
 /** Good readings before any forecast. */
 const GOOD_TO_FORECAST = 8;
 
-/** The crossing as the course has it, however wide; instants may lie in the past. null when it is never reached. */
+/** The crossing as the course has it, however unsure; it may lie in the past. */
 export interface Crossing {
+  /** Seconds from the start of the course. */
+  aheadS: number;
   atMs: number;
-  earlyMs: number;
-  lateMs: number;
   rateCPerS: number;
 }
 
@@ -46,23 +46,35 @@ function bisect(from: number, to: number, isPast: (aheadS: number) => boolean): 
   return high;
 }
 
+/** null when the target is never reached. */
 export function crossingOf(course: Course, target: CrossingTarget): Crossing | null {
-  const towards = sign(target);
-  if (course.rateCPerS * towards <= 0) return null;
+  if (course.rateCPerS * sign(target) <= 0) return null;
   const aheadS = secondsTo(course, target.tempC);
   if (aheadS === null || aheadS > LONGEST_HORIZON_S) return null;
+  const { rateCPerS } = courseAt(course, aheadS);
+  return { aheadS, atMs: msOf(course, aheadS), rateCPerS };
+}
+
+function msOf(course: Course, aheadS: number): number {
+  return Math.round(course.startMs + aheadS * 1000);
+}
+
+/** The 90 % interval of a crossing: where the edges of the wedge cross the target. */
+export function crossingInterval(
+  course: Course,
+  target: CrossingTarget,
+  { aheadS }: Crossing,
+): { earlyMs: number; lateMs: number } {
+  const towards = sign(target);
   const past = (at: number, z: number) => {
     const { tempC, sdC } = courseAt(course, at);
     return (tempC - target.tempC) * towards + z * sdC >= 0;
   };
   const near = courseAt(course, aheadS);
-  const slack = (4 * near.sdC) / Math.max(1e-5, Math.abs(near.rateCPerS));
-  const earlyFrom = aheadS - slack;
-  const lateTo = aheadS + 4 * slack + 1;
-  const earlyS = bisect(earlyFrom, aheadS, (at) => past(at, Z_90));
-  const lateS = bisect(aheadS, lateTo, (at) => past(at, -Z_90));
-  const ms = (at: number) => Math.round(course.startMs + at * 1000);
-  return { atMs: ms(aheadS), earlyMs: ms(earlyS), lateMs: ms(lateS), rateCPerS: near.rateCPerS };
+  const slackS = (4 * near.sdC) / Math.max(1e-5, Math.abs(near.rateCPerS));
+  const earlyS = bisect(aheadS - slackS, aheadS, (at) => past(at, Z_90));
+  const lateS = bisect(aheadS, aheadS + 4 * slackS + 1, (at) => past(at, -Z_90));
+  return { earlyMs: msOf(course, earlyS), lateMs: msOf(course, lateS) };
 }
 
 /** When the trail last went through the target in its direction; the start of the trail when it was past it all along. */
@@ -97,7 +109,8 @@ export function forecastCrossing(state: WatchState, target: CrossingTarget, nowM
     const doubt = Math.sqrt(Math.max(0, course.belief.rateVariance));
     return course.rateCPerS * towards + 2 * doubt > 0 && doubt > 0.005 ? { kind: 'too-early' } : { kind: 'never' };
   }
-  const { atMs, earlyMs, lateMs, rateCPerS } = crossing;
+  const { atMs, rateCPerS } = crossing;
+  const { earlyMs, lateMs } = crossingInterval(course, target, crossing);
   const widthS = (lateMs - earlyMs) / 1000;
   const horizonS = Math.max(0, (atMs - nowMs) / 1000);
   if (widthS > WIDEST_SHARE * horizonS && widthS * Math.abs(rateCPerS) > NARROW_C) return { kind: 'too-early' };

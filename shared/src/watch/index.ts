@@ -7,9 +7,10 @@ export {
   type NewtonBoundInput,
 } from './bounds.js';
 export { crossingLateByS, newtonAfter, newtonSecondsTo, secondsToFall, type CoolingLaw } from './cooling-law.js';
-export { estimateAt, learnedLag } from './estimate.js';
+export { estimateAt } from './estimate.js';
 export { forecastCrossing, forecastCurve } from './forecast.js';
 export { startLadder, stepLadder, type LadderState } from './ladder.js';
+export { learnedFrom } from './learn.js';
 export { startWatch, type WatchState } from './state.js';
 export { startTimerLadder, stepTimerLadder, type TimerLadderState } from './timer-ladder.js';
 export type {
@@ -25,6 +26,7 @@ export type {
   WatchActDone,
   WatchConfig,
   WatchEstimate,
+  WatchLearned,
   WatchMode,
   WatchReading,
   WatchStatus,

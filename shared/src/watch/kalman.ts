@@ -129,8 +129,8 @@ export function predict(x: number[], o: number, step: Transition, eddyC: number)
 /** A reading more than this many standard deviations out counts as this many; the tails of real noise are heavy. */
 const WEIGHT_CAP = 16;
 
-/** Takes in one reading and scores the hypothesis by how well it foresaw it. */
-export function update(x: number[], o: number, readingC: number, whiteVariance: number): void {
+/** Takes in one reading. Returns the logarithm of how likely the hypothesis thought it. */
+export function update(x: number[], o: number, readingC: number, whiteVariance: number): number {
   const tf = x[o + TF]!;
   const ff = x[o + FF]!;
   const fe = x[o + FE]!;
@@ -141,7 +141,6 @@ export function update(x: number[], o: number, readingC: number, whiteVariance: 
   const kF = ff / variance;
   const kE = fe / variance;
   const kS = fs / variance;
-  x[o + LOG_WEIGHT]! -= 0.5 * (Math.min(WEIGHT_CAP, (off * off) / variance) + Math.log(variance));
   x[o + T]! += kT * off;
   x[o + F]! += kF * off;
   x[o + E]! += kE * off;
@@ -156,4 +155,5 @@ export function update(x: number[], o: number, readingC: number, whiteVariance: 
   x[o + EE]! -= kE * fe;
   x[o + ES]! -= kE * fs;
   x[o + SS]! -= kS * fs;
+  return -0.5 * (Math.min(WEIGHT_CAP, (off * off) / variance) + Math.log(variance));
 }

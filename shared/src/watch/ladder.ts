@@ -1,5 +1,5 @@
 import { courseAt, courseOf, estimateAt, type Course } from './estimate.js';
-import { crossingOf, forecastCrossing, type Crossing } from './forecast.js';
+import { crossingInterval, crossingOf, forecastCrossing, type Crossing } from './forecast.js';
 import type { WatchState } from './state.js';
 import type { CatchTarget, LadderAlert, LadderStage } from './types.js';
 
@@ -20,6 +20,9 @@ const OFF_TIMES = 3;
 /** A liquid leaving the target faster than this (0.3 K/min) is on its way up to be caught later. */
 const LEAVING_C_PER_S = 0.005;
 const SLOPE_WAIT_S = 30;
+/** After a coil or a top-up the estimate swings until the probe has come after; alerts wait, but not for long. */
+const UNSETTLED_C = 0.5;
+const UNSETTLED_S = 30;
 /** Most that half a step may bring a `now` forward; steps are a reading apart, save in a fast rehearsal. */
 const LONGEST_HALF_STEP_S = 2;
 
@@ -65,6 +68,8 @@ interface Step {
   /** Positive towards the target, K/s. */
   towardsCPerS: number;
   rateSdCPerS: number;
+  /** The liquid was disturbed a moment ago and could be anywhere within a kelvin or so. */
+  isUnsettled: boolean;
   crossing: Crossing | null;
 }
 
@@ -81,16 +86,16 @@ export function stepLadder(
   const estimate = estimateAt(watch, nowMs);
   const paused = course === null || estimate.status === 'starting' || estimate.status === 'lost';
   if (paused) return { ladder: { ...ladder, lastStepAtMs: nowMs }, raised: [] };
-  const step = look(ladder.target, course, nowMs);
+  const step = look(ladder.target, watch, course, nowMs);
   const settled = returned(calledOff(placed(ladder, watch, step), step), step);
   const { stage, alerts } = climb(settled, watch, step);
-  const raised = alerts.map((raisedStage) => alertOf(settled, raisedStage, step));
+  const raised = alerts.map((raisedStage) => alertOf(settled, raisedStage, course, step));
   const next = { ...settled, stage, lastStepAtMs: nowMs };
   const isNow = alerts.includes('now') || alerts.includes('missed');
   return { ladder: isNow ? afterNow(next, step) : passing(next, step), raised };
 }
 
-function look(target: CatchTarget, course: Course, nowMs: number): Step {
+function look(target: CatchTarget, watch: WatchState, course: Course, nowMs: number): Step {
   const at = courseAt(course, Math.max(0, (nowMs - course.startMs) / 1000));
   const towards = target.direction === 'rising' ? 1 : -1;
   return {
@@ -99,11 +104,14 @@ function look(target: CatchTarget, course: Course, nowMs: number): Step {
     nearC: (target.tempC - at.tempC) * towards,
     towardsCPerS: at.rateCPerS * towards,
     rateSdCPerS: Math.sqrt(Math.max(0, course.belief.rateVariance)),
+    isUnsettled:
+      at.sdC > UNSETTLED_C && watch.disturbedAtMs !== null && nowMs - watch.disturbedAtMs < UNSETTLED_S * 1000,
     crossing: crossingOf(course, target),
   };
 }
 
-function alertOf(ladder: LadderState, stage: LadderStage, step: Step): LadderAlert {
+function alertOf(ladder: LadderState, stage: LadderStage, course: Course, step: Step): LadderAlert {
+  const interval = step.crossing && crossingInterval(course, ladder.target, step.crossing);
   return {
     key: ladder.target.key,
     stage,
@@ -111,8 +119,8 @@ function alertOf(ladder: LadderState, stage: LadderStage, step: Step): LadderAle
     atMs: step.nowMs,
     tempC: step.tempC,
     crossingAtMs: step.crossing?.atMs ?? null,
-    earlyMs: step.crossing?.earlyMs ?? null,
-    lateMs: step.crossing?.lateMs ?? null,
+    earlyMs: interval?.earlyMs ?? null,
+    lateMs: interval?.lateMs ?? null,
   };
 }
 
@@ -140,6 +148,7 @@ function climb(
   const { stage, target, side } = ladder;
   const kept = { stage, alerts: [] };
   if (stage === 'missed') return kept;
+  if (step.isUnsettled && stage !== 'now') return kept;
   if (stage === 'now') return isMissed(ladder, step) ? { stage: 'missed', alerts: ['missed'] } : kept;
   if (step.nearC <= 0) {
     if (side === 'way-up') return kept;
@@ -157,16 +166,17 @@ function climb(
   if (leftS <= (target.standByS ?? DEFAULT_STAND_BY_S)) return { stage: 'stand-by', alerts: ['stand-by'] };
   if (stage === 'coming-up') return kept;
   const comingUpS = target.comingUpS ?? DEFAULT_COMING_UP_S;
-  if (leftS <= comingUpS && isClear(watch, target, step, comingUpS))
-    return { stage: 'coming-up', alerts: ['coming-up'] };
-  return kept;
+  const isDue = leftS <= comingUpS && isClear(watch, target, step, comingUpS);
+  return isDue ? { stage: 'coming-up', alerts: ['coming-up'] } : kept;
 }
 
 /** A first warning needs a forecast worth the name, or one whose late end is still soon. */
 function isClear(watch: WatchState, target: CatchTarget, step: Step, comingUpS: number): boolean {
   if (forecastCrossing(watch, target, step.nowMs).kind === 'forecast') return true;
-  const lateS = ((step.crossing?.lateMs ?? Infinity) - step.nowMs) / 1000 - target.reachS;
-  return lateS <= comingUpS;
+  const course = courseOf(watch);
+  if (course === null || step.crossing === null) return false;
+  const { lateMs } = crossingInterval(course, target, step.crossing);
+  return (lateMs - step.nowMs) / 1000 - target.reachS <= comingUpS;
 }
 
 /** Of two steps the nearer one to the instant is the right one. */

@@ -14,6 +14,12 @@ export interface Suspect {
   tempC: number;
 }
 
+/** A running mean. */
+export interface Tally {
+  mean: number;
+  count: number;
+}
+
 /** All that is known after some readings. Plain data: it survives JSON and is never changed in place. */
 export interface WatchState {
   readonly config: WatchConfig;
@@ -37,6 +43,9 @@ export interface WatchState {
   readonly rivals: readonly Rival[];
   /** Last instant at which the liquid was disturbed or the slope found changed. */
   readonly disturbedAtMs: number | null;
+  /** Rate constants seen while the liquid was left alone. */
+  readonly lossesPerS: Tally;
+  readonly chillerPerS: Tally;
   /** The estimate so far, thinned, to say when a target was crossed. */
   readonly trail: readonly { atMs: number; tempC: number }[];
 }
@@ -69,6 +78,8 @@ export function startWatch(config: WatchConfig): WatchState {
     whiteCount: 0,
     rivals: [],
     disturbedAtMs: null,
+    lossesPerS: { mean: 0, count: 0 },
+    chillerPerS: { mean: 0, count: 0 },
     trail: [],
   };
 }

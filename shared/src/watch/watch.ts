@@ -1,4 +1,5 @@
 import { advanceBank, believe, disturbBank, resettleBank, startBank, updateBank, type Disturbance } from './bank.js';
+import { tallied } from './learn.js';
 import { advanceRivals, updateRivals } from './rivals.js';
 import { CHILLING_C_PER_S, type Surroundings } from './slope-law.js';
 import type { Suspect, WatchState } from './state.js';
@@ -14,6 +15,7 @@ const READINGS_TO_START = 3;
 const SUSPECTS_TO_STEP = 3;
 /** Oldest suspect that still counts. */
 const SUSPECT_MEMORY_S = 15;
+const SUSPECT_MEMORY_PERIODS = 5;
 /** Longest absence the filters bridge; after that the watch starts afresh. */
 const LONGEST_BRIDGE_S = 900;
 
@@ -40,17 +42,12 @@ export function watchAct(state: WatchState, done: WatchActDone): WatchState {
   const kettle = kettleAfter(state, done.act);
   if (state.bank === null) return { ...state, kettle };
   const bank = [...state.bank];
-  const atMs = Math.max(done.atMs, state.bankAtMs);
+  const atMs = Number.isFinite(done.atMs) ? Math.max(done.atMs, state.bankAtMs) : state.bankAtMs;
   if (atMs > state.bankAtMs) {
-    advanceBank(
-      bank,
-      Math.min(LONGEST_BRIDGE_S, (atMs - state.bankAtMs) / 1000),
-      state.config.lagS,
-      surroundings(state),
-    );
+    advanceBank(bank, Math.min(LONGEST_BRIDGE_S, (atMs - state.bankAtMs) / 1000), state.config, surroundings(state));
   }
   const belief = believe(bank);
-  disturbBank(bank, disturbanceOf(done.act, belief, surroundings(state)));
+  disturbBank(bank, disturbanceOf(done.act, belief, surroundings(state), state.config.chillerPerS ?? null));
   return { ...state, kettle, bank, bankAtMs: atMs, disturbedAtMs: atMs, rivals: [] };
 }
 
@@ -75,17 +72,24 @@ function kettleAfter({ kettle }: WatchState, act: WatchAct): WatchState['kettle'
 /** Rate constant of a kettle's chiller in 1/s: the middle and the spread of what coils do. */
 const CHILLER_PER_S = 2.1e-3;
 const CHILLER_SPREAD_PER_S = 0.9e-3;
+/** A learned one still depends on how far the tap is opened: relative spread. */
+const LEARNED_SPREAD = 0.25;
 /** People tap a few seconds before or after they turn the tap. */
 const TAP_SPREAD_S = 1.8;
 
-function disturbanceOf(act: WatchAct, belief: { tempC: number; rateCPerS: number }, around: Surroundings): Disturbance {
+function disturbanceOf(
+  act: WatchAct,
+  belief: { tempC: number; rateCPerS: number },
+  around: Surroundings,
+  learnedChillerPerS: number | null,
+): Disturbance {
   const kept = { stepC: 0, slopeCPerS: 0 };
   switch (act) {
     case 'chiller-on': {
       if (belief.rateCPerS < -CHILLING_C_PER_S) return { stepC: 0.1, slopeCPerS: 0.03 };
       const drive = Math.max(5, belief.tempC - around.coolantC);
-      const meanCPerS = -CHILLER_PER_S * drive;
-      const sdCPerS = CHILLER_SPREAD_PER_S * drive;
+      const meanCPerS = -(learnedChillerPerS ?? CHILLER_PER_S) * drive;
+      const sdCPerS = learnedChillerPerS === null ? CHILLER_SPREAD_PER_S * drive : LEARNED_SPREAD * -meanCPerS;
       return { stepC: -meanCPerS * TAP_SPREAD_S, slopeCPerS: 0, newSlope: { meanCPerS, sdCPerS } };
     }
     case 'chiller-off':
@@ -95,7 +99,7 @@ function disturbanceOf(act: WatchAct, belief: { tempC: number; rateCPerS: number
     case 'heat-off':
       return { ...kept, newSlope: { meanCPerS: -0.005, sdCPerS: 0.02 } };
     case 'coil-in':
-      return { stepC: 2.5, slopeCPerS: 0.03 };
+      return { stepC: 2, slopeCPerS: 0.02 };
     case 'tea-in':
       return { stepC: 0.5, slopeCPerS: 0.01 };
     case 'stirred':
@@ -136,8 +140,8 @@ export function watchReading(state: WatchState, reading: WatchReading): WatchSta
   const elapsedS = (atMs - state.bankAtMs) / 1000;
   if (elapsedS > LONGEST_BRIDGE_S) return starting({ ...seen, bank: null, recent: [], suspects: [] }, { atMs, tempC });
   const bank = [...state.bank];
-  if (elapsedS > 0) advanceBank(bank, elapsedS, state.config.lagS, surroundings(state));
-  const rivals = advanceRivals(state.rivals, elapsedS, atMs, state.config.lagS, surroundings(state));
+  if (elapsedS > 0) advanceBank(bank, elapsedS, state.config, surroundings(state));
+  const rivals = advanceRivals(state.rivals, elapsedS, atMs, state.config, surroundings(state));
   const white = readingVariance(state);
   const isOff = [bank, ...rivals.map((rival) => rival.bank)].every((opinion) => {
     const { probeC, probeVariance } = believe(opinion);
@@ -162,7 +166,7 @@ function starting(state: WatchState, good: Suspect): WatchState {
   const middle = [...recent].sort((a, b) => a.tempC - b.tempC)[1]!;
   return {
     ...next,
-    bank: startBank(middle.tempC, state.config.lagS),
+    bank: startBank(middle.tempC, state.config),
     bankAtMs: good.atMs,
     firstGoodAtMs: state.firstGoodAtMs ?? good.atMs,
     lastGoodAtMs: good.atMs,
@@ -183,7 +187,8 @@ function agree(readings: readonly Suspect[]): boolean {
 
 /** A reading off the line: a spike, unless it is the third in a row that says the same. */
 function suspected(state: WatchState, bank: number[], suspect: Suspect): WatchState {
-  const fresh = state.suspects.filter((s) => suspect.atMs - s.atMs <= SUSPECT_MEMORY_S * 1000);
+  const memoryS = Math.max(SUSPECT_MEMORY_S, SUSPECT_MEMORY_PERIODS * state.config.samplePeriodS);
+  const fresh = state.suspects.filter((s) => suspect.atMs - s.atMs <= memoryS * 1000);
   const suspects = [...fresh, suspect].slice(-SUSPECTS_TO_STEP);
   if (suspects.length < SUSPECTS_TO_STEP || !agree(suspects)) return judged({ ...state, suspects }, 'spike');
   resettleBank(bank, suspect.tempC, 3);
@@ -228,7 +233,7 @@ function accepted(
       suspects: [],
       lastGoodAtMs: good.atMs,
       disturbedAtMs: contest.winner ? good.atMs : state.disturbedAtMs,
-      trail: trailAfter(state, standing, good.atMs),
+      ...remembered(state, standing, good.atMs),
     },
     'good',
   );
@@ -250,11 +255,16 @@ function whiteNoise(state: WatchState, recent: readonly Suspect[]): Pick<WatchSt
 const TRAIL_STEP_S = 5;
 const TRAIL_LENGTH = 240;
 
-/** The estimate every few seconds; when full, every second point of the older half goes. */
-function trailAfter(state: WatchState, bank: readonly number[], atMs: number): WatchState['trail'] {
+/** The estimate every few seconds, and what it teaches; when full, every second point of the older half goes. */
+function remembered(
+  state: WatchState,
+  bank: readonly number[],
+  atMs: number,
+): Pick<WatchState, 'trail' | 'lossesPerS' | 'chillerPerS'> {
   const last = state.trail.at(-1);
-  if (last && atMs - last.atMs < TRAIL_STEP_S * 1000) return state.trail;
+  if (last && atMs - last.atMs < TRAIL_STEP_S * 1000)
+    return { trail: state.trail, lossesPerS: state.lossesPerS, chillerPerS: state.chillerPerS };
   const trail = [...state.trail, { atMs, tempC: believe(bank).tempC }];
-  if (trail.length <= TRAIL_LENGTH) return trail;
-  return trail.filter((_, i) => i > TRAIL_LENGTH / 2 || i % 2 === 0);
+  const thinned = trail.length <= TRAIL_LENGTH ? trail : trail.filter((_, i) => i > TRAIL_LENGTH / 2 || i % 2 === 0);
+  return { ...tallied(state, bank, atMs, surroundings(state)), trail: thinned };
 }
