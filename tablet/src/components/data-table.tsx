@@ -84,6 +84,7 @@ export function DataTable<Row extends RowData>({ table, caption, countWord }: Da
                       'flex justify-between gap-6 py-0.5 align-middle sm:table-cell sm:h-14 sm:py-2 sm:pr-6 sm:last:pr-0',
                       meta?.isNumber && 'tabular-nums sm:text-right',
                       meta?.isLead && 'text-lead sm:text-body',
+                      cell.getValue() === '' && 'max-sm:hidden',
                     )}
                   >
                     {meta?.isLead || typeof header !== 'string' ? null : (

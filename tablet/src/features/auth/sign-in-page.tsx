@@ -25,8 +25,8 @@ export function SignInPage() {
   const reason = session.status === 'signed-out' ? reasons[session.reason] : null;
   return (
     <div className="grid min-h-dvh md:grid-cols-[1.15fr_1fr]">
-      <header className="relative min-h-44 overflow-hidden md:min-h-0">
-        <FallDrawing className="absolute inset-0 h-full w-full" />
+      <header className="relative h-60 overflow-hidden md:h-auto">
+        <FallDrawing className="absolute inset-x-0 bottom-0 h-40 w-full md:h-full" />
         <Wordmark className="absolute left-6 top-6 text-[1.75rem] sm:left-10 sm:top-9 md:text-[2.25rem]" />
       </header>
       <main className="flex items-start border-edge px-6 pb-12 pt-8 sm:px-10 md:items-center md:border-l-2 lg:px-16">
