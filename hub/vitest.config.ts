@@ -13,7 +13,7 @@ export default defineConfig({
     maxWorkers: 2,
     // After the specs without a database, and not among them.
     sequence: { groupOrder: 1 },
-    hookTimeout: 60_000,
-    testTimeout: 20_000,
+    hookTimeout: 120_000,
+    testTimeout: 60_000,
   },
 });
