@@ -1,7 +1,8 @@
 import { standingAlerts, type Alert, type AlertStage, type RunState } from '@steepfall/shared/runs';
 import type { AlarmLevel, Ring } from '#lib/audio/alarm-sounds.ts';
 import { alertStageId } from '#lib/run-store/take-over.ts';
-import { formatDuration } from '@steepfall/shared/units';
+import type { LiveState } from '#lib/run-store/run-store.ts';
+import { formatDuration, formatTemp } from '@steepfall/shared/units';
 
 const levelOf: Record<AlertStage, AlarmLevel> = {
   'coming-up': 'coming-up',
@@ -16,12 +17,24 @@ export function ringFor(state: RunState): Ring | null {
   return worst ? { level: levelOf[worst.stage], id: alertStageId(worst) } : null;
 }
 
-/** How the alert stands to the clock: "in 0:08", "due 3 min ago". */
-export function dueText({ dueAtMs }: Pick<Alert, 'dueAtMs'>, nowMs: number): string | null {
-  if (dueAtMs === null) return null;
-  const leftS = (dueAtMs - nowMs) / 1000;
+/** When it falls due as known now: the forecast goes on after the alert was raised, a deadline stays. */
+export function dueAtMs(alert: Alert, { view }: Pick<LiveState, 'view'>): number | null {
+  const isSameLevel = alert.rule === 'temperature' && view?.target?.stepId === alert.stepId;
+  const forecast = isSameLevel ? view.forecast : null;
+  return forecast?.kind === 'forecast' || forecast?.kind === 'crossed' ? forecast.atMs : alert.dueAtMs;
+}
+
+/** How an alert stands to the clock: "in 0:08", "due 3 min ago". */
+export function dueText(atMs: number | null, nowMs: number): string | null {
+  if (atMs === null) return null;
+  const leftS = (atMs - nowMs) / 1000;
   if (leftS > 0.5) return `in ${formatDuration(Math.ceil(leftS))}`;
   const agoS = Math.floor(-leftS);
   if (agoS < 2) return 'due now';
   return agoS < 120 ? `due ${formatDuration(agoS)} ago` : `due ${Math.floor(agoS / 60)} min ago`;
+}
+
+/** The level in words without false digits: "62 °C". */
+export function alertLevel({ targetC }: Pick<Alert, 'targetC'>): string | null {
+  return targetC === null ? null : formatTemp(targetC, { unit: 'C', digits: Number.isInteger(targetC) ? 0 : 1 });
 }

@@ -4,7 +4,7 @@ import { ShapeGlyph } from '#components/shapes.tsx';
 import { alarmSounds } from '#lib/audio/alarm-sounds.ts';
 import { useLive, useRunState, useRunStore } from '#lib/run-store/run-context.tsx';
 import { useStoredPart } from '#lib/value-store.ts';
-import { dueText } from './alert-level.ts';
+import { alertLevel, dueAtMs, dueText } from './alert-level.ts';
 
 const stageWords = { 'coming-up': 'Coming up', 'stand-by': 'Stand by', now: 'Now', missed: 'Late' } as const;
 
@@ -20,8 +20,9 @@ export function AlertStrips() {
 function Strip({ alert }: { alert: Alert }) {
   const state = useRunState();
   const store = useRunStore();
-  const due = useLive(({ nowMs }) => dueText(alert, nowMs));
-  const { verb, number } = alertWords(state, alert);
+  const due = useLive((live) => dueText(dueAtMs(alert, live), live.nowMs));
+  const { verb } = alertWords(state, alert);
+  const number = alertLevel(alert);
   const { key, crossing, stage } = alert;
   return (
     <div className="strip" data-stage={stage}>

@@ -5,7 +5,7 @@ import { PressButton } from '#components/press-button.tsx';
 import { ShapeGlyph } from '#components/shapes.tsx';
 import { useLive, useRunState, useRunStore } from '#lib/run-store/run-context.tsx';
 import { alertStageId, takeOverAlert } from '#lib/run-store/take-over.ts';
-import { dueText } from './alert-level.ts';
+import { alertLevel, dueAtMs, dueText } from './alert-level.ts';
 
 interface AlertTakeOverProps {
   /** Marks a step done, with the temperature of this instant. */
@@ -24,8 +24,9 @@ function TakeOver({ alert, onComplete }: AlertTakeOverProps & { alert: Alert }) 
   const state = useRunState();
   const store = useRunStore();
   const heading = useRef<HTMLHeadingElement>(null);
-  const due = useLive(({ nowMs }) => dueText(alert, nowMs));
-  const { verb, amounts, number, sentence } = alertWords(state, alert);
+  const due = useLive((live) => dueText(dueAtMs(alert, live), live.nowMs));
+  const { verb, amounts, sentence } = alertWords(state, alert);
+  const number = alertLevel(alert);
   const current = currentStep(state);
   const act = state.steps.find(({ step }) => step.id === alert.actStepId);
   const isActCurrent = current !== null && act?.step.id === current.step.id;
@@ -44,19 +45,21 @@ function TakeOver({ alert, onComplete }: AlertTakeOverProps & { alert: Alert }) 
 
   return (
     <>
-      <section className="take-over" aria-label="Alert">
-        <p role="alert" className="sr-only">
-          {sentence}{' '}
-          {amounts
-            .map(({ name, massG, bag }) => `${formatMass(massG, { unit: 'g' })} ${name}${bag ? `, ${bag}` : ''}`)
-            .join('. ')}
-        </p>
+      <div className="slot">
         <p className="take-over-stage">
           <span className="take-over-mark">
             <ShapeGlyph shape="diamond" className="size-full" />
           </span>
           {alert.stage === 'missed' ? 'Late' : 'Now'}
           {due ? <span className="tabular-nums"> · {due}</span> : null}
+        </p>
+      </div>
+      <section className="take-over" aria-label="Alert">
+        <p role="alert" className="sr-only">
+          {sentence}{' '}
+          {amounts
+            .map(({ name, massG, bag }) => `${formatMass(massG, { unit: 'g' })} ${name}${bag ? `, ${bag}` : ''}`)
+            .join('. ')}
         </p>
         <div className="take-over-line">
           <h1 ref={heading} tabIndex={-1} id="step-heading" className="take-over-verb">

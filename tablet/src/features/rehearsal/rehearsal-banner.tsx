@@ -13,7 +13,7 @@ export function RehearsalBanner() {
   return (
     <section className="rehearsal" aria-label="Rehearsal">
       <p>
-        <strong>Rehearsal</strong> — simulated kettle, clock ×{clock.rate}
+        <strong>Rehearsal</strong> — simulated kettle<span className="rehearsal-rate">, clock ×{clock.rate}</span>
       </p>
       {status === 'running' ? (
         <Segmented

@@ -13,10 +13,12 @@ interface ActBarProps {
   onComplete: (stepId: string) => void;
   onMeasure: (quantity: MeasuredQuantity) => void;
   onExtra: (sheet: ExtraSheet) => void;
+  /** On a phone, where the foot is a swipe away. */
+  onAllSteps: () => void;
 }
 
 /** The lower third: one big act, back at its left, what can be written down at its right. */
-export function ActBar({ onAct, onComplete, onMeasure, onExtra }: ActBarProps) {
+export function ActBar({ onAct, onComplete, onMeasure, onExtra, onAllSteps }: ActBarProps) {
   const state = useRunState();
   const canGoBack = state.doneOrder.length > 0;
   return (
@@ -33,15 +35,15 @@ export function ActBar({ onAct, onComplete, onMeasure, onExtra }: ActBarProps) {
         <PressButton className="act-side" onPress={() => onExtra('measure')}>
           Measure
         </PressButton>
-        <PressButton className="act-side" onPress={() => onExtra('timer')}>
-          Timer
+        <PressButton className="act-side act-steps" onPress={onAllSteps}>
+          All steps
         </PressButton>
       </div>
     </section>
   );
 }
 
-function Primary({ onAct, onComplete, onMeasure }: Omit<ActBarProps, 'onExtra'>) {
+function Primary({ onAct, onComplete, onMeasure }: Pick<ActBarProps, 'onAct' | 'onComplete' | 'onMeasure'>) {
   const state = useRunState();
   const act = primaryAct(state);
   switch (act.kind) {

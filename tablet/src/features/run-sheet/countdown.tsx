@@ -1,27 +1,50 @@
 import { secondsLeft, type Timer } from '@steepfall/shared/timers';
 import { currentStep, type RunState } from '@steepfall/shared/runs';
 import { formatDuration } from '@steepfall/shared/units';
+import { PressButton } from '#components/press-button.tsx';
 import { useLive, useRunState } from '#lib/run-store/run-context.tsx';
-import { aboutText } from './sheet-words.ts';
+import { aboutParts, aboutText } from './sheet-words.ts';
 
-/** The timer that counts most: the one of the step, or the next of those set by hand. */
-export function leadingTimer(state: RunState): Timer | null {
+/** The timer of the step that is on. */
+function stepTimer(state: RunState): Timer | null {
   const current = currentStep(state);
-  const own = state.timers.find(({ stepId }) => stepId !== null && stepId === current?.step.id);
-  if (own) return own;
-  return [...state.timers].sort((a, b) => a.endsAtMs - b.endsAtMs)[0] ?? null;
+  return state.timers.find(({ stepId }) => stepId !== null && stepId === current?.step.id) ?? null;
+}
+
+/** What the person waits for, and the timers they set themselves. */
+export function Waiting({ onStop }: { onStop: (timerId: string) => void }) {
+  const { timers } = useRunState();
+  const own = timers.filter(({ stepId }) => stepId === null);
+  return (
+    <div className="waiting">
+      <Countdown />
+      {own.map((timer) => (
+        <OwnTimer key={timer.id} timer={timer} onStop={() => onStop(timer.id)} />
+      ))}
+    </div>
+  );
+}
+
+function OwnTimer({ timer, onStop }: { timer: Timer; onStop: () => void }) {
+  const left = useLive(({ nowMs }) => formatDuration(secondsLeft(timer, nowMs)));
+  return (
+    <PressButton className="own-timer" onPress={onStop}>
+      <span>{timer.label}</span>
+      <span className="own-timer-left">{left}</span>
+      <span className="foot-all">Stop</span>
+    </PressButton>
+  );
 }
 
 /** Large and alone: time left on the running timer, or until the liquid meets its level. */
-export function Countdown() {
+function Countdown() {
   const state = useRunState();
-  const timer = leadingTimer(state);
-  const current = currentStep(state);
+  const timer = stepTimer(state);
   const hasLevel = useLive(({ view }) => view?.target != null);
-  if (timer && (timer.stepId === current?.step.id || !hasLevel)) {
+  if (timer) {
     return (
       <div className="countdown" role="timer" aria-label={timer.label}>
-        <p className="countdown-label">{timer.stepId === null ? timer.label : 'time left'}</p>
+        <p className="countdown-label">time left</p>
         <p className="countdown-figure">
           <TimerFigure timer={timer} />
         </p>
@@ -42,18 +65,22 @@ function CrossingCountdown() {
   const kind = useLive(({ view }) => view?.forecast?.kind ?? null);
   const figure = useLive(({ view, nowMs }) => {
     const forecast = view?.forecast;
-    return forecast?.kind === 'forecast' ? aboutText((forecast.atMs - nowMs) / 1000) : null;
+    return forecast?.kind === 'forecast' ? aboutParts((forecast.atMs - nowMs) / 1000).number : null;
+  });
+  const unit = useLive(({ view, nowMs }) => {
+    const forecast = view?.forecast;
+    return forecast?.kind === 'forecast' ? aboutParts((forecast.atMs - nowMs) / 1000).unit : '';
   });
   const spread = useLive(({ view, nowMs }) => {
     const forecast = view?.forecast;
     if (forecast?.kind !== 'forecast' || forecast.lateMs - forecast.earlyMs < 10_000) return null;
-    const part = (atMs: number) => aboutText((atMs - nowMs) / 1000).replace('about ', '');
+    const part = (atMs: number) => aboutText((atMs - nowMs) / 1000);
     return `between ${part(forecast.earlyMs)} and ${part(forecast.lateMs)}`;
   });
   const isTooLate = useLive(({ view }) => view?.estimate.status === 'stale' || view?.estimate.status === 'lost');
   const current = currentStep(state);
   const act = state.steps.find(({ step }) => step.id === actStepId)?.step;
-  const what = act && act.id !== current?.step.id ? `${act.title} comes up in` : 'comes up in';
+  const what = act && act.id !== current?.step.id ? `${act.title}, in about` : 'comes up in about';
   if (isTooLate) {
     return (
       <div className="countdown">
@@ -72,7 +99,8 @@ function CrossingCountdown() {
     <div className="countdown" role="timer" aria-label={what}>
       <p className="countdown-label">{what}</p>
       <p className="countdown-figure">
-        <span data-long={figure.length > 5 || undefined}>{figure}</span>
+        {figure}
+        {unit ? <span className="countdown-unit">{unit}</span> : null}
       </p>
       {spread ? <p className="countdown-label">{spread}</p> : null}
     </div>

@@ -4,7 +4,9 @@ import type { Level } from './levels.ts';
 
 const MINUTE_MS = 60_000;
 const PASTS_MIN = [3, 5, 10, 15];
-const FUTURES_MIN = [2, 4, 6, 10, 15];
+const FUTURES_MIN = [2, 3, 4, 6, 10, 15];
+/** Room for what is to come, as a share of the past: that is where the person stands and waits. */
+const LEAST_AHEAD_SHARE = 0.6;
 /** Axis ends lie on these, so that the picture does not breathe with every reading. */
 const STEP_C = 5;
 const LEAST_SPAN_C = 10;
@@ -42,7 +44,8 @@ export function fallFrame(input: FallFrameInput): FallFrame {
   const firstMs = readings[0]?.atMs ?? nowMs;
   const pastMs = firstAtLeast(PASTS_MIN, (nowMs - firstMs) / MINUTE_MS) * MINUTE_MS;
   const aheadMin = crossingAtMs === null ? 0 : ((crossingAtMs - nowMs) / MINUTE_MS) * 1.3;
-  const futureMs = Math.min(pastMs, firstAtLeast(FUTURES_MIN, aheadMin) * MINUTE_MS);
+  const leastAheadMin = (pastMs / MINUTE_MS) * LEAST_AHEAD_SHARE;
+  const futureMs = Math.min(pastMs, firstAtLeast(FUTURES_MIN, Math.max(aheadMin, leastAheadMin)) * MINUTE_MS);
   const fromMs = nowMs - pastMs;
   const toMs = nowMs + futureMs;
 
@@ -111,14 +114,38 @@ export function strokesOf(readings: readonly Reading[], frame: FallFrame, gapMs:
 
 export interface LevelMark {
   key: string;
+  tempC: number;
   y: number;
-  /** Where the line meets it; at the left end when nobody knows. */
+  /** Where the line meets it; at the right end when nobody knows. */
   x: number;
   label: string;
+  /** Left end of the label. */
+  labelX: number;
+  /** Above the level, or below it where the line passes above. */
+  isBelow: boolean;
   isDone: boolean;
 }
 
-const LABEL_GAP_PX = 26;
+const LABEL_GAP_PX = 30;
+const LABEL_PX = 12;
+const CHARACTER_PX = 11;
+const LEFT_MARGIN_PX = 52;
+const MARK_PX = 16;
+
+/** A falling line leaves the upper right and the lower left of its mark free, a rising one the upper left and the lower right. */
+function labelPlace(
+  x: number,
+  label: string,
+  direction: Level['direction'],
+  width: number,
+): { labelX: number; isBelow: boolean } {
+  const room = label.length * CHARACTER_PX;
+  const right = { x: x + MARK_PX, fits: x + MARK_PX + room <= width };
+  const left = { x: x - MARK_PX - room, fits: x - MARK_PX - room >= LEFT_MARGIN_PX };
+  const [above, below] = direction === 'falling' ? [right, left] : [left, right];
+  const place = above.fits ? above : below;
+  return { labelX: Math.max(LEFT_MARGIN_PX, Math.min(place.x, width - room)), isBelow: place === below };
+}
 
 /** The levels that are in the picture, what is to come first; of two that would overprint the later one goes. */
 export function levelMarks(
@@ -127,19 +154,23 @@ export function levelMarks(
   size: { width: number; height: number },
   next: { key: string; crossingAtMs: number | null; about: string | null } | null,
 ): LevelMark[] {
-  const ranked = [...levels].sort(
-    (a, b) => Number(b.key === next?.key) - Number(a.key === next?.key) || Number(a.isDone) - Number(b.isDone),
-  );
+  const rank = ({ key, isDone }: Level) => (key === next?.key ? 0 : isDone ? 2 : 1);
   const marks: LevelMark[] = [];
-  for (const { key, tempC, text, isDone, doneAtMs } of ranked) {
+  for (const level of [...levels].sort((a, b) => rank(a) - rank(b))) {
+    const { key, tempC, text, isDone, doneAtMs, direction } = level;
     const y = frame.y(tempC);
-    if (y < 14 || y > size.height - 6) continue;
+    if (y < 2 || y > size.height - 6) continue;
     if (marks.some((mark) => Math.abs(mark.y - y) < LABEL_GAP_PX)) continue;
     const isNext = key === next?.key;
     const atMs = isDone ? doneAtMs : isNext ? next.crossingAtMs : null;
-    const x = atMs === null ? 0 : Math.min(size.width, Math.max(0, frame.x(atMs)));
-    const about = isNext && next.about ? `, ${next.about}` : '';
-    marks.push({ key, y, x, label: `${text}${about}`, isDone });
+    if (isDone && (atMs === null || atMs < frame.fromMs)) continue;
+    const rightmost = size.width - 12;
+    const x = Math.min(rightmost, Math.max(LEFT_MARGIN_PX, atMs === null ? rightmost : frame.x(atMs)));
+    const label = isNext && next.about ? `${text}, ${next.about}` : text;
+    // At the right end no line comes near: the label stands above, to the left.
+    const place = labelPlace(x, label, x === rightmost ? 'rising' : direction, size.width);
+    // Under the upper edge there is no room for words above the level.
+    marks.push({ key, tempC, y, x, label, isDone, ...place, isBelow: place.isBelow || y < LABEL_PX });
   }
   return marks;
 }

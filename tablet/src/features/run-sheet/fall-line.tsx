@@ -7,7 +7,7 @@ import { useLive, useRunState, useRunStore } from '#lib/run-store/run-context.ts
 import type { RunStore } from '#lib/run-store/run-store.ts';
 import { useGround } from '#lib/theme.ts';
 import { fallFrame, levelMarks, strokesOf, type Doing, type LevelMark } from './fall-frame.ts';
-import { levelsOf } from './levels.ts';
+import { levelsInSight, levelsOf } from './levels.ts';
 import { forecastText, levelText } from './sheet-words.ts';
 
 const GAP_MS = 30_000;
@@ -41,9 +41,9 @@ function draw(canvas: HTMLCanvasElement, store: RunStore, state: RunState): Pict
 
   const { nowMs, view } = store.live.get();
   const readings = store.readings.all;
-  const levels = levelsOf(state);
+  const levels = levelsInSight(levelsOf(state));
   const forecast = view?.forecast ?? null;
-  const crossingAtMs = forecast?.kind === 'forecast' ? forecast.atMs : null;
+  const crossingAtMs = forecast?.kind === 'forecast' || forecast?.kind === 'crossed' ? forecast.atMs : null;
   const isLive = view?.estimate.status === 'live';
   const { watch } = store;
   const curve = watch && isLive ? forecastCurve(watch, nowMs, 15 * 60, 15) : [];
@@ -67,13 +67,23 @@ function draw(canvas: HTMLCanvasElement, store: RunStore, state: RunState): Pict
   const shownCurve = curve.filter(({ atMs }) => atMs <= frame.toMs);
   if (shownCurve.length > 1 && view) {
     pen.fillStyle = hue(hueOf[view.estimate.mode]);
-    pen.globalAlpha = 0.24;
+    pen.globalAlpha = 0.36;
     pen.beginPath();
     shownCurve.forEach(({ atMs, highC }, i) =>
       (i === 0 ? pen.moveTo : pen.lineTo).call(pen, frame.x(atMs), frame.y(highC)),
     );
     for (const { atMs, lowC } of shownCurve.toReversed()) pen.lineTo(frame.x(atMs), frame.y(lowC));
     pen.fill();
+    pen.globalAlpha = 0.8;
+    pen.lineWidth = 2;
+    pen.setLineDash([6, 7]);
+    pen.strokeStyle = hue(hueOf[view.estimate.mode]);
+    pen.beginPath();
+    shownCurve.forEach(({ atMs, tempC }, i) =>
+      (i === 0 ? pen.moveTo : pen.lineTo).call(pen, frame.x(atMs), frame.y(tempC)),
+    );
+    pen.stroke();
+    pen.setLineDash([]);
     pen.globalAlpha = 1;
   }
 
@@ -106,7 +116,13 @@ function isSamePicture(a: Picture | null, b: Picture | null): boolean {
   return a.marks.every((mark, i) => {
     const other = b.marks[i]!;
     const isNear = Math.abs(mark.x - other.x) <= 1 && Math.abs(mark.y - other.y) <= 1;
-    return mark.key === other.key && mark.label === other.label && mark.isDone === other.isDone && isNear;
+    return (
+      mark.key === other.key &&
+      mark.label === other.label &&
+      Math.abs(mark.labelX - other.labelX) <= 1 &&
+      mark.isDone === other.isDone &&
+      isNear
+    );
   });
 }
 
@@ -148,8 +164,8 @@ export function FallLine() {
       </figcaption>
       <canvas ref={canvas} aria-hidden="true" />
       <div className="fall-labels" aria-hidden="true">
-        {picture?.marks.map(({ key, x, y, label, isDone }) => (
-          <LevelLabel key={key} x={x} y={y} isDone={isDone} label={label} tempC={levelTemp(state, key)} />
+        {picture?.marks.map((mark) => (
+          <LevelLabel key={mark.key} mark={mark} />
         ))}
         {picture ? (
           <>
@@ -170,36 +186,16 @@ export function FallLine() {
   );
 }
 
-function levelTemp(state: RunState, key: string): number {
-  return levelsOf(state).find((level) => level.key === key)?.tempC ?? 0;
-}
-
-function LevelLabel({
-  x,
-  y,
-  label,
-  isDone,
-  tempC,
-}: {
-  x: number;
-  y: number;
-  label: string;
-  isDone: boolean;
-  tempC: number;
-}) {
+function LevelLabel({ mark: { x, y, label, labelX, isBelow, isDone, tempC } }: { mark: LevelMark }) {
   return (
     <>
       <span className="fall-level" style={{ top: y }}>
         {levelText(tempC, false)}
       </span>
-      <span
-        className="fall-mark"
-        data-done={isDone || undefined}
-        style={{ top: y, left: `clamp(72px, ${x}px, calc(100% - 14px))` }}
-      >
+      <span className="fall-mark" data-done={isDone || undefined} style={{ top: y, left: x }}>
         <ShapeGlyph shape="diamond" className="size-5" />
       </span>
-      <span className="fall-what" style={{ top: y, left: `clamp(72px, ${x + 18}px, calc(100% - 13.5em))` }}>
+      <span className="fall-what" data-below={isBelow || undefined} style={{ top: y, left: labelX }}>
         {label}
       </span>
     </>
@@ -215,7 +211,7 @@ function FallSummary() {
     const rate =
       estimate.mode === 'holding' ? 'holding' : `${estimate.mode} ${formatRate(estimate.rateCPerMin, { unit: 'C' })}`;
     const soon = target
-      ? ` ${levelText(target.tempC)}, ${target.direction}: ${forecastText(forecast, nowMs) ?? 'no forecast'}.`
+      ? ` ${levelText(target.tempC)}, ${target.direction}: ${forecastText(forecast, nowMs) ?? 'no forecast yet'}.`
       : '';
     return `${formatTemp(estimate.tempC, { unit: 'C' })}, ${rate}.${soon}`;
   });

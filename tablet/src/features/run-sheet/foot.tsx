@@ -1,20 +1,21 @@
 import { currentStep, upcomingSteps, type RunCommand } from '@steepfall/shared/runs';
-import { secondsLeft, type Timer } from '@steepfall/shared/timers';
-import { formatDuration } from '@steepfall/shared/units';
 import { PressButton } from '#components/press-button.tsx';
-import { useLive, useRunState } from '#lib/run-store/run-context.tsx';
+import { useRunState } from '#lib/run-store/run-context.tsx';
 import { conditionText } from './sheet-words.ts';
-import { leadingTimer } from './countdown.tsx';
+
+interface FootProps {
+  onAct: (command: RunCommand) => void;
+  onTimer: () => void;
+  onAllSteps: () => void;
+}
 
 /** What can be done meanwhile, what comes next, and the way to the whole sheet. */
-export function Foot({ onAct, onAllSteps }: { onAct: (command: RunCommand) => void; onAllSteps: () => void }) {
+export function Foot({ onAct, onTimer, onAllSteps }: FootProps) {
   const state = useRunState();
   const current = currentStep(state);
   const next = upcomingSteps(state, 2);
   const tasks = current?.step.meanwhile ?? [];
-  const leading = leadingTimer(state);
-  const timers = state.timers.filter(({ id, stepId }) => stepId === null && id !== leading?.id);
-  const isLeadingOwn = leading !== null && leading.stepId === null;
+  const isRunning = state.status === 'running';
   return (
     <footer className="foot">
       {tasks.length > 0 && current ? (
@@ -39,37 +40,28 @@ export function Foot({ onAct, onAllSteps }: { onAct: (command: RunCommand) => vo
           })}
         </div>
       ) : null}
-      {[...(isLeadingOwn && leading ? [leading] : []), ...timers].map((timer) => (
-        <OwnTimer key={timer.id} timer={timer} onStop={() => onAct({ type: 'stopTimer', timerId: timer.id })} />
-      ))}
-      <PressButton
-        className="foot-next"
-        onPress={onAllSteps}
-        label={`All steps. Next: ${next.map(({ step }) => step.title).join(', ') || 'the end'}`}
-      >
-        <span className="foot-label">next</span>
-        <span className="foot-next-steps">
-          {next.length === 0 ? <span>the end</span> : null}
-          {next.map(({ step }) => (
-            <span key={step.id}>
-              {step.title} <span className="text-soft">{conditionText(step)}</span>
+      <PressButton className="foot-next" onPress={onAllSteps}>
+        {isRunning ? (
+          <>
+            <span className="foot-label">next</span>
+            <span className="foot-next-steps">
+              {next.length === 0 ? <span>the end</span> : null}
+              {next.map(({ step }) => (
+                <span key={step.id}>
+                  {step.title} <span className="text-soft">{conditionText(step)}</span>
+                </span>
+              ))}
             </span>
-          ))}
-        </span>
+          </>
+        ) : null}
         <span className="foot-all">All steps</span>
       </PressButton>
+      {isRunning ? (
+        <PressButton className="foot-button" onPress={onTimer}>
+          <span className="foot-all">Timer</span>
+        </PressButton>
+      ) : null}
     </footer>
-  );
-}
-
-function OwnTimer({ timer, onStop }: { timer: Timer; onStop: () => void }) {
-  const left = useLive(({ nowMs }) => formatDuration(secondsLeft(timer, nowMs)));
-  return (
-    <PressButton className="foot-timer" onPress={onStop} label={`Stop the timer ${timer.label}, ${left} left`}>
-      <span>{timer.label}</span>
-      <span className="tabular-nums font-semibold">{left}</span>
-      <span className="foot-all">Stop</span>
-    </PressButton>
   );
 }
 

@@ -30,3 +30,11 @@ export function levelsOf(state: RunState): Level[] {
     return [{ key: step.id, tempC, direction, text: lowerFirst(act.title), isDone: status === 'done', doneAtMs }];
   });
 }
+
+const AHEAD = 2;
+
+/** What was met, what comes next and what after that: more is clutter. */
+export function levelsInSight(levels: readonly Level[]): Level[] {
+  const ahead = levels.filter(({ isDone }) => !isDone).slice(0, AHEAD);
+  return levels.filter((level) => level.isDone || ahead.includes(level));
+}

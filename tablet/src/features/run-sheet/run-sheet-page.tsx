@@ -168,12 +168,13 @@ function Sheet({ rehearsal, soundCheck, strips, TakeOver, ringer }: RunSheetPage
     soundCheck
   ) : isRunning ? (
     <>
-      <StepArea />
+      <StepArea onStopTimer={(timerId) => act({ type: 'stopTimer', timerId })} />
       <ActBar
         onAct={act}
         onComplete={complete}
         onMeasure={(quantity) => setSheet({ kind: 'measure', quantity })}
         onExtra={(kind) => setSheet({ kind })}
+        onAllSteps={() => setSheet({ kind: 'steps' })}
       />
     </>
   ) : (
@@ -187,18 +188,20 @@ function Sheet({ rehearsal, soundCheck, strips, TakeOver, ringer }: RunSheetPage
       {ringer}
       <StatusLine />
       {rehearsal}
-      <section className="fall" aria-label="Temperature">
+      <section className="fall" aria-label="Temperature" data-alone={!isRunning || undefined}>
         <FallLine />
-        <LiveTemperature />
+        {isRunning ? <LiveTemperature /> : null}
       </section>
-      <div className="slot">
-        <Place state={state} />
-        {refusal ? <Refusal text={refusal} /> : alert ? null : strips}
-        <Conflicts />
-        <LastDone />
-      </div>
+      {alert ? null : (
+        <div className="slot">
+          <Place state={state} />
+          {refusal ? <Refusal text={refusal} /> : strips}
+          <Conflicts />
+          <LastDone />
+        </div>
+      )}
       {body}
-      <Foot onAct={act} onAllSteps={() => setSheet({ kind: 'steps' })} />
+      <Foot onAct={act} onTimer={() => setSheet({ kind: 'timer' })} onAllSteps={() => setSheet({ kind: 'steps' })} />
 
       <SheetDialog isOpen={sheet?.kind === 'note'} onClose={close} title="Note">
         <NoteSheet stepId={current?.step.id ?? null} onRecord={record} onClose={close} />

@@ -22,30 +22,28 @@ export function selfDoneText(step: Step): string | null {
   return null;
 }
 
-/** An estimate promises no more than it knows: seconds at the end, tens of seconds before, whole minutes far off. */
-export function aboutText(leftS: number): string {
-  if (leftS >= 3600) return `about ${Math.round(leftS / 360) / 10} h`;
-  if (leftS >= 600) return `about ${Math.round(leftS / 60)} min`;
-  if (leftS >= 120) return formatDuration(Math.round(leftS / 10) * 10);
-  return formatDuration(Math.max(0, Math.round(leftS)));
+export interface AboutParts {
+  number: string;
+  unit: string;
 }
 
-/** The forecast in a few words; `null` when there is nothing to say. */
+/** An estimate promises no more than it knows: seconds at the end, tens of seconds before, whole minutes far off. */
+export function aboutParts(leftS: number): AboutParts {
+  if (leftS >= 3600) return { number: String(Math.round(leftS / 360) / 10), unit: 'h' };
+  if (leftS >= 600) return { number: String(Math.round(leftS / 60)), unit: 'min' };
+  const shownS = leftS >= 120 ? Math.round(leftS / 10) * 10 : Math.max(0, Math.round(leftS));
+  return { number: formatDuration(shownS), unit: '' };
+}
+
+export function aboutText(leftS: number): string {
+  const { number, unit } = aboutParts(leftS);
+  return unit ? `${number} ${unit}` : number;
+}
+
+/** When, in a few words: "about 1:50"; `null` when nothing can be said. */
 export function forecastText(forecast: CrossingForecast | null, nowMs: number): string | null {
-  if (!forecast) return null;
-  switch (forecast.kind) {
-    case 'forecast': {
-      const leftS = (forecast.atMs - nowMs) / 1000;
-      const text = aboutText(leftS);
-      return text.startsWith('about') ? `in ${text}` : `in about ${text}`;
-    }
-    case 'crossed':
-      return 'reached';
-    case 'never':
-      return 'not as it goes now';
-    case 'too-early':
-      return 'too early to say when';
-  }
+  if (forecast?.kind === 'crossed') return 'reached';
+  return forecast?.kind === 'forecast' ? `about ${aboutText((forecast.atMs - nowMs) / 1000)}` : null;
 }
 
 function clockText(atMs: number): string {

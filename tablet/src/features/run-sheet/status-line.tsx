@@ -37,7 +37,7 @@ const soundLook: Record<SoundState['health'], ChipLook> = {
 };
 
 const wakeLook: Record<WakeState, ChipLook> = {
-  idle: { shape: 'ring', word: 'screen may sleep', isBad: false },
+  idle: { shape: 'ring', word: 'may sleep', isBad: false },
   awake: { shape: 'dot', word: 'Awake', isBad: false },
   'https-needed': { shape: 'ring', word: 'HTTPS needed', isBad: true },
   unsupported: { shape: 'ring', word: 'Unsupported', isBad: true },
@@ -66,7 +66,11 @@ export function StatusLine() {
         </span>
       </Link>
       <button type="button" className="status-chips" onClick={() => setIsOpen(true)} aria-haspopup="dialog">
-        {hasProbe ? <ProbeChip /> : <Chip name="probe" shape="dash" word="none" isBad={false} />}
+        {state.status === 'ended' ? null : hasProbe ? (
+          <ProbeChip />
+        ) : (
+          <Chip name="probe" shape="dash" word="none" isBad={false} />
+        )}
         <Chip name="hub" shape={isJoined ? 'dot' : 'ring'} word={isJoined ? 'live' : 'away'} isBad={!isJoined} />
         {pendingCount > 0 ? <Chip name="to send" shape="dash" word={String(pendingCount)} isBad={false} /> : null}
         {parked.length > 0 ? <Chip name="refused" shape="diamond" word={String(parked.length)} isBad /> : null}
@@ -88,7 +92,7 @@ function ProbeChip() {
 
 function Chip({ name, shape, word, isBad }: { name: string } & ChipLook) {
   return (
-    <span className="chip" data-bad={isBad || undefined}>
+    <span className="chip" data-bad={isBad || undefined} data-name={name}>
       <span className="chip-name">{name}</span>
       <ShapeGlyph shape={shape} className="size-3.5 shrink-0" />
       <span className="chip-word">{word}</span>

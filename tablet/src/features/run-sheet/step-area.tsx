@@ -4,7 +4,7 @@ import { currentStep } from '@steepfall/shared/runs';
 import { formatMass } from '@steepfall/shared/units';
 import { CautionMark } from '#components/caution-mark.tsx';
 import { useRunState } from '#lib/run-store/run-context.tsx';
-import { Countdown } from './countdown.tsx';
+import { Waiting } from './countdown.tsx';
 import { measurementText, quantityText } from './quantities.ts';
 
 export function amountText({ name, massG, bag }: StepAmount): { what: string; where: string | null } {
@@ -12,7 +12,7 @@ export function amountText({ name, massG, bag }: StepAmount): { what: string; wh
 }
 
 /** The one thing to do, verb first. */
-export function StepArea() {
+export function StepArea({ onStopTimer }: { onStopTimer: (timerId: string) => void }) {
   const state = useRunState();
   const progress = currentStep(state);
   const heading = useRef<HTMLHeadingElement>(null);
@@ -68,7 +68,7 @@ export function StepArea() {
         ) : null}
         <Cautions cautions={step.cautions} />
       </div>
-      <Countdown />
+      <Waiting onStop={onStopTimer} />
     </section>
   );
 }
