@@ -3,7 +3,7 @@ import { compileSheet } from '@steepfall/shared/sheets';
 import { wallClock } from '@steepfall/shared/timers';
 import { formatBatchNumber } from '../batches/batch-number.js';
 import { hashPassword } from '../common/passwords.js';
-import { kettleSetupOf } from '../equipment/kettle-setup.js';
+import { kettleSetupOf } from '../rehearsals/kettle-setup.js';
 import { projectionOf } from '../runs/projection.js';
 import { demoEquipment, demoHouse, demoId, demoMemberId, demoProbe, demoRecipe, demoSignIns } from './demo-house.js';
 import { recordDay } from './recorded-day.js';

@@ -11,7 +11,7 @@ import type { Actor } from '../common/access/actor.js';
 import { Clock } from '../common/clock.js';
 import { newId } from '../common/ids.js';
 import { EquipmentService } from '../equipment/equipment.service.js';
-import { kettleSetupOf } from '../equipment/kettle-setup.js';
+import { kettleSetupOf } from './kettle-setup.js';
 import { HousesService } from '../houses/houses.service.js';
 import { ProbesService, type ProbeFacts } from '../probes/probes.service.js';
 import { IngestionService } from '../readings/ingestion.service.js';
@@ -90,7 +90,6 @@ export class RehearsalsService implements OnApplicationBootstrap, OnModuleDestro
         batch: null,
         revisionId: revision.id,
         sheet,
-        isRehearsal: true,
         clock: { anchorWallMs: nowMs, anchorRunMs: nowMs, rate },
         probe: await this.probes.createSimulated(houseId, facts, transaction),
         roomC: kettleSetup?.roomC ?? null,
