@@ -82,8 +82,11 @@ export const policies = [
       to: {
         element: [
           { type: 'hub-feature', captured: { feature: '{{ from.element.captured.feature }}' } },
-          // What a feature shows to the others: its module, the services the module exports, and its rows.
-          { type: 'hub-feature', fileInternalPath: ['*.module.ts', '*.service.ts', 'models/*.model.ts'] },
+          // What a feature shows to the others: its module, the services the module exports, its rows and its messages.
+          {
+            type: 'hub-feature',
+            fileInternalPath: ['*.module.ts', '*.service.ts', '*.schema.ts', 'models/*.model.ts'],
+          },
           { type: 'hub-ground' },
           { type: 'probe-sim', captured: { area: '!testing' } },
           sharedForAll,
@@ -91,7 +94,12 @@ export const policies = [
       },
     },
     message:
-      'A hub feature may import common, config, database, and of another feature its module, services and models.',
+      'A hub feature may import common, config, database, and of another feature its module, services, schemas, models and any type.',
+  },
+  {
+    from: { element: { type: 'hub-feature' } },
+    dependency: { kind: 'type' },
+    allow: { to: { element: { type: 'hub-feature' } } },
   },
   mayImport('hub-demo', [{ type: 'hub-feature' }, { type: 'hub-ground' }, { type: 'probe-sim' }, sharedForAll]),
   mayImport('hub-root', [{ type: 'hub-*' }, sharedForAll]),
