@@ -1,5 +1,7 @@
 import { createBrowserRouter, type RouteObject } from 'react-router-dom';
+import type { Permission } from '@steepfall/shared/contracts';
 import { DeskLayout } from './desk-layout.tsx';
+import { Needs } from './needs.tsx';
 import { NotFoundPage } from './not-found-page.tsx';
 import { RouteError } from './route-error.tsx';
 import { SignedIn } from './signed-in.tsx';
@@ -27,6 +29,10 @@ function page(name: keyof typeof pages): Pick<RouteObject, 'lazy' | 'errorElemen
   };
 }
 
+function needs(permission: Permission): Pick<RouteObject, 'element' | 'errorElement'> {
+  return { element: <Needs permission={permission} />, errorElement: <RouteError /> };
+}
+
 export const router = createBrowserRouter([
   { path: '/sign-in', ...page('signIn') },
   {
@@ -34,18 +40,28 @@ export const router = createBrowserRouter([
     errorElement: <RouteError />,
     hydrateFallbackElement: <Starting />,
     children: [
-      { path: '/runs/:runId', ...page('run') },
+      { ...needs('runs:read'), children: [{ path: '/runs/:runId', ...page('run') }] },
       {
         element: <DeskLayout />,
         errorElement: <RouteError />,
         children: [
           { path: '/', ...page('home') },
-          { path: '/recipes', ...page('recipes') },
-          { path: '/recipes/:recipeId', ...page('recipe') },
-          { path: '/batches', ...page('batches') },
-          { path: '/batches/:batchId', ...page('batch') },
-          { path: '/runs/:runId/record', ...page('record') },
-          { path: '/house', ...page('house') },
+          {
+            ...needs('recipes:read'),
+            children: [
+              { path: '/recipes', ...page('recipes') },
+              { path: '/recipes/:recipeId', ...page('recipe') },
+            ],
+          },
+          {
+            ...needs('batches:read'),
+            children: [
+              { path: '/batches', ...page('batches') },
+              { path: '/batches/:batchId', ...page('batch') },
+            ],
+          },
+          { ...needs('runs:read'), children: [{ path: '/runs/:runId/record', ...page('record') }] },
+          { ...needs('equipment:read'), children: [{ path: '/house', ...page('house') }] },
           { path: '/about', ...page('about') },
           { path: '*', element: <NotFoundPage />, errorElement: <RouteError /> },
         ],

@@ -18,7 +18,10 @@ export interface Stretch {
 const DRIVER_CODES: readonly number[] = [-127, 85];
 /** For colouring a finished drawing only. Nothing is decided by it: alerts come from the watch. */
 const HOLDING_C_PER_MIN = 0.35;
+/** Slope is taken over a share of the line, and never over so little that a probe's noise counts. */
 const WINDOW_SHARE = 0.02;
+const LEAST_WINDOW_MS = 150_000;
+const SHORTEST_MS = 75_000;
 const SHORTEST_SHARE = 0.015;
 
 /** The points of a drawn line: readings that can be temperatures of water, in order. */
@@ -36,7 +39,7 @@ export function stretchesOf(points: readonly LinePoint[]): Stretch[] {
   const last = points.at(-1);
   if (!first || !last || last.atMs <= first.atMs) return [];
   const spanMs = last.atMs - first.atMs;
-  const halfMs = Math.max(20_000, spanMs * WINDOW_SHARE) / 2;
+  const halfMs = Math.max(LEAST_WINDOW_MS, spanMs * WINDOW_SHARE) / 2;
   const raw: Stretch[] = [];
   let low = 0;
   let high = 0;
@@ -51,7 +54,7 @@ export function stretchesOf(points: readonly LinePoint[]): Stretch[] {
     if (open?.doing === doing) open.toMs = toMs;
     else raw.push({ doing, fromMs: atMs, toMs });
   }
-  return withoutFlickers(raw, spanMs * SHORTEST_SHARE);
+  return withoutFlickers(raw, Math.max(SHORTEST_MS, spanMs * SHORTEST_SHARE));
 }
 
 function doingAt(riseC: number, spanMs: number): Doing {

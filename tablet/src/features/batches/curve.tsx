@@ -21,6 +21,8 @@ interface CurveProps {
   /** The part of the run that is shown. */
   fromMs: number;
   toMs: number;
+  /** A part of the run: the height then follows the line, not the levels. */
+  isClose: boolean;
 }
 
 interface Geometry {
@@ -57,6 +59,16 @@ function hueAlong(stretches: readonly Stretch[]) {
   };
 }
 
+/** The whole run shows every level; a closer look shows what the line does there. */
+function rangeOf({ line, levels, fromMs, toMs, isClose }: Omit<CurveProps, 'flags' | 'stretches'>) {
+  const seen = line.filter(({ atMs }) => atMs >= fromMs && atMs <= toMs).map(({ tempC }) => tempC);
+  const shown = isClose ? seen : [...seen, ...levels.map(({ tempC }) => tempC)];
+  const low = Math.min(...shown);
+  const high = Math.max(...shown);
+  const margin = Math.max(1, (high - low) * 0.06);
+  return { low: low - margin, high: high + margin };
+}
+
 function temperatureAt(line: readonly LinePoint[], atMs: number): number | null {
   const index = line.findIndex((point) => point.atMs >= atMs);
   if (index < 0) return line.at(-1)?.tempC ?? null;
@@ -67,7 +79,7 @@ function temperatureAt(line: readonly LinePoint[], atMs: number): number | null 
 }
 
 /** The recorded line with its levels, and what happened on it as flags. The drawing only: its words and its table stand beside it. */
-export function Curve({ line, stretches, levels, flags, fromMs, toMs }: CurveProps) {
+export function Curve({ line, stretches, levels, flags, fromMs, toMs, isClose }: CurveProps) {
   const host = useRef<HTMLDivElement>(null);
   const readout = useRef<HTMLParagraphElement>(null);
   const [geometry, setGeometry] = useState<Geometry | null>(null);
@@ -77,13 +89,7 @@ export function Curve({ line, stretches, levels, flags, fromMs, toMs }: CurvePro
     const element = host.current;
     if (!element) return;
     const size = () => ({ width: element.clientWidth, height: element.clientHeight });
-    const temps = [
-      ...line.filter(({ atMs }) => atMs >= fromMs && atMs <= toMs).map(({ tempC }) => tempC),
-      ...levels.map(({ tempC }) => tempC),
-    ];
-    const low = Math.min(...temps);
-    const high = Math.max(...temps);
-    const margin = Math.max(1, (high - low) * 0.06);
+    const { low, high } = rangeOf({ line, levels, fromMs, toMs, isClose });
     const axis: uPlot.Axis = {
       stroke: cssColor('--soft'),
       font: "15px 'Space Grotesk Variable', 'Space Grotesk Fallback', sans-serif",
@@ -97,7 +103,7 @@ export function Curve({ line, stretches, levels, flags, fromMs, toMs }: CurvePro
       cursor: { drag: { x: false, y: false }, y: false, points: { size: 12 } },
       scales: {
         x: { time: true, range: [fromMs, toMs] },
-        y: { range: [low - margin, high + margin] },
+        y: { range: [low, high] },
       },
       series: [{}, { stroke: hueAlong(stretches), width: 4, points: { show: false }, spanGaps: false }],
       axes: [
@@ -144,7 +150,7 @@ export function Curve({ line, stretches, levels, flags, fromMs, toMs }: CurvePro
       observer.disconnect();
       plot.destroy();
     };
-  }, [line, stretches, levels, fromMs, toMs, ground]);
+  }, [line, stretches, levels, fromMs, toMs, isClose, ground]);
 
   return (
     <div className="relative" aria-hidden="true">
@@ -162,9 +168,10 @@ function Overlay({
   flags,
   fromMs,
   toMs,
-}: Omit<CurveProps, 'stretches'> & { geometry: Geometry }) {
+}: Omit<CurveProps, 'stretches' | 'isClose'> & { geometry: Geometry }) {
   const { left, top, width, height, minC, maxC } = geometry;
   const isNarrow = width < NARROW_PX;
+  const levelsInSight = levels.filter(({ tempC }) => tempC >= minC && tempC <= maxC);
   const xOf = (atMs: number) => ((atMs - fromMs) / (toMs - fromMs)) * width;
   const yOf = (tempC: number) => height * (1 - (tempC - minC) / (maxC - minC));
   /** Where the line runs close to a level at the right, the label of that level moves to the left. */
@@ -181,7 +188,7 @@ function Overlay({
   return (
     <svg className="pointer-events-none absolute inset-0 h-full w-full overflow-visible" fontFamily="inherit">
       <g transform={`translate(${left} ${top})`}>
-        {levels.map(({ tempC, title }) => (
+        {levelsInSight.map(({ tempC, title }) => (
           <path
             key={`${tempC}${title}`}
             d={`M0 ${yOf(tempC)}H${width}`}
@@ -208,7 +215,7 @@ function Overlay({
             </g>
           );
         })}
-        {levels.map(({ tempC, title }) => (
+        {levelsInSight.map(({ tempC, title }) => (
           <text
             key={`${tempC}${title}`}
             x={isCrowded(tempC) ? 6 : width - 4}

@@ -146,7 +146,14 @@ function Line({ run, state, refetchInterval }: { run: RunSummary; state: RunStat
               className="min-w-0"
             >
               <Suspense fallback={<div className="h-[26rem] sm:h-[32rem]" />}>
-                <Curve line={line} stretches={stretches} levels={levels} flags={flags} {...shown} />
+                <Curve
+                  line={line}
+                  stretches={stretches}
+                  levels={levels}
+                  flags={flags}
+                  {...shown}
+                  isClose={span !== null}
+                />
               </Suspense>
               <figcaption className="mt-3 text-note text-soft">
                 <Key />
