@@ -3,7 +3,7 @@ import { alertWords, currentStep, standingAlerts, type Alert } from '@steepfall/
 import { formatMass } from '@steepfall/shared/units';
 import { PressButton } from '#components/press-button.tsx';
 import { ShapeGlyph } from '#components/shapes.tsx';
-import { useLive, useRunState, useRunStore } from '#lib/run-store/run-context.tsx';
+import { useLive, useRun, useRunState, useRunStore } from '#lib/run-store/run-context.tsx';
 import { alertStageId, takeOverAlert } from '#lib/run-store/take-over.ts';
 import { alertLevel, dueAtMs, dueText } from './alert-level.ts';
 
@@ -21,7 +21,7 @@ export function AlertTakeOver({ onComplete }: AlertTakeOverProps) {
 }
 
 function TakeOver({ alert, onComplete }: AlertTakeOverProps & { alert: Alert }) {
-  const state = useRunState();
+  const { state, isJoined } = useRun();
   const store = useRunStore();
   const heading = useRef<HTMLHeadingElement>(null);
   const due = useLive((live) => dueText(dueAtMs(alert, live), live.nowMs));
@@ -79,7 +79,9 @@ function TakeOver({ alert, onComplete }: AlertTakeOverProps & { alert: Alert }) 
         ) : null}
         {alert.rule === 'signal' ? (
           <p className="step-detail">
-            No reading comes in. Look at the probe and its cable, and watch a thermometer by hand.
+            {isJoined
+              ? 'No reading comes in. Look at the probe and its cable, and watch a thermometer by hand.'
+              : 'The hub is away, so no reading comes in. Watch a thermometer by hand until it is back.'}
           </p>
         ) : null}
         {act && !isActCurrent && current ? <p className="step-detail">Not ticked yet: {current.step.title}.</p> : null}

@@ -1,0 +1,51 @@
+import { describe, expect, it } from 'vitest';
+import { pedalActOf, type PedalKey } from './pedal-keys.ts';
+
+const plain: Omit<PedalKey, 'key'> = {
+  hasModifier: false,
+  isTyping: false,
+  isDialogOpen: false,
+  isOnTabbedControl: false,
+  isOnTabbedChoice: false,
+};
+
+describe(pedalActOf, () => {
+  it.each([
+    ['PageDown', 'next'],
+    ['ArrowRight', 'next'],
+    ['ArrowDown', 'next'],
+    [' ', 'next'],
+    ['Enter', 'next'],
+    ['PageUp', 'back'],
+    ['ArrowLeft', 'back'],
+    ['ArrowUp', 'back'],
+    ['Tab', null],
+    ['a', null],
+    ['Escape', null],
+  ])('%j is %s', (key, act) => {
+    expect(pedalActOf({ key, ...plain })).toBe(act);
+  });
+
+  it.each(['hasModifier', 'isTyping', 'isDialogOpen'] as const)('does nothing with %s', (what) => {
+    expect(pedalActOf({ key: 'PageDown', ...plain, [what]: true })).toBeNull();
+  });
+
+  it('leaves Space and Enter to a button reached with Tab, and no other key', () => {
+    const onButton = { ...plain, isOnTabbedControl: true };
+    expect([' ', 'Enter', 'PageDown', 'ArrowRight'].map((key) => pedalActOf({ key, ...onButton }))).toEqual([
+      null,
+      null,
+      'next',
+      'next',
+    ]);
+  });
+
+  it('leaves the arrows to a choice reached with Tab', () => {
+    const onChoice = { ...plain, isOnTabbedControl: true, isOnTabbedChoice: true };
+    expect(['ArrowRight', 'ArrowUp', 'PageDown'].map((key) => pedalActOf({ key, ...onChoice }))).toEqual([
+      null,
+      null,
+      'next',
+    ]);
+  });
+});
