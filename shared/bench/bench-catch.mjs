@@ -89,7 +89,7 @@ function report(title, traces) {
     console.log((name.startsWith('the watch') ? lines : lines.slice(-1)).map((line) => `  ${line}`).join('\n'));
   }
   console.log('\nwhere the additions went in, K off the target');
-  for (const { name, scores } of ways)
+  for (const { name, scores } of ways.filter((way) => !way.name.includes('clock')))
     console.log(`  ${name.padEnd(14)}|${strip(scores.map(({ errorC }) => errorC))}|`);
   const axis = [-3, -2, -1, 0, 1, 2, 3].map((mark) => String(mark).padStart(2).padEnd(10)).join('');
   console.log(`  ${' '.repeat(14)}${axis.trimEnd()}`);

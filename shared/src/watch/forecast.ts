@@ -9,6 +9,8 @@ const LONGEST_HORIZON_S = 6 * 3600;
 /** A wider interval than this share of the horizon says too little, unless it is narrow in kelvin. */
 const WIDEST_SHARE = 0.5;
 const NARROW_C = 1;
+/** Moving away from the target faster than this (0.3 K/min) is leaving it. */
+const LEAVING_C_PER_S = 0.005;
 /** Good readings before any forecast. */
 const GOOD_TO_FORECAST = 8;
 
@@ -101,6 +103,9 @@ export function forecastCrossing(state: WatchState, target: CrossingTarget, nowM
   const towards = sign(target);
   const now = courseAt(course, Math.max(0, (nowMs - course.startMs) / 1000));
   if ((now.tempC - target.tempC) * towards >= 0) {
+    const wasNear = state.trail.some(({ tempC }) => (tempC - target.tempC) * towards < 0);
+    // A pot heated up to be caught on the way down has not crossed anything yet.
+    if (!wasNear && now.rateCPerS * towards < -LEAVING_C_PER_S) return { kind: 'never' };
     const atMs = crossedAt(state, target, nowMs) ?? crossingOf(course, target)?.atMs ?? nowMs;
     return { kind: 'crossed', atMs: Math.min(nowMs, atMs) };
   }

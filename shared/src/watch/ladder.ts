@@ -104,10 +104,13 @@ function look(target: CatchTarget, watch: WatchState, course: Course, nowMs: num
     nearC: (target.tempC - at.tempC) * towards,
     towardsCPerS: at.rateCPerS * towards,
     rateSdCPerS: Math.sqrt(Math.max(0, course.belief.rateVariance)),
-    isUnsettled:
-      at.sdC > UNSETTLED_C && watch.disturbedAtMs !== null && nowMs - watch.disturbedAtMs < UNSETTLED_S * 1000,
+    isUnsettled: at.sdC > UNSETTLED_C && isWithin(watch.steppedAtMs, nowMs, UNSETTLED_S),
     crossing: crossingOf(course, target),
   };
+}
+
+function isWithin(sinceMs: number | null, nowMs: number, spanS: number): boolean {
+  return sinceMs !== null && nowMs - sinceMs < spanS * 1000;
 }
 
 function alertOf(ladder: LadderState, stage: LadderStage, course: Course, step: Step): LadderAlert {

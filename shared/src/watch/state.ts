@@ -43,6 +43,8 @@ export interface WatchState {
   readonly rivals: readonly Rival[];
   /** Last instant at which the liquid was disturbed or the slope found changed. */
   readonly disturbedAtMs: number | null;
+  /** Last instant at which something went in that may have stepped the liquid by half a kelvin or more. */
+  readonly steppedAtMs: number | null;
   /** Rate constants seen while the liquid was left alone. */
   readonly lossesPerS: Tally;
   readonly chillerPerS: Tally;
@@ -78,6 +80,7 @@ export function startWatch(config: WatchConfig): WatchState {
     whiteCount: 0,
     rivals: [],
     disturbedAtMs: null,
+    steppedAtMs: null,
     lossesPerS: { mean: 0, count: 0 },
     chillerPerS: { mean: 0, count: 0 },
     trail: [],

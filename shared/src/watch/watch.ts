@@ -16,6 +16,8 @@ const SUSPECTS_TO_STEP = 3;
 /** Oldest suspect that still counts. */
 const SUSPECT_MEMORY_S = 15;
 const SUSPECT_MEMORY_PERIODS = 5;
+/** A step that an act may bring counts from this size on. */
+const STEP_C = 0.5;
 /** Longest absence the filters bridge; after that the watch starts afresh. */
 const LONGEST_BRIDGE_S = 900;
 
@@ -47,8 +49,10 @@ export function watchAct(state: WatchState, done: WatchActDone): WatchState {
     advanceBank(bank, Math.min(LONGEST_BRIDGE_S, (atMs - state.bankAtMs) / 1000), state.config, surroundings(state));
   }
   const belief = believe(bank);
-  disturbBank(bank, disturbanceOf(done.act, belief, surroundings(state), state.config.chillerPerS ?? null));
-  return { ...state, kettle, bank, bankAtMs: atMs, disturbedAtMs: atMs, rivals: [] };
+  const disturbance = disturbanceOf(done.act, belief, surroundings(state), state.config.chillerPerS ?? null);
+  disturbBank(bank, disturbance);
+  const steppedAtMs = disturbance.stepC >= STEP_C ? atMs : state.steppedAtMs;
+  return { ...state, kettle, bank, bankAtMs: atMs, disturbedAtMs: atMs, steppedAtMs, rivals: [] };
 }
 
 function kettleAfter({ kettle }: WatchState, act: WatchAct): WatchState['kettle'] {
@@ -201,6 +205,7 @@ function suspected(state: WatchState, bank: number[], suspect: Suspect): WatchSt
       recent: suspects,
       lastGoodAtMs: suspect.atMs,
       disturbedAtMs: suspect.atMs,
+      steppedAtMs: suspect.atMs,
       rivals: [],
     },
     'good',
