@@ -4,29 +4,16 @@ import { Mark } from '#components/mark.tsx';
 import { ShapeGlyph, type Shape } from '#components/shapes.tsx';
 import { alarmSounds, type SoundState } from '#lib/audio/alarm-sounds.ts';
 import { useLive, useRun } from '#lib/run-store/run-context.tsx';
-import type { LiveState } from '#lib/run-store/run-store.ts';
 import { useSession } from '#lib/session.ts';
 import { useStored, useStoredPart } from '#lib/value-store.ts';
 import { wakeState, type WakeState } from '#lib/wake-lock/wake-lock.ts';
+import { isProbeBad, probeText } from './probe-words.ts';
 import { StatusSheet } from './status-sheet.tsx';
 
-export interface ChipLook {
+interface ChipLook {
   shape: Shape;
   word: string;
   isBad: boolean;
-}
-
-const STALE_S = 30;
-
-export function probeChip({ nowMs, newest }: LiveState): string {
-  if (!newest) return 'none yet';
-  const ageS = Math.max(0, (nowMs - newest.atMs) / 1000);
-  if (newest.tempC === null) return 'no signal';
-  return ageS < 10 ? `${ageS.toFixed(1)} s ago` : `${Math.floor(ageS)} s ago`;
-}
-
-export function isProbeBad({ nowMs, newest }: LiveState): boolean {
-  return !newest || newest.tempC === null || nowMs - newest.atMs > STALE_S * 1000;
 }
 
 const soundLook: Record<SoundState['health'], ChipLook> = {
@@ -85,7 +72,7 @@ export function StatusLine() {
 }
 
 function ProbeChip() {
-  const word = useLive(probeChip);
+  const word = useLive(probeText);
   const isBad = useLive(isProbeBad);
   return <Chip name="probe" shape={isBad ? 'ring' : 'dot'} word={word} isBad={isBad} />;
 }

@@ -12,7 +12,7 @@ import { chooseGround, useGroundChoice } from '#lib/theme.ts';
 import { useStored, useStoredPart } from '#lib/value-store.ts';
 import { askToStayAwake, wakeState, type WakeState } from '#lib/wake-lock/wake-lock.ts';
 import { SheetDialog } from './sheet-dialog.tsx';
-import { probeChip } from './status-line.tsx';
+import { probeText } from './probe-words.ts';
 
 const soundText: Record<SoundState['health'], string> = {
   fine: 'Sound is on. Nobody can say from here whether it is loud enough: test it when the room gets louder.',
@@ -45,7 +45,7 @@ function StatusFacts() {
   const wake = useStored(wakeState);
   const errorMs = useStored(hubClock.errorMs);
   const groundChoice = useGroundChoice();
-  const probe = useLive(probeChip);
+  const probe = useLive(probeText);
   const bare = useLive(({ newest }) => (newest?.tempC == null ? null : formatTemp(newest.tempC, { unit: 'C' })));
   return (
     <dl className="status-facts">

@@ -1,0 +1,120 @@
+import { act, render, screen } from '@testing-library/react';
+import userEvent from '@testing-library/user-event';
+import { Profiler, type ReactNode } from 'react';
+import { MemoryRouter, Route, Routes } from 'react-router-dom';
+import { v7 as uuidv7 } from 'uuid';
+import { beforeEach, describe, expect, it, vi } from 'vitest';
+import { LogBuilder, MEMBER_ID, RUN_ID, START_MS } from '@steepfall/shared/testing';
+import { currentStep } from '@steepfall/shared/runs';
+import { MemoryEventStore } from '#lib/event-store/memory-event-store.ts';
+import { Outbox } from '#lib/run-store/outbox.ts';
+import { RunProvider } from '#lib/run-store/run-context.tsx';
+import { RunStore } from '#lib/run-store/run-store.ts';
+import { ValueStore } from '#lib/value-store.ts';
+import { FakeHub } from '../../testing/fake-hub.ts';
+import { ActBar } from './act-bar.tsx';
+import { LiveTemperature } from './live-temperature.tsx';
+import { StepArea } from './step-area.tsx';
+
+async function openStore(log: LogBuilder) {
+  const hub = new FakeHub(RUN_ID, log.stored);
+  const link = hub.connect();
+  const store = new MemoryEventStore();
+  const time = { nowMs: START_MS };
+  const run = new RunStore({
+    runId: RUN_ID,
+    link,
+    store,
+    outbox: new Outbox(link, store),
+    clock: { nowMs: () => time.nowMs, isSettled: new ValueStore(true) },
+    station: 'tablet',
+    memberId: () => MEMBER_ID,
+    newId: uuidv7,
+    schedule: (work) => work(),
+  });
+  await run.open();
+  await vi.waitFor(() => expect(run.snapshot.get().isJoined).toBe(true));
+  const read = (tempC: number, seconds: number) => {
+    time.nowMs = START_MS + seconds * 1000;
+    hub.broadcast('run.readings', {
+      runId: RUN_ID,
+      probeId: RUN_ID,
+      readings: [{ atMs: time.nowMs, tempC }],
+      acceptedMs: 0,
+    });
+  };
+  return { run, hub, time, read };
+}
+
+function Around({ run, children }: { run: RunStore; children: ReactNode }) {
+  return (
+    <MemoryRouter>
+      <Routes>
+        <Route path="/" element={<RunProvider store={run}>{children}</RunProvider>} />
+      </Routes>
+    </MemoryRouter>
+  );
+}
+
+beforeEach(() => {
+  vi.stubGlobal('matchMedia', () => ({ matches: false, addEventListener: () => undefined }));
+});
+
+describe('a reading a second', () => {
+  it('commits the number, and nothing of the step', async () => {
+    const { run, read } = await openStore(new LogBuilder().done('light-heat'));
+    let stepCommits = 0;
+    render(
+      <Around run={run}>
+        <LiveTemperature />
+        <Profiler id="step" onRender={() => (stepCommits += 1)}>
+          <ActBar onAct={vi.fn()} onComplete={vi.fn()} onMeasure={vi.fn()} onExtra={vi.fn()} onAllSteps={vi.fn()} />
+        </Profiler>
+      </Around>,
+    );
+    const atFirst = stepCommits;
+    for (let s = 1; s <= 60; s += 1) act(() => read(20 + s * 0.05, s));
+    expect(stepCommits).toBe(atFirst);
+    expect(screen.getByText(/^23\.\d$/)).toBeTruthy();
+  });
+});
+
+describe('the step', () => {
+  it('names what to do and takes the focus when it changes', async () => {
+    const { run } = await openStore(new LogBuilder().done('light-heat', 'heat'));
+    render(
+      <Around run={run}>
+        <StepArea onStopTimer={vi.fn()} />
+      </Around>,
+    );
+    expect(screen.getByRole('heading', { name: 'Tea in' })).toBeTruthy();
+    expect(
+      screen.getByText('120 g sencha', { exact: false, normalizer: (text) => text.replace(/\s/g, ' ') }),
+    ).toBeTruthy();
+    expect(screen.getByText('bag 1')).toBeTruthy();
+    await act(async () => {
+      await run.act({ type: 'completeStep', stepId: 'tea-in', tempC: 76 });
+    });
+    expect(document.activeElement).toBe(screen.getByRole('heading', { name: 'Steep' }));
+  });
+
+  it('is done by one click, and taken back by another', async () => {
+    const { run } = await openStore(new LogBuilder());
+    const user = userEvent.setup();
+    render(
+      <Around run={run}>
+        <ActBar
+          onAct={(command) => void run.act(command)}
+          onComplete={(stepId) => void run.act({ type: 'completeStep', stepId, tempC: null })}
+          onMeasure={vi.fn()}
+          onExtra={vi.fn()}
+          onAllSteps={vi.fn()}
+        />
+      </Around>,
+    );
+    await user.click(screen.getByRole('button', { name: /^Done/ }));
+    await vi.waitFor(() => expect(currentStep(run.snapshot.get().state)?.step.id).toBe('heat'));
+    await user.click(screen.getByRole('button', { name: 'Back one' }));
+    await vi.waitFor(() => expect(currentStep(run.snapshot.get().state)?.step.id).toBe('light-heat'));
+  });
+});
