@@ -1,16 +1,18 @@
 import { spawn } from 'node:child_process';
+import { existsSync } from 'node:fs';
 import { join } from 'node:path';
-import { ensureBuilt } from './build.mjs';
 import { checkPort, stopLeftoverHub } from './hub.mjs';
 import { ensurePackages } from './install.mjs';
-import { hubEntry, packageBin, root, tabletDist } from './paths.mjs';
-import { endChild, endingWithParent } from './processes.mjs';
+import { LauncherError } from './launcher-error.mjs';
+import { hubEntry, packageBin, root } from './paths.mjs';
+import { endChild, endingWithParent, run } from './processes.mjs';
 import { hubPidFile, startDatabaseOfProduct, takeDataFolder } from './product.mjs';
 import { ensureMariadbInstalled } from './mariadb.mjs';
 import { Session } from './session.mjs';
 
 const hubPort = 4680;
 const tabletPort = 4681;
+const tsc = packageBin('typescript/bin/tsc');
 
 /** `npm run dev`: the product on its own data, with every change compiled, restarted or shown at once. */
 export async function startDevelopment() {
@@ -25,24 +27,21 @@ export async function startDevelopment() {
     signal.throwIfAborted();
     await ensureMariadbInstalled(log, signal);
     signal.throwIfAborted();
-    // The watchers start from something that runs.
-    await ensureBuilt(log, signal);
+    log('Compiling.');
+    const { output } = await run(process.execPath, [tsc, '-b', root], { isQuiet: true, signal });
     signal.throwIfAborted();
+    // Mistakes are for the watching compiler to tell, as long as there is something to start.
+    if (!existsSync(hubEntry)) {
+      process.stderr.write(output);
+      throw new LauncherError('The hub could not be compiled; put right what is reported above and start again.');
+    }
     const database = await startDatabaseOfProduct(session);
     signal.throwIfAborted();
-    watch(session, 'compiler', [
-      packageBin('typescript/bin/tsc'),
-      '-b',
-      root,
-      '--watch',
-      '--preserveWatchOutput',
-      '--pretty',
-    ]);
+    watch(session, 'compiler', [tsc, '-b', root, '--watch', '--preserveWatchOutput', '--pretty']);
     watch(session, 'hub', ['--enable-source-maps', '--watch', '--watch-preserve-output', hubEntry], {
       ...database,
       HOST: '127.0.0.1',
       PORT: String(hubPort),
-      TABLET_DIST: tabletDist,
       DEMO: 'on',
       NODE_ENV: 'development',
       LOG_LEVEL: 'debug',
