@@ -35,7 +35,7 @@ interface Geometry {
 }
 
 const LANE_PX = 30;
-const LANES = 5;
+const MOST_LANES = 5;
 const NARROW_PX = 620;
 /** From here to the right edge the labels of the levels stand. */
 const LABEL_SHARE = 0.8;
@@ -84,6 +84,7 @@ export function Curve({ line, stretches, levels, flags, fromMs, toMs, isClose }:
   const readout = useRef<HTMLParagraphElement>(null);
   const [geometry, setGeometry] = useState<Geometry | null>(null);
   const ground = useGround();
+  const lanes = Math.min(MOST_LANES, flags.length);
 
   useEffect(() => {
     const element = host.current;
@@ -98,7 +99,7 @@ export function Curve({ line, stretches, levels, flags, fromMs, toMs, isClose }:
     const options: uPlot.Options = {
       ...size(),
       ms: 1,
-      padding: [LANES * LANE_PX + 12, 12, 0, 0],
+      padding: [lanes * LANE_PX + 12, 12, 0, 0],
       legend: { show: false },
       cursor: { drag: { x: false, y: false }, y: false, points: { size: 12 } },
       scales: {
@@ -150,13 +151,13 @@ export function Curve({ line, stretches, levels, flags, fromMs, toMs, isClose }:
       observer.disconnect();
       plot.destroy();
     };
-  }, [line, stretches, levels, fromMs, toMs, isClose, ground]);
+  }, [line, stretches, levels, fromMs, toMs, isClose, lanes, ground]);
 
   return (
     <div className="relative" aria-hidden="true">
       <div ref={host} className="h-[26rem] w-full sm:h-[32rem]" />
       <p ref={readout} className="absolute right-3 top-0 whitespace-pre text-body font-medium tabular-nums" />
-      {geometry ? <Overlay {...{ geometry, line, levels, flags, fromMs, toMs }} /> : null}
+      {geometry ? <Overlay {...{ geometry, line, levels, flags, fromMs, toMs, lanes }} /> : null}
     </div>
   );
 }
@@ -168,7 +169,8 @@ function Overlay({
   flags,
   fromMs,
   toMs,
-}: Omit<CurveProps, 'stretches' | 'isClose'> & { geometry: Geometry }) {
+  lanes,
+}: Omit<CurveProps, 'stretches' | 'isClose'> & { geometry: Geometry; lanes: number }) {
   const { left, top, width, height, minC, maxC } = geometry;
   const isNarrow = width < NARROW_PX;
   const levelsInSight = levels.filter(({ tempC }) => tempC >= minC && tempC <= maxC);
@@ -181,9 +183,9 @@ function Overlay({
       return x > width * LABEL_SHARE && x <= width && Math.abs(yOf(point.tempC) - yOf(tempC) + 10) < 22;
     });
   const placed = useMemo(
-    () => layoutFlags(flags, { width, lanes: LANES, hasLabels: !isNarrow, xOf }),
+    () => layoutFlags(flags, { width, lanes, hasLabels: !isNarrow, xOf }),
     // eslint-disable-next-line react-hooks/exhaustive-deps -- xOf follows from the others
-    [flags, width, isNarrow, fromMs, toMs],
+    [flags, width, lanes, isNarrow, fromMs, toMs],
   );
   return (
     <svg className="pointer-events-none absolute inset-0 h-full w-full overflow-visible" fontFamily="inherit">
@@ -202,7 +204,7 @@ function Overlay({
           const footY = foot === null ? null : yOf(foot);
           return (
             <g key={flag.id} transform={`translate(${flag.x} 0)`}>
-              {flag.lane === null ? null : <Pennant flag={flag} lane={flag.lane} footY={footY ?? height} />}
+              {flag.lane === null ? null : <Pennant flag={flag} rise={flag.lane - lanes} footY={footY ?? height} />}
               {footY === null ? null : (
                 <path
                   d={flag.isVital ? 'M0-8l8 8-8 8-8-8z' : 'M0-5l5 5-5 5-5-5z'}
@@ -235,8 +237,8 @@ function Overlay({
   );
 }
 
-function Pennant({ flag, lane, footY }: { flag: PlacedFlag; lane: number; footY: number }) {
-  const y = (lane - LANES) * LANE_PX;
+function Pennant({ flag, rise, footY }: { flag: PlacedFlag; rise: number; footY: number }) {
+  const y = rise * LANE_PX;
   const side = flag.isLeftward ? -1 : 1;
   return (
     <>

@@ -132,7 +132,9 @@ function Line({ run, state, refetchInterval }: { run: RunSummary; state: RunStat
       {shown && line.length > 1 ? (
         <>
           <div className="flex flex-wrap items-end justify-between gap-4">
-            <Segmented label="Look at" isLabelHidden value={window} onChange={setWindow} segments={choices} />
+            {choices.length > 1 ? (
+              <Segmented label="Look at" isLabelHidden value={window} onChange={setWindow} segments={choices} />
+            ) : null}
             <Button aria-pressed={isTable} onClick={() => setIsTable(!isTable)}>
               {isTable ? 'Show as a drawing' : 'Show as a table'}
             </Button>

@@ -86,9 +86,11 @@ function Running({ runs }: { runs: RunSummary[] | undefined }) {
   return (
     <section aria-labelledby="running" className="grid gap-7">
       <LevelRule id="running">Running now</LevelRule>
-      {runs.map((run) => (
-        <RunningRun key={run.id} run={run} />
-      ))}
+      <div className="grid gap-14">
+        {runs.map((run) => (
+          <RunningRun key={run.id} run={run} />
+        ))}
+      </div>
     </section>
   );
 }
