@@ -1,6 +1,6 @@
 import { BadRequestException, NotFoundException } from '@nestjs/common';
 import { ProblemError } from '@steepfall/shared/problems';
-import { ConnectionRefusedError, UniqueConstraintError } from 'sequelize';
+import { ConnectionRefusedError, DatabaseError, UniqueConstraintError } from 'sequelize';
 import { describe, expect, it } from 'vitest';
 import { problemOf } from './problem-of.js';
 
@@ -13,6 +13,16 @@ describe(problemOf, () => {
     [Object.assign(new Error('decode'), { status: 400, expose: true }), '/problems/not-readable', false],
     [new UniqueConstraintError({}), '/problems/already-exists', false],
     [new ConnectionRefusedError(new Error('connect')), '/problems/unavailable', true],
+    [
+      new DatabaseError(Object.assign(new Error('socket closed'), { sql: '', fatal: true })),
+      '/problems/unavailable',
+      true,
+    ],
+    [
+      new DatabaseError(Object.assign(new Error('syntax'), { sql: '', fatal: false })),
+      '/problems/internal-error',
+      true,
+    ],
     [new Error('SELECT password FROM users'), '/problems/internal-error', true],
     [Object.assign(new Error('inner'), { status: 404, expose: false }), '/problems/internal-error', true],
     ['a string', '/problems/internal-error', true],

@@ -1,6 +1,6 @@
 import { HttpException } from '@nestjs/common';
 import { ProblemError, problem, type Problem, type ProblemType } from '@steepfall/shared/problems';
-import { ConnectionAcquireTimeoutError, ConnectionError, UniqueConstraintError } from 'sequelize';
+import { ConnectionAcquireTimeoutError, ConnectionError, DatabaseError, UniqueConstraintError } from 'sequelize';
 
 /** What is told to the client, and whether the error is one that nobody foresaw and belongs in the log. */
 export interface Translated {
@@ -32,6 +32,12 @@ function statusOf(error: unknown): number | null {
   return typeof status === 'number' && expose === true ? status : null;
 }
 
+/** The pool has no connection to give, or the one in use broke in the middle of a statement. */
+function isConnectionGone(error: unknown): boolean {
+  if (error instanceof ConnectionError || error instanceof ConnectionAcquireTimeoutError) return true;
+  return error instanceof DatabaseError && (error.original as { fatal?: boolean }).fatal === true;
+}
+
 /** Turns anything thrown into a problem. Texts of unforeseen errors stay in the log. */
 export function problemOf(error: unknown): Translated {
   if (error instanceof ProblemError) return { problem: error.toProblem(), isUnexpected: false };
@@ -40,7 +46,7 @@ export function problemOf(error: unknown): Translated {
       problem: problem('already-exists', 'Something with the same name or number is there already.'),
       isUnexpected: false,
     };
-  if (error instanceof ConnectionError || error instanceof ConnectionAcquireTimeoutError)
+  if (isConnectionGone(error))
     return {
       problem: problem('unavailable', 'The database does not answer. Try again in a moment.'),
       isUnexpected: true,
