@@ -11,6 +11,8 @@ export interface TestApp {
   /** `http://127.0.0.1:<port>`; for supertest: `request(testApp.url).get('/api/health')`. */
   url: string;
   databaseUrl: string;
+  /** Stops the hub and starts another one on the same database, in this same object. */
+  restart: () => Promise<void>;
   /** Stops the hub and drops its database. */
   close: () => Promise<void>;
 }
@@ -26,21 +28,28 @@ export const testEnvironment = {
 /** The real hub on a free port, on a database of its own that was migrated as in production. */
 export async function createTestApp(variables: Record<string, string> = {}): Promise<TestApp> {
   const database = await createThrowAwayDatabase();
-  try {
-    await migrateDatabase(database.url);
-    const config = readEnvironment({ ...testEnvironment, DATABASE_URL: database.url, ...variables });
+  const config = readEnvironment({ ...testEnvironment, DATABASE_URL: database.url, ...variables });
+  const start = async () => {
     const app = await createApp(config);
     await app.listen(config.port, config.host);
     const { port } = app.getHttpServer().address() as AddressInfo;
-    return {
-      app,
-      url: `http://127.0.0.1:${port}`,
+    return { app, url: `http://127.0.0.1:${port}` };
+  };
+  try {
+    await migrateDatabase(database.url);
+    const testApp: TestApp = {
+      ...(await start()),
       databaseUrl: database.url,
+      async restart() {
+        await testApp.app.close();
+        Object.assign(testApp, await start());
+      },
       async close() {
-        await app.close();
+        await testApp.app.close();
         await database.drop();
       },
     };
+    return testApp;
   } catch (error) {
     await database.drop();
     throw error;

@@ -67,7 +67,7 @@ export class RunSupervisor implements OnApplicationBootstrap, BeforeApplicationS
   async beforeApplicationShutdown(): Promise<void> {
     this.subscription?.unsubscribe();
     if (this.timer) clearInterval(this.timer);
-    await Promise.all([...this.watched.values()].map(({ writing }) => writing));
+    await Promise.all([...this.watched.values()].flatMap(({ writing }) => writing ?? []));
   }
 
   private tick(): void {

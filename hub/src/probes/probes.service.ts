@@ -56,7 +56,7 @@ export class ProbesService extends DeviceAuthenticator {
     const deviceToken = newDeviceToken(id);
     const row = await inTransaction(this.sequelize, async (transaction) => {
       const created = await inHouse(this.probes, actor.houseId).create(
-        { id, ...values, tokenHash: hashSecret(deviceToken), createdAtMs: this.clock.nowMs() },
+        { id, ...values, tokenHash: hashSecret(deviceToken), createdAtMs: this.clock.nowMs(), revokedAtMs: null },
         { transaction },
       );
       await this.record(actor, 'probe.added', id, transaction, values);

@@ -34,7 +34,7 @@ import { IngestionService, type AcceptedReadings } from '../readings/ingestion.s
 import { RunReadingsService } from '../readings/run-readings.service.js';
 import { RunLogService } from '../runs/run-log.service.js';
 import { RunSummariesService } from '../runs/run-summaries.service.js';
-import { sentToRunSchema, type SentToRun } from '../runs/sent-events.js';
+import { sentToRunSchema, type SentToRun } from '../runs/sent-events.schema.js';
 import { SessionsService } from '../sessions/sessions.service.js';
 import { Handshake, HandshakeRefusedError } from './handshake.js';
 import { Pacer } from './pacer.js';

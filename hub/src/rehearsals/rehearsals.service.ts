@@ -160,10 +160,10 @@ export class RehearsalsService implements OnApplicationBootstrap, OnModuleDestro
       const kettle = new RehearsalKettle(log.facts.kettleSetup as KettleSetup, startedAtMs);
       const toldUntilMs = (await this.readings.recent(log, this.clock.nowMs())).at(-1)?.atMs ?? startedAtMs - 1;
       for (const { state, learnedAtMs } of actsOf(log.events)) {
-        await passTime(kettle, learnedAtMs);
+        await passTime(log, kettle, learnedAtMs);
         kettle.follow(state, learnedAtMs);
       }
-      if (log.projection.probeOutAtMs === null) await passTime(kettle, Math.max(toldUntilMs, nowMs() - RECENT_MS));
+      if (log.projection.probeOutAtMs === null) await passTime(log, kettle, Math.max(toldUntilMs, nowMs() - RECENT_MS));
       // What was done while this went on.
       kettle.follow(log.state, nowMs());
       if (log.isOpen) this.kettles.set(log.id, kettle);
@@ -216,8 +216,8 @@ export class RehearsalsService implements OnApplicationBootstrap, OnModuleDestro
 }
 
 /** Lets the kettle come to an instant of the run clock; what its probe said on the way is known already. */
-async function passTime(kettle: RehearsalKettle, untilMs: number): Promise<void> {
-  while (kettle.nowMs < untilMs) {
+async function passTime(log: RunLog, kettle: RehearsalKettle, untilMs: number): Promise<void> {
+  while (log.isOpen && kettle.nowMs < untilMs) {
     kettle.readingsUntil(Math.min(untilMs, kettle.nowMs + CATCH_UP_MS));
     await setImmediate();
   }

@@ -2,12 +2,12 @@ import { Body, Controller, Get, Param, Post, Query } from '@nestjs/common';
 import { ApiBearerAuth, ApiTags } from '@nestjs/swagger';
 import {
   appendedEventsSchema,
-  runEventsSchema,
   runSummarySchema,
   type AppendedEvents,
   type RunEvents,
   type RunSummary,
 } from '@steepfall/shared/contracts';
+import { storedRunEventSchema } from '@steepfall/shared/runs';
 import { z } from 'zod';
 import { Requires } from '../common/access/access.decorators.js';
 import { Actor } from '../common/access/actor.js';
@@ -16,10 +16,17 @@ import { idSchema } from '../common/http/id-param.js';
 import { RunLogService } from './run-log.service.js';
 import { RunSummariesService } from './run-summaries.service.js';
 import { RunsService } from './runs.service.js';
-import { sentEventsSchema, type SentEvents } from './sent-events.js';
+import { sentEventsSchema, type SentEvents } from './sent-events.schema.js';
 
 const listQuerySchema = z.strictObject({ status: z.enum(['running', 'ended']).optional() });
 const eventsQuerySchema = z.strictObject({ afterSeq: z.coerce.number().int().nonnegative().default(0) });
+
+/** An event that a newer build wrote is told as it is: it is for others to read. */
+const newerEventSchema = z.looseObject({ id: z.uuid(), type: z.string(), seq: z.int() });
+const eventsAnswerSchema = z.object({
+  runId: z.uuid(),
+  events: z.array(z.union([storedRunEventSchema, newerEventSchema])),
+});
 
 @ApiTags('runs')
 @ApiBearerAuth()
@@ -57,7 +64,7 @@ export class RunsController {
 
   @Get('runs/:id/events')
   @Requires('runs:read')
-  @Answers(runEventsSchema)
+  @Answers(eventsAnswerSchema)
   async events(
     @Actor() actor: Actor,
     @Param('id', { schema: idSchema }) id: string,

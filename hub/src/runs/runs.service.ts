@@ -28,12 +28,12 @@ export interface RunStart {
   batch: { id: string; batchNumber: string } | null;
   revisionId: string;
   sheet: RunSheet;
-  isRehearsal: boolean;
   clock: RunClock;
   probe: { id: string; lagS: number; resolutionC: number; samplePeriodS: number } | null;
   roomC: number | null;
   coolantC: number | null;
-  rehearsal?: Pick<NewRun, 'seed' | 'kettleSetup' | 'sourceProbeId'>;
+  /** `null`: a real run. */
+  rehearsal: Pick<NewRun, 'seed' | 'kettleSetup' | 'sourceProbeId'> | null;
 }
 
 /** Begins runs; what happens in them goes through their log. */
@@ -60,11 +60,11 @@ export class RunsService {
       batch: { id: batch.id, batchNumber: batch.batchNumber },
       revisionId: revision.id,
       sheet: sheetOf(revision.document, altitudeM),
-      isRehearsal: false,
       clock: wallClock(this.clock.nowMs()),
       probe: batch.probeId === null ? null : await this.probes.find(houseId, batch.probeId),
       roomC: null,
       coolantC: chiller?.facts.coolantC ?? null,
+      rehearsal: null,
     };
     try {
       return await this.start(actor, () => Promise.resolve(start));
@@ -85,7 +85,8 @@ export class RunsService {
   }
 
   private write({ houseId, memberId }: Actor, start: RunStart, transaction: Transaction): Promise<RunLog> {
-    const { title, batch, revisionId, sheet, isRehearsal, clock, probe, roomC, coolantC, rehearsal } = start;
+    const { title, batch, revisionId, sheet, clock, probe, roomC, coolantC, rehearsal } = start;
+    const isRehearsal = rehearsal !== null;
     const runId = newId();
     const { lagS, resolutionC, samplePeriodS } = probe ?? NO_PROBE;
     const started: RunEventOf<'run.started'> = {
@@ -122,7 +123,7 @@ export class RunsService {
       startedAtMs: clock.anchorRunMs,
       startedBy: memberId,
       createdAtMs: this.clock.nowMs(),
-      ...rehearsal,
+      ...(rehearsal ?? { seed: null, kettleSetup: null, sourceProbeId: null }),
     };
     return this.logs.create(houseId, run, started, transaction);
   }
