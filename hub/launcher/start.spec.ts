@@ -16,18 +16,27 @@ import { afterEach, beforeEach, describe, expect, test } from 'vitest';
 import { findByArgument, isAlive } from './lib/processes.mjs';
 import { root, testDataDir } from './lib/paths.mjs';
 
-/** `npm start` on a data folder of its own, with the smallest hub there is. */
+/** The smallest hub there is. */
+const smallHub = join(root, 'hub/launcher/test-hub');
+
+interface LaunchOptions {
+  nodeArgs?: string[];
+  /** Null for the one that is built. */
+  hubDir?: string | null;
+}
+
+/** `npm start` on a data folder of its own. */
 class Launcher {
   printed = '';
   private readonly child: ChildProcess;
 
-  constructor(dataDir: string, args: string[], nodeArgs: string[] = []) {
+  constructor(dataDir: string, args: string[], { nodeArgs = [], hubDir = smallHub }: LaunchOptions = {}) {
     this.child = spawn(process.execPath, [...nodeArgs, join(root, 'hub/launcher/start.mjs'), ...args], {
       cwd: root,
       env: {
         ...process.env,
         STEEPFALL_DATA_DIR: dataDir,
-        STEEPFALL_HUB_DIR: join(root, 'hub/launcher/test-hub'),
+        ...(hubDir === null ? {} : { STEEPFALL_HUB_DIR: hubDir }),
       },
       stdio: ['ignore', 'pipe', 'pipe'],
     });
@@ -57,8 +66,8 @@ let dataDir: string;
 const launchers: Launcher[] = [];
 const hubPids: number[] = [];
 
-function launch(args: string[] = [], nodeArgs: string[] = []): Launcher {
-  const launcher = new Launcher(dataDir, args, nodeArgs);
+function launch(args: string[] = [], options: LaunchOptions = {}): Launcher {
+  const launcher = new Launcher(dataDir, args, options);
   launchers.push(launcher);
   return launcher;
 }
@@ -124,7 +133,8 @@ describe('npm start: what it is asked', () => {
 
   test('an older Node is told which one is needed', async () => {
     const pretend = `Object.defineProperty(process, 'versions', { value: { ...process.versions, node: '18.20.4' } })`;
-    const launcher = launch([], ['--import', `data:text/javascript,${encodeURIComponent(pretend)}`]);
+    const nodeArgs = ['--import', `data:text/javascript,${encodeURIComponent(pretend)}`];
+    const launcher = launch([], { nodeArgs });
     expect(await launcher.ends()).toBe(1);
     expect(launcher.printed).toMatch(
       /^Steepfall needs Node 20 from 20\.19 on, and this is Node 18\.20\.4; install .+\.\n$/,
@@ -237,4 +247,43 @@ describe('npm start: what goes wrong', () => {
     expect(await second.ends()).toBe(0);
     await untilGone(pids);
   });
+});
+
+describe('npm start: the product', () => {
+  const start = async (...args: string[]) => {
+    const port = await freePort();
+    const launcher = launch(['--port', String(port), ...args], { hubDir: null });
+    await launcher.says('Steepfall is ready');
+    hubPids.push(hubPid());
+    return { launcher, url: `http://localhost:${port}` };
+  };
+
+  test(
+    'serves the tablet and signs in with what is printed; the demo can be had anew',
+    { timeout: 300_000 },
+    async () => {
+      const first = await start();
+      const page = await fetch(first.url);
+      expect(page.headers.get('content-type')).toContain('text/html');
+      expect(await page.text()).toContain('<title>Steepfall</title>');
+      expect(await fetch(`${first.url}/api/health`).then((answer) => answer.json())).toMatchObject({ status: 'ok' });
+
+      const [, email, password] = /brewer +(\S+@wrenfold\.example) +(\S+)/.exec(first.launcher.printed) ?? [];
+      const signIn = (url: string) =>
+        fetch(`${url}/api/auth/sign-in`, {
+          method: 'POST',
+          headers: { 'content-type': 'application/json' },
+          body: JSON.stringify({ email, password }),
+        });
+      expect((await signIn(first.url)).status).toBe(200);
+      first.launcher.signal('SIGINT');
+      expect(await first.launcher.ends()).toBe(0);
+
+      const second = await start('--reset-demo');
+      expect((await signIn(second.url)).status).toBe(200);
+      second.launcher.signal('SIGINT');
+      expect(await second.launcher.ends()).toBe(0);
+      expect(runningProcesses()).toEqual([]);
+    },
+  );
 });
