@@ -13,7 +13,7 @@ interface LevelRuleProps {
 export function LevelRule({ children, level = 2, aside, id }: LevelRuleProps) {
   const Heading = level === 2 ? 'h2' : 'h3';
   return (
-    <div className="flex items-center gap-4">
+    <div className="flex min-h-12 items-center gap-4">
       <Heading id={id} className="shrink-0 text-lead font-semibold">
         {children}
       </Heading>

@@ -1,13 +1,14 @@
 import { useState } from 'react';
-import { useMutation, useQueryClient } from '@tanstack/react-query';
+import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { runSummarySchema } from '@steepfall/shared/contracts';
-import { useNavigate } from 'react-router-dom';
+import { Link, useNavigate } from 'react-router-dom';
 import { Banner } from '#components/banner.tsx';
 import { Button } from '#components/button.tsx';
 import { LevelRule } from '#components/level-rule.tsx';
 import { Segmented } from '#components/segmented.tsx';
 import { callHubFor } from '#lib/api-client.ts';
-import { failureWords } from '#lib/words.ts';
+import { endedRunsQuery } from '#lib/hub-queries.ts';
+import { clockTime, failureWords, longDay } from '#lib/words.ts';
 
 const rates = [1, 10, 30, 60].map((rate) => ({ value: rate, label: `${rate}×` }));
 
@@ -47,6 +48,33 @@ export function Rehearse() {
           {failureWords(start.error)}
         </Banner>
       ) : null}
+      <Rehearsed />
     </section>
+  );
+}
+
+const SHOWN = 3;
+
+/** The way back to the line of a rehearsal: it is in no book. */
+function Rehearsed() {
+  const ended = useQuery({ ...endedRunsQuery, refetchInterval: 30_000 });
+  const last = (ended.data ?? [])
+    .filter(({ isRehearsal }) => isRehearsal)
+    .sort((a, b) => b.startedAtMs - a.startedAtMs)
+    .slice(0, SHOWN);
+  if (last.length === 0) return null;
+  return (
+    <ul aria-label="The last rehearsals">
+      {last.map(({ id, startedAtMs, outcome }) => (
+        <li key={id} className="border-t border-hair">
+          <Link to={`/runs/${id}/record`} className="group flex min-h-12 items-center justify-between gap-6 text-body">
+            <span className="underline decoration-hair decoration-2 underline-offset-4 group-hover:decoration-text">
+              Rehearsal of {longDay(startedAtMs)}, {clockTime(startedAtMs)}
+            </span>
+            <span className="text-soft">{outcome === 'finished' ? 'finished' : 'given up'}</span>
+          </Link>
+        </li>
+      ))}
+    </ul>
   );
 }
