@@ -1,0 +1,102 @@
+import { mkdir } from 'node:fs/promises';
+import { dirname, join } from 'node:path';
+import axe from 'axe-core';
+import { chromium, type Browser, type BrowserContext, type Page } from 'playwright-core';
+
+/** What a person holds the screen at; landscape tablet first. */
+export const sizes = {
+  tablet: { width: 1280, height: 800 },
+  'small-tablet': { width: 1024, height: 768 },
+  portrait: { width: 800, height: 1280 },
+  phone: { width: 390, height: 844 },
+  desktop: { width: 1440, height: 900 },
+} as const;
+
+const grounds = { day: 'light', night: 'dark' } as const;
+
+/** Debian's Chromium, kept from looking for anything outside this machine. */
+export function openBrowser(): Promise<Browser> {
+  return chromium.launch({
+    executablePath: '/usr/bin/chromium',
+    args: [
+      '--no-sandbox',
+      '--disable-gpu',
+      '--disable-quic',
+      '--no-first-run',
+      '--disable-background-networking',
+      '--disable-component-update',
+      '--disable-sync',
+    ],
+  });
+}
+
+export type DemoRole = 'owner' | 'brewer' | 'hand' | 'taster' | 'pourer';
+
+/** A device of its own, signed in to the demo house. Page errors end the test that made them. */
+export async function signedIn(
+  browser: Browser,
+  url: string,
+  role: DemoRole,
+): Promise<{ context: BrowserContext; page: Page }> {
+  const context = await browser.newContext({ viewport: sizes.tablet });
+  const page = await context.newPage();
+  page.on('pageerror', (error) => {
+    throw error;
+  });
+  await page.goto(url);
+  await page.getByLabel('E-mail').fill(`${role}@wrenfold.example`);
+  await page.getByLabel('Password', { exact: true }).fill(`wrenfold-${role}`);
+  await page.getByRole('button', { name: 'Sign in' }).click();
+  await page.getByRole('heading', { level: 1 }).waitFor();
+  return { context, page };
+}
+
+export interface Finding {
+  shot: string;
+  rule: string;
+  where: string;
+}
+
+/**
+ * A picture of the screen as it is now at every size and on both grounds, and what axe finds on it. The clock of a rehearsal should stand
+ * nearly still meanwhile.
+ */
+export async function picture(page: Page, name: string): Promise<Finding[]> {
+  const findings: Finding[] = [];
+  for (const [ground, colorScheme] of Object.entries(grounds)) {
+    await page.emulateMedia({ colorScheme });
+    for (const [size, viewport] of Object.entries(sizes)) {
+      await page.setViewportSize(viewport);
+      await page.evaluate(() => document.fonts.ready.then(() => undefined));
+      const shot = `${name}-${size}-${ground}`;
+      const path = join(import.meta.dirname, 'screenshots', `${shot}.png`);
+      await mkdir(dirname(path), { recursive: true });
+      await page.screenshot({ path, animations: 'disabled' });
+      findings.push(...(await axeOn(page, shot)));
+      findings.push(...(await overflowOn(page, shot)));
+    }
+  }
+  await page.setViewportSize(sizes.tablet);
+  return findings;
+}
+
+async function axeOn(page: Page, shot: string): Promise<Finding[]> {
+  await page.evaluate(axe.source);
+  const { violations } = await page.evaluate(() =>
+    (globalThis as unknown as { axe: typeof axe }).axe.run(document, { resultTypes: ['violations'] }),
+  );
+  return violations.flatMap(({ id, nodes }) =>
+    nodes.map((node) => ({ shot, rule: id, where: `${node.target.join(' ')}: ${node.failureSummary ?? ''}` })),
+  );
+}
+
+/** A page that can be pushed sideways is broken at that size. */
+async function overflowOn(page: Page, shot: string): Promise<Finding[]> {
+  const { scrollWidth, clientWidth } = await page.evaluate(() => {
+    const { scrollWidth: whole, clientWidth: seen } = document.documentElement;
+    return { scrollWidth: whole, clientWidth: seen };
+  });
+  return scrollWidth > clientWidth
+    ? [{ shot, rule: 'no-sideways-scroll', where: `${scrollWidth} px in ${clientWidth} px` }]
+    : [];
+}
