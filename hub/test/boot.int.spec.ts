@@ -1,21 +1,17 @@
-import { spawn, type ChildProcessWithoutNullStreams } from 'node:child_process';
+import type { ChildProcessWithoutNullStreams } from 'node:child_process';
 import { once } from 'node:events';
 import { mkdirSync, mkdtempSync, rmSync, writeFileSync } from 'node:fs';
 import { createServer, type AddressInfo } from 'node:net';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { createInterface } from 'node:readline';
 import request from 'supertest';
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
+import { killHubs, startBuiltHub } from './built-hub.js';
 import { createThrowAwayDatabase, type ThrowAwayDatabase } from './database.js';
-import { testEnvironment } from './create-test-app.js';
 
 // Under Node's own module loader, circular imports of models fail that pass in Vitest: so the built hub is started as it is shipped.
-const main = join(import.meta.dirname, '../dist/main.js');
-
 let database: ThrowAwayDatabase;
 let tabletDist: string;
-const started: ChildProcessWithoutNullStreams[] = [];
 
 beforeAll(async () => {
   database = await createThrowAwayDatabase();
@@ -29,34 +25,10 @@ afterAll(async () => {
   rmSync(tabletDist, { recursive: true });
   await database.drop();
 });
-afterEach(async () => {
-  for (const child of started.splice(0)) {
-    if (child.exitCode !== null || child.signalCode !== null) continue;
-    child.kill('SIGKILL');
-    await once(child, 'exit');
-  }
-});
+afterEach(() => killHubs());
 
-interface Line {
-  event?: string;
-  port?: number;
-  reason?: string;
-  detail?: string;
-}
-
-/** Starts the built hub and waits for its first line that says how it went. */
-async function start(
-  variables: Record<string, string> = {},
-): Promise<{ child: ChildProcessWithoutNullStreams; line: Line }> {
-  const env = { ...testEnvironment, DATABASE_URL: database.url, TABLET_DIST: tabletDist, ...variables };
-  const child = spawn(process.execPath, [main], { env: { PATH: process.env['PATH'], ...env } });
-  started.push(child);
-  for await (const text of createInterface({ input: child.stdout })) {
-    const line = JSON.parse(text) as Line;
-    if (line.event === 'hub.listening' || line.event === 'hub.failed') return { child, line };
-  }
-  throw new Error('The hub said nothing.');
-}
+const start = (variables: Record<string, string> = {}) =>
+  startBuiltHub({ DATABASE_URL: database.url, TABLET_DIST: tabletDist, ...variables });
 
 async function exitOf(child: ChildProcessWithoutNullStreams): Promise<number | string> {
   const [code, signal] = child.exitCode === null ? await once(child, 'exit') : [child.exitCode, child.signalCode];

@@ -49,7 +49,7 @@ export function handshake(socket: HubSocket): Promise<Problem | null> {
   });
 }
 
-async function connected(socket: HubSocket): Promise<HubSocket> {
+export async function connected(socket: HubSocket): Promise<HubSocket> {
   const problem = await handshake(socket);
   if (problem) throw new Error(`The hub let nobody in: ${problem.detail}`);
   return socket;
