@@ -1,5 +1,12 @@
 import { useEffect, useRef } from 'react';
-import { alertWords, currentStep, standingAlerts, type Alert } from '@steepfall/shared/runs';
+import {
+  alertWords,
+  currentStep,
+  standingAlerts,
+  type Alert,
+  type RunState,
+  type StepProgress,
+} from '@steepfall/shared/runs';
 import { formatMass } from '@steepfall/shared/units';
 import { PressButton } from '#components/press-button.tsx';
 import { ShapeGlyph } from '#components/shapes.tsx';
@@ -8,8 +15,8 @@ import { alertStageId, takeOverAlert } from '#lib/run-store/take-over.ts';
 import { alertLevel, dueAtMs, dueText } from './alert-level.ts';
 
 interface AlertTakeOverProps {
-  /** Marks a step done, with the temperature of this instant. */
-  onComplete: (stepId: string) => void;
+  /** Marks steps done in this order, with the temperature of this instant. */
+  onComplete: (stepIds: string[]) => void;
 }
 
 /** Act now: the verb, the amount, the bag, the number. The live temperature stays above it. */
@@ -20,6 +27,12 @@ export function AlertTakeOver({ onComplete }: AlertTakeOverProps) {
   return <TakeOver key={alertStageId(alert)} alert={alert} onComplete={onComplete} />;
 }
 
+/** The steps from the current one to this one; empty when it is not ahead. */
+function stepsUpTo(state: RunState, stepId: string | null): StepProgress[] {
+  const open = state.steps.filter(({ status }) => status !== 'done');
+  return open.slice(0, open.findIndex(({ step }) => step.id === stepId) + 1);
+}
+
 function TakeOver({ alert, onComplete }: AlertTakeOverProps & { alert: Alert }) {
   const { state, isJoined } = useRun();
   const store = useRunStore();
@@ -28,8 +41,11 @@ function TakeOver({ alert, onComplete }: AlertTakeOverProps & { alert: Alert }) 
   const { verb, amounts, sentence } = alertWords(state, alert);
   const number = alertLevel(alert);
   const current = currentStep(state);
-  const act = state.steps.find(({ step }) => step.id === alert.actStepId);
-  const isActCurrent = current !== null && act?.step.id === current.step.id;
+  const path = stepsUpTo(state, alert.actStepId);
+  const forgotten = path.slice(0, -1).find(({ step }) => step.done.by === 'hand' || step.done.by === 'measurement');
+  // What goes on by itself is done with the act: one tap, with the hands full.
+  const toComplete = forgotten ? [forgotten] : path.length > 0 ? path : current ? [current] : [];
+  const isAct = path.length > 0 && !forgotten;
   const others = standingAlerts(state).filter((other) => alertStageId(other) !== alertStageId(alert));
   const isOwnTimer = alert.rule === 'timer' && alert.stepId === null;
 
@@ -52,6 +68,14 @@ function TakeOver({ alert, onComplete }: AlertTakeOverProps & { alert: Alert }) 
           </span>
           {alert.stage === 'missed' ? 'Late' : 'Now'}
           {due ? <span className="tabular-nums"> · {due}</span> : null}
+        </p>
+        <p className="take-over-aside">
+          {[
+            forgotten ? `not ticked yet: ${forgotten.step.title}` : null,
+            others.length > 0 ? `also: ${others.map((other) => alertWords(state, other).verb).join(', ')}` : null,
+          ]
+            .filter(Boolean)
+            .join(' · ')}
         </p>
       </div>
       <section className="take-over" aria-label="Alert">
@@ -84,10 +108,6 @@ function TakeOver({ alert, onComplete }: AlertTakeOverProps & { alert: Alert }) 
               : 'The hub is away, so no reading comes in. Watch a thermometer by hand until it is back.'}
           </p>
         ) : null}
-        {act && !isActCurrent && current ? <p className="step-detail">Not ticked yet: {current.step.title}.</p> : null}
-        {others.length > 0 ? (
-          <p className="step-detail">Also: {others.map((other) => alertWords(state, other).verb).join(', ')}.</p>
-        ) : null}
       </section>
       <section className="act-bar" aria-label="Act">
         <PressButton
@@ -99,17 +119,17 @@ function TakeOver({ alert, onComplete }: AlertTakeOverProps & { alert: Alert }) 
         </PressButton>
         <div className="act-pair">
           <PressButton
-            className={isActCurrent ? 'act-main act-quiet' : 'act-main'}
+            className={isAct ? 'act-main act-quiet' : 'act-main'}
             onPress={acknowledge}
             note="stops the sound"
           >
             {isOwnTimer ? 'Stop the timer' : 'Heard it'}
           </PressButton>
-          {current && !isOwnTimer ? (
+          {toComplete.length > 0 && !isOwnTimer ? (
             <PressButton
-              className={isActCurrent ? 'act-main' : 'act-main act-quiet'}
-              onPress={() => onComplete(current.step.id)}
-              note={current.step.title}
+              className={isAct ? 'act-main' : 'act-main act-quiet'}
+              onPress={() => onComplete(toComplete.map(({ step }) => step.id))}
+              note={toComplete.at(-1)?.step.title}
             >
               Done
             </PressButton>

@@ -1,3 +1,4 @@
+import type { Step } from '@steepfall/shared/sheets';
 import { secondsLeft, type Timer } from '@steepfall/shared/timers';
 import { currentStep, type RunState } from '@steepfall/shared/runs';
 import { formatDuration } from '@steepfall/shared/units';
@@ -51,7 +52,7 @@ function Countdown() {
       </div>
     );
   }
-  return hasLevel ? <CrossingCountdown /> : null;
+  return hasLevel ? <CrossingCountdown isAwaited={isByTemperature(currentStep(state)?.step ?? null)} /> : null;
 }
 
 function TimerFigure({ timer }: { timer: Timer }) {
@@ -59,7 +60,12 @@ function TimerFigure({ timer }: { timer: Timer }) {
   return <span data-long={text.length > 5 || undefined}>{text}</span>;
 }
 
-function CrossingCountdown() {
+function isByTemperature(step: Step | null): boolean {
+  return step?.start.by === 'temperature' || step?.done.by === 'temperature';
+}
+
+/** `isAwaited`: the step itself waits for the level. Otherwise a forecast is news, and that there is none is not. */
+function CrossingCountdown({ isAwaited }: { isAwaited: boolean }) {
   const state = useRunState();
   const actStepId = useLive(({ view }) => view?.target?.actStepId ?? null);
   const kind = useLive(({ view }) => view?.forecast?.kind ?? null);
@@ -81,6 +87,7 @@ function CrossingCountdown() {
   const current = currentStep(state);
   const act = state.steps.find(({ step }) => step.id === actStepId)?.step;
   const what = act && act.id !== current?.step.id ? `${act.title}, in about` : 'comes up in about';
+  if (figure === null && !isAwaited) return null;
   if (isTooLate) {
     return (
       <div className="countdown">

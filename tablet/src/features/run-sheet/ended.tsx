@@ -17,7 +17,8 @@ export function Ended() {
             {outcome === 'abandoned' ? 'Run given up' : 'Run finished'}
           </h1>
           <p className="step-detail tabular-nums">
-            {state.title}, ended at {time}.
+            {state.title}
+            {state.isRehearsal ? '' : `, ended at ${time}`}.
             {pendingCount > 0 ? ` ${pendingCount} still to be sent: keep this tablet on until it says 0.` : ''}
           </p>
         </div>

@@ -51,10 +51,22 @@ function rateOf(live: LiveState): string {
 export function LiveTemperature() {
   const { summary } = useRun();
   const look = useLive(lookOf);
+  const isAwaited = useLive(({ view }) => view?.target != null);
   if (summary && summary.probeId === null) {
     return (
       <div className="live-temp">
         <p className="live-rate text-soft">No probe on this run. Type temperatures with “Measure”.</p>
+      </div>
+    );
+  }
+  // Nothing is waited for and the probe is out of the liquid: no news, and no reason for a large dash.
+  if (look === 'silent' && !isAwaited) {
+    return (
+      <div className="live-temp">
+        <p className="live-rate text-soft">
+          <ShapeGlyph shape="ring" className="size-[0.8em]" />
+          <LiveRate />
+        </p>
       </div>
     );
   }
@@ -66,7 +78,7 @@ export function LiveTemperature() {
       </p>
       <p className={`live-rate ${hueOf[look]}`}>
         <ShapeGlyph shape={shapeOf[look]} className="size-[0.8em]" />
-        <span className="sr-only">{look} </span>
+        {look === 'climbing' || look === 'falling' ? <span className="sr-only">{look} </span> : null}
         <LiveRate />
       </p>
     </div>

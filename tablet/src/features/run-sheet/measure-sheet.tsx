@@ -10,7 +10,8 @@ interface MeasureSheetProps {
   quantity: MeasuredQuantity;
   stepId: string | null;
   done: DoneCondition | null;
-  tempC: number | null;
+  /** The liquid at the instant of the tap. */
+  tempC: () => number | null;
   onRecord: (command: RunCommand) => Promise<Decision>;
   onClose: () => void;
 }
@@ -32,7 +33,7 @@ export function MeasureSheet({ quantity: first, stepId, done, tempC, onRecord, o
     event.preventDefault();
     const { min, max } = measurableRange[quantity];
     if (!Number.isFinite(value)) return setError(`Type a number from ${min} to ${max}.`);
-    const decision = await onRecord({ type: 'recordMeasurement', quantity, value, stepId, tempC });
+    const decision = await onRecord({ type: 'recordMeasurement', quantity, value, stepId, tempC: tempC() });
     if (decision.ok) onClose();
     else setError(decision.problem.detail);
   };

@@ -7,9 +7,12 @@ export function probeText({ nowMs, newest }: LiveState): string {
   if (!newest) return 'none yet';
   const ageS = Math.max(0, (nowMs - newest.atMs) / 1000);
   if (newest.tempC === null) return 'no signal';
-  return ageS < 10 ? `${ageS.toFixed(1)} s ago` : `${Math.floor(ageS)} s ago`;
+  if (ageS < 10) return `${ageS.toFixed(1)} s ago`;
+  return ageS < 120 ? `${Math.floor(ageS)} s ago` : `${Math.floor(ageS / 60)} min ago`;
 }
 
-export function isProbeBad({ nowMs, newest }: LiveState): boolean {
+/** Silence is a fault while a level is waited for; later the probe is out of the liquid. */
+export function isProbeBad({ nowMs, newest, view }: LiveState): boolean {
+  if (view !== null && view.target === null) return false;
   return !newest || newest.tempC === null || nowMs - newest.atMs > STALE_S * 1000;
 }

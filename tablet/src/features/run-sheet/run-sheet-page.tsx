@@ -8,7 +8,7 @@ import { ShapeGlyph } from '#components/shapes.tsx';
 import { stationName } from '#lib/ids.ts';
 import { usePedal } from '#lib/press/use-pedal.ts';
 import { RunProvider, useOpenRun, useRun, useRunState, useRunStore } from '#lib/run-store/run-context.tsx';
-import type { RunSnapshot } from '#lib/run-store/run-store.ts';
+import type { RunSnapshot, RunStore } from '#lib/run-store/run-store.ts';
 import { takeOverAlert } from '#lib/run-store/take-over.ts';
 import { useStored } from '#lib/value-store.ts';
 import { holdRunLock } from '#lib/wake-lock/run-lock.ts';
@@ -39,7 +39,7 @@ export interface RunSheetPageProps {
   /** Warnings that leave the step in place. */
   strips: ReactNode;
   /** Instead of step and act, while an alert says "now". */
-  TakeOver: ComponentType<{ onComplete: (stepId: string) => void }>;
+  TakeOver: ComponentType<{ onComplete: (stepIds: string[]) => void }>;
   /** Draws nothing. */
   ringer: ReactNode;
 }
@@ -92,6 +92,13 @@ function Nothing({ title, children }: { title: string; children: ReactNode }) {
   );
 }
 
+/** The liquid at this instant in hundredths of a degree; `null` when nobody knows. */
+function liquidNow(store: RunStore): number | null {
+  const { view } = store.live.get();
+  if (view?.estimate.status !== 'live' || view.estimate.tempC === null) return null;
+  return Math.round(view.estimate.tempC * 100) / 100;
+}
+
 function hasCheckedSound({ entries }: RunSnapshot): boolean {
   const station = stationName();
   return entries.some((entry) => entry.type === 'sound.checked' && entry.station === station);
@@ -132,9 +139,7 @@ function Sheet({ rehearsal, soundCheck, strips, TakeOver, ringer }: RunSheetPage
   );
   const complete = useCallback(
     (stepId: string) => {
-      const { view } = store.live.get();
-      const tempC = view?.estimate.status === 'live' ? view.estimate.tempC : null;
-      act({ type: 'completeStep', stepId, tempC: tempC === null ? null : Math.round(tempC * 100) / 100 });
+      act({ type: 'completeStep', stepId, tempC: liquidNow(store) });
     },
     [act, store],
   );
@@ -163,7 +168,7 @@ function Sheet({ rehearsal, soundCheck, strips, TakeOver, ringer }: RunSheetPage
   });
 
   const body = alert ? (
-    <TakeOver onComplete={complete} />
+    <TakeOver onComplete={(stepIds) => stepIds.forEach(complete)} />
   ) : mustCheckSound ? (
     soundCheck
   ) : isRunning ? (
@@ -182,7 +187,6 @@ function Sheet({ rehearsal, soundCheck, strips, TakeOver, ringer }: RunSheetPage
   );
 
   const close = () => setSheet(null);
-  const { tempC } = store.live.get().view?.estimate ?? { tempC: null };
   return (
     <main className="sheet" data-alert={alert?.stage} data-rehearsal={state.isRehearsal || undefined}>
       {ringer}
@@ -195,7 +199,7 @@ function Sheet({ rehearsal, soundCheck, strips, TakeOver, ringer }: RunSheetPage
       {alert ? null : (
         <div className="slot">
           <Place state={state} />
-          {refusal ? <Refusal text={refusal} /> : strips}
+          {refusal ? <Refusal text={refusal} /> : mustCheckSound ? null : strips}
           <Conflicts />
           <LastDone />
         </div>
@@ -211,7 +215,7 @@ function Sheet({ rehearsal, soundCheck, strips, TakeOver, ringer }: RunSheetPage
           quantity={sheet && 'quantity' in sheet ? sheet.quantity : (current?.step.asks ?? 'pH')}
           stepId={current?.step.id ?? null}
           done={current?.step.done ?? null}
-          tempC={tempC}
+          tempC={() => liquidNow(store)}
           onRecord={record}
           onClose={close}
         />

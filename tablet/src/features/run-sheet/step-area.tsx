@@ -58,7 +58,7 @@ export function StepArea({ onStopTimer }: { onStopTimer: (timerId: string) => vo
           </ul>
         ) : null}
         {step.settings.length > 0 ? (
-          <p className="step-amounts">
+          <p className="step-amounts step-settings">
             {step.settings.map(({ label, quantity, value }) => `${label} ${quantityText(quantity, value)}`).join(' · ')}
           </p>
         ) : null}
