@@ -122,20 +122,27 @@ export class RehearsalsService implements OnApplicationBootstrap, OnModuleDestro
   }
 
   private tick(): void {
-    const wallMs = this.clock.nowMs();
     const open = this.logs.openLogs.filter(({ facts }) => facts.kettleSetup);
     const openIds = new Set(open.map(({ id }) => id));
     for (const id of this.kettles.keys()) if (!openIds.has(id)) this.kettles.delete(id);
     for (const log of open) {
-      if (!this.kettles.has(log.id)) void this.makeAgain(log);
-      const kettle = this.kettles.get(log.id);
-      // Without its probe in the kettle nobody knows what it does.
-      if (!kettle || log.projection.probeOutAtMs !== null) continue;
-      const nowMs = runTimeAt(log.clock, wallMs);
-      // The probe was put back in after a long time: caught up with in turns, as after a restart.
-      if (nowMs - kettle.nowMs > LONGEST_JUMP_MS) this.kettles.delete(log.id);
-      else this.read(log, kettle, nowMs);
+      try {
+        this.goOn(log);
+      } catch (error) {
+        this.complain(log, error);
+      }
     }
+  }
+
+  private goOn(log: RunLog): void {
+    if (!this.kettles.has(log.id)) void this.makeAgain(log);
+    const kettle = this.kettles.get(log.id);
+    // Without its probe in the kettle nobody knows what it does.
+    if (!kettle || log.projection.probeOutAtMs !== null) return;
+    const nowMs = runTimeAt(log.clock, this.clock.nowMs());
+    // The probe was put back in after a long time: caught up with in turns, as after a restart.
+    if (nowMs - kettle.nowMs > LONGEST_JUMP_MS) this.kettles.delete(log.id);
+    else this.read(log, kettle, nowMs);
   }
 
   private read(log: RunLog, kettle: RehearsalKettle, nowMs: number): void {
@@ -148,7 +155,12 @@ export class RehearsalsService implements OnApplicationBootstrap, OnModuleDestro
   private follow({ log, events }: Appended): void {
     const kettle = this.kettles.get(log.id);
     const isAboutKettle = events.some(({ type }) => type === 'step.done' || type === 'event.undone');
-    if (kettle && isAboutKettle) kettle.follow(log.state, runTimeAt(log.clock, this.clock.nowMs()));
+    if (!kettle || !isAboutKettle) return;
+    try {
+      kettle.follow(log.state, runTimeAt(log.clock, this.clock.nowMs()));
+    } catch (error) {
+      this.complain(log, error);
+    }
   }
 
   /** The same kettle after a restart, or a new one: its setup, and everything that was done, at the time it was done. */

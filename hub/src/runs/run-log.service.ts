@@ -99,16 +99,12 @@ export class RunLogService implements OnApplicationBootstrap {
 
   /** The log of a run of this house; throws `run-not-found`. */
   async get(houseId: string, runId: string): Promise<RunLog> {
-    const atHand = this.atHand(runId);
-    if (atHand) {
-      if (atHand.facts.houseId !== houseId) throw runNotFound();
-      return atHand;
-    }
-    return this.turns.take(runId, async () => {
-      const read = this.atHand(runId) ?? (await this.load(houseId, runId));
-      if (read.facts.houseId !== houseId) throw runNotFound();
-      return read;
-    });
+    const log =
+      this.atHand(runId) ??
+      (await this.turns.take(runId, async () => this.atHand(runId) ?? (await this.load(houseId, runId))));
+    if (log.facts.houseId !== houseId) throw runNotFound();
+    this.hold(log);
+    return log;
   }
 
   /** Writes the row of a new run with its first event, in the caller's transaction; `announce` it after commit. */
