@@ -20,6 +20,7 @@ import { root, testDataDir } from './lib/paths.mjs';
 const smallHub = join(root, 'hub/launcher/test-hub');
 
 interface LaunchOptions {
+  dataDir?: string;
   nodeArgs?: string[];
   /** Null for the one that is built. */
   hubDir?: string | null;
@@ -30,7 +31,7 @@ class Launcher {
   printed = '';
   private readonly child: ChildProcess;
 
-  constructor(dataDir: string, args: string[], { nodeArgs = [], hubDir = smallHub }: LaunchOptions = {}) {
+  constructor(args: string[], { dataDir, nodeArgs = [], hubDir = smallHub }: LaunchOptions) {
     this.child = spawn(process.execPath, [...nodeArgs, join(root, 'hub/launcher/start.mjs'), ...args], {
       cwd: root,
       env: {
@@ -67,7 +68,7 @@ const launchers: Launcher[] = [];
 const hubPids: number[] = [];
 
 function launch(args: string[] = [], options: LaunchOptions = {}): Launcher {
-  const launcher = new Launcher(dataDir, args, options);
+  const launcher = new Launcher(args, { dataDir, ...options });
   launchers.push(launcher);
   return launcher;
 }
@@ -195,14 +196,13 @@ describe('npm start: what goes wrong', () => {
     other.close();
   });
 
-  test('a folder that cannot be written', async () => {
-    rmSync(dataDir, { recursive: true });
-    // Nobody makes files there, not even root.
-    dataDir = '/sys/steepfall-data';
-    const launcher = launch();
+  test('a data folder that cannot be made', async () => {
+    const file = join(dataDir, 'file');
+    writeFileSync(file, '');
+    const launcher = launch([], { dataDir: join(file, 'data') });
     expect(await launcher.ends()).toBe(1);
     expect(launcher.printed).toMatch(
-      /^\/sys\/steepfall-data cannot be written by this user; make it writable, or .+\.\n$/,
+      /^\S+file\/data cannot be made, for a file is in its place; move that file away\.\n$/,
     );
   });
 

@@ -22,6 +22,9 @@ export function explainDiskError(error, path) {
       return new LauncherError(
         `${failed ?? path} cannot be written by this user; make it writable, or start as the user who owns it.`,
       );
+    case 'ENOTDIR':
+    case 'EEXIST':
+      return new LauncherError(`${failed ?? path} cannot be made, for a file is in its place; move that file away.`);
     case 'ENOSPC':
     case 'EDQUOT':
       return new LauncherError(`The disk that holds ${path} is full; free at least 500 MB and start again.`);
