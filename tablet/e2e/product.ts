@@ -35,7 +35,7 @@ export class Product {
     const hub = spawn(process.execPath, [join(root, 'hub/dist/main.js')], {
       env: {
         ...process.env,
-        DATABASE_URL: await this.mariadb.url('steepfall'),
+        DATABASE_URL: this.mariadb.url('steepfall'),
         PORT: String(this.port),
         HOST: '127.0.0.1',
         JWT_SECRET: 'a secret of the end-to-end tests, and of nothing else',
@@ -68,9 +68,18 @@ export class Product {
 
   /** Rows as they are on disk, read past the hub. */
   async rows<Row>(sql: string, values: unknown[] = []): Promise<Row[]> {
-    const connection = await createConnection(await this.mariadb.url('steepfall'));
+    return [...((await this.query(sql, values)) as Row[])];
+  }
+
+  /** Changes rows past the hub, where no screen and no endpoint does yet. */
+  async execute(sql: string, values: unknown[] = []): Promise<void> {
+    await this.query(sql, values);
+  }
+
+  private async query(sql: string, values: unknown[]): Promise<unknown> {
+    const connection = await createConnection(this.mariadb.url('steepfall'));
     try {
-      return [...((await connection.query({ sql, bigIntAsNumber: true }, values)) as Row[])];
+      return await connection.query({ sql, bigIntAsNumber: true }, values);
     } finally {
       await connection.end();
     }
