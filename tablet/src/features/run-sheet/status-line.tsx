@@ -3,7 +3,7 @@ import { Link } from 'react-router-dom';
 import { Mark } from '#components/mark.tsx';
 import { ShapeGlyph, type Shape } from '#components/shapes.tsx';
 import { alarmSounds, type SoundState } from '#lib/audio/alarm-sounds.ts';
-import { useLive, useRun } from '#lib/run-store/run-context.tsx';
+import { useLive, useRun, useRunStore } from '#lib/run-store/run-context.tsx';
 import { useSession } from '#lib/session.ts';
 import { useStored, useStoredPart } from '#lib/value-store.ts';
 import { wakeState, type WakeState } from '#lib/wake-lock/wake-lock.ts';
@@ -15,6 +15,12 @@ interface ChipLook {
   word: string;
   isBad: boolean;
 }
+
+const hubLook = {
+  live: { shape: 'dot', word: 'live', isBad: false },
+  joining: { shape: 'dash', word: 'joining', isBad: false },
+  away: { shape: 'ring', word: 'away', isBad: true },
+} satisfies Record<string, ChipLook>;
 
 const soundLook: Record<SoundState['health'], ChipLook> = {
   fine: { shape: 'dot', word: 'on', isBad: false },
@@ -38,6 +44,7 @@ export function StatusLine() {
   const [isOpen, setIsOpen] = useState(false);
   const health = useStoredPart(alarmSounds.state, ({ health: now }) => now);
   const wake = useStored(wakeState);
+  const isComing = useStoredPart(useRunStore().link.state, ({ status }) => status !== 'away');
   const time = useLive(() => new Date().toLocaleTimeString([], { hour: '2-digit', minute: '2-digit' }));
   const sound = soundLook[health];
   const heard =
@@ -58,7 +65,7 @@ export function StatusLine() {
         ) : (
           <Chip name="probe" shape="dash" word="none" isBad={false} />
         )}
-        <Chip name="hub" shape={isJoined ? 'dot' : 'ring'} word={isJoined ? 'live' : 'away'} isBad={!isJoined} />
+        <Chip name="hub" {...(isJoined ? hubLook.live : isComing ? hubLook.joining : hubLook.away)} />
         {pendingCount > 0 ? <Chip name="to send" shape="dash" word={String(pendingCount)} isBad={false} /> : null}
         {parked.length > 0 ? <Chip name="refused" shape="diamond" word={String(parked.length)} isBad /> : null}
         {isDurable ? null : <Chip name="records" shape="ring" word="not kept" isBad />}

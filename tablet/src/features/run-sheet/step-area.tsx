@@ -66,9 +66,9 @@ export function StepArea({ onStopTimer }: { onStopTimer: (timerId: string) => vo
         {measured.length > 0 ? (
           <p className="step-detail">Measured: {measured.map(measurementText).join(', ')}</p>
         ) : null}
-        <Cautions cautions={step.cautions} />
       </div>
       <Waiting onStop={onStopTimer} />
+      <Cautions cautions={step.cautions} />
     </section>
   );
 }

@@ -128,8 +128,8 @@ class AlarmSounds {
       }
     }
     this.judge();
-    const isStandByDue = this.playing?.level === 'stand-by' && nowMs - this.lastStartMs >= STAND_BY_EVERY_MS;
-    if (isStandByDue) this.begin(this.playing);
+    const { playing } = this;
+    if (playing?.level === 'stand-by' && nowMs - this.lastStartMs >= STAND_BY_EVERY_MS) this.begin(playing);
   }
 
   private judge(): void {
@@ -146,12 +146,12 @@ class AlarmSounds {
   private apply(): void {
     const { wanted, playing } = this;
     if (wanted?.id === playing?.id && wanted?.level === playing?.level) return;
-    if (playing) this.halt();
     if (wanted && this.state.get().health === 'fine') this.begin(wanted);
+    else if (playing) this.halt();
   }
 
-  private begin(ring: Ring | null): void {
-    if (!ring) return;
+  /** Whatever sounded before stops without a word: listeners hear of the new one only. */
+  private begin(ring: Ring): void {
     this.stopAll();
     this.playing = ring;
     this.lastStartMs = performance.now();

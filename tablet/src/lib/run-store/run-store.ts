@@ -140,6 +140,10 @@ export class RunStore {
     if (this.isJoined) void this.parts.link.ask('run.leave', { runId: this.runId }).catch(() => undefined);
   }
 
+  get link(): HubLink {
+    return this.parts.link;
+  }
+
   /** Run clock, epoch ms. */
   nowMs(): number {
     const hubMs = this.parts.clock.nowMs();
