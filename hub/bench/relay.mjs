@@ -1,6 +1,6 @@
 /**
- * `npm run bench:relay`: how long a reading is on its way from a probe through the hub to a tablet, next to a bare socket.io relay in the
- * same run. The hub is the built one, on a MariaDB of its own that is thrown away; both are measured in turns, so that the noise of the
+ * `npm run bench:relay`: how long a reading is on its way from a probe through the hub to a tablet and onto its screen, next to a bare
+ * socket.io relay in the same run. The hub is the built one, on a MariaDB of its own that is thrown away; both are measured in turns, so that the noise of the
  * machine meets both alike. `--count 500` sets how many readings, `--every 60` the pause between two in ms.
  */
 import { spawn } from 'node:child_process';
@@ -10,6 +10,7 @@ import { createInterface } from 'node:readline';
 import { parseArgs } from 'node:util';
 import { PROTOCOL_VERSION } from '@steepfall/shared/contracts';
 import { io } from 'socket.io-client';
+import { openScreen } from './screen.mjs';
 import { createTestDatabase, startTestDatabase } from '../launcher/lib/test-database.mjs';
 
 const { values } = parseArgs({
@@ -18,10 +19,14 @@ const { values } = parseArgs({
 const count = Math.min(5_000, Math.max(20, Number(values.count)));
 const everyMs = Math.min(1_000, Math.max(50, Number(values.every)));
 const WARM_UP = 20;
+/** A temperature that rises by one shown digit a reading, so that each reading changes the screen. */
+const SCREEN = { count: 100, everyMs: 500, fromC: 40, stepC: 0.1, settle: 20 };
 const ANSWER_WITHIN_MS = 10_000;
+const brewer = { email: 'brewer@wrenfold.example', password: 'wrenfold-brewer' };
 
 /** @typedef {{ fromSentMs: number[], fromAcceptedMs: number[], acknowledgedMs: number[] }} Times */
 /** @typedef {{ name: string, device: import('socket.io-client').Socket, tablet: import('socket.io-client').Socket }} Line */
+/** @typedef {Line & { url: string, runId: string }} HubLine */
 
 /** @type {(() => Promise<void> | void)[]} */
 const undo = [];
@@ -44,17 +49,52 @@ async function main() {
   const [bare, ours] = lines.map(({ line, times }) => told(line.name, times));
   const ratio = (/** @type {'median' | 'p99'} */ which) => (ours[which] / bare[which]).toFixed(2);
   console.log(`hub ÷ bare relay, from sent: median ${ratio('median')}×, p99 ${ratio('p99')}×`);
+  await ontoTheScreen(hub);
 }
 
-/** The built hub with the demo house: its probe streams into the run of its planned batch, one tablet looks on. @returns {Promise<Line>} */
+/**
+ * From accepted to painted, in real Chromium on the run sheet.
+ * @param {HubLine} line
+ */
+async function ontoTheScreen({ device, tablet, url, runId }) {
+  const screen = await openScreen({ url, runId, ...brewer });
+  undo.push(() => screen.close());
+  /** @type {number[]} */
+  const acceptedMs = [];
+  tablet.on('run.readings', (/** @type {{ acceptedMs: number }} */ message) => acceptedMs.push(message.acceptedMs));
+  for (let index = 0; index < SCREEN.settle + SCREEN.count; index += 1) {
+    const reading = { atMs: Date.now(), tempC: SCREEN.fromC + index * SCREEN.stepC };
+    await device.timeout(ANSWER_WITHIN_MS).emitWithAck('readings.push', { readings: [reading] });
+    await pause(SCREEN.everyMs);
+  }
+  const paintedMs = await screen.paintedAtMs();
+  // A reading that leaves the shown digit as it is paints nothing; what is painted belongs to the newest reading before it.
+  const waits = paintedMs.flatMap((atMs) => {
+    const fromMs = acceptedMs.slice(SCREEN.settle).findLast((accepted) => accepted <= atMs);
+    return fromMs === undefined ? [] : [atMs - fromMs];
+  });
+  console.log(
+    `on the screen, from accepted: median ${at(waits, 0.5).toFixed(0)}, p99 ${at(waits, 0.99).toFixed(0)} ` +
+      `(${waits.length} of ${SCREEN.count} readings changed the shown figure)`,
+  );
+}
+
+/** The built hub with the demo house: its probe streams into the run of its planned batch, one tablet looks on. @returns {Promise<HubLine>} */
 async function throughHub() {
   const server = await startTestDatabase();
   undo.push(() => server.stop());
   process.env['STEEPFALL_TEST_MARIADB_URL'] = server.url;
   const { url: databaseUrl } = await createTestDatabase();
   const entry = join(import.meta.dirname, '../dist/main.js');
+  const tabletDist = join(import.meta.dirname, '../../tablet/dist');
   const secrets = { JWT_SECRET: 'a secret of the bench, known to everybody', DATABASE_URL: databaseUrl };
-  const port = await startProcess([entry], { ...secrets, DEMO: 'on', PORT: '0', LOG_LEVEL: 'error' });
+  const port = await startProcess([entry], {
+    ...secrets,
+    DEMO: 'on',
+    PORT: '0',
+    LOG_LEVEL: 'error',
+    TABLET_DIST: tabletDist,
+  });
   const url = `http://127.0.0.1:${port}`;
 
   let bearer = '';
@@ -68,10 +108,7 @@ async function throughHub() {
     if (!response.ok) throw new Error(`${method} ${path}: ${response.status} ${await response.text()}`);
     return response.json();
   };
-  const { accessToken } = await call('POST', '/auth/sign-in', {
-    email: 'brewer@wrenfold.example',
-    password: 'wrenfold-brewer',
-  });
+  const { accessToken } = await call('POST', '/auth/sign-in', brewer);
   bearer = accessToken;
   const [probe] = await call('GET', '/probes', null);
   const { deviceToken } = await call('POST', `/probes/${probe.id}/token`, null);
@@ -82,7 +119,7 @@ async function throughHub() {
   const tablet = await connect(url, { accessToken, protocol: PROTOCOL_VERSION });
   const joined = await tablet.timeout(ANSWER_WITHIN_MS).emitWithAck('run.join', { runId: run.id, afterSeq: 0 });
   if (joined.problem) throw new Error(joined.problem.detail);
-  return { name: 'hub', device, tablet };
+  return { name: 'hub', device, tablet, url, runId: run.id };
 }
 
 /** @returns {Promise<Line>} */
@@ -171,8 +208,6 @@ async function send({ device, tablet }, times) {
  * @param {Times} times
  */
 function told(name, times) {
-  const at = (/** @type {number[]} */ list, /** @type {number} */ share) =>
-    list.toSorted((a, b) => a - b)[Math.min(list.length - 1, Math.floor(list.length * share))] ?? 0;
   const words = (/** @type {number[]} */ list) =>
     `median ${at(list, 0.5).toFixed(2)}, p99 ${at(list, 0.99).toFixed(2)}`;
   console.log(
@@ -180,6 +215,14 @@ function told(name, times) {
       `sent to acknowledged: ${words(times.acknowledgedMs)}`,
   );
   return { median: at(times.fromSentMs, 0.5), p99: at(times.fromSentMs, 0.99) };
+}
+
+/**
+ * @param {number[]} list
+ * @param {number} share
+ */
+function at(list, share) {
+  return list.toSorted((a, b) => a - b)[Math.min(list.length - 1, Math.floor(list.length * share))] ?? 0;
 }
 
 /** @param {number} durationMs */

@@ -47,7 +47,7 @@ export async function signedIn(
   await page.getByLabel('E-mail').fill(`${role}@wrenfold.example`);
   await page.getByLabel('Password', { exact: true }).fill(`wrenfold-${role}`);
   await page.getByRole('button', { name: 'Sign in' }).click();
-  await page.getByRole('heading', { level: 1 }).waitFor();
+  await page.getByLabel('E-mail').waitFor({ state: 'detached' });
   return { context, page };
 }
 
