@@ -20,6 +20,7 @@ import { root, testDataDir } from './lib/paths.mjs';
 const smallHub = join(root, 'hub/launcher/test-hub');
 
 interface LaunchOptions {
+  env?: NodeJS.ProcessEnv;
   dataDir?: string;
   nodeArgs?: string[];
   /** Null for the one that is built. */
@@ -31,11 +32,12 @@ class Launcher {
   printed = '';
   private readonly child: ChildProcess;
 
-  constructor(args: string[], { dataDir, nodeArgs = [], hubDir = smallHub }: LaunchOptions) {
+  constructor(args: string[], { dataDir, env, nodeArgs = [], hubDir = smallHub }: LaunchOptions) {
     this.child = spawn(process.execPath, [...nodeArgs, join(root, 'hub/launcher/start.mjs'), ...args], {
       cwd: root,
       env: {
         ...process.env,
+        ...env,
         STEEPFALL_DATA_DIR: dataDir,
         ...(hubDir === null ? {} : { STEEPFALL_HUB_DIR: hubDir }),
       },
@@ -61,6 +63,13 @@ class Launcher {
   signal(signal: NodeJS.Signals): void {
     this.child.kill(signal);
   }
+
+  /** What it started holds on to its output, so only its own end is waited for. */
+  async kill(): Promise<void> {
+    const ended = once(this.child, 'exit');
+    this.child.kill('SIGKILL');
+    await ended;
+  }
 }
 
 let dataDir: string;
@@ -73,8 +82,8 @@ function launch(args: string[] = [], options: LaunchOptions = {}): Launcher {
   return launcher;
 }
 
-async function launchUntilReady(): Promise<Launcher> {
-  const launcher = launch(['--port', String(await freePort())]);
+async function launchUntilReady(options: LaunchOptions = {}): Promise<Launcher> {
+  const launcher = launch(['--port', String(await freePort())], options);
   await launcher.says('Steepfall is ready');
   hubPids.push(hubPid());
   return launcher;
@@ -107,6 +116,8 @@ afterEach(async () => {
     launcher.signal('SIGTERM');
     await launcher.ends();
   }
+  // What a failed test has left.
+  for (const pid of runningProcesses()) process.kill(pid, 'SIGKILL');
   hubPids.length = 0;
   rmSync(dataDir, { recursive: true, force: true });
 });
@@ -236,16 +247,23 @@ describe('npm start: what goes wrong', () => {
     expect(runningProcesses()).toEqual([]);
   });
 
-  test('the launcher is killed: the next start finds its way', async () => {
-    const first = await launchUntilReady();
+  test('the launcher is killed: what it started ends by itself', async () => {
+    const launcher = await launchUntilReady();
     const pids = [databasePid(), hubPid()];
-    first.signal('SIGKILL');
-    await first.ends();
-    const second = await launchUntilReady();
-    expect(pids.filter(isAlive)).toEqual([]);
-    second.signal('SIGTERM');
-    expect(await second.ends()).toBe(0);
+    await launcher.kill();
     await untilGone(pids);
+  });
+
+  test('the launcher is killed and leaves the rest running: the next start finds its way', async () => {
+    // Without the tools of the path there is nothing that ends the rest.
+    const first = await launchUntilReady({ env: { PATH: '' } });
+    const pids = [databasePid(), hubPid()];
+    await first.kill();
+    expect(pids.filter(isAlive)).toEqual(pids);
+    const second = await launchUntilReady();
+    expect(second.printed).toContain('Stopping a hub that an earlier start left running');
+    expect(second.printed).toContain('Stopping a database that an earlier start left running');
+    expect(pids.filter(isAlive)).toEqual([]);
   });
 });
 

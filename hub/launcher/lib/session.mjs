@@ -7,6 +7,7 @@ export class Session {
   /** @type {(() => unknown)[]} */
   #undo = [];
   #aborter = new AbortController();
+  #endedMs = 0;
   /** @type {() => void} */
   #leave = () => {};
   #hasEnded = new Promise((/** @type {(value: void) => void} */ leave) => (this.#leave = leave));
@@ -16,11 +17,10 @@ export class Session {
     for (const stream of [process.stdout, process.stderr]) stream.on('error', () => {});
     for (const signal of /** @type {const} */ (['SIGINT', 'SIGTERM', 'SIGHUP']))
       process.on(signal, () => {
-        if (this.#aborter.signal.aborted) {
-          if (signal === 'SIGINT') this.log('Still stopping; the database finishes its writes first.');
-          return;
-        }
-        this.end(0);
+        if (!this.#aborter.signal.aborted) this.end(0);
+        // One Ctrl-C may arrive twice, from the terminal and from npm.
+        else if (signal === 'SIGINT' && performance.now() > this.#endedMs + 700)
+          this.log('Still stopping; the database finishes its writes first.');
       });
   }
 
@@ -57,6 +57,7 @@ export class Session {
   /** @param {number} code of this process */
   end(code) {
     process.exitCode = code;
+    this.#endedMs = performance.now();
     this.#aborter.abort();
     this.#leave();
   }

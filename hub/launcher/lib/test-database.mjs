@@ -1,9 +1,12 @@
 import { randomBytes } from 'node:crypto';
-import { mkdirSync, mkdtempSync, rmSync } from 'node:fs';
-import { join, resolve } from 'node:path';
+import { mkdirSync, mkdtempSync, readdirSync, rmSync, statSync } from 'node:fs';
+import { join } from 'node:path';
 import { startMariadb } from './mariadb.mjs';
+import { testDataDir } from './paths.mjs';
+import { findByArgument } from './processes.mjs';
 
-const testData = resolve(import.meta.dirname, '../../../.test-data');
+/** No test run takes that long; what is older was left by one that was killed. */
+const leftoverAgeMs = 2 * 60 * 60 * 1000;
 
 /**
  * Starts a MariaDB for one test run; `stop` ends it and removes its files.
@@ -11,8 +14,9 @@ const testData = resolve(import.meta.dirname, '../../../.test-data');
  *   whose name begins with `steepfall_test_`
  */
 export async function startTestDatabase() {
-  mkdirSync(testData, { recursive: true });
-  const folder = mkdtempSync(join(testData, 'mariadb-'));
+  mkdirSync(testDataDir, { recursive: true });
+  removeLeftovers();
+  const folder = mkdtempSync(join(testDataDir, 'mariadb-'));
   try {
     const mariadb = await startMariadb({ dataDir: join(folder, 'data'), isThrowAway: true });
     return {
@@ -25,6 +29,16 @@ export async function startTestDatabase() {
   } catch (error) {
     rmSync(folder, { recursive: true, force: true });
     throw error;
+  }
+}
+
+function removeLeftovers() {
+  for (const name of readdirSync(testDataDir)) {
+    const folder = join(testDataDir, name);
+    const isInUse = ['data', 'mariadb'].some((data) => findByArgument(`--datadir=${join(folder, data)}`).length > 0);
+    const facts = statSync(folder, { throwIfNoEntry: false });
+    if (facts && !isInUse && Date.now() - facts.mtimeMs > leftoverAgeMs)
+      rmSync(folder, { recursive: true, force: true });
   }
 }
 
