@@ -103,7 +103,9 @@ export class Practice {
   private next(state: RunState): RunCommand | null {
     const step = currentStep(state)?.step;
     if (!step) return null;
-    const isCalled = standingAlerts(state).some(({ actStepId, stage }) => actStepId === step.id && stage === 'now');
+    const isCalled = standingAlerts(state).some(
+      ({ actStepId, stage }) => actStepId === step.id && (stage === 'now' || stage === 'missed'),
+    );
     if (step.start.by === 'temperature' && !isCalled) return null;
     if (step.done.by === 'hand') return { type: 'completeStep', stepId: step.id, tempC: null };
     if (step.done.by !== 'measurement') return null;

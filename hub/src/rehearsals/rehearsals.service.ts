@@ -3,6 +3,7 @@ import { Injectable, Logger, type OnApplicationBootstrap, type OnModuleDestroy }
 import { startKettle, type KettleSetup } from '@steepfall/probe-sim/kettle';
 import type { Equipment, RunSummary, StartRehearsal } from '@steepfall/shared/contracts';
 import { ProblemError } from '@steepfall/shared/problems';
+import type { Reading } from '@steepfall/shared/readings';
 import type { RunEventOf } from '@steepfall/shared/runs';
 import { runTimeAt } from '@steepfall/shared/timers';
 import type { Subscription } from 'rxjs';
@@ -146,9 +147,15 @@ export class RehearsalsService implements OnApplicationBootstrap, OnModuleDestro
   }
 
   private read(log: RunLog, kettle: RehearsalKettle, nowMs: number): void {
-    const readings = kettle.readingsUntil(nowMs).filter(({ atMs }) => atMs >= nowMs - RECENT_MS);
+    this.tell(
+      log,
+      kettle.readingsUntil(nowMs).filter(({ atMs }) => atMs >= nowMs - RECENT_MS),
+    );
+  }
+
+  /** A simulated probe does not store and forward: what cannot be kept just now is gone. */
+  private tell(log: RunLog, readings: Reading[]): void {
     if (readings.length === 0) return;
-    // A simulated probe does not store and forward: what cannot be kept just now is gone.
     this.ingestion.ingest(log.facts.probeId as string, readings).catch((error: unknown) => this.complain(log, error));
   }
 
@@ -170,12 +177,24 @@ export class RehearsalsService implements OnApplicationBootstrap, OnModuleDestro
       const nowMs = () => runTimeAt(log.clock, this.clock.nowMs());
       const startedAtMs = log.state.startedAtMs as number;
       const kettle = new RehearsalKettle(log.facts.kettleSetup as KettleSetup, startedAtMs);
-      const toldUntilMs = (await this.readings.recent(log, this.clock.nowMs())).at(-1)?.atMs ?? startedAtMs - 1;
+      const lastToldMs = (await this.readings.recent(log, this.clock.nowMs())).at(-1)?.atMs ?? startedAtMs - 1;
+      const untoldFromMs = Math.max(lastToldMs + 1, nowMs() - RECENT_MS);
+      const untold: Reading[] = [];
+      const passTime = async (untilMs: number) => {
+        while (log.isOpen && kettle.nowMs < untilMs) {
+          const readings = kettle.readingsUntil(Math.min(untilMs, kettle.nowMs + CATCH_UP_MS));
+          untold.push(...readings.filter(({ atMs }) => atMs >= untoldFromMs));
+          await setImmediate();
+        }
+      };
       for (const { state, learnedAtMs } of actsOf(log.events)) {
-        await passTime(log, kettle, learnedAtMs);
+        await passTime(learnedAtMs);
         kettle.follow(state, learnedAtMs);
       }
-      if (log.projection.probeOutAtMs === null) await passTime(log, kettle, Math.max(toldUntilMs, nowMs() - RECENT_MS));
+      if (log.projection.probeOutAtMs === null) {
+        await passTime(untoldFromMs);
+        this.tell(log, untold);
+      }
       // What was done while this went on.
       kettle.follow(log.state, nowMs());
       if (log.isOpen) this.kettles.set(log.id, kettle);
@@ -224,14 +243,6 @@ export class RehearsalsService implements OnApplicationBootstrap, OnModuleDestro
 
   private complain({ id }: RunLog, error: unknown): void {
     this.logger.error('rehearsal.failed', error instanceof Error ? error.stack : String(error), { runId: id });
-  }
-}
-
-/** Lets the kettle come to an instant of the run clock; what its probe said on the way is known already. */
-async function passTime(log: RunLog, kettle: RehearsalKettle, untilMs: number): Promise<void> {
-  while (log.isOpen && kettle.nowMs < untilMs) {
-    kettle.readingsUntil(Math.min(untilMs, kettle.nowMs + CATCH_UP_MS));
-    await setImmediate();
   }
 }
 
