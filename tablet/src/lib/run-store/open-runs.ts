@@ -35,6 +35,12 @@ export function openOutbox(houseId: string): Promise<Outbox> {
   return outbox;
 }
 
+/** Sends what is still waiting on this station, without a run open. */
+export async function sendLeftOvers(houseId: string): Promise<void> {
+  const store = await openEventStore(houseId);
+  if ((await store.outbox()).length > 0) await openOutbox(houseId);
+}
+
 function startHeartbeat(): void {
   if (isTicking) return;
   isTicking = true;

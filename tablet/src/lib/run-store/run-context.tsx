@@ -1,4 +1,4 @@
-import { createContext, useContext, useEffect, useState, useSyncExternalStore, type ReactNode } from 'react';
+import { createContext, useContext, useEffect, useState, type ReactNode } from 'react';
 import type { RunState } from '@steepfall/shared/runs';
 import { useStored, useStoredPart } from '../value-store.ts';
 import { takeRun } from './open-runs.ts';
@@ -49,10 +49,4 @@ export function useRunState(): RunState {
 /** A primitive of what changes with readings and time. */
 export function useLive<Part extends string | number | boolean | null>(pick: (live: LiveState) => Part): Part {
   return useStoredPart(useRunStore().live, pick);
-}
-
-/** For drawings that write themselves: called after each reading and tick. */
-export function useLiveVersion(): LiveState {
-  const { live } = useRunStore();
-  return useSyncExternalStore(live.subscribe, live.get);
 }
