@@ -1,5 +1,25 @@
-import { E, EE, ES, F, FE, FF, FS, LOG_WEIGHT, S, SS, STRIDE, T, TE, TF, TS, TT, EDDY_MEMORY_S } from './kalman.js';
-import { predict, transition, update } from './kalman.js';
+import {
+  E,
+  EE,
+  ES,
+  F,
+  FE,
+  FF,
+  FS,
+  LOG_WEIGHT,
+  S,
+  SS,
+  STRIDE,
+  T,
+  TE,
+  TF,
+  TS,
+  TT,
+  EDDY_MEMORY_S,
+  predict,
+  transition,
+  update,
+} from './kalman.js';
 import type { WatchConfig } from './types.js';
 import { slopeLaw, type Surroundings } from './slope-law.js';
 
