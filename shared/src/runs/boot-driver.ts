@@ -28,7 +28,7 @@ export function bootDriver({ config, entries, readings, nowMs, runId, station }:
   const ordered = inLogOrder(entries);
   const firstMs = readings[0]?.atMs ?? nowMs;
   const turns = ordered
-    .filter(({ type, atMs }) => (type === 'step.done' || type === 'event.undone') && atMs > firstMs)
+    .filter((entry) => isTurn(entry) && entry.atMs > firstMs)
     .map(({ atMs }) => atMs)
     .slice(-TURNS);
 
@@ -44,4 +44,11 @@ export function bootDriver({ config, entries, readings, nowMs, runId, station }:
     from = to;
   }
   return driveRun(driver, foldRun(ordered), { runId, station, readings: readings.slice(from), nowMs });
+}
+
+/** What the watch and the ladders were told at that moment: acts, and that a level is waited for once more. */
+function isTurn(entry: LogEntry): boolean {
+  const event = entry as RunEvent;
+  if (event.type === 'alert.raised') return event.payload.crossing > 1;
+  return event.type === 'step.done' || event.type === 'event.undone';
 }

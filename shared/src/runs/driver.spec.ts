@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { LogBuilder, RUN_ID, START_MS } from '../testing/run-builders.js';
+import { buildSheet, LogBuilder, RUN_ID, START_MS } from '../testing/run-builders.js';
 import { armedIn, driveRun, liveView, startDriver, type RunDriver } from './driver.js';
 import { runEventSchema, type RunEvent, type RunEventOf } from './events.js';
 import { foldRun } from './fold.js';
@@ -139,6 +139,47 @@ describe(driveRun, () => {
     drive.along(20, (seconds) => falling(80)(60 + seconds));
     expect(standingAlerts(drive.state).filter(({ key }) => key === 'signal')).toEqual([]);
     expect(drive.found.map(({ type }) => type)).toContain('alert.cleared');
+  });
+
+  it('waits for silence on the wall as well when the clock is fast', () => {
+    const fast = { anchorWallMs: START_MS, anchorRunMs: START_MS, rate: 60 };
+    const log = new LogBuilder(buildSheet(), { isRehearsal: true, clock: fast });
+    log.done('light-heat', 'heat', 'tea-in', 'steep', 'tea-out', 'chill');
+    const drive = new Drive(log).along(20, falling(80)).along(90, () => null);
+    expect(drive.stages('signal')).toEqual([]);
+    expect(drive.along(60, () => null).stages('signal')).toEqual(['now']);
+  });
+
+  it('is not misled by a probe or a tablet whose clock is ahead', () => {
+    const drive = new Drive(toCatch()).along(20, falling(80));
+    const ahead = { runId: RUN_ID, station: 'hub', nowMs: drive.nowMs };
+    const reading = { atMs: drive.nowMs + 50_000, tempC: falling(80)(20) };
+    drive.driver = driveRun(drive.driver, drive.state, { ...ahead, readings: [reading] }).driver;
+    drive.log.add('event.undone', { eventId: drive.log.entries[6]?.id ?? '' });
+    drive.log.add('step.done', { stepId: 'chill', cause: 'hand', tempC: null }, { atMs: drive.nowMs + 3_600_000 });
+    drive.along(60, (seconds) => falling(80)(20 + seconds));
+    const { estimate } = liveView(drive.driver, drive.state, drive.nowMs);
+    expect(estimate.status).toBe('live');
+    expect(Math.abs((estimate.tempC ?? 0) - falling(80)(80))).toBeLessThan(1);
+  });
+
+  it('takes a batch in any order', () => {
+    const readings = Array.from({ length: 60 }, (_, index) => ({
+      atMs: START_MS + (index + 1) * 1000,
+      tempC: falling(80)(index + 1),
+    }));
+    const input = { runId: RUN_ID, station: 'hub', nowMs: START_MS + 60_000, readings: readings.toReversed() };
+    const { driver } = driveRun(startDriver(config), foldRun(toCatch().entries), input);
+    expect(liveView(driver, foldRun(toCatch().entries), input.nowMs).estimate.status).toBe('live');
+  });
+
+  it('takes a call back when the level is armed anew', () => {
+    const drive = new Drive(toCatch()).along(60, falling(80));
+    expect(drive.stages('hops-in')).toContain('coming-up');
+    const turned = falling(80)(60);
+    drive.along(240, (seconds) => Math.min(84, turned + seconds * 0.1));
+    expect(drive.found.some((event) => event.type === 'alert.cleared' && event.payload.key === 'hops-in')).toBe(true);
+    expect(standingAlerts(drive.state)).toEqual([]);
   });
 
   it('does not wait for a probe once the keg is filled', () => {

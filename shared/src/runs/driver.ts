@@ -27,6 +27,10 @@ const DERIVED_ID_NAMESPACE = '6e0f3a52-1d0c-4f0f-9a5e-7c1b2d94b3e8';
 
 /** Silence at the start counts from the first tick; the same 30 s that make a later silence an alert. */
 const FIRST_READING_DUE_MS = 30_000;
+/** On a fast clock a hiccup of the network is half a minute of run time: silence also has to last this long on the wall. */
+const SILENT_WALL_MS = 2_000;
+/** Older than this, nobody can say any more what the liquid was then. */
+const SAME_INSTANT_MS = 5_000;
 
 export interface DriverConfig {
   watch: WatchConfig;
@@ -93,25 +97,31 @@ export function driveRun(
   input: DriveInput,
 ): { driver: RunDriver; events: RunEvent[] } {
   if (state.status !== 'running') return { driver, events: [] };
-  let next = tellActs({ ...driver, firstTickMs: driver.firstTickMs ?? input.nowMs }, state);
+  let next = tellActs({ ...driver, firstTickMs: driver.firstTickMs ?? input.nowMs }, state, input.nowMs);
   const armed = armedIn(state);
   const events: RunEvent[] = [];
 
   const climb = (atMs: number) => {
     for (const item of armed) {
       const climbed = climbLadder(next, item, atMs);
+      events.push(...calledOff(state, input, item, next, climbed.driver));
       next = climbed.driver;
       events.push(...climbed.raised.map((alert) => raisedEvent(input, item, alert)));
     }
   };
-  for (const reading of input.readings) {
+  for (const reading of inTimeOrder(input)) {
     next = { ...next, watch: watchReading(next.watch, reading) };
-    if (reading.atMs <= input.nowMs) climb(reading.atMs);
+    climb(reading.atMs);
   }
   climb(input.nowMs);
 
   events.push(...automaticDone(next, state, input), ...signalEvents(next, state, armed, input));
   return { driver: next, events };
+}
+
+/** A probe whose clock is ahead still tells of now: stamped later, it would make every reading after it look late. */
+function inTimeOrder({ readings, nowMs }: DriveInput): Reading[] {
+  return readings.map(({ atMs, tempC }) => ({ atMs: Math.min(atMs, nowMs), tempC })).sort((a, b) => a.atMs - b.atMs);
 }
 
 /** What a screen shows of the watch at this run time. */
@@ -137,11 +147,12 @@ const reverseOf: Partial<Record<VesselAct, VesselAct>> = {
 };
 
 /** What was done to the vessel, as the done steps say; a step taken back takes its act back where that is possible. */
-function tellActs(driver: RunDriver, state: RunState): RunDriver {
+function tellActs(driver: RunDriver, state: RunState, nowMs: number): RunDriver {
   const acts = new Map<string, { act: VesselAct; atMs: number }>();
   for (const { step, doneEventId, doneAtMs } of state.steps) {
     if (doneEventId === null || doneAtMs === null) continue;
-    for (const act of step.acts) acts.set(`${doneEventId}/${act}`, { act, atMs: doneAtMs });
+    // A tablet whose clock is ahead must not move the watch into the future.
+    for (const act of step.acts) acts.set(`${doneEventId}/${act}`, { act, atMs: Math.min(doneAtMs, nowMs) });
   }
   const fresh = [...acts].filter(([key]) => !(key in driver.toldActs)).sort(([, a], [, b]) => a.atMs - b.atMs);
   const gone = Object.entries(driver.toldActs).filter(([key]) => !acts.has(key));
@@ -227,6 +238,21 @@ function climbLadder(driver: RunDriver, item: Armed, atMs: number): { driver: Ru
   return { driver: { ...driver, ladders: { ...driver.ladders, [key]: climbed.ladder } }, raised: climbed.raised };
 }
 
+/** A ladder that was armed anew takes its earlier call back: the heat was turned off, or the liquid came back. */
+function calledOff(
+  state: RunState,
+  input: DriveInput,
+  { key }: Armed,
+  before: RunDriver,
+  after: RunDriver,
+): RunEvent[] {
+  const crossing = before.ladders[key]?.crossing;
+  if (crossing === undefined || after.ladders[key]?.crossing === crossing) return [];
+  const alert = state.alerts.find((one) => one.key === key && one.crossing === crossing);
+  if (!alert || alert.clearedAtMs !== null) return [];
+  return [derivedEvent(input, 'alert.cleared', `${key}/${crossing}`, input.nowMs, { key, crossing })];
+}
+
 function derivedEvent<Type extends RunEventType>(
   { runId, station }: DriveInput,
   type: Type,
@@ -262,17 +288,18 @@ function automaticDone(driver: RunDriver, state: RunState, input: DriveInput): R
   const { id, done } = current.step;
   const name = `${id}/${current.undoneCount}`;
   const estimate = estimateAt(driver.watch, input.nowMs);
-  const tempC = estimate.status === 'live' ? estimate.tempC : null;
+  const tempAt = (atMs: number) =>
+    estimate.status === 'live' && input.nowMs - atMs <= SAME_INSTANT_MS ? estimate.tempC : null;
   if (done.by === 'timer') {
     const endsAtMs = current.startedAtMs + done.durationS * 1000;
     if (input.nowMs < endsAtMs) return [];
-    return [derivedEvent(input, 'step.done', name, endsAtMs, { stepId: id, cause: 'timer', tempC })];
+    return [derivedEvent(input, 'step.done', name, endsAtMs, { stepId: id, cause: 'timer', tempC: tempAt(endsAtMs) })];
   }
   if (done.by === 'temperature' && estimate.status === 'live') {
     const forecast = forecastCrossing(driver.watch, done, input.nowMs);
     if (forecast.kind !== 'crossed') return [];
     const atMs = Math.min(Math.max(forecast.atMs, current.startedAtMs), input.nowMs);
-    return [derivedEvent(input, 'step.done', name, atMs, { stepId: id, cause: 'temperature', tempC })];
+    return [derivedEvent(input, 'step.done', name, atMs, { stepId: id, cause: 'temperature', tempC: tempAt(atMs) })];
   }
   return [];
 }
@@ -280,7 +307,8 @@ function automaticDone(driver: RunDriver, state: RunState, input: DriveInput): R
 /** Silence is the fault that matters most while a level is waited for. */
 function signalEvents(driver: RunDriver, state: RunState, armed: readonly Armed[], input: DriveInput): RunEvent[] {
   if (!driver.config.hasProbe) return [];
-  const { status } = estimateAt(driver.watch, input.nowMs);
+  const { status, lastGoodAtMs } = estimateAt(driver.watch, input.nowMs);
+  const silentMs = input.nowMs - (lastGoodAtMs ?? driver.firstTickMs ?? input.nowMs);
   const earlier = state.alerts.filter(({ rule }) => rule === 'signal');
   const open = earlier.find(({ clearedAtMs }) => clearedAtMs === null);
   const level = armed.find((item) => item.by === 'temperature');
@@ -291,10 +319,8 @@ function signalEvents(driver: RunDriver, state: RunState, armed: readonly Armed[
     return [derivedEvent(input, 'alert.cleared', `${key}/${crossing}`, input.nowMs, { key, crossing })];
   }
   const isSilent =
-    status === 'stale' ||
-    status === 'lost' ||
-    (status === 'starting' && input.nowMs - (driver.firstTickMs ?? input.nowMs) >= FIRST_READING_DUE_MS);
-  if (!isSilent || !level) return [];
+    status === 'stale' || status === 'lost' || (status === 'starting' && silentMs >= FIRST_READING_DUE_MS);
+  if (!isSilent || !level || silentMs < SILENT_WALL_MS * (state.clock?.rate ?? 1)) return [];
   const crossing = earlier.length + 1;
   return [
     derivedEvent(input, 'alert.raised', `signal/${crossing}/now`, input.nowMs, {

@@ -124,7 +124,7 @@ export function describeEvent(entry: LogEntry, state: RunState, unit: 'C' | 'F' 
     case 'alert.acknowledged':
       return 'Alert acknowledged';
     case 'alert.cleared':
-      return 'Probe is back';
+      return event.payload.key === 'signal' ? 'Probe alert over' : 'Call taken back';
     case 'run.ended':
       return event.payload.outcome === 'finished'
         ? 'Run finished'
