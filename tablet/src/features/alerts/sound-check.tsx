@@ -31,7 +31,7 @@ export function SoundCheck() {
 
   useEffect(() => {
     alarmSounds.start();
-    return () => alarmSounds.stopAll();
+    return () => alarmSounds.stopTest();
   }, []);
   useEffect(() => {
     heading.current?.focus({ preventScroll: true });
@@ -40,11 +40,11 @@ export function SoundCheck() {
   const play = async () => {
     askToStayAwake();
     const isOn = await alarmSounds.unlock();
-    if (isOn) alarmSounds.play('now');
+    if (isOn) alarmSounds.playTest('now');
     setStage(isOn ? 'asking' : 'no-sound');
   };
   const answer = (isHeard: boolean) => {
-    alarmSounds.stopAll();
+    alarmSounds.stopTest();
     void store.act({ type: 'checkSound', isHeard });
   };
 
@@ -70,7 +70,7 @@ export function SoundCheck() {
               <PressButton
                 className="act-main act-quiet"
                 onPress={() => {
-                  alarmSounds.stopAll();
+                  alarmSounds.stopTest();
                   setStage('not-heard');
                 }}
               >

@@ -112,7 +112,7 @@ function Fact({ name, word, children }: { name: string; word: string; children: 
 function PlayAlarm() {
   const play = async () => {
     if (!(await alarmSounds.unlock())) return;
-    alarmSounds.play('stand-by');
+    alarmSounds.playTest('stand-by');
   };
   return (
     <span className="mt-3 block">

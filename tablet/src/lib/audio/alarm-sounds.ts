@@ -36,6 +36,7 @@ class AlarmSounds {
   private howls: Record<AlarmLevel, Howl> | null = null;
   private wanted: Ring | null = null;
   private playing: Ring | null = null;
+  private test: { level: AlarmLevel; soundId: number } | null = null;
   private lastStartMs = 0;
   private look: { contextS: number; atMs: number } | null = null;
   private isClockMoving = false;
@@ -85,13 +86,16 @@ class AlarmSounds {
     this.apply();
   }
 
-  /** Plays an alarm once, as for the sound check. */
-  play(level: AlarmLevel): void {
-    if (this.state.get().health === 'fine') this.howls?.[level].play();
+  /** Plays an alarm for the ear alone, as for the sound check. Nothing that rings for the run is touched by it. */
+  playTest(level: AlarmLevel): void {
+    this.stopTest();
+    const soundId = this.state.get().health === 'fine' ? this.howls?.[level].play() : undefined;
+    if (soundId !== undefined) this.test = { level, soundId };
   }
 
-  stopAll(): void {
-    for (const level of LEVELS) this.howls?.[level].stop();
+  stopTest(): void {
+    if (this.test) this.howls?.[this.test.level].stop(this.test.soundId);
+    this.test = null;
   }
 
   /** A loop nobody hears: some devices put an idle output to sleep for good. */
@@ -160,6 +164,11 @@ class AlarmSounds {
     this.state.set({ ...this.state.get(), ringing: ring.id });
   }
 
+  private stopAll(): void {
+    this.test = null;
+    for (const level of LEVELS) this.howls?.[level].stop();
+  }
+
   private halt(): void {
     this.stopAll();
     this.playing = null;
@@ -189,6 +198,7 @@ class AlarmSounds {
   private rebuild(): void {
     this.warm = null;
     this.playing = null;
+    this.test = null;
     Howler.unload();
     this.load();
   }
