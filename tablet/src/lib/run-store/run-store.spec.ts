@@ -185,6 +185,30 @@ describe(RunStore, () => {
     expect(standingAlerts(state())).toEqual([]);
   });
 
+  it('raises an alert itself when the hub, joined, says nothing for two seconds', async () => {
+    vi.useFakeTimers({ toFake: ['Date'] });
+    const hub = new FakeHub(RUN_ID, new LogBuilder().done('light-heat').stored);
+    const { run, time, state } = await tablet(hub.connect());
+    time.nowMs = START_MS;
+    run.tick();
+    time.nowMs = START_MS + 40_000;
+    vi.setSystemTime(Date.now() + 3_000);
+    run.tick();
+    await settle();
+    expect(run.snapshot.get().isJoined).toBe(true);
+    expect(standingAlerts(state())).toEqual([]);
+    vi.setSystemTime(Date.now() + 1_900);
+    run.tick();
+    await settle();
+    expect(standingAlerts(state())).toEqual([]);
+    vi.setSystemTime(Date.now() + 200);
+    run.tick();
+    await settle();
+    vi.useRealTimers();
+    expect(standingAlerts(state())).toMatchObject([{ rule: 'signal', stage: 'now' }]);
+    expect(hub.log.at(-1)).toMatchObject({ type: 'alert.raised', payload: { rule: 'signal' } });
+  });
+
   it('rings once for a deadline that passed while it slept', async () => {
     const hub = new FakeHub(RUN_ID, steeping().stored);
     const link = hub.connect();

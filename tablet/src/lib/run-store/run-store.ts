@@ -26,8 +26,8 @@ import { driverConfigOf } from './driver-config.ts';
 import type { Outbox } from './outbox.ts';
 import { ReadingRing } from './reading-ring.ts';
 
-/** What the hub found out as well is given this long to come back from it, before this tablet says it. */
-const HELD_FOR_MS = 20_000;
+/** The hub finds out the same and says it within this; after it, this tablet says what it found. The id is the same. */
+const HUB_ANSWER_MS = 2_000;
 /** A hole in the sequence may close by itself: events overtake each other on their way. */
 const GAP_PATIENCE_MS = 500;
 const REJOIN_MS = 3_000;
@@ -171,6 +171,7 @@ export class RunStore {
   /** One heartbeat: time moves the watch, the timers and the alerts on. */
   tick(): void {
     this.drive([]);
+    this.releaseHeld(HUB_ANSWER_MS);
     const nowMs = Date.now();
     if (nowMs - this.keptAtMs > KEEP_EVERY_MS) this.keep();
   }
@@ -216,7 +217,7 @@ export class RunStore {
       this.isJoined = false;
       this.publish();
     }
-    this.releaseHeld();
+    this.releaseHeld(0);
   }
 
   private join(): Promise<void> {
@@ -391,13 +392,17 @@ export class RunStore {
     if (toWrite.length > 0) void this.write(toWrite);
   }
 
-  /** The hub went away before it said what this tablet found out as well: then this tablet says it. */
-  private releaseHeld(): void {
-    const oldestMs = Date.now() - HELD_FOR_MS;
-    const due = [...this.held.values()].filter(({ event, atMs }) => atMs >= oldestMs && !this.has(event.id));
-    this.held.clear();
-    if (due.length > 0 && this.snapshot.get().state.status === 'running')
-      void this.write(due.map(({ event }) => event));
+  /** What the hub has not said for so long (it may be stuck, or see other readings) or can no longer say: this tablet says it. */
+  private releaseHeld(leastAgeMs: number): void {
+    const { state } = this.snapshot.get();
+    const latestMs = Date.now() - leastAgeMs;
+    const due = [...this.held.values()].filter(({ atMs }) => atMs <= latestMs).map(({ event }) => event);
+    for (const { id } of due) this.held.delete(id);
+    const isDone = (event: RunEvent) =>
+      event.type === 'step.done' &&
+      state.steps.some(({ step, status }) => step.id === event.payload.stepId && status === 'done');
+    const toWrite = due.filter((event) => !this.has(event.id) && !isDone(event));
+    if (toWrite.length > 0 && state.status === 'running') void this.write(toWrite);
   }
 }
 
