@@ -1,9 +1,10 @@
 import type { Step } from '@steepfall/shared/sheets';
 import { secondsLeft, type Timer } from '@steepfall/shared/timers';
-import { currentStep, type RunState } from '@steepfall/shared/runs';
+import { currentStep, standingAlerts, type RunState } from '@steepfall/shared/runs';
 import { formatDuration } from '@steepfall/shared/units';
 import { PressButton } from '#components/press-button.tsx';
 import { useLive, useRunState } from '#lib/run-store/run-context.tsx';
+import type { LiveState } from '#lib/run-store/run-store.ts';
 import { aboutParts, aboutText } from './sheet-words.ts';
 
 /** The timer of the step that is on. */
@@ -64,18 +65,31 @@ function isByTemperature(step: Step | null): boolean {
   return step?.start.by === 'temperature' || step?.done.by === 'temperature';
 }
 
+/**
+ * When line and level meet: the forecast of this instant. While there is none, what a standing alert for the level was raised with, as the
+ * strip above says it too.
+ */
+function meetingAtMs(state: RunState, { view, nowMs }: LiveState): number | null {
+  const forecast = view?.forecast;
+  if (forecast?.kind === 'forecast') return forecast.atMs;
+  if (!view?.target || forecast?.kind === 'crossed') return null;
+  const { stepId } = view.target;
+  const alert = standingAlerts(state).find(({ rule, ...of }) => rule === 'temperature' && of.stepId === stepId);
+  return alert?.dueAtMs != null && alert.dueAtMs > nowMs ? alert.dueAtMs : null;
+}
+
 /** `isAwaited`: the step itself waits for the level. Otherwise a forecast is news, and that there is none is not. */
 function CrossingCountdown({ isAwaited }: { isAwaited: boolean }) {
   const state = useRunState();
   const actStepId = useLive(({ view }) => view?.target?.actStepId ?? null);
   const kind = useLive(({ view }) => view?.forecast?.kind ?? null);
-  const figure = useLive(({ view, nowMs }) => {
-    const forecast = view?.forecast;
-    return forecast?.kind === 'forecast' ? aboutParts((forecast.atMs - nowMs) / 1000).number : null;
+  const number = useLive((live) => {
+    const atMs = meetingAtMs(state, live);
+    return atMs === null ? null : aboutParts(Math.ceil((atMs - live.nowMs) / 1000)).number;
   });
-  const unit = useLive(({ view, nowMs }) => {
-    const forecast = view?.forecast;
-    return forecast?.kind === 'forecast' ? aboutParts((forecast.atMs - nowMs) / 1000).unit : '';
+  const unit = useLive((live) => {
+    const atMs = meetingAtMs(state, live);
+    return atMs === null ? '' : aboutParts(Math.ceil((atMs - live.nowMs) / 1000)).unit;
   });
   const spread = useLive(({ view, nowMs }) => {
     const forecast = view?.forecast;
@@ -87,7 +101,7 @@ function CrossingCountdown({ isAwaited }: { isAwaited: boolean }) {
   const current = currentStep(state);
   const act = state.steps.find(({ step }) => step.id === actStepId)?.step;
   const what = act && act.id !== current?.step.id ? `${act.title}, in about` : 'comes up in about';
-  if (figure === null && !isAwaited) return null;
+  if (number === null && !isAwaited) return null;
   if (isTooLate) {
     return (
       <div className="countdown">
@@ -95,7 +109,7 @@ function CrossingCountdown({ isAwaited }: { isAwaited: boolean }) {
       </div>
     );
   }
-  if (figure === null) {
+  if (number === null) {
     return (
       <div className="countdown">
         <p className="countdown-label">{noFigureText(kind)}</p>
@@ -106,7 +120,7 @@ function CrossingCountdown({ isAwaited }: { isAwaited: boolean }) {
     <div className="countdown" role="timer" aria-label={what}>
       <p className="countdown-label">{what}</p>
       <p className="countdown-figure">
-        {figure}
+        {number}
         {unit ? <span className="countdown-unit">{unit}</span> : null}
       </p>
       {spread ? <p className="countdown-label">{spread}</p> : null}

@@ -107,6 +107,15 @@ describe(levelMarks, () => {
     expect(levelMarks([near, level({})], frame, size, next).map(({ key }) => key)).toEqual(['hops-in']);
   });
 
+  it('keeps the level that is waited for in a drawing too low for it, and lets others go', () => {
+    const low = { width: 300, height: 84 };
+    const edge = { ...frame, y: () => 83 };
+    const other = level({ key: 'other' });
+    const marks = levelMarks([other, level({})], edge, low, next);
+    expect(marks.map(({ key, y }) => [key, y])).toEqual([['hops-in', 78]]);
+    expect(levelMarks([other], edge, low, next)).toEqual([]);
+  });
+
   it('leaves out what was met before the picture begins', () => {
     const long = level({ isDone: true, doneAtMs: NOW_MS - 40 * MINUTE_MS });
     expect(levelMarks([long], frame, size, null)).toEqual([]);

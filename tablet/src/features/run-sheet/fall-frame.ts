@@ -131,6 +131,8 @@ const LABEL_PX = 12;
 const CHARACTER_PX = 11;
 const LEFT_MARGIN_PX = 52;
 const MARK_PX = 16;
+const UPPER_MARGIN_PX = 2;
+const LOWER_MARGIN_PX = 6;
 
 /** A falling line leaves the upper right and the lower left of its mark free, a rising one the upper left and the lower right. */
 function labelPlace(
@@ -158,10 +160,13 @@ export function levelMarks(
   const marks: LevelMark[] = [];
   for (const level of [...levels].sort((a, b) => rank(a) - rank(b))) {
     const { key, tempC, text, isDone, doneAtMs, direction } = level;
-    const y = frame.y(tempC);
-    if (y < 2 || y > size.height - 6) continue;
-    if (marks.some((mark) => Math.abs(mark.y - y) < LABEL_GAP_PX)) continue;
     const isNext = key === next?.key;
+    const lowest = size.height - LOWER_MARGIN_PX;
+    const trueY = frame.y(tempC);
+    // On a low drawing the level that is waited for may lie at the very edge: it is shown there, never left out.
+    const y = isNext ? Math.min(lowest, Math.max(UPPER_MARGIN_PX, trueY)) : trueY;
+    if (y < UPPER_MARGIN_PX || y > lowest) continue;
+    if (marks.some((mark) => Math.abs(mark.y - y) < LABEL_GAP_PX)) continue;
     const atMs = isDone ? doneAtMs : isNext ? next.crossingAtMs : null;
     if (isDone && (atMs === null || atMs < frame.fromMs)) continue;
     const rightmost = size.width - 12;

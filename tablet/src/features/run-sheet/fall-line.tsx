@@ -41,13 +41,13 @@ function draw(canvas: HTMLCanvasElement, store: RunStore, state: RunState): Pict
 
   const { nowMs, view } = store.live.get();
   const readings = store.readings.all;
-  const levels = levelsInSight(levelsOf(state));
   const forecast = view?.forecast ?? null;
   const crossingAtMs = forecast?.kind === 'forecast' || forecast?.kind === 'crossed' ? forecast.atMs : null;
   const isLive = view?.estimate.status === 'live';
   const { watch } = store;
   const curve = watch && isLive ? forecastCurve(watch, nowMs, 15 * 60, 15) : [];
   const target = view?.target ?? null;
+  const levels = levelsInSight(levelsOf(state), target?.stepId ?? null);
   const frame = fallFrame({ width, height, nowMs, readings, target, crossingAtMs, curve, levels });
   const next = target ? { key: target.stepId, crossingAtMs, about: forecastText(forecast, nowMs) } : null;
   const marks = levelMarks(levels, frame, { width, height }, next);

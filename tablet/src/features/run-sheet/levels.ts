@@ -33,8 +33,8 @@ export function levelsOf(state: RunState): Level[] {
 
 const AHEAD = 2;
 
-/** What was met, what comes next and what after that: more is clutter. */
-export function levelsInSight(levels: readonly Level[]): Level[] {
+/** What was met, what comes next and what after that: more is clutter. The level that is waited for is always among them. */
+export function levelsInSight(levels: readonly Level[], nextKey: string | null): Level[] {
   const ahead = levels.filter(({ isDone }) => !isDone).slice(0, AHEAD);
-  return levels.filter((level) => level.isDone || ahead.includes(level));
+  return levels.filter((level) => level.isDone || level.key === nextKey || ahead.includes(level));
 }

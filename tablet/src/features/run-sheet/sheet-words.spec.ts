@@ -47,7 +47,8 @@ describe(levelsOf, () => {
   it('keeps what is done and the next two in sight', () => {
     const one = { tempC: 1, direction: 'falling', text: '', doneAtMs: null } as const;
     const levels = ['a', 'b', 'c', 'd'].map((key) => ({ ...one, key, isDone: key === 'a' }));
-    expect(levelsInSight(levels).map(({ key }) => key)).toEqual(['a', 'b', 'c']);
+    expect(levelsInSight(levels, null).map(({ key }) => key)).toEqual(['a', 'b', 'c']);
+    expect(levelsInSight(levels, 'd').map(({ key }) => key)).toEqual(['a', 'b', 'c', 'd']);
   });
 });
 
