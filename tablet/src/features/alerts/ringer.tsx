@@ -1,9 +1,14 @@
 import { useEffect } from 'react';
-import { alarmSounds } from '#lib/audio/alarm-sounds.ts';
+import { standingAlerts } from '@steepfall/shared/runs';
+import { alarmSounds, type Ring } from '#lib/audio/alarm-sounds.ts';
 import { isRinger, wantToRing } from '#lib/audio/ringer-lock.ts';
 import { hubClock } from '#lib/clock/hub-clock.ts';
 import { useRunStore } from '#lib/run-store/run-context.tsx';
+import { alertStageId } from '#lib/run-store/take-over.ts';
 import { ringFor } from './alert-level.ts';
+
+/** A blocked output often comes back by itself; another tab takes over when it does not. */
+const BLOCKED_PATIENCE_MS = 1_000;
 
 /** Makes the run audible: what stands rings, and an acknowledgement from any tablet silences it. Draws nothing. */
 export function Ringer() {
@@ -12,13 +17,39 @@ export function Ringer() {
     alarmSounds.start();
     alarmSounds.keepWarm(true);
     let letGo: (() => void) | null = null;
-    const apply = () => {
+    let letGoTimer: ReturnType<typeof setTimeout> | undefined;
+    let rung: Ring | null = null;
+    const giveTheLockBack = () => {
+      clearTimeout(letGoTimer);
+      letGoTimer = undefined;
+      const give = letGo;
+      letGo = null;
+      give?.();
+    };
+    const askForTheLock = () => {
+      if (store.snapshot.get().state.status !== 'running') {
+        giveTheLockBack();
+        return;
+      }
       // A tab without sound must not keep another one from ringing.
-      const canSound = alarmSounds.state.get().health === 'fine';
-      if (canSound) letGo ??= wantToRing();
-      // While nobody knows why the clock jumped, what rings goes on and nothing new starts.
-      if (!hubClock.isSettled.get()) return;
-      alarmSounds.ring(isRinger.get() ? ringFor(store.snapshot.get().state) : null);
+      if (alarmSounds.state.get().health === 'fine') {
+        clearTimeout(letGoTimer);
+        letGoTimer = undefined;
+        letGo ??= wantToRing(store.runId);
+      } else if (letGo) letGoTimer ??= setTimeout(giveTheLockBack, BLOCKED_PATIENCE_MS);
+    };
+    const wantedRing = (): Ring | null => {
+      const { state } = store.snapshot.get();
+      const wanted = isRinger.get() ? ringFor(state) : null;
+      if (hubClock.isSettled.get() || !wanted || wanted.id === rung?.id) return wanted;
+      // While nobody knows why the clock jumped, what rings goes on until it is heard, and nothing new starts.
+      const isStanding = standingAlerts(state).some((alert) => alertStageId(alert) === rung?.id);
+      return isStanding ? rung : null;
+    };
+    const apply = () => {
+      askForTheLock();
+      rung = wantedRing();
+      alarmSounds.ring(rung);
     };
     const stops = [
       store.snapshot.subscribe(apply),
@@ -29,7 +60,7 @@ export function Ringer() {
     apply();
     return () => {
       for (const stop of stops) stop();
-      letGo?.();
+      giveTheLockBack();
       alarmSounds.ring(null);
       alarmSounds.keepWarm(false);
     };
