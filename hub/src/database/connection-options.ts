@@ -17,6 +17,8 @@ export function connectionOptions(databaseUrl: string): SequelizeOptions {
     pool: { max: 10, min: 1, acquire: 12_000, idle: 60_000 },
     dialectOptions: {
       connectTimeout: 5_000,
+      // Otherwise an error quotes the values of its statement, and a log would keep hashes of passwords and tokens.
+      logParam: false,
       // A wait of 50 s (the default) would hold a tablet's acknowledgement that long.
       initSql: ['SET innodb_lock_wait_timeout = 5', "SET sql_mode = 'STRICT_ALL_TABLES,NO_ENGINE_SUBSTITUTION'"],
     },

@@ -112,8 +112,10 @@ export class MembersService {
       const staysOwner = (changes.role ?? member.role) === 'owner' && (changes.isActive ?? member.isActive);
       if (!staysOwner && owners.length === 1 && owners[0]?.id === memberId)
         throw new ProblemError('last-owner', 'Make somebody else an owner first.');
+      const losesTokens = changes.isActive === false || (changes.role ?? member.role) !== member.role;
       await member.update(changes, { transaction });
-      if (changes.isActive === false) await this.sessions.closeAllOfMember(actor.houseId, memberId, transaction);
+      // An access token carries the role: with the old one in hand a brewer who became a taster could still act.
+      if (losesTokens) await this.sessions.closeAllOfMember(actor.houseId, memberId, transaction);
       await this.record(actor, 'member.changed', memberId, changes, transaction);
     });
     return this.get(actor.houseId, memberId);

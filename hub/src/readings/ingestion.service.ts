@@ -12,7 +12,7 @@ import { ReadingsStore } from './readings.store.js';
 
 export interface AcceptedReadings {
   log: RunLog;
-  /** In the order in which they came. */
+  /** In order of time, however they came. */
   readings: Reading[];
   /** Run clock. */
   nowMs: number;
@@ -47,7 +47,7 @@ export class IngestionService implements BeforeApplicationShutdown {
     const acceptedMs = this.clock.nowMs();
     const nowMs = log ? runTimeAt(log.clock, acceptedMs) : acceptedMs;
     const { accepted, refused } = judgeReadings(readings, nowMs);
-    if (log && accepted.length > 0) this.accepts.next({ log, readings: accepted, nowMs, acceptedMs });
+    if (log && accepted.length > 0) this.accepts.next({ log, readings: inTimeOrder(accepted), nowMs, acceptedMs });
     const keptUnder = log?.facts.probeId ?? probeId;
     const counts = await this.buffer.add(accepted.map(({ atMs, tempC }) => ({ probeId: keptUnder, atMs, tempC })));
     return { ...counts, refused };
@@ -62,4 +62,8 @@ export class IngestionService implements BeforeApplicationShutdown {
   async settle(): Promise<void> {
     await this.buffer.settle();
   }
+}
+
+function inTimeOrder(readings: readonly Reading[]): Reading[] {
+  return [...readings].sort((a, b) => a.atMs - b.atMs);
 }

@@ -26,6 +26,7 @@ import { actsOf, RehearsalKettle } from './rehearsal-kettle.js';
 type KettleOfHouse = Extract<Equipment, { kind: 'kettle' }>;
 
 const TICK_MS = 100;
+const RETRY_MS = 1_000;
 const IDLE_LOOK_MS = 60_000;
 /** Wall time after which nobody is coming back to a rehearsal. */
 const IDLE_MS = 2 * 3_600_000;
@@ -200,6 +201,8 @@ export class RehearsalsService implements OnApplicationBootstrap, OnModuleDestro
       if (log.isOpen) this.kettles.set(log.id, kettle);
     } catch (error) {
       this.complain(log, error);
+      // Forgotten, the next tick finds it missing and tries again; not at once, since a database that is away stays so for a moment.
+      setTimeout(() => this.kettles.delete(log.id), RETRY_MS).unref();
     }
   }
 

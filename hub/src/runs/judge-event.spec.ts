@@ -63,9 +63,14 @@ describe(judgeEvent, () => {
       expect(typeOf(changed(clockAtRate(room.clock, 10, room.nowMs)))).toMatchObject({ type: '/problems/not-allowed' });
     });
 
-    it('goes on from where the clock is, also when it comes late', () => {
-      const to = changed(clockAtRate(clock, 60, START_MS + 30_000));
+    it('goes on from where the clock is, also when it was on its way for a moment', () => {
+      const to = changed(clockAtRate(clock, 60, room.nowMs - 1_500));
       expect(typeOf(to, rehearsal)).toEqual(to);
+    });
+
+    it('is refused when it comes so late that the run would jump', () => {
+      const waited = clockAtRate(clock, 60, room.nowMs - 30_000);
+      expect(typeOf(changed(waited), rehearsal)).toMatchObject({ type: '/problems/changed-meanwhile' });
     });
 
     it('does not jump, nor begin in the future', () => {

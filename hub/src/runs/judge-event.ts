@@ -23,9 +23,8 @@ export interface Courtroom {
 
 export type Verdict = { event: RunEvent } | { problem: Problem };
 
-/** How far the clock of a tablet may be off when it changes the rate, wall time. */
+/** How long a change of rate may be on its way, wall time. */
 const CLOCK_SLACK_MS = 2_000;
-const CLOCK_AHEAD_MS = 60_000;
 
 /**
  * Whether an event may be written: its shape, its run, who acted, and whether a device may write this kind at all. Whether it makes sense
@@ -54,12 +53,12 @@ function isFoundByWatch(event: RunEvent): boolean {
   return event.type === 'alert.raised' || event.type === 'alert.cleared';
 }
 
-/** The clock is the hub's: only a rehearsal has a fast one, and its run time goes on without a jump. */
+/** The clock is the hub's: only a rehearsal has a fast one, and at the instant it is changed run time goes on without a jump. */
 function judgeClock(event: RunEvent & { type: 'clock.changed' }, { isRehearsal, clock, nowMs }: Courtroom): Verdict {
   if (!isRehearsal) return { problem: problem('not-allowed', 'Only a rehearsal has a fast clock.') };
-  const { anchorWallMs, anchorRunMs } = event.payload.clock;
-  const jumpMs = Math.abs(anchorRunMs - runTimeAt(clock, anchorWallMs));
-  if (anchorWallMs > nowMs + CLOCK_AHEAD_MS || jumpMs > CLOCK_SLACK_MS * clock.rate)
+  const changed = event.payload.clock;
+  const jumpMs = Math.abs(runTimeAt(changed, nowMs) - runTimeAt(clock, nowMs));
+  if (jumpMs > CLOCK_SLACK_MS * Math.max(changed.rate, clock.rate))
     return { problem: problem('changed-meanwhile', 'The clock was changed elsewhere. Choose the rate again.') };
   return { event };
 }

@@ -7,6 +7,7 @@ import { compileSheet, type RecipeDocument, type RunSheet } from '@steepfall/sha
 import { wallClock, type RunClock } from '@steepfall/shared/timers';
 import { UniqueConstraintError, type Transaction } from 'sequelize';
 import { Sequelize } from 'sequelize-typescript';
+import { ZodError } from 'zod';
 import { BatchesService } from '../batches/batches.service.js';
 import type { Actor } from '../common/access/actor.js';
 import { Clock } from '../common/clock.js';
@@ -55,6 +56,8 @@ export class RunsService {
     const earlier = (await this.summaries.ofBatches(houseId, [batchId])).get(batchId);
     if (earlier && earlier.outcome !== 'abandoned') throw batchAlreadyRunning();
     const { revision, altitudeM, chiller } = batch;
+    const holder = batch.probeId === null ? null : this.logs.attachedTo(batch.probeId);
+    if (holder) throw new ProblemError('probe-in-use', `Its probe is in the kettle of "${holder.state.title}".`);
     const start: RunStart = {
       title: `${revision.recipeName} ${revision.volumeL} L`,
       batch: { id: batch.id, batchNumber: batch.batchNumber },
@@ -134,7 +137,7 @@ export function sheetOf(document: RecipeDocument, altitudeM: number): RunSheet {
   try {
     return compileSheet(document, { altitudeM, reachS: REACH_S });
   } catch (error) {
-    if (error instanceof RangeError) throw new ProblemError('not-valid', error.message);
+    if (error instanceof RangeError || error instanceof ZodError) throw new ProblemError('not-valid', error.message);
     throw error;
   }
 }

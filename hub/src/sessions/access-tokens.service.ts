@@ -1,4 +1,4 @@
-import { Injectable } from '@nestjs/common';
+import { Injectable, type OnApplicationBootstrap } from '@nestjs/common';
 import { JwtService } from '@nestjs/jwt';
 import { roleSchema } from '@steepfall/shared/contracts';
 import { ProblemError } from '@steepfall/shared/problems';
@@ -21,16 +21,22 @@ const claimsSchema = z.object({
 
 /** Access tokens: short-lived, checked without the database. */
 @Injectable()
-export class AccessTokensService {
+export class AccessTokensService implements OnApplicationBootstrap {
   /** Sessions that ended while tokens of theirs were still running, with the end of the last of those tokens. */
   private readonly endedSessions = new Map<string, number>();
 
   constructor(
     private readonly jwt: JwtService,
     private readonly clock: Clock,
-    sessions: SessionsService,
+    private readonly sessions: SessionsService,
   ) {
     sessions.ended$.subscribe(({ sessionId }) => this.block(sessionId));
+  }
+
+  /** A restart does not give back what was taken: tokens of sessions that ended lately are still running. */
+  async onApplicationBootstrap(): Promise<void> {
+    const sinceMs = this.clock.nowMs() - ACCESS_LIFETIME_S * 1000;
+    for (const sessionId of await this.sessions.endedSince(sinceMs)) this.block(sessionId);
   }
 
   async sign(actor: Omit<Actor, 'expiresAtMs'>): Promise<{ accessToken: string; expiresAtMs: number }> {

@@ -104,6 +104,12 @@ export class SessionsService {
   }
 
   /** Ends the session of this refresh token; an unknown token is no error. */
+  /** Ids of the sessions of every house that have ended since then. */
+  async endedSince(sinceMs: number): Promise<string[]> {
+    const ended = await acrossHouses(this.sessions).findAll({ where: { revokedAtMs: { [Op.gte]: sinceMs } } });
+    return ended.map(({ id }) => id);
+  }
+
   async closeByToken(refreshToken: string): Promise<void> {
     const token = await this.tokens.findByPk(hashSecret(refreshToken));
     const session = token && (await acrossHouses(this.sessions).findByPk(token.sessionId));

@@ -16,6 +16,7 @@ export const problemCatalogue = {
   'changed-meanwhile': { status: 409, title: 'Someone else changed it first' },
   'last-owner': { status: 409, title: 'A house keeps at least one owner' },
   'batch-already-running': { status: 409, title: 'This batch has a run already' },
+  'probe-in-use': { status: 409, title: 'The probe is in another kettle' },
   'run-already-started': { status: 409, title: 'The run has already started' },
   'run-not-started': { status: 409, title: 'The run has not started' },
   'run-already-ended': { status: 409, title: 'The run has ended' },

@@ -1,6 +1,6 @@
 import { z } from 'zod';
 
-export const ingredientKindSchema = z.enum(['salt', 'acid', 'tea', 'hops', 'other']);
+export const ingredientKindSchema = z.enum(['salt', 'acid', 'tea', 'hops']);
 export type IngredientKind = z.infer<typeof ingredientKindSchema>;
 
 /** One weighed ingredient going in, and perhaps coming out, at a condition. */

@@ -5,8 +5,9 @@ const id = (name: string, rest = 'NOT NULL') => `${name} CHAR(36) CHARACTER SET 
 const atMs = (name: string, rest = 'NOT NULL') => `${name} BIGINT UNSIGNED ${rest}`;
 const word = (name: string, length: number, rest = 'NOT NULL') =>
   `${name} VARCHAR(${length}) CHARACTER SET ascii COLLATE ascii_bin ${rest}`;
+/** Each statement commits by itself, so a first start that was cut short must find its way on. */
 const table = (name: string, lines: string[]) =>
-  `CREATE TABLE ${name} (\n${lines.join(',\n')}\n) ENGINE=InnoDB DEFAULT CHARSET=utf8mb4 COLLATE=utf8mb4_unicode_ci`;
+  `CREATE TABLE IF NOT EXISTS ${name} (\n${lines.join(',\n')}\n) ENGINE=InnoDB DEFAULT CHARSET=utf8mb4 COLLATE=utf8mb4_unicode_ci`;
 /** A row and what it points at always belong to the same house: the database refuses anything else. */
 const sameHouse = (column: string, parent: string) =>
   `FOREIGN KEY (house_id, ${column}) REFERENCES ${parent} (house_id, id)`;

@@ -3,10 +3,10 @@ import type { Migration } from './list.js';
 
 const statements = [
   `ALTER TABLE runs
-    ADD COLUMN source_probe_id CHAR(36) CHARACTER SET ascii COLLATE ascii_bin NULL AFTER probe_id,
-    ADD COLUMN probe_out_at_ms BIGINT UNSIGNED NULL AFTER alert_stage,
-    ADD COLUMN kettle_setup JSON NULL AFTER seed,
-    ADD FOREIGN KEY (house_id, source_probe_id) REFERENCES probes (house_id, id)`,
+    ADD COLUMN IF NOT EXISTS source_probe_id CHAR(36) CHARACTER SET ascii COLLATE ascii_bin NULL AFTER probe_id,
+    ADD COLUMN IF NOT EXISTS probe_out_at_ms BIGINT UNSIGNED NULL AFTER alert_stage,
+    ADD COLUMN IF NOT EXISTS kettle_setup JSON NULL AFTER seed,
+    ADD FOREIGN KEY IF NOT EXISTS runs_source_probe (house_id, source_probe_id) REFERENCES probes (house_id, id)`,
 ];
 
 /**
