@@ -1,3 +1,4 @@
+/* global document, MutationObserver, requestAnimationFrame -- what runs inside the page */
 import { chromium } from 'playwright-core';
 
 /**
