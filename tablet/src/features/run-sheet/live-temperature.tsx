@@ -85,7 +85,7 @@ export function LiveTemperature() {
   );
 }
 
-function LiveFigure() {
+export function LiveFigure() {
   return <span>{useLive(figureOf)}</span>;
 }
 

@@ -150,22 +150,25 @@ function Sheet({ rehearsal, soundCheck, strips, TakeOver, ringer }: RunSheetPage
     return () => clearTimeout(timer);
   }, [refusal]);
 
-  usePedal((pedal) => {
-    if (pedal === 'back') return act({ type: 'goBack' });
-    if (mustCheckSound && !alert) return undefined;
-    const next = pedalNext(store.snapshot.get().state);
-    switch (next.kind) {
-      case 'acknowledge':
-        return act({ type: 'acknowledgeAlert', key: next.key, crossing: next.crossing });
-      case 'complete':
-        return complete(next.progress.step.id);
-      case 'measure':
-        return setSheet({ kind: 'measure', quantity: next.quantity });
-      case 'finish':
-      case 'none':
-        return undefined;
-    }
-  });
+  usePedal(
+    (pedal) => {
+      if (pedal === 'back') return act({ type: 'goBack' });
+      if (mustCheckSound && !alert) return undefined;
+      const next = pedalNext(store.snapshot.get().state);
+      switch (next.kind) {
+        case 'acknowledge':
+          return act({ type: 'acknowledgeAlert', key: next.key, crossing: next.crossing });
+        case 'complete':
+          return complete(next.progress.step.id);
+        case 'measure':
+          return setSheet({ kind: 'measure', quantity: next.quantity });
+        case 'finish':
+        case 'none':
+          return undefined;
+      }
+    },
+    () => takeOverAlert(store.snapshot.get().state) !== null,
+  );
 
   const body = alert ? (
     <TakeOver onComplete={(stepIds) => stepIds.forEach(complete)} />

@@ -1,5 +1,11 @@
 import { Dialog, DialogBackdrop, DialogPanel, DialogTitle } from '@headlessui/react';
 import { useEffect, useRef, type ReactNode } from 'react';
+import { alertWords } from '@steepfall/shared/runs';
+import { PressButton } from '#components/press-button.tsx';
+import { ShapeGlyph } from '#components/shapes.tsx';
+import { useRunState, useRunStore } from '#lib/run-store/run-context.tsx';
+import { heardCommands, takeOverAlert } from '#lib/run-store/take-over.ts';
+import { LiveFigure } from './live-temperature.tsx';
 
 interface SheetDialogProps {
   isOpen: boolean;
@@ -29,6 +35,7 @@ export function SheetDialog({ isOpen, onClose, title, children, isSide = false }
       <DialogBackdrop className="fixed inset-0 bg-[#0c1714]/60" />
       <div className="fixed inset-0 flex">
         <DialogPanel className={isSide ? 'sheet-panel sheet-panel-side' : 'sheet-panel'}>
+          <AlertRow />
           <div className="flex items-center justify-between gap-4">
             <DialogTitle className="text-title">{title}</DialogTitle>
             <button
@@ -43,5 +50,33 @@ export function SheetDialog({ isOpen, onClose, title, children, isSide = false }
         </DialogPanel>
       </div>
     </Dialog>
+  );
+}
+
+/** An alert takes the screen, and a panel lies over that: it is said, shown and answered in the panel too. */
+function AlertRow() {
+  const state = useRunState();
+  const store = useRunStore();
+  const alert = takeOverAlert(state);
+  if (!alert) return null;
+  return (
+    <div className="strip sticky top-0 z-10 mr-0! h-auto! min-h-18" data-stage={alert.stage}>
+      <ShapeGlyph shape="diamond" className="size-7 shrink-0" />
+      <p className="strip-text" role="alert">
+        <strong>{alert.stage === 'missed' ? 'Late:' : 'Now:'}</strong> {alertWords(state, alert).verb}
+      </p>
+      {/* Outside what is announced: it changes every second. */}
+      <span className="shrink-0 text-lead font-semibold tabular-nums">
+        <LiveFigure /> °C
+      </span>
+      <PressButton
+        className="strip-act"
+        onPress={() => {
+          for (const command of heardCommands(alert)) void store.act(command);
+        }}
+      >
+        Heard it
+      </PressButton>
+    </div>
   );
 }

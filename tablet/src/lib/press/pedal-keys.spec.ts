@@ -5,6 +5,7 @@ const plain: Omit<PedalKey, 'key'> = {
   hasModifier: false,
   isTyping: false,
   isDialogOpen: false,
+  isAlertStanding: false,
   isOnTabbedControl: false,
   isOnTabbedChoice: false,
 };
@@ -28,6 +29,23 @@ describe(pedalActOf, () => {
 
   it.each(['hasModifier', 'isTyping', 'isDialogOpen'] as const)('does nothing with %s', (what) => {
     expect(pedalActOf({ key: 'PageDown', ...plain, [what]: true })).toBeNull();
+  });
+
+  it('lets "next" through a dialog while an alert stands, and nothing that a field would write', () => {
+    const alerted = { ...plain, isDialogOpen: true, isAlertStanding: true };
+    expect(['PageDown', ' ', 'Enter', 'PageUp'].map((key) => pedalActOf({ key, ...alerted }))).toEqual([
+      'next',
+      'next',
+      'next',
+      null,
+    ]);
+    const typing = { ...alerted, isTyping: true };
+    expect(['PageDown', ' ', 'Enter', 'ArrowRight'].map((key) => pedalActOf({ key, ...typing }))).toEqual([
+      'next',
+      null,
+      null,
+      null,
+    ]);
   });
 
   it('leaves Space and Enter to a button reached with Tab, and no other key', () => {

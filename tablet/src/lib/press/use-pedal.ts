@@ -6,10 +6,12 @@ const CONTROLS = 'a[href], button, [role="button"], [role="radio"], [role="check
 const FIELDS = 'input, textarea, select, [contenteditable="true"]';
 
 /** Pedals and keys of the run sheet, taken once, before anything else on the page sees them. */
-export function usePedal(onAct: (act: PedalAct) => void): void {
+export function usePedal(onAct: (act: PedalAct) => void, isAlertStanding: () => boolean): void {
   const handler = useRef(onAct);
+  const isAlerted = useRef(isAlertStanding);
   useEffect(() => {
     handler.current = onAct;
+    isAlerted.current = isAlertStanding;
   });
   useEffect(() => {
     let hasTabbed = false;
@@ -21,6 +23,7 @@ export function usePedal(onAct: (act: PedalAct) => void): void {
         hasModifier: event.ctrlKey || event.altKey || event.metaKey || event.shiftKey,
         isTyping: focused?.matches(FIELDS) ?? false,
         isDialogOpen: document.querySelector('[role="dialog"], [role="alertdialog"]') !== null,
+        isAlertStanding: isAlerted.current(),
         isOnTabbedControl: hasTabbed && (focused?.matches(CONTROLS) ?? false),
         isOnTabbedChoice: hasTabbed && (focused?.matches('[role="radio"]') ?? false),
       });
