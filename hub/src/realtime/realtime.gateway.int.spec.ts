@@ -305,21 +305,17 @@ describe('readings of a run', () => {
     expect(seen.flatMap((message) => message.readings)).toEqual(fresh);
   });
 
-  it('go to the youngest run that has the probe in its kettle, also while an older one is open over night', async () => {
+  it('go to the one run that has the probe in its kettle, also while an older one is open over night', async () => {
     const first = await buildRun(testApp, { author: brewer });
     const { batch } = await buildBatch(testApp, { author: brewer, probeId: first.probe.id });
     const logs = service(RunLogService);
+    const startSecond = () => service(RunsService).startBatch(brewer.actor, batch.id);
     expect(logs.attachedTo(first.probe.id)?.id).toBe(first.run.id);
-    const second = await service(RunsService).startBatch(brewer.actor, batch.id);
-    expect(logs.attachedTo(first.probe.id)?.id).toBe(second.id);
-    const append = (run: { id: string }, event: object) =>
-      logs.append(brewer.house.id, run.id, [event as { id: string }], brewer.member.id);
-    await append(second, buildEvent(second, brewer, 'run.ended', { outcome: 'abandoned' }));
-    expect(logs.attachedTo(first.probe.id)?.id).toBe(first.run.id);
-    await append(
-      first.run,
-      buildEvent(first.run, brewer, 'step.done', { stepId: 'transfer', cause: 'hand', tempC: null }),
-    );
+    await expect(startSecond()).rejects.toMatchObject({ type: 'probe-in-use' });
+    const transferred = buildEvent(first.run, brewer, 'step.done', { stepId: 'transfer', cause: 'hand', tempC: null });
+    await logs.append(brewer.house.id, first.run.id, [transferred], brewer.member.id);
     expect(logs.attachedTo(first.probe.id)).toBeNull();
+    const second = await startSecond();
+    expect(logs.attachedTo(first.probe.id)?.id).toBe(second.id);
   });
 });

@@ -57,7 +57,11 @@ export class RunsService {
     if (earlier && earlier.outcome !== 'abandoned') throw batchAlreadyRunning();
     const { revision, altitudeM, chiller } = batch;
     const holder = batch.probeId === null ? null : this.logs.attachedTo(batch.probeId);
-    if (holder) throw new ProblemError('probe-in-use', `Its probe is in the kettle of "${holder.state.title}".`);
+    if (holder)
+      throw new ProblemError(
+        'probe-in-use',
+        `Its probe is in the kettle of "${holder.state.title}". End that run or take its probe out first.`,
+      );
     const start: RunStart = {
       title: `${revision.recipeName} ${revision.volumeL} L`,
       batch: { id: batch.id, batchNumber: batch.batchNumber },
