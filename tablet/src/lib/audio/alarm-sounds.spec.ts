@@ -1,23 +1,30 @@
 import { beforeEach, describe, expect, it, vi } from 'vitest';
 import type { AlarmLevel } from './alarm-sounds.ts';
 
+const world: { file: 'there' | 'missing' | 'slow' | 'only-as-element' } = { file: 'there' };
+
 /** What howler would do, without an output: which sounds are on, by their id. */
 class StubHowl {
   static all: StubHowl[] = [];
   static nextId = 1000;
   readonly sounding = new Set<number>();
-  constructor(readonly options: { src: string[]; onload?: () => void; onloaderror?: () => void }) {
+  readonly _webAudio = world.file !== 'only-as-element';
+  private status = 'loading';
+  private readonly listeners = new Map<string, () => void>();
+
+  constructor(readonly options: { src: string[] }) {
     StubHowl.all.push(this);
-    if (world.areFilesThere) this.arrive();
-    else options.onloaderror?.();
+    if (world.file === 'slow') return;
+    setTimeout(() => this.emit(world.file === 'missing' ? 'loaderror' : 'load'), 0);
   }
 
-  _webAudio = true;
-  private status = 'loading';
+  once(name: string, listener: () => void): void {
+    this.listeners.set(name, listener);
+  }
 
-  arrive(): void {
-    this.status = 'loaded';
-    this.options.onload?.();
+  emit(name: 'load' | 'loaderror'): void {
+    if (name === 'load') this.status = 'loaded';
+    this.listeners.get(name)?.();
   }
 
   state(): string {
@@ -40,8 +47,6 @@ class StubHowl {
     StubHowl.all = StubHowl.all.filter((one) => one !== this);
   }
 }
-
-const world = { areFilesThere: true };
 
 class StubContext {
   state = 'suspended';
@@ -76,7 +81,7 @@ function soundsOf(level: AlarmLevel): number {
 }
 
 beforeEach(() => {
-  world.areFilesThere = true;
+  world.file = 'there';
 });
 
 describe('the sound check', () => {
@@ -100,5 +105,37 @@ describe('the sound check', () => {
     expect(soundsOf('now')).toBe(1);
     sounds.ring(null);
     expect(soundsOf('now')).toBe(0);
+  });
+});
+
+describe('the files', () => {
+  it.each(['missing', 'only-as-element'] as const)(
+    'is not called on when they are %s; the next tap fetches them',
+    async (file) => {
+      const sounds = await freshSounds();
+      world.file = file;
+      expect(await sounds.unlock()).toBe(false);
+      sounds.ring({ level: 'now', id: 'steep/1/now' });
+      expect(sounds.state.get().ringing).toBeNull();
+
+      world.file = 'there';
+      expect(await sounds.unlock()).toBe(true);
+      expect(soundsOf('now')).toBe(1);
+    },
+  );
+
+  it('is called on once all three have arrived', async () => {
+    vi.useFakeTimers();
+    const sounds = await freshSounds();
+    world.file = 'slow';
+    const unlocking = sounds.unlock();
+    await vi.advanceTimersByTimeAsync(1_000);
+    expect(await unlocking).toBe(false);
+    const [first, ...others] = StubHowl.all;
+    for (const howl of others) howl.emit('load');
+    expect(sounds.state.get().health).not.toBe('fine');
+    first?.emit('load');
+    expect(sounds.state.get().health).toBe('fine');
+    vi.useRealTimers();
   });
 });

@@ -42,6 +42,7 @@ class AlarmSounds {
   private isClockMoving = false;
   private triedCount = 0;
   private isRepairing = false;
+  private hasLoadFailed = false;
   private warm: AudioBufferSourceNode | null = null;
   private isWarmWanted = false;
 
@@ -73,7 +74,9 @@ class AlarmSounds {
     silence.buffer = context.createBuffer(1, 1, context.sampleRate);
     silence.connect(context.destination);
     silence.start();
-    await Promise.race([context.resume(), new Promise((resolve) => setTimeout(resolve, 1_000))]);
+    if (this.hasLoadFailed) this.reload();
+    const ready = Promise.all([context.resume(), this.loaded()]);
+    await Promise.race([ready, new Promise((resolve) => setTimeout(resolve, 1_000))]);
     this.look = null;
     this.isClockMoving = context.state === 'running';
     this.judge();
@@ -109,11 +112,44 @@ class AlarmSounds {
   }
 
   private load(): void {
-    const load = (level: AlarmLevel) =>
-      new Howl({ src: [`/sounds/${level}.wav`], loop: level === 'now', html5: false });
+    this.hasLoadFailed = false;
+    const load = (level: AlarmLevel) => {
+      const onLoad = () => {
+        // Howler falls back to an audio element when it cannot fetch a file: nothing here would know whether that is heard.
+        if ((howl as unknown as { _webAudio: boolean })._webAudio) this.judge();
+        else onFail();
+      };
+      const onFail = () => {
+        if (this.howls?.[level] !== howl) return;
+        this.hasLoadFailed = true;
+        this.judge();
+      };
+      const howl = new Howl({ src: [`/sounds/${level}.wav`], loop: level === 'now', html5: false });
+      howl.once('load', onLoad);
+      howl.once('loaderror', onFail);
+      return howl;
+    };
     this.howls = { 'coming-up': load('coming-up'), 'stand-by': load('stand-by'), now: load('now') };
     const { context } = this;
     if (context) context.onstatechange = () => void this.recover(false);
+  }
+
+  private get isLoaded(): boolean {
+    const { howls } = this;
+    return howls !== null && !this.hasLoadFailed && LEVELS.every((level) => howls[level].state() === 'loaded');
+  }
+
+  /** The files once more, after one of them did not come. */
+  private reload(): void {
+    this.playing = null;
+    this.test = null;
+    for (const level of LEVELS) this.howls?.[level].unload();
+    this.howls = null;
+    this.load();
+  }
+
+  private async loaded(): Promise<void> {
+    while (!this.isLoaded && !this.hasLoadFailed) await new Promise((resolve) => setTimeout(resolve, 25));
   }
 
   private signs(): AudioSigns {
@@ -138,9 +174,10 @@ class AlarmSounds {
 
   private judge(): void {
     const before = this.state.get();
-    const health = soundHealth(this.signs());
-    if (health === 'fine') this.triedCount = 0;
-    const hasBeenFine = before.health !== 'untested';
+    const outputHealth = soundHealth(this.signs());
+    if (outputHealth === 'fine') this.triedCount = 0;
+    const health = outputHealth === 'fine' && !this.isLoaded ? 'blocked' : outputHealth;
+    const hasBeenFine = before.health !== 'untested' || this.hasLoadFailed;
     this.state.set({ ...before, health: health === 'blocked' && !hasBeenFine ? 'untested' : health });
     if (health !== 'fine' && this.playing) this.halt();
     if (health === 'fine') this.applyWarmth();
@@ -179,6 +216,7 @@ class AlarmSounds {
   private async recover(isInTap: boolean): Promise<void> {
     const { context } = this;
     if (!context || this.isRepairing) return;
+    if (isInTap && this.hasLoadFailed) this.reload();
     const repair = nextRepair(this.signs(), this.triedCount, isInTap);
     if (repair === 'none') return;
     this.isRepairing = true;
