@@ -14,7 +14,7 @@ export function takeLock(path) {
       try {
         // A hard link appears whole or not at all: nobody reads a lock that is half written.
         linkSync(own, path);
-        return { isTaken: true, release: () => rmSync(path, { force: true }) };
+        return { isTaken: true, release: () => release(path) };
       } catch (error) {
         if (/** @type {NodeJS.ErrnoException} */ (error).code !== 'EEXIST') throw error;
         const holder = readHolder(path);
@@ -26,6 +26,14 @@ export function takeLock(path) {
   } finally {
     rmSync(own, { force: true });
   }
+}
+
+/**
+ * Gives back what is still ours: after a first release the lock may be somebody else's.
+ * @param {string} path
+ */
+function release(path) {
+  if (readHolder(path)?.pid === process.pid) rmSync(path, { force: true });
 }
 
 /**

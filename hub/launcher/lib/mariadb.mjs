@@ -301,7 +301,7 @@ async function launch(program, paths, credentials, isThrowAway) {
   const failure = await new Promise((/** @type {(error: unknown) => void} */ done) => {
     server.once('error', (error) => done(error));
     server.once('exit', () => done(explainFailedStart(paths, readLog(paths.log, from))));
-    void waitUntilReady(server, paths, from).then(done);
+    void waitUntilReady(server, paths, from).then(done, done);
   });
   rmSync(paths.accounts, { force: true });
   if (failure === portTaken) return null;

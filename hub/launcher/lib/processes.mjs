@@ -32,9 +32,9 @@ export async function run(command, args, { isQuiet = false, env = process.env, s
     output += chunk;
   });
   child.stderr?.on('data', (chunk) => (output += chunk));
-  // `close` follows `error` as well, and after it nothing of the command is left.
   child.on('error', (error) => (output += `${error.message}\n`));
-  const [code] = await once(child, 'close');
+  // `close` follows an `error` as well, and after it nothing of the command is left; waiting with `once` would end at the error.
+  const code = await new Promise((/** @type {(code: number | null) => void} */ closed) => child.on('close', closed));
   return { code: code ?? 1, stdout, output };
 }
 

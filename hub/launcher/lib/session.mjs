@@ -75,7 +75,14 @@ export class Session {
       if (!this.#aborter.signal.aborted) this.#report(error);
     } finally {
       this.#aborter.abort();
-      for (const stop of this.#undo.reverse()) await stop();
+      for (const stop of this.#undo.reverse()) {
+        try {
+          await stop();
+        } catch (error) {
+          // What is left to stop is stopped all the same.
+          this.#report(error);
+        }
+      }
     }
   }
 

@@ -1,3 +1,4 @@
+import { setTimeout as sleep } from 'node:timers/promises';
 import { Controller, Get, Res } from '@nestjs/common';
 import { InjectConnection } from '@nestjs/sequelize';
 import { ApiTags } from '@nestjs/swagger';
@@ -9,6 +10,8 @@ import { Public } from '../common/access/access.decorators.js';
 import { Clock } from '../common/clock.js';
 import { Answers } from '../common/http/answers.decorator.js';
 import { hubVersion } from './version.js';
+
+const DATABASE_ANSWERS_WITHIN_MS = 2_000;
 
 @ApiTags('health')
 @Controller('health')
@@ -34,11 +37,11 @@ export class HealthController {
   }
 
   private async isDatabaseUp(): Promise<boolean> {
-    try {
-      await this.sequelize.query('SELECT 1', { type: QueryTypes.SELECT });
-      return true;
-    } catch {
-      return false;
-    }
+    const isUp = this.sequelize.query('SELECT 1', { type: QueryTypes.SELECT }).then(
+      () => true,
+      () => false,
+    );
+    // A pool without a database answers only after its patience; whoever asks for health wants to know now.
+    return Promise.race([isUp, sleep(DATABASE_ANSWERS_WITHIN_MS, false, { ref: false })]);
   }
 }
