@@ -3,8 +3,8 @@ import { PressButton } from '#components/press-button.tsx';
 import { ShapeGlyph } from '#components/shapes.tsx';
 import { alarmSounds } from '#lib/audio/alarm-sounds.ts';
 import { useLive, useRunState, useRunStore } from '#lib/run-store/run-context.tsx';
-import { useStoredPart } from '#lib/value-store.ts';
 import { alertLevel, dueAtMs, dueText } from './alert-level.ts';
+import { useSoundOff } from './use-sound-off.ts';
 
 const stageWords = { 'coming-up': 'Coming up', 'stand-by': 'Stand by', now: 'Now', missed: 'Late' } as const;
 
@@ -24,6 +24,11 @@ function Strip({ alert }: { alert: Alert }) {
   const { verb } = alertWords(state, alert);
   const number = alertLevel(alert);
   const { key, crossing, stage } = alert;
+  const isSoundOff = useSoundOff();
+  const acknowledge = () => {
+    if (isSoundOff) void alarmSounds.unlock();
+    void store.act({ type: 'acknowledgeAlert', key, crossing });
+  };
   return (
     <div className="strip" data-stage={stage}>
       <ShapeGlyph shape="diamond" className="size-7 shrink-0" />
@@ -31,11 +36,12 @@ function Strip({ alert }: { alert: Alert }) {
         <strong>{stageWords[stage]}:</strong> {verb}
         {number ? ` at ${number}` : ''}
         {due ? <span className="tabular-nums">, {due}</span> : null}
+        {isSoundOff ? <strong> · Sound is off</strong> : null}
       </p>
       <span className="sr-only" role="status">
         {stageWords[stage]}: {verb}
       </span>
-      <PressButton className="strip-act" onPress={() => void store.act({ type: 'acknowledgeAlert', key, crossing })}>
+      <PressButton className="strip-act" onPress={acknowledge}>
         Heard it
       </PressButton>
     </div>
@@ -44,9 +50,7 @@ function Strip({ alert }: { alert: Alert }) {
 
 /** A browser keeps a page silent until somebody taps, and again after calls and locks. Nobody would know. */
 function SoundOffStrip() {
-  const health = useStoredPart(alarmSounds.state, ({ health: now }) => now);
-  const { status } = useRunState();
-  if (status !== 'running' || health === 'fine' || health === 'unsupported') return null;
+  if (!useSoundOff()) return null;
   return (
     <PressButton className="strip strip-button" onPress={() => void alarmSounds.unlock()}>
       <ShapeGlyph shape="ring" className="size-7 shrink-0" />

@@ -4,27 +4,33 @@ import {
   currentStep,
   standingAlerts,
   type Alert,
+  type RunCommand,
   type RunState,
   type StepProgress,
 } from '@steepfall/shared/runs';
 import { formatMass } from '@steepfall/shared/units';
 import { PressButton } from '#components/press-button.tsx';
 import { ShapeGlyph } from '#components/shapes.tsx';
-import { useLive, useRun, useRunState, useRunStore } from '#lib/run-store/run-context.tsx';
-import { alertStageId, takeOverAlert } from '#lib/run-store/take-over.ts';
+import { alarmSounds } from '#lib/audio/alarm-sounds.ts';
+import { useLive, useRun, useRunState } from '#lib/run-store/run-context.tsx';
+import { alertStageId, heardCommands, takeOverAlert } from '#lib/run-store/take-over.ts';
 import { alertLevel, dueAtMs, dueText } from './alert-level.ts';
+import { useSoundOff } from './use-sound-off.ts';
 
 interface AlertTakeOverProps {
   /** Marks steps done in this order, with the temperature of this instant. */
   onComplete: (stepIds: string[]) => void;
+  onAct: (command: RunCommand) => void;
+  /** Why the last act was refused, for a moment after it. */
+  refusal: string | null;
 }
 
 /** Act now: the verb, the amount, the bag, the number. The live temperature stays above it. */
-export function AlertTakeOver({ onComplete }: AlertTakeOverProps) {
+export function AlertTakeOver(props: AlertTakeOverProps) {
   const state = useRunState();
   const alert = takeOverAlert(state);
   if (!alert) return null;
-  return <TakeOver key={alertStageId(alert)} alert={alert} onComplete={onComplete} />;
+  return <TakeOver key={alertStageId(alert)} alert={alert} {...props} />;
 }
 
 /** The steps from the current one to this one; empty when it is not ahead. */
@@ -33,9 +39,8 @@ function stepsUpTo(state: RunState, stepId: string | null): StepProgress[] {
   return open.slice(0, open.findIndex(({ step }) => step.id === stepId) + 1);
 }
 
-function TakeOver({ alert, onComplete }: AlertTakeOverProps & { alert: Alert }) {
+function TakeOver({ alert, onComplete, onAct, refusal }: AlertTakeOverProps & { alert: Alert }) {
   const { state, isJoined } = useRun();
-  const store = useRunStore();
   const heading = useRef<HTMLHeadingElement>(null);
   const due = useLive((live) => dueText(dueAtMs(alert, live), live.nowMs));
   const { verb, amounts, sentence } = alertWords(state, alert);
@@ -47,6 +52,7 @@ function TakeOver({ alert, onComplete }: AlertTakeOverProps & { alert: Alert }) 
   const toComplete = forgotten ? [forgotten] : path.length > 0 ? path : current ? [current] : [];
   const isAct = path.length > 0 && !forgotten;
   const others = standingAlerts(state).filter((other) => alertStageId(other) !== alertStageId(alert));
+  const isSoundOff = useSoundOff();
   const isOwnTimer = alert.rule === 'timer' && alert.stepId === null;
 
   useEffect(() => {
@@ -54,9 +60,8 @@ function TakeOver({ alert, onComplete }: AlertTakeOverProps & { alert: Alert }) 
   }, []);
 
   const acknowledge = () => {
-    const { key, crossing } = alert;
-    void store.act({ type: 'acknowledgeAlert', key, crossing });
-    if (isOwnTimer) void store.act({ type: 'stopTimer', timerId: key.replace('timer:', '') });
+    if (isSoundOff) void alarmSounds.unlock();
+    for (const command of heardCommands(alert)) onAct(command);
   };
 
   return (
@@ -69,8 +74,14 @@ function TakeOver({ alert, onComplete }: AlertTakeOverProps & { alert: Alert }) 
           {alert.stage === 'missed' ? 'Late' : 'Now'}
           {due ? <span className="tabular-nums"> · {due}</span> : null}
         </p>
-        <p className="take-over-aside">
+        {refusal ? (
+          <p role="alert" className="take-over-aside">
+            {refusal}
+          </p>
+        ) : null}
+        <p className="take-over-aside" hidden={refusal !== null}>
           {[
+            isSoundOff ? 'sound is off' : null,
             forgotten ? `not ticked yet: ${forgotten.step.title}` : null,
             others.length > 0 ? `also: ${others.map((other) => alertWords(state, other).verb).join(', ')}` : null,
           ]
@@ -112,7 +123,7 @@ function TakeOver({ alert, onComplete }: AlertTakeOverProps & { alert: Alert }) 
       <section className="act-bar" aria-label="Act">
         <PressButton
           className="act-side act-back"
-          onPress={() => void store.act({ type: 'goBack' })}
+          onPress={() => onAct({ type: 'goBack' })}
           isDisabled={state.doneOrder.length === 0}
         >
           Back one

@@ -39,7 +39,11 @@ export interface RunSheetPageProps {
   /** Warnings that leave the step in place. */
   strips: ReactNode;
   /** Instead of step and act, while an alert says "now". */
-  TakeOver: ComponentType<{ onComplete: (stepIds: string[]) => void }>;
+  TakeOver: ComponentType<{
+    onComplete: (stepIds: string[]) => void;
+    onAct: (command: RunCommand) => void;
+    refusal: string | null;
+  }>;
   /** Draws nothing. */
   ringer: ReactNode;
 }
@@ -171,7 +175,7 @@ function Sheet({ rehearsal, soundCheck, strips, TakeOver, ringer }: RunSheetPage
   );
 
   const body = alert ? (
-    <TakeOver onComplete={(stepIds) => stepIds.forEach(complete)} />
+    <TakeOver onComplete={(stepIds) => stepIds.forEach(complete)} onAct={act} refusal={refusal} />
   ) : mustCheckSound ? (
     soundCheck
   ) : isRunning ? (
