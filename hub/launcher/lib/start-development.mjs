@@ -54,7 +54,7 @@ export async function startDevelopment() {
         '',
         `Tablet with hot reload: http://localhost:${tabletPort}`,
         `API:                    http://localhost:${hubPort}/api/docs`,
-        'A probe:                make one on the house page, then: node probe-sim/dist/main.js kettle --token TOKEN',
+        'A probe:                make one on the house page, then: npm run probe-sim -- kettle --token TOKEN',
         '',
         'Ctrl-C stops everything.',
         '',

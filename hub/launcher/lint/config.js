@@ -9,7 +9,6 @@ import reactHooks from 'eslint-plugin-react-hooks';
 import tseslint from 'typescript-eslint';
 import { elements, files, policies } from './import-rules.js';
 
-const brands = 'Celsius|CelsiusDelta|Grams|Liters|Seconds|EpochMs|Ratio|Percent|Kilopascal';
 const specs = ['**/*.spec.{ts,tsx}', '**/*.bench.ts'];
 const code = ['**/*.{ts,tsx}'];
 
@@ -36,19 +35,10 @@ export function createLintConfig({ root, isTyped = true }) {
       },
     },
     {
-      files: code,
-      ignores: ['shared/src/units/**', ...specs],
-      rules: { 'no-restricted-syntax': ['error', castToUnit] },
-    },
-    {
-      files: ['shared/src/**/*.ts'],
-      ignores: [...specs, 'shared/src/units/**'],
-      rules: { 'no-restricted-syntax': ['error', castToUnit, currentDate] },
-    },
-    {
       files: ['shared/src/**/*.ts'],
       ignores: specs,
       rules: {
+        'no-restricted-syntax': ['error', currentDate],
         'no-restricted-properties': ['error', ...impureProperties],
       },
     },
@@ -82,10 +72,6 @@ export function createLintConfig({ root, isTyped = true }) {
   );
 }
 
-const castToUnit = {
-  selector: `TSAsExpression > TSTypeReference.typeAnnotation[typeName.name=/^(${brands})$/]`,
-  message: 'Make a quantity with its constructor from units, which checks it; a cast does not.',
-};
 const currentDate = {
   selector: "NewExpression[callee.name='Date'][arguments.length=0]",
   message: 'shared has no clock: take nowMs as an argument.',

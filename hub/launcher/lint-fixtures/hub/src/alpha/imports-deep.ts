@@ -1,4 +1,4 @@
 // planted: no-restricted-imports
-import { celsius } from '@steepfall/shared/dist/units/brands.js';
+import { formatTemp } from '@steepfall/shared/dist/units/format.js';
 
-export const found = celsius(62);
+export const found = formatTemp(62);
