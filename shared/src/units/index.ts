@@ -1,4 +1,3 @@
-export * from './brands.js';
 export * from './duration.js';
 export * from './format.js';
 export * from './in-unit.js';

@@ -1,4 +1,4 @@
 // planted: no-restricted-imports
 import { formatTemp } from '@steepfall/shared/dist/units/format.js';
 
-export const found = formatTemp(62);
+export const found = formatTemp;
