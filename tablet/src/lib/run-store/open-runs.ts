@@ -29,7 +29,9 @@ function eachOpen(work: (store: RunStore) => void): void {
 export function openOutbox(houseId: string): Promise<Outbox> {
   let outbox = outboxes.get(houseId);
   if (!outbox) {
-    outbox = openEventStore(houseId).then((store) => new Outbox(hubLink(), store));
+    outbox = openEventStore(houseId).then(
+      (store) => new Outbox(hubLink(), store, () => sessionState().known?.house.id === houseId),
+    );
     outboxes.set(houseId, outbox);
   }
   return outbox;

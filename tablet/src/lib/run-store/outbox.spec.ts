@@ -2,6 +2,7 @@ import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import { v5 as uuidV5 } from 'uuid';
 import { problem } from '@steepfall/shared/problems';
 import { LogBuilder, RUN_ID } from '@steepfall/shared/testing';
+import type { EventStore } from '../event-store/event-store.ts';
 import { MemoryEventStore } from '../event-store/memory-event-store.ts';
 import { FakeHub } from '../../testing/fake-hub.ts';
 import { Outbox, type Sent } from './outbox.ts';
@@ -131,6 +132,71 @@ describe(Outbox, () => {
     await outbox.send(RUN_ID);
     await outbox.giveUp(RUN_ID, notes[1]!.id);
     expect(outbox.counts.get()).toEqual({ waiting: 0, parked: 0 });
+  });
+
+  it.each(['not-signed-in', 'not-allowed', 'run-not-found'] as const)(
+    'keeps everything when the hub answers the whole call with %s: that says nothing of the events',
+    async (type) => {
+      const { hub, store, outbox, notes } = setUp();
+      hub.failNext = problem(type, 'Not now.');
+      await store.append(notes.slice(0, 1));
+      await outbox.send(RUN_ID);
+      expect(await store.outbox()).toMatchObject([{ status: 'pending' }]);
+      await vi.advanceTimersByTimeAsync(1_000);
+      expect(await store.outbox()).toEqual([]);
+    },
+  );
+
+  it('sends nothing while somebody of another house is signed in', async () => {
+    const { hub, link, store, notes } = setUp();
+    let isOwnHouse = false;
+    const outbox = new Outbox(link, store, () => isOwnHouse);
+    await store.append(notes);
+    await outbox.send(RUN_ID);
+    expect(hub.appends).toEqual([]);
+    isOwnHouse = true;
+    await outbox.send(RUN_ID);
+    expect(hub.log).toHaveLength(6);
+  });
+
+  it('sends, parks and sends again with a store that takes nothing', async () => {
+    const { hub, link, notes } = setUp();
+    const no = () => Promise.reject(new Error('The store is gone.'));
+    const store: EventStore = {
+      isDurable: true,
+      load: no,
+      append: no,
+      confirm: no,
+      mark: no,
+      park: no,
+      discard: no,
+      outbox: no,
+      keepRun: no,
+    };
+    const outbox = new Outbox(link, store);
+    hub.refusals.set(notes[1]!.id, problem('not-valid', 'It does not fit.'));
+    outbox.carry(notes);
+    await outbox.send(RUN_ID);
+    expect(hub.log).toHaveLength(5);
+    expect(outbox.parkedInMemory(RUN_ID)).toMatchObject([{ eventId: notes[1]!.id }]);
+    hub.refusals.clear();
+    await outbox.retry(notes[1]!.id);
+    expect(hub.log).toHaveLength(6);
+    expect(outbox.counts.get()).toEqual({ waiting: 0, parked: 0 });
+  });
+
+  it('settles an event once when the store can be read and not written', async () => {
+    const { hub, store, outbox, sent, notes } = setUp();
+    await store.append(notes.slice(0, 2));
+    hub.refusals.set(notes[1]!.id, problem('not-valid', 'It does not fit.'));
+    for (const method of ['mark', 'confirm', 'park', 'discard'] as const)
+      vi.spyOn(store, method).mockRejectedValue(new Error('The disk is full.'));
+    await outbox.send(RUN_ID);
+    expect(sent.map(({ kind }) => kind)).toEqual(['confirmed', 'parked']);
+    expect(outbox.counts.get()).toEqual({ waiting: 0, parked: 1 });
+    await outbox.giveUp(RUN_ID, notes[1]!.id);
+    expect(outbox.counts.get()).toEqual({ waiting: 0, parked: 0 });
+    expect(hub.appends).toHaveLength(1);
   });
 
   it('carries what the store could not take', async () => {

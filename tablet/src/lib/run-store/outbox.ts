@@ -10,6 +10,8 @@ import { ValueStore, isShallowSame } from '../value-store.ts';
 const BATCH = 100;
 const BACK_OFF_MS = [1_000, 2_000, 5_000, 10_000, 30_000];
 const LOOK_EVERY_MS = 30_000;
+/** Refusals of the whole call that say nothing of the events: who asks, from which house, and how often. */
+const NOT_ABOUT_EVENTS = [401, 403, 404, 429];
 
 export type Sent =
   | { kind: 'confirmed'; events: StoredRunEvent[] }
@@ -31,10 +33,15 @@ export class Outbox {
   private readonly listeners = new Set<(runId: string, sent: Sent) => void>();
   /** What the store could not take: sent from memory, and lost with the page. */
   private unkept: OutboxItem[] = [];
+  /** What was settled although the store could not be told: it must not be sent over and over. */
+  private readonly settled = new Set<string>();
+  private readonly parkedHere = new Map<string, OutboxItem>();
 
   constructor(
     private readonly link: HubLink,
     private readonly store: EventStore,
+    /** False while somebody of another house is signed in: what waits here is not theirs to send. */
+    private readonly isOwnHouse: () => boolean = () => true,
   ) {
     link.state.subscribe(() => {
       if (link.state.get().status !== 'connected') return;
@@ -78,7 +85,7 @@ export class Outbox {
   async send(runId: string): Promise<void> {
     const queue = this.queueOf(runId);
     await this.count();
-    if (queue.isSending || this.link.state.get().status !== 'connected') return;
+    if (queue.isSending || !this.canSend()) return;
     queue.isSending = true;
     clearTimeout(queue.timer);
     try {
@@ -95,7 +102,11 @@ export class Outbox {
 
   /** A parked event once more, after a person asked for it. */
   async retry(eventId: string): Promise<void> {
-    await this.store.mark([eventId], 'pending');
+    await this.store.mark([eventId], 'pending').catch(() => undefined);
+    this.parkedHere.delete(eventId);
+    this.unkept = this.unkept.map((item) =>
+      item.eventId === eventId ? { ...item, status: 'pending', problem: null } : item,
+    );
     await this.sendAll();
   }
 
@@ -103,6 +114,16 @@ export class Outbox {
   async giveUp(runId: string, eventId: string): Promise<void> {
     await this.drop(runId, eventId);
     await this.count();
+  }
+
+  /** What is parked in memory only, because the store could not take it. */
+  parkedInMemory(runId: string): OutboxItem[] {
+    const unkept = this.unkept.filter(({ status }) => status === 'parked');
+    return [...unkept, ...this.parkedHere.values()].filter((item) => item.runId === runId);
+  }
+
+  private canSend(): boolean {
+    return this.link.state.get().status === 'connected' && this.isOwnHouse();
   }
 
   private queueOf(runId: string): RunQueue {
@@ -115,7 +136,10 @@ export class Outbox {
   }
 
   private async items(): Promise<OutboxItem[]> {
-    return [...(await this.store.outbox().catch(() => [])), ...this.unkept];
+    const kept = (await this.store.outbox().catch(() => []))
+      .filter(({ eventId }) => !this.settled.has(eventId))
+      .map((item) => this.parkedHere.get(item.eventId) ?? item);
+    return [...kept, ...this.unkept];
   }
 
   private async count(): Promise<OutboxItem[]> {
@@ -127,6 +151,7 @@ export class Outbox {
 
   /** True when something was settled and more may wait. */
   private async sendNext(runId: string, queue: RunQueue): Promise<boolean> {
+    if (!this.canSend()) return false;
     const waiting = (await this.items()).filter((item) => item.runId === runId && item.status !== 'parked');
     const batch = waiting.slice(0, queue.isOneByOne ? 1 : BATCH);
     if (batch.length === 0) {
@@ -134,7 +159,7 @@ export class Outbox {
       return false;
     }
     const ids = batch.map(({ eventId }) => eventId);
-    await this.store.mark(ids, 'sent');
+    await this.store.mark(ids, 'sent').catch(() => undefined);
     try {
       const answer = await this.link.ask('run.append', { runId, events: batch.map(({ event }) => event) });
       queue.failCount = 0;
@@ -144,14 +169,14 @@ export class Outbox {
     } catch (error) {
       const problem = error instanceof HubProblemError ? error.problem : null;
       const isForGood =
-        problem !== null && problem.status >= 400 && problem.status < 500 && ![401, 429].includes(problem.status);
+        problem !== null && problem.status >= 400 && problem.status < 500 && !NOT_ABOUT_EVENTS.includes(problem.status);
       if (!isForGood) {
         await this.store.mark(ids, 'pending').catch(() => undefined);
         throw error;
       }
       // One bad event spoils a batch: find it alone, so that the others get through.
       if (batch.length > 1) queue.isOneByOne = true;
-      else await this.park(runId, ids[0]!, problem);
+      else await this.park(batch[0]!, problem);
       return true;
     }
   }
@@ -169,26 +194,33 @@ export class Outbox {
       return [{ ...event, seq, receivedAtMs, sentBy }];
     });
     if (events.length > 0) {
-      await this.store.confirm(events);
+      await this.store.confirm(events).catch(() => events.forEach(({ id }) => this.settled.add(id)));
       this.forget(events.map(({ id }) => id));
       this.tell(runId, { kind: 'confirmed', events });
     }
     for (const { id, problem } of refused) {
       const isFoundTwice = problemTypeOf(problem) === 'event-id-taken' && version(id) === 5;
       if (isFoundTwice) await this.drop(runId, id);
-      else await this.park(runId, id, problem);
+      else {
+        const item = batch.find(({ eventId }) => eventId === id);
+        if (item) await this.park(item, problem);
+      }
     }
     return events.length + refused.length;
   }
 
-  private async park(runId: string, eventId: string, problem: Problem): Promise<void> {
-    await this.store.park(eventId, problem);
-    this.unkept = this.unkept.map((item) => (item.eventId === eventId ? { ...item, status: 'parked', problem } : item));
+  private async park(item: OutboxItem, problem: Problem): Promise<void> {
+    const { runId, eventId } = item;
+    const parked: OutboxItem = { ...item, status: 'parked', problem };
+    if (this.unkept.some((one) => one.eventId === eventId))
+      this.unkept = this.unkept.map((one) => (one.eventId === eventId ? parked : one));
+    else await this.store.park(eventId, problem).catch(() => this.parkedHere.set(eventId, parked));
     this.tell(runId, { kind: 'parked', eventId, problem });
   }
 
   private async drop(runId: string, eventId: string): Promise<void> {
-    await this.store.discard(eventId);
+    await this.store.discard(eventId).catch(() => this.settled.add(eventId));
+    this.parkedHere.delete(eventId);
     this.forget([eventId]);
     this.tell(runId, { kind: 'dropped', eventId });
   }

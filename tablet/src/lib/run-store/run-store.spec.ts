@@ -1,6 +1,7 @@
 import { describe, expect, it, vi } from 'vitest';
 import { LogBuilder, MEMBER_ID, RUN_ID, START_MS } from '@steepfall/shared/testing';
 import { currentStep, foldRun, standingAlerts, type RunCommand } from '@steepfall/shared/runs';
+import { problem } from '@steepfall/shared/problems';
 import { v7 as uuidv7 } from 'uuid';
 import { FakeHub, type FakeLink } from '../../testing/fake-hub.ts';
 import type { EventStore } from '../event-store/event-store.ts';
@@ -35,7 +36,7 @@ async function tablet(
     await settle();
     return decision;
   };
-  return { run, store, time, isSettled, act, state: () => run.snapshot.get().state };
+  return { run, store, outbox, time, isSettled, act, state: () => run.snapshot.get().state };
 }
 
 /** Lets every promise in flight come home. */
@@ -284,6 +285,21 @@ describe(RunStore, () => {
     expect(after.run.snapshot.get().phase).toBe('open');
     expect(after.run.readings.all).toHaveLength(60);
     expect(after.run.live.get().view).not.toBeNull();
+  });
+
+  it('shows what was refused until a person drops it', async () => {
+    const hub = new FakeHub(RUN_ID, new LogBuilder().stored);
+    const link = hub.connect();
+    const { run, outbox, act } = await tablet(link);
+    link.setConnected(false);
+    await act({ type: 'addNote', stepId: null, text: 'no' });
+    const { id } = run.snapshot.get().entries.at(-1)!;
+    hub.refusals.set(id, problem('not-valid', 'It does not fit.'));
+    link.setConnected(true);
+    await settle();
+    expect(run.snapshot.get()).toMatchObject({ pendingCount: 0, parked: [{ eventId: id }] });
+    await outbox.giveUp(RUN_ID, id);
+    expect(run.snapshot.get().parked).toEqual([]);
   });
 
   it('says that there is no such run, and shows nothing of it', async () => {

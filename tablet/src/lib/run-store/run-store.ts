@@ -191,7 +191,7 @@ export class RunStore {
       .catch(() => ({ entries: [], outbox: [], run: null }));
     if (this.isClosed) return;
     this.parked.clear();
-    for (const item of outbox) {
+    for (const item of [...outbox, ...this.parts.outbox.parkedInMemory(this.runId)]) {
       if (item.status === 'parked') this.parked.set(item.eventId, item);
     }
     for (const entry of entries) {
@@ -289,7 +289,9 @@ export class RunStore {
   }
 
   private forget(eventId: string): void {
-    if (this.pending.delete(eventId)) this.publish();
+    const wasPending = this.pending.delete(eventId);
+    const wasParked = this.parked.delete(eventId);
+    if (wasPending || wasParked) this.publish();
   }
 
   private has(eventId: string): boolean {
