@@ -1,9 +1,14 @@
 import { contrastRatio } from '@steepfall/shared/figures';
 import { describe, expect, it } from 'vitest';
+import runSheet from '#features/run-sheet/run-sheet.css?raw';
 import styles from './styles.css?raw';
 
-function paletteOf(ground: 'day' | 'night'): Map<string, string> {
-  const block = new RegExp(`\\[data-ground='${ground}'\\] \\{([^}]*)\\}`).exec(styles)?.[1] ?? '';
+type Ground = 'day' | 'night' | 'alert';
+
+function paletteOf(ground: Ground): Map<string, string> {
+  const [sheet, opening] =
+    ground === 'alert' ? [runSheet, '\\.sheet\\[data-alert\\]'] : [styles, `\\[data-ground='${ground}'\\]`];
+  const block = new RegExp(`${opening} \\{([^}]*)\\}`).exec(sheet)?.[1] ?? '';
   return new Map([...block.matchAll(/--([\w-]+): (#[0-9a-f]{6});/g)].map(([, name = '', value = '']) => [name, value]));
 }
 
@@ -12,7 +17,7 @@ const fills = new Map(
 );
 const hues = ['copper', 'leaf', 'tarn', 'ember'];
 
-describe.each(['day', 'night'] as const)('the %s ground', (ground) => {
+describe.each<Ground>(['day', 'night', 'alert'])('the %s ground', (ground) => {
   const palette = paletteOf(ground);
   const color = (name: string) => palette.get(name) ?? `${name} is missing`;
   const least = (name: string) =>
