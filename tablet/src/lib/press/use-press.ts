@@ -4,6 +4,9 @@ import { PressFilter, type PressVerdict } from './press-filter.ts';
 const touches = new Set<number>();
 const filters = new Set<PressFilter>();
 let isCounting = false;
+/** When a touch was last judged, until the next one begins. */
+let judgedAtMs = Number.NEGATIVE_INFINITY;
+const CLICK_FOLLOWS_WITHIN_MS = 800;
 
 /** Fingers on the glass are counted for the whole page: a palm beside the button spoils the press on it. */
 function countTouches(): void {
@@ -12,8 +15,11 @@ function countTouches(): void {
   const capture = { capture: true, passive: true };
   addEventListener(
     'pointerdown',
-    ({ pointerType, pointerId }) => {
+    ({ pointerType, pointerId, isPrimary }) => {
+      judgedAtMs = Number.NEGATIVE_INFINITY;
       if (pointerType !== 'touch') return;
+      // The first finger on an empty glass: what is still counted was lifted where nobody saw it.
+      if (isPrimary) forgetTouches();
       touches.add(pointerId);
       if (touches.size > 1) for (const filter of filters) filter.spoil();
     },
@@ -22,6 +28,24 @@ function countTouches(): void {
   const lift = ({ pointerId }: globalThis.PointerEvent) => touches.delete(pointerId);
   addEventListener('pointerup', lift, capture);
   addEventListener('pointercancel', lift, capture);
+  addEventListener('blur', forgetTouches);
+  document.addEventListener('visibilitychange', forgetTouches);
+  // A touch is judged when the finger lifts, and its click comes after: by then something else may be under the finger.
+  addEventListener(
+    'click',
+    (event) => {
+      if (event.detail === 0 || event.timeStamp - judgedAtMs >= CLICK_FOLLOWS_WITHIN_MS) return;
+      judgedAtMs = Number.NEGATIVE_INFINITY;
+      event.preventDefault();
+      event.stopPropagation();
+    },
+    { capture: true },
+  );
+}
+
+function forgetTouches(): void {
+  touches.clear();
+  for (const filter of filters) filter.cancel();
 }
 
 /** Why a touch did not count, for a moment after it. */
@@ -34,7 +58,6 @@ export function usePress(onPress: () => void) {
   const filter = useMemo(() => new PressFilter(), []);
   const [hint, setHint] = useState<PressHint>(null);
   const hintTimer = useRef<ReturnType<typeof setTimeout>>(undefined);
-  const touchedAtMs = useRef(Number.NEGATIVE_INFINITY);
 
   useEffect(() => {
     countTouches();
@@ -67,7 +90,7 @@ export function usePress(onPress: () => void) {
       },
       onPointerUp: (event: PointerEvent<HTMLElement>) => {
         if (event.pointerType !== 'touch') return;
-        touchedAtMs.current = event.timeStamp;
+        judgedAtMs = event.timeStamp;
         const { left, right, top, bottom } = event.currentTarget.getBoundingClientRect();
         const { clientX, clientY } = event;
         const isInside = clientX >= left && clientX <= right && clientY >= top && clientY <= bottom;
@@ -75,8 +98,6 @@ export function usePress(onPress: () => void) {
       },
       onPointerCancel: () => filter.cancel(),
       onClick: (event: MouseEvent<HTMLElement>) => {
-        // The click that follows a touch was judged already.
-        if (event.timeStamp - touchedAtMs.current < 800) return;
         settle(filter.activate(event.timeStamp));
       },
     },
