@@ -26,7 +26,7 @@ async function openStore(log: LogBuilder) {
     link,
     store,
     outbox: new Outbox(link, store),
-    clock: { nowMs: () => time.nowMs, isSettled: new ValueStore(true) },
+    clock: { nowMs: () => time.nowMs, isSettled: new ValueStore(true), look: () => undefined },
     station: 'tablet',
     memberId: () => MEMBER_ID,
     newId: uuidv7,

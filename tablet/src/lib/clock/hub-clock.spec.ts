@@ -65,6 +65,22 @@ describe(HubClock, () => {
     expect(clock.isSettled.get()).toBe(true);
   });
 
+  it('asks again every ten seconds until it gets an answer', async () => {
+    const { clock, link, ask, pass } = device({ skewMs: 90_000 });
+    ask.mockRejectedValue(new Error('no answer'));
+    clock.follow(link);
+    await clock.sync();
+    expect(ask).toHaveBeenCalledTimes(1);
+    pass(9_000);
+    clock.look();
+    await Promise.resolve();
+    expect(ask).toHaveBeenCalledTimes(1);
+    pass(1_000);
+    clock.look();
+    await clock.sync();
+    expect(ask).toHaveBeenCalledTimes(2);
+  });
+
   it('measures anew every ten minutes', async () => {
     const { clock, link, ask, pass } = device();
     clock.follow(link);

@@ -4,6 +4,8 @@ import { estimateOffset, GlidingOffset, type OffsetSample } from './offset.ts';
 
 const SAMPLES = 8;
 const SYNC_EVERY_MS = 600_000;
+/** A question that got no answer is asked again after this long. */
+const RETRY_MS = 10_000;
 /** Wall time and monotonic time apart by more than this between two looks: the clock was set, or the device slept. */
 const JUMP_MS = 2_000;
 /** Without an answer from the hub this long after a jump, the device's own clock is believed again. */
@@ -31,6 +33,7 @@ export class HubClock {
   private link: HubLink | null = null;
   private syncing: Promise<void> | null = null;
   private lastSyncMs: number | null = null;
+  private lastTryMs = Number.NEGATIVE_INFINITY;
   private lastLook: { wallMs: number; monotonicMs: number };
   private unsettledAtMs = 0;
 
@@ -58,7 +61,7 @@ export class HubClock {
     syncWhenConnected();
   }
 
-  /** Called on every tick: notices jumps, and asks again when the last answer is old. */
+  /** Called on every tick, and before anything is dated: notices jumps, and asks again when the last answer is old. */
   look(): void {
     const wallMs = this.clocks.wallMs();
     const monotonicMs = this.clocks.monotonicMs();
@@ -74,7 +77,8 @@ export class HubClock {
     } else if (!this.isSettled.get() && monotonicMs - this.unsettledAtMs > SETTLE_AT_LATEST_MS) {
       this.isSettled.set(true);
     }
-    if (this.lastSyncMs !== null && monotonicMs - this.lastSyncMs > SYNC_EVERY_MS) void this.sync();
+    const isDue = this.lastSyncMs === null || monotonicMs - this.lastSyncMs > SYNC_EVERY_MS;
+    if (isDue && monotonicMs - this.lastTryMs >= RETRY_MS) void this.sync();
   }
 
   /** Measures the offset anew; callers that meet share one measurement. Without the hub nothing changes. */
@@ -88,6 +92,7 @@ export class HubClock {
   private async measure(): Promise<void> {
     const { link } = this;
     if (link?.state.get().status !== 'connected') return;
+    this.lastTryMs = this.clocks.monotonicMs();
     const samples: OffsetSample[] = [];
     for (let i = 0; i < SAMPLES; i += 1) {
       const sample = await this.sample(link);

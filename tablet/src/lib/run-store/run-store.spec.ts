@@ -23,7 +23,7 @@ async function tablet(
     link,
     store,
     outbox,
-    clock: { nowMs: () => time.nowMs, isSettled },
+    clock: { nowMs: () => time.nowMs, isSettled, look: () => undefined },
     station,
     memberId: () => MEMBER_ID,
     newId: uuidv7,

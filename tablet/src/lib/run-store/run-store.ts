@@ -62,7 +62,8 @@ export interface RunStoreParts {
   link: HubLink;
   store: EventStore;
   outbox: Outbox;
-  clock: { nowMs: () => number; isSettled: ValueStore<boolean> };
+  /** `look` notices that the device's clock jumped, before a time is taken from it. */
+  clock: { nowMs: () => number; isSettled: ValueStore<boolean>; look: () => void };
   station: string;
   memberId: () => string | null;
   newId: () => string;
@@ -154,6 +155,7 @@ export class RunStore {
   /** What a person asked for: decided on the state at its turn, on disk before it is shown, then on its way. */
   act(command: RunCommand): Promise<Decision> {
     const turn = this.acting.then(async () => {
+      this.parts.clock.look();
       const { memberId, station, newId } = this.parts;
       const decision = decide(this.snapshot.get().state, command, {
         nowMs: this.nowMs(),
@@ -357,6 +359,7 @@ export class RunStore {
   }
 
   private drive(readings: readonly Reading[]): void {
+    this.parts.clock.look();
     const { state, phase } = this.snapshot.get();
     const nowMs = this.nowMs();
     // While nobody knows why the clock jumped, nothing is found out: a wrong time would become a wrong fact.
