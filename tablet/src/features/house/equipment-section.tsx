@@ -4,7 +4,6 @@ import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { createEquipmentSchema, equipmentSchema, type Equipment } from '@steepfall/shared/contracts';
 import { formatMass, formatPressure, formatTemp, formatVolume } from '@steepfall/shared/units';
 import { useForm, type Resolver } from 'react-hook-form';
-import { Banner } from '#components/banner.tsx';
 import { Button } from '#components/button.tsx';
 import { Dialog } from '#components/dialog.tsx';
 import { EmptyState } from '#components/empty-state.tsx';
@@ -16,6 +15,7 @@ import { callHubFor } from '#lib/api-client.ts';
 import { equipmentQuery } from '#lib/hub-queries.ts';
 import { useMay } from '#lib/session.ts';
 import { failureWords, fieldProblems } from '#lib/words.ts';
+import { SendForm } from './send-form.tsx';
 
 type Kind = Equipment['kind'];
 
@@ -165,7 +165,15 @@ function EquipmentForm({ kind, onClose }: { kind: Kind; onClose: () => void }) {
   });
   const { errors } = formState;
   return (
-    <form noValidate className="grid gap-5" onSubmit={(event) => void handleSubmit((body) => add.mutate(body))(event)}>
+    <SendForm
+      onSubmit={(event) => void handleSubmit((body) => add.mutate(body))(event)}
+      onClose={onClose}
+      act="Add"
+      busyLabel="Adding"
+      isBusy={add.isPending}
+      failedTitle="Nothing was added"
+      error={add.isError && fieldProblems(add.error).length === 0 ? add.error : null}
+    >
       <TextField label="Name" autoComplete="off" error={errors.name?.message} {...register('name')} />
       {kind === 'chiller' ? (
         <SelectField label="Metal of the coil" {...register('facts.metal')}>
@@ -184,17 +192,6 @@ function EquipmentForm({ kind, onClose }: { kind: Kind; onClose: () => void }) {
           {...register(`facts.${name}`, { valueAsNumber: true })}
         />
       ))}
-      {add.isError && fieldProblems(add.error).length === 0 ? (
-        <Banner tone="act" title="Nothing was added">
-          {failureWords(add.error)}
-        </Banner>
-      ) : null}
-      <div className="flex flex-wrap gap-3">
-        <Button look="primary" type="submit" isBusy={add.isPending} busyLabel="Adding">
-          Add
-        </Button>
-        <Button onClick={onClose}>Close</Button>
-      </div>
-    </form>
+    </SendForm>
   );
 }

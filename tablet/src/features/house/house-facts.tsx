@@ -3,7 +3,6 @@ import { zodResolver } from '@hookform/resolvers/zod';
 import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { houseSchema, updateHouseSchema, type House, type UpdateHouse } from '@steepfall/shared/contracts';
 import { useForm } from 'react-hook-form';
-import { Banner } from '#components/banner.tsx';
 import { Button } from '#components/button.tsx';
 import { Dialog } from '#components/dialog.tsx';
 import { TextField } from '#components/field.tsx';
@@ -11,7 +10,7 @@ import { LevelRule } from '#components/level-rule.tsx';
 import { callHubFor } from '#lib/api-client.ts';
 import { houseQuery } from '#lib/hub-queries.ts';
 import { noteHouse, useKnown, useMay } from '#lib/session.ts';
-import { failureWords } from '#lib/words.ts';
+import { SendForm } from './send-form.tsx';
 
 /** Name and altitude. The altitude sets the gas pressure and the boiling point. */
 export function HouseFacts() {
@@ -52,31 +51,24 @@ function HouseDialog({ house, onClose }: { house: House; onClose: () => void }) 
   });
   return (
     <Dialog isOpen onClose={onClose} title="The place">
-      <form
-        noValidate
-        className="grid gap-5"
+      <SendForm
         onSubmit={(event) => void handleSubmit((body) => save.mutate(body))(event)}
+        onClose={onClose}
+        act="Save"
+        busyLabel="Saving"
+        isBusy={save.isPending}
+        failedTitle="It was not saved"
+        error={save.error}
       >
         <TextField label="Name of the house" error={formState.errors.name?.message} {...register('name')} />
         <TextField
           label="Height above the sea"
           inputMode="numeric"
           unit="m"
-          error={formState.errors.altitudeM ? 'A whole number from −430 to 6000.' : undefined}
+          error={formState.errors.altitudeM ? 'A number from −430 to 6000.' : undefined}
           {...register('altitudeM', { valueAsNumber: true })}
         />
-        {save.isError ? (
-          <Banner tone="act" title="It was not saved">
-            {failureWords(save.error)}
-          </Banner>
-        ) : null}
-        <div className="flex flex-wrap gap-3">
-          <Button look="primary" type="submit" isBusy={save.isPending} busyLabel="Saving">
-            Save
-          </Button>
-          <Button onClick={onClose}>Close</Button>
-        </div>
-      </form>
+      </SendForm>
     </Dialog>
   );
 }

@@ -23,6 +23,7 @@ import { callHubFor } from '#lib/api-client.ts';
 import { membersQuery } from '#lib/hub-queries.ts';
 import { useKnown, useMay } from '#lib/session.ts';
 import { failureWords, fieldProblems } from '#lib/words.ts';
+import { SendForm } from './send-form.tsx';
 
 const roleTells: Record<Role, string> = {
   owner: 'may do everything',
@@ -149,10 +150,14 @@ function AddMemberDialog({ onClose }: { onClose: () => void }) {
   const { errors } = formState;
   return (
     <Dialog isOpen onClose={onClose} title="Add a member">
-      <form
-        noValidate
-        className="grid gap-5"
+      <SendForm
         onSubmit={(event) => void handleSubmit((body) => add.mutate(body))(event)}
+        onClose={onClose}
+        act="Add"
+        busyLabel="Adding"
+        isBusy={add.isPending}
+        failedTitle="Nobody was added"
+        error={add.isError && fieldProblems(add.error).length === 0 ? add.error : null}
       >
         <TextField label="Name" autoComplete="off" error={errors.displayName?.message} {...register('displayName')} />
         <TextField
@@ -172,18 +177,7 @@ function AddMemberDialog({ onClose }: { onClose: () => void }) {
           error={errors.password?.message}
           {...register('password')}
         />
-        {add.isError && fieldProblems(add.error).length === 0 ? (
-          <Banner tone="act" title="Nobody was added">
-            {failureWords(add.error)}
-          </Banner>
-        ) : null}
-        <div className="flex flex-wrap gap-3">
-          <Button look="primary" type="submit" isBusy={add.isPending} busyLabel="Adding">
-            Add
-          </Button>
-          <Button onClick={onClose}>Close</Button>
-        </div>
-      </form>
+      </SendForm>
     </Dialog>
   );
 }
@@ -193,29 +187,22 @@ function EditMemberDialog({ member, onClose }: { member: Member; onClose: () => 
   const { register, handleSubmit } = useForm({ defaultValues: { displayName: member.displayName, role: member.role } });
   return (
     <Dialog isOpen onClose={onClose} title={member.displayName}>
-      <form
-        noValidate
-        className="grid gap-5"
+      <SendForm
         onSubmit={(event) =>
           void handleSubmit((body) => change.mutate({ id: member.id, body }, { onSuccess: onClose }))(event)
         }
+        onClose={onClose}
+        act="Save"
+        busyLabel="Saving"
+        isBusy={change.isPending}
+        failedTitle="Nothing was changed"
+        error={change.error}
       >
         <TextField label="Name" autoComplete="off" {...register('displayName')} />
         <SelectField label="Role" {...register('role')}>
           {RoleOptions()}
         </SelectField>
-        {change.isError ? (
-          <Banner tone="act" title="Nothing was changed">
-            {failureWords(change.error)}
-          </Banner>
-        ) : null}
-        <div className="flex flex-wrap gap-3">
-          <Button look="primary" type="submit" isBusy={change.isPending} busyLabel="Saving">
-            Save
-          </Button>
-          <Button onClick={onClose}>Close</Button>
-        </div>
-      </form>
+      </SendForm>
     </Dialog>
   );
 }

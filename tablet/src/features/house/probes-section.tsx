@@ -24,6 +24,7 @@ import { probesQuery } from '#lib/hub-queries.ts';
 import { useMay } from '#lib/session.ts';
 import { failureWords, fieldProblems } from '#lib/words.ts';
 import { TokenDialog } from './token-dialog.tsx';
+import { SendForm } from './send-form.tsx';
 
 type Asked = { act: 'rotate' | 'revoke'; probe: Probe };
 
@@ -220,10 +221,14 @@ function AddProbeDialog({ onClose, onAdded }: { onClose: () => void; onAdded: (m
   const { errors } = formState;
   return (
     <Dialog isOpen onClose={onClose} title="Add a probe">
-      <form
-        noValidate
-        className="grid gap-5"
+      <SendForm
         onSubmit={(event) => void handleSubmit((body) => add.mutate(body))(event)}
+        onClose={onClose}
+        act="Add"
+        busyLabel="Adding"
+        isBusy={add.isPending}
+        failedTitle="The probe was not added"
+        error={add.isError && fieldProblems(add.error).length === 0 ? add.error : null}
       >
         <TextField
           label="Name"
@@ -243,18 +248,7 @@ function AddProbeDialog({ onClose, onAdded }: { onClose: () => void; onAdded: (m
             {...register(name, { valueAsNumber: true })}
           />
         ))}
-        {add.isError && fieldProblems(add.error).length === 0 ? (
-          <Banner tone="act" title="The probe was not added">
-            {failureWords(add.error)}
-          </Banner>
-        ) : null}
-        <div className="flex flex-wrap gap-3">
-          <Button look="primary" type="submit" isBusy={add.isPending} busyLabel="Adding">
-            Add
-          </Button>
-          <Button onClick={onClose}>Close</Button>
-        </div>
-      </form>
+      </SendForm>
     </Dialog>
   );
 }
