@@ -6,7 +6,7 @@ import { directionDress } from '#components/direction-dress.ts';
 import type { LinePoint, Stretch } from '#lib/liquid-line.ts';
 import { useGround } from '#lib/theme.ts';
 import { clockTime } from '#lib/words.ts';
-import { layoutFlags, PENNANT_PX, type Flag, type PlacedFlag } from './flag-layout.ts';
+import { footnotesOf, layoutFlags, PENNANT_PX, type Flag, type PlacedFlag } from './flag-layout.ts';
 
 export interface Level {
   tempC: number;
@@ -37,8 +37,8 @@ interface Geometry {
 const LANE_PX = 30;
 const MOST_LANES = 5;
 const NARROW_PX = 620;
-/** From here to the right edge the labels of the levels stand. */
-const LABEL_SHARE = 0.8;
+const LETTER_PX = 8.4;
+const LABEL_INSET_PX = 6;
 
 function cssColor(name: string): string {
   return getComputedStyle(document.documentElement).getPropertyValue(name).trim();
@@ -76,6 +76,13 @@ function temperatureAt(line: readonly LinePoint[], atMs: number): number | null 
   const before = line[index - 1] ?? after;
   const span = after.atMs - before.atMs;
   return span <= 0 ? after.tempC : before.tempC + ((after.tempC - before.tempC) * (atMs - before.atMs)) / span;
+}
+
+/** A climbing line leaves the lower right of a spot free, a falling one the upper right. */
+function isClimbing(line: readonly LinePoint[], atMs: number): boolean {
+  const before = temperatureAt(line, atMs - 30_000);
+  const after = temperatureAt(line, atMs + 30_000);
+  return before !== null && after !== null && after >= before;
 }
 
 /** The recorded line with its levels, and what happened on it as flags. The drawing only: its words and its table stand beside it. */
@@ -176,17 +183,39 @@ function Overlay({
   const levelsInSight = levels.filter(({ tempC }) => tempC >= minC && tempC <= maxC);
   const xOf = (atMs: number) => ((atMs - fromMs) / (toMs - fromMs)) * width;
   const yOf = (tempC: number) => height * (1 - (tempC - minC) / (maxC - minC));
-  /** Where the line runs close to a level at the right, the label of that level moves to the left. */
-  const isCrowded = (tempC: number) =>
-    line.some((point) => {
-      const x = xOf(point.atMs);
-      return x > width * LABEL_SHARE && x <= width && Math.abs(yOf(point.tempC) - yOf(tempC) + 10) < 22;
-    });
   const placed = useMemo(
     () => layoutFlags(flags, { width, lanes, hasLabels: !isNarrow, xOf }),
     // eslint-disable-next-line react-hooks/exhaustive-deps -- xOf follows from the others
     [flags, width, lanes, isNarrow, fromMs, toMs],
   );
+  const footOf = ({ atMs }: Flag): number | null => {
+    const tempC = temperatureAt(line, atMs);
+    return tempC === null ? null : yOf(tempC);
+  };
+  /** Whether line, poles and spots leave this part of the drawing free. */
+  const isFree = (from: number, to: number, upper: number, lower: number) =>
+    !line.some((point) => {
+      const x = xOf(point.atMs);
+      const y = yOf(point.tempC);
+      return x >= from && x <= to && y >= upper && y <= lower;
+    }) &&
+    !placed.some((flag) => {
+      const bottom = (footOf(flag) ?? height) + 8;
+      const isPole = flag.lane !== null && bottom >= upper;
+      const isSpot = bottom - 16 <= lower && bottom >= upper;
+      return flag.x >= from - 6 && flag.x <= to + 6 && (isPole || isSpot);
+    });
+  /** At the right if that is free, else at the left; with its number only where neither has room for the words. */
+  const labelOf = ({ tempC, title }: Level) => {
+    const number = formatTemp(tempC, { unit: 'C' });
+    for (const text of isNarrow ? [number] : [`${title} ${number}`, number]) {
+      const px = text.length * LETTER_PX;
+      const [upper, lower] = [yOf(tempC) - 24, yOf(tempC) - 2];
+      if (isFree(width - LABEL_INSET_PX - px, width, upper, lower)) return { text, isLeft: false };
+      if (isFree(0, LABEL_INSET_PX + px, upper, lower)) return { text, isLeft: true };
+    }
+    return { text: number, isLeft: false };
+  };
   return (
     <svg className="pointer-events-none absolute inset-0 h-full w-full overflow-visible" fontFamily="inherit">
       <g transform={`translate(${left} ${top})`}>
@@ -200,8 +229,7 @@ function Overlay({
           />
         ))}
         {placed.map((flag) => {
-          const foot = temperatureAt(line, flag.atMs);
-          const footY = foot === null ? null : yOf(foot);
+          const footY = footOf(flag);
           return (
             <g key={flag.id} transform={`translate(${flag.x} 0)`}>
               {flag.lane === null ? null : <Pennant flag={flag} rise={flag.lane - lanes} footY={footY ?? height} />}
@@ -217,21 +245,46 @@ function Overlay({
             </g>
           );
         })}
-        {levelsInSight.map(({ tempC, title }) => (
-          <text
-            key={`${tempC}${title}`}
-            x={isCrowded(tempC) ? 6 : width - 4}
-            y={yOf(tempC) - 7}
-            textAnchor={isCrowded(tempC) ? 'start' : 'end'}
-            fontSize="15"
-            fill="var(--soft)"
-            stroke="var(--ground)"
-            strokeWidth="6"
-            paintOrder="stroke"
-          >
-            {isNarrow ? formatTemp(tempC, { unit: 'C' }) : `${title} ${formatTemp(tempC, { unit: 'C' })}`}
-          </text>
-        ))}
+        {footnotesOf(placed).map(({ id, numbers, flags: noted }) => {
+          const first = noted[0]!;
+          const last = noted.at(-1)!;
+          const isLeft = last.x + 12 + numbers.length * LETTER_PX > width;
+          const footY = footOf(isLeft ? first : last);
+          return footY === null ? null : (
+            <text
+              key={id}
+              x={isLeft ? first.x - 10 : last.x + 10}
+              y={footY + (isClimbing(line, last.atMs) === isLeft ? -6 : 18)}
+              textAnchor={isLeft ? 'end' : 'start'}
+              fontSize="14"
+              fontWeight="600"
+              fill="var(--text)"
+              stroke="var(--ground)"
+              strokeWidth="4"
+              paintOrder="stroke"
+            >
+              {numbers}
+            </text>
+          );
+        })}
+        {levelsInSight.map((level) => {
+          const { text, isLeft } = labelOf(level);
+          return (
+            <text
+              key={`${level.tempC}${level.title}`}
+              x={isLeft ? LABEL_INSET_PX : width - LABEL_INSET_PX}
+              y={yOf(level.tempC) - 7}
+              textAnchor={isLeft ? 'start' : 'end'}
+              fontSize="15"
+              fill="var(--soft)"
+              stroke="var(--ground)"
+              strokeWidth="6"
+              paintOrder="stroke"
+            >
+              {text}
+            </text>
+          );
+        })}
       </g>
     </svg>
   );

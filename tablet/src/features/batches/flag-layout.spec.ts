@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { layoutFlags, PENNANT_PX, type Flag } from './flag-layout.ts';
+import { footnotesOf, layoutFlags, PENNANT_PX, type Flag } from './flag-layout.ts';
 
 const flag = (number: number, atMs: number, title = 'Tea in', isVital = false): Flag => ({
   id: `event-${number}`,
@@ -52,5 +52,30 @@ describe(layoutFlags, () => {
         expect(Math.abs(one.x - other.x)).toBeGreaterThan(one.isLeftward === other.isLeftward ? PENNANT_PX - 1 : 0);
       }
     }
+  });
+});
+
+describe(footnotesOf, () => {
+  it('numbers every flag that no lane had room for, neighbours together', () => {
+    const crowd = Array.from({ length: 12 }, (_, i) => flag(i + 1, 200 + i * 3, 'Something'));
+    const placed = layoutFlags([...crowd, flag(13, 700), flag(14, 702)], { ...room, lanes: 1 });
+    const left = placed.filter(({ lane }) => lane === null).map(({ number }) => number);
+    const footnotes = footnotesOf(placed);
+    expect(footnotes.flatMap(({ flags }) => flags.map(({ number }) => number))).toEqual(left);
+    expect(footnotes.length).toBeLessThan(left.length);
+  });
+
+  it('writes a run of numbers as a span, and a gap as a comma', () => {
+    const at = (number: number, x: number) => ({
+      ...flag(number, x),
+      x,
+      lane: null,
+      hasLabel: false,
+      isLeftward: false,
+    });
+    expect(footnotesOf([at(6, 10), at(7, 12), at(9, 20), at(12, 200)]).map(({ numbers }) => numbers)).toEqual([
+      '6–7, 9',
+      '12',
+    ]);
   });
 });

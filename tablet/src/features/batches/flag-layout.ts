@@ -10,7 +10,7 @@ export interface Flag {
 
 export interface PlacedFlag extends Flag {
   x: number;
-  /** Counted from the top; `null` when there was no room, and only the spot on the line is marked. */
+  /** Counted from the top; `null` when there was no room, and the number stands at the spot on the line. */
   lane: number | null;
   hasLabel: boolean;
   /** The flag flies to the left of its pole: the right edge is near. */
@@ -38,7 +38,7 @@ interface Taken {
 
 /**
  * Gives each flag a lane in which it covers no other, and no pole runs through a label. Vital ones choose first; what finds no
- * room for its words shows its number, and what finds none for that is only marked on the line.
+ * room for its words shows its number, and what finds none for that is numbered on the line.
  */
 export function layoutFlags(flags: readonly Flag[], room: Room): PlacedFlag[] {
   const taken: Taken[] = [];
@@ -78,4 +78,37 @@ function isClear(flag: Taken, other: Taken): boolean {
   // The pole of the upper one runs down past the lower one.
   const [upper, lower] = flag.lane < other.lane ? [flag, other] : [other, flag];
   return upper.poleX <= lower.from || upper.poleX >= lower.to;
+}
+
+export interface Footnote {
+  id: string;
+  /** "6", "6–7" or "6, 9". */
+  numbers: string;
+  /** Those it numbers, from left to right. */
+  flags: PlacedFlag[];
+}
+
+/** As near as this, two numbers beside their spots would overprint. */
+const TOGETHER_PX = 34;
+
+/** The numbers of the flags that no lane had room for: those that stand close together share one. */
+export function footnotesOf(placed: readonly PlacedFlag[]): Footnote[] {
+  const groups: PlacedFlag[][] = [];
+  for (const flag of placed) {
+    if (flag.lane !== null) continue;
+    const group = groups.at(-1);
+    if (group && flag.x - group.at(-1)!.x < TOGETHER_PX) group.push(flag);
+    else groups.push([flag]);
+  }
+  return groups.map((flags) => ({ id: flags[0]!.id, numbers: numbersText(flags.map(({ number }) => number)), flags }));
+}
+
+function numbersText(numbers: readonly number[]): string {
+  const spans: { first: number; last: number }[] = [];
+  for (const number of [...numbers].sort((a, b) => a - b)) {
+    const span = spans.at(-1);
+    if (span?.last === number - 1) span.last = number;
+    else spans.push({ first: number, last: number });
+  }
+  return spans.map(({ first, last }) => (first === last ? String(first) : `${first}–${last}`)).join(', ');
 }
