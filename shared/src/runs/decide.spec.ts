@@ -1,5 +1,14 @@
 import { describe, expect, it } from 'vitest';
-import { buildSheet, buildStep, idOf, LogBuilder, MEMBER_ID, RUN_ID, START_MS } from '../testing/run-builders.js';
+import {
+  buildAlert,
+  buildSheet,
+  buildStep,
+  idOf,
+  LogBuilder,
+  MEMBER_ID,
+  RUN_ID,
+  START_MS,
+} from '../testing/run-builders.js';
 import { decide, type RunCommand } from './decide.js';
 import { runEventSchema, type RunEvent } from './events.js';
 import { foldRun } from './fold.js';
@@ -102,18 +111,7 @@ describe(decide, () => {
   });
 
   it('acknowledges the stage that stands', () => {
-    const log = new LogBuilder().add('alert.raised', {
-      key: 'steep',
-      crossing: 1,
-      rule: 'timer',
-      stage: 'now',
-      stepId: 'steep',
-      actStepId: 'tea-out',
-      tempC: null,
-      targetC: null,
-      direction: null,
-      dueAtMs: START_MS,
-    });
+    const log = new LogBuilder().add('alert.raised', buildAlert({ key: 'steep', stage: 'now' }));
     expect(when(log, { type: 'acknowledgeAlert', key: 'steep', crossing: 1 })).toEqual([
       { type: 'alert.acknowledged', payload: { key: 'steep', crossing: 1, stage: 'now' } },
     ]);

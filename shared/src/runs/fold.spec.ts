@@ -1,23 +1,9 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { buildSheet, buildStep, idOf, LogBuilder, RUN_ID, START_MS } from '../testing/run-builders.js';
+import { buildAlert, buildSheet, buildStep, idOf, LogBuilder, RUN_ID, START_MS } from '../testing/run-builders.js';
 import { foldRun, inLogOrder } from './fold.js';
 import { currentStep, standingAlerts } from './selectors.js';
-import type { LogEntry, RunEventOf } from './events.js';
-
-const raised = (overrides: Partial<RunEventOf<'alert.raised'>['payload']> = {}) => ({
-  key: 'hops-in',
-  crossing: 1,
-  rule: 'temperature' as const,
-  stage: 'coming-up' as const,
-  stepId: 'hops-in',
-  actStepId: 'hops-in',
-  tempC: 66,
-  targetC: 62,
-  direction: 'falling' as const,
-  dueAtMs: START_MS + 60_000,
-  ...overrides,
-});
+import type { LogEntry } from './events.js';
 
 /** A log with something of everything. */
 function fullLog(): LogBuilder {
@@ -30,9 +16,9 @@ function fullLog(): LogBuilder {
   log.add('measurement.recorded', { stepId: null, quantity: 'pH', value: 4.1 });
   log.undo(note).undo(log.lastId).wait(160);
   log.add('step.done', { stepId: 'steep', cause: 'timer', tempC: 74 }, { by: null }).done('tea-out', 'chill').wait(60);
-  log.add('alert.raised', raised(), { by: null }).wait(30);
+  log.add('alert.raised', buildAlert(), { by: null }).wait(30);
   log
-    .add('alert.raised', raised({ stage: 'now' }), { by: null })
+    .add('alert.raised', buildAlert({ stage: 'now' }), { by: null })
     .wait(4)
     .done('hops-in');
   log.add('timer.started', { timerId: idOf('timer'), label: 'rest', durationS: 60 });
@@ -96,7 +82,7 @@ describe(foldRun, () => {
   it('never undoes the start or what the watch found out', () => {
     const log = new LogBuilder();
     const start = log.lastId;
-    log.add('alert.raised', raised(), { by: null });
+    log.add('alert.raised', buildAlert(), { by: null });
     log.undo(log.lastId).undo(start);
     expect(foldRun(log.entries)).toMatchObject({ status: 'running', alerts: [{ key: 'hops-in' }] });
   });
@@ -139,19 +125,19 @@ describe(foldRun, () => {
   });
 
   it('escalates an alert, and an acknowledgement of a lower stage does not silence it', () => {
-    const log = new LogBuilder().add('alert.raised', raised());
-    log.add('alert.raised', raised({ stage: 'now' }));
+    const log = new LogBuilder().add('alert.raised', buildAlert());
+    log.add('alert.raised', buildAlert({ stage: 'now' }));
     log.add('alert.acknowledged', { key: 'hops-in', crossing: 1, stage: 'coming-up' });
     expect(standingAlerts(foldRun(log.entries))).toMatchObject([{ stage: 'now', acknowledgedAtMs: null }]);
     log.add('alert.acknowledged', { key: 'hops-in', crossing: 1, stage: 'now' });
     expect(standingAlerts(foldRun(log.entries))).toEqual([]);
-    log.add('alert.raised', raised({ stage: 'missed' }));
+    log.add('alert.raised', buildAlert({ stage: 'missed' }));
     expect(standingAlerts(foldRun(log.entries))).toMatchObject([{ stage: 'missed' }]);
   });
 
   it('lets an alert rest once its step is done', () => {
     const log = new LogBuilder().done('light-heat', 'heat', 'tea-in', 'steep', 'tea-out', 'chill');
-    log.add('alert.raised', raised({ stage: 'now' }));
+    log.add('alert.raised', buildAlert({ stage: 'now' }));
     expect(standingAlerts(foldRun(log.entries))).toHaveLength(1);
     log.done('hops-in');
     expect(standingAlerts(foldRun(log.entries))).toEqual([]);

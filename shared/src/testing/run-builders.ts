@@ -76,6 +76,25 @@ export function buildSheet(steps?: Step[]): RunSheet {
   });
 }
 
+/** The first call for the hops. */
+export function buildAlert(
+  overrides: Partial<RunEventOf<'alert.raised'>['payload']> = {},
+): RunEventOf<'alert.raised'>['payload'] {
+  return {
+    key: 'hops-in',
+    crossing: 1,
+    rule: 'temperature',
+    stage: 'coming-up',
+    stepId: 'hops-in',
+    actStepId: 'hops-in',
+    tempC: 66,
+    targetC: 62,
+    direction: 'falling',
+    dueAtMs: START_MS + 60_000,
+    ...overrides,
+  };
+}
+
 /** A log with a start, and a way to write the next events: ids and times follow from what was written before. */
 export class LogBuilder {
   readonly entries: RunEvent[] = [];
