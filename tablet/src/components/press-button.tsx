@@ -14,18 +14,25 @@ interface PressButtonProps {
   children: ReactNode;
   /** Under the label; gives way to a hint when a touch did not count. */
   note?: ReactNode;
+  /** It stays where the focus is, and does nothing: a button that takes itself away would drop the focus. */
   isDisabled?: boolean;
+  /** For something to tick. */
+  isChecked?: boolean;
   label?: string;
 }
 
 /** A button for wet glass: only a deliberate press counts, and a touch that did not count says why. */
-export function PressButton({ onPress, className, children, note, isDisabled, label }: PressButtonProps) {
-  const { hint, handlers } = usePress(onPress);
+export function PressButton({ onPress, className, children, note, isDisabled, isChecked, label }: PressButtonProps) {
+  const { hint, handlers } = usePress(() => {
+    if (!isDisabled) onPress();
+  });
   return (
     <button
       type="button"
       {...handlers}
-      disabled={isDisabled}
+      role={isChecked === undefined ? undefined : 'checkbox'}
+      aria-checked={isChecked}
+      aria-disabled={isDisabled || undefined}
       aria-label={label}
       className={classNames('press-button', className)}
     >

@@ -24,18 +24,16 @@ export function Foot({ onAct, onTimer, onAllSteps }: FootProps) {
           {tasks.map(({ id, text }) => {
             const isTicked = current.tickedTaskIds.includes(id);
             return (
-              <button
+              <PressButton
                 key={id}
-                type="button"
-                role="checkbox"
-                aria-checked={isTicked}
-                disabled={isTicked}
+                isChecked={isTicked}
+                isDisabled={isTicked}
                 className="foot-task"
-                onClick={() => onAct({ type: 'tickTask', stepId: current.step.id, taskId: id })}
+                onPress={() => onAct({ type: 'tickTask', stepId: current.step.id, taskId: id })}
               >
                 <TickBox isTicked={isTicked} />
                 {text}
-              </button>
+              </PressButton>
             );
           })}
         </div>

@@ -5,7 +5,7 @@ import { MemoryRouter, Route, Routes } from 'react-router-dom';
 import { v7 as uuidv7 } from 'uuid';
 import { beforeEach, describe, expect, it, vi } from 'vitest';
 import { LogBuilder, MEMBER_ID, RUN_ID, START_MS } from '@steepfall/shared/testing';
-import { currentStep } from '@steepfall/shared/runs';
+import { currentStep, type RunCommand } from '@steepfall/shared/runs';
 import { MemoryEventStore } from '#lib/event-store/memory-event-store.ts';
 import { Outbox } from '#lib/run-store/outbox.ts';
 import { RunProvider } from '#lib/run-store/run-context.tsx';
@@ -13,6 +13,7 @@ import { RunStore } from '#lib/run-store/run-store.ts';
 import { ValueStore } from '#lib/value-store.ts';
 import { FakeHub } from '../../testing/fake-hub.ts';
 import { ActBar } from './act-bar.tsx';
+import { Foot } from './foot.tsx';
 import { LiveTemperature } from './live-temperature.tsx';
 import { StepArea } from './step-area.tsx';
 
@@ -116,5 +117,28 @@ describe('the step', () => {
     await vi.waitFor(() => expect(currentStep(run.snapshot.get().state)?.step.id).toBe('heat'));
     await user.click(screen.getByRole('button', { name: 'Back one' }));
     await vi.waitFor(() => expect(currentStep(run.snapshot.get().state)?.step.id).toBe('light-heat'));
+    const back = screen.getByRole('button', { name: 'Back one' });
+    await vi.waitFor(() => expect(back.getAttribute('aria-disabled')).toBe('true'));
+    expect(document.activeElement).toBe(back);
+  });
+});
+
+describe('what can be done meanwhile', () => {
+  it('is ticked once and keeps the focus', async () => {
+    const { run } = await openStore(new LogBuilder().done('light-heat', 'heat', 'tea-in'));
+    const onAct = vi.fn((command: RunCommand) => void run.act(command));
+    const user = userEvent.setup();
+    render(
+      <Around run={run}>
+        <Foot onAct={onAct} onTimer={vi.fn()} onAllSteps={vi.fn()} />
+      </Around>,
+    );
+    const task = screen.getByRole('checkbox', { name: 'weigh the hops' });
+    await user.click(task);
+    await vi.waitFor(() => expect(task.getAttribute('aria-checked')).toBe('true'));
+    expect(document.activeElement).toBe(task);
+    await new Promise((resolve) => setTimeout(resolve, 420));
+    await user.click(task);
+    expect(onAct).toHaveBeenCalledOnce();
   });
 });
