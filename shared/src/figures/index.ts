@@ -40,6 +40,7 @@ export * from './heat/boil-off.js';
 export * from './heat/boiling-point.js';
 export * from './heat/chiller.js';
 export * from './heat/counterflow.js';
+export * from './heat/crossing-late.js';
 export * from './heat/evaporation.js';
 export * from './heat/heat-capacity.js';
 export * from './heat/heater-efficiency.js';

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { newtonAfter, newtonSecondsTo } from './cooling-law.js';
+import { newtonDurationS, newtonTempC } from '../figures/index.js';
 import { estimateAt } from './estimate.js';
 import { forecastCrossing, forecastCurve } from './forecast.js';
 import { startWatch } from './state.js';
@@ -123,8 +123,8 @@ describe('forecastCrossing', () => {
     ).toEqual({ kind: 'too-early' });
   });
 
-  const chilled = (s: number) => newtonAfter(84, 12, 1.5e-3, s);
-  const crossingMs = newtonSecondsTo(84, 70, 12, 1.5e-3)! * 1000;
+  const chilled = (s: number) => newtonTempC(84, 12, 1.5e-3, s);
+  const crossingMs = newtonDurationS(84, 70, 12, 1.5e-3)! * 1000;
 
   it('forecasts with an interval that holds the truth', () => {
     const forecast = forecastCrossing(watched(chilled, 100), falling, 100_000);

@@ -6,7 +6,6 @@ export {
   type LineBoundInput,
   type NewtonBoundInput,
 } from './bounds.js';
-export { crossingLateByS, newtonAfter, newtonSecondsTo, secondsToFall, type CoolingLaw } from './cooling-law.js';
 export { estimateAt } from './estimate.js';
 export { forecastCrossing, forecastCurve } from './forecast.js';
 export { startLadder, stepLadder, type LadderState } from './ladder.js';

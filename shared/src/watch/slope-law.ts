@@ -10,7 +10,7 @@ export interface Surroundings {
 
 /** Falling faster than this (K/s, 1.8 K/min) no pot does by itself: something chills it, tapped or not. */
 export const CHILLING_C_PER_S = 0.03;
-/** Exponents of the cooling law; see cooling-law.ts. */
+/** Exponents of the cooling law, as in figures/heat/power-law-cooling.ts. */
 const LIDDED_EXPONENT = 1.25;
 const OPEN_EXPONENT = 1.5;
 const CHILLER_EXPONENT = 1;
