@@ -1,19 +1,19 @@
 import { Link } from 'react-router-dom';
-import type { RunCommand, StepProgress } from '@steepfall/shared/runs';
+import type { LogEntry, RunCommand, RunEventOf, RunState, StepProgress } from '@steepfall/shared/runs';
 import { formatTemp } from '@steepfall/shared/units';
 import { HoldButton } from '#components/hold-button.tsx';
 import { ShapeGlyph } from '#components/shapes.tsx';
+import { PressButton } from '#components/press-button.tsx';
 import { useRun } from '#lib/run-store/run-context.tsx';
+import { clockTime } from '#lib/words.ts';
+import { measurementText } from './quantities.ts';
 import { amountText } from './step-area.tsx';
 import { conditionText, conflictText } from './sheet-words.ts';
-
-function timeText(atMs: number): string {
-  return new Date(atMs).toLocaleTimeString([], { hour: '2-digit', minute: '2-digit' });
-}
 
 /** The whole sheet as a list, what contradicts itself, and the way out. */
 export function AllSteps({ onAct, onClose }: { onAct: (command: RunCommand) => void; onClose: () => void }) {
   const { state, entries } = useRun();
+  const ticked = tickedTasks(state, entries);
   const end = (outcome: 'finished' | 'abandoned') => {
     onAct({ type: 'endRun', outcome });
     onClose();
@@ -40,9 +40,46 @@ export function AllSteps({ onAct, onClose }: { onAct: (command: RunCommand) => v
           <h3 className="text-lead font-semibold">Notes</h3>
           <ul className="grid gap-2 text-body">
             {state.notes.map(({ eventId, atMs, text }) => (
-              <li key={eventId}>
-                <span className="tabular-nums text-soft">{timeText(atMs)}</span> {text}
-              </li>
+              <Recorded
+                key={eventId}
+                atMs={atMs}
+                text={text}
+                onTakeBack={() => onAct({ type: 'undoEvent', eventId, eventType: 'note.added' })}
+              />
+            ))}
+          </ul>
+        </section>
+      ) : null}
+      {state.measurements.length > 0 ? (
+        <section className="grid gap-2">
+          <h3 className="text-lead font-semibold">Measured</h3>
+          <ul className="grid gap-2 text-body">
+            {state.measurements.map((measurement) => (
+              <Recorded
+                key={measurement.eventId}
+                atMs={measurement.atMs}
+                text={measurementText(measurement)}
+                onTakeBack={() =>
+                  onAct({ type: 'undoEvent', eventId: measurement.eventId, eventType: 'measurement.recorded' })
+                }
+              />
+            ))}
+          </ul>
+        </section>
+      ) : null}
+      {ticked.length > 0 ? (
+        <section className="grid gap-2">
+          <h3 className="text-lead font-semibold">Done meanwhile</h3>
+          <ul className="grid gap-2 text-body">
+            {ticked.map(({ key, atMs, text, eventIds }) => (
+              <Recorded
+                key={key}
+                atMs={atMs}
+                text={text}
+                onTakeBack={() => {
+                  for (const eventId of eventIds) onAct({ type: 'undoEvent', eventId, eventType: 'task.ticked' });
+                }}
+              />
             ))}
           </ul>
         </section>
@@ -59,6 +96,49 @@ export function AllSteps({ onAct, onClose }: { onAct: (command: RunCommand) => v
         <HoldButton onHeld={() => end('abandoned')}>Press and hold to give the run up</HoldButton>
       </section>
     </div>
+  );
+}
+
+interface TickedTask {
+  key: string;
+  text: string;
+  atMs: number;
+  /** Two tablets may have ticked the same task: it is taken back on both. */
+  eventIds: string[];
+}
+
+function tickedTasks(state: RunState, entries: readonly LogEntry[]): TickedTask[] {
+  const undone = new Set(state.undoneEventIds);
+  return state.steps.flatMap(({ step, tickedTaskIds }) =>
+    step.meanwhile
+      .filter(({ id }) => tickedTaskIds.includes(id))
+      .flatMap(({ id, text }) => {
+        const ticks = entries.filter((entry) => {
+          if (entry.type !== 'task.ticked' || undone.has(entry.id)) return false;
+          const { payload } = entry as RunEventOf<'task.ticked'>;
+          return payload.stepId === step.id && payload.taskId === id;
+        });
+        const [first] = ticks;
+        if (!first) return [];
+        return [{ key: `${step.id}/${id}`, text, atMs: first.atMs, eventIds: ticks.map((tick) => tick.id) }];
+      }),
+  );
+}
+
+/** Something that was written down, and the way to take it back. The log keeps both. */
+function Recorded({ atMs, text, onTakeBack }: { atMs: number; text: string; onTakeBack: () => void }) {
+  return (
+    <li className="flex items-center gap-4">
+      <span className="shrink-0 tabular-nums text-soft">{clockTime(atMs)}</span>
+      <span className="min-w-0 flex-1">{text}</span>
+      <PressButton
+        className="min-h-18 shrink-0 rounded-xl border-2 border-edge px-5 font-medium"
+        label={`Take it back: ${text}`}
+        onPress={onTakeBack}
+      >
+        Take it back
+      </PressButton>
+    </li>
   );
 }
 
@@ -79,7 +159,7 @@ function StepLine({ progress }: { progress: StepProgress }) {
       </span>
       {doneAtMs !== null ? (
         <span className="shrink-0 text-right text-body tabular-nums text-soft">
-          {timeText(doneAtMs)}
+          {clockTime(doneAtMs)}
           {tempC !== null ? <span className="block">{formatTemp(tempC, { unit: 'C' })}</span> : null}
         </span>
       ) : null}

@@ -1,14 +1,14 @@
 import { Link } from 'react-router-dom';
 import { PressButton } from '#components/press-button.tsx';
 import { useRun, useRunStore } from '#lib/run-store/run-context.tsx';
+import { clockTime } from '#lib/words.ts';
 
 /** The run is over: where to look next, and a way back if it was a slip. */
 export function Ended() {
   const { state, pendingCount } = useRun();
   const store = useRunStore();
   const { outcome, endedAtMs, endEventId } = state;
-  const time =
-    endedAtMs === null ? '' : new Date(endedAtMs).toLocaleTimeString([], { hour: '2-digit', minute: '2-digit' });
+  const time = endedAtMs === null ? '' : clockTime(endedAtMs);
   return (
     <>
       <section className="step" aria-label="Run ended">

@@ -13,6 +13,7 @@ import { RunStore } from '#lib/run-store/run-store.ts';
 import { ValueStore } from '#lib/value-store.ts';
 import { FakeHub } from '../../testing/fake-hub.ts';
 import { ActBar } from './act-bar.tsx';
+import { AllSteps } from './all-steps.tsx';
 import { Foot } from './foot.tsx';
 import { LiveTemperature } from './live-temperature.tsx';
 import { StepArea } from './step-area.tsx';
@@ -140,5 +141,27 @@ describe('what can be done meanwhile', () => {
     await new Promise((resolve) => setTimeout(resolve, 420));
     await user.click(task);
     expect(onAct).toHaveBeenCalledOnce();
+  });
+});
+
+describe('the whole sheet', () => {
+  it('takes back a note, a measurement and a ticked task', async () => {
+    const log = new LogBuilder()
+      .done('light-heat', 'heat', 'tea-in')
+      .add('note.added', { stepId: null, text: 'smells of hay' })
+      .add('measurement.recorded', { stepId: null, quantity: 'pH', value: 5.4 })
+      .add('task.ticked', { stepId: 'steep', taskId: 'weigh-hops' });
+    const { run } = await openStore(log);
+    const user = userEvent.setup();
+    render(
+      <Around run={run}>
+        <AllSteps onAct={(command) => void run.act(command)} onClose={vi.fn()} />
+      </Around>,
+    );
+    for (const what of ['smells of hay', 'pH 5.4', 'weigh the hops'])
+      await user.click(screen.getByRole('button', { name: `Take it back: ${what}` }));
+    await vi.waitFor(() => expect(screen.queryByRole('button', { name: /^Take it back/ })).toBeNull());
+    const { notes, measurements, steps } = run.snapshot.get().state;
+    expect([notes, measurements, steps.flatMap(({ tickedTaskIds }) => tickedTaskIds)]).toEqual([[], [], []]);
   });
 });

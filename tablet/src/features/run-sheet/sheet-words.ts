@@ -2,6 +2,7 @@ import type { Step } from '@steepfall/shared/sheets';
 import { formatDuration, formatTemp } from '@steepfall/shared/units';
 import type { Conflict, LogEntry, RunState } from '@steepfall/shared/runs';
 import type { CrossingForecast } from '@steepfall/shared/watch';
+import { clockTime } from '#lib/words.ts';
 
 /** A level without false digits: "62 °C", "62.5 °C". */
 export function levelText(tempC: number, showUnit = true): string {
@@ -46,15 +47,11 @@ export function forecastText(forecast: CrossingForecast | null, nowMs: number): 
   return forecast?.kind === 'forecast' ? `about ${aboutText((forecast.atMs - nowMs) / 1000)}` : null;
 }
 
-function clockText(atMs: number): string {
-  return new Date(atMs).toLocaleTimeString([], { hour: '2-digit', minute: '2-digit' });
-}
-
 /** What two devices say differently, in a sentence. Nothing was dropped: the first one counts. */
 export function conflictText(conflict: Conflict, state: RunState, entries: readonly LogEntry[]): string {
   const title = state.steps.find(({ step }) => step.id === conflict.stepId)?.step.title ?? 'A step';
   const [first, second] = conflict.eventIds.map((id) => entries.find((entry) => entry.id === id));
-  const times = first && second ? `: at ${clockText(first.atMs)} and at ${clockText(second.atMs)}` : '';
+  const times = first && second ? `: at ${clockTime(first.atMs)} and at ${clockTime(second.atMs)}` : '';
   switch (conflict.kind) {
     case 'step-done-twice':
       return `“${title}” was marked done twice${times}. The first counts. If it went in twice, write a note.`;

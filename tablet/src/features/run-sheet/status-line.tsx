@@ -7,6 +7,7 @@ import { useLive, useRun, useRunStore } from '#lib/run-store/run-context.tsx';
 import { useSession } from '#lib/session.ts';
 import { useStored, useStoredPart } from '#lib/value-store.ts';
 import { wakeState, type WakeState } from '#lib/wake-lock/wake-lock.ts';
+import { clockTime } from '#lib/words.ts';
 import { isProbeBad, probeText } from './probe-words.ts';
 import { StatusSheet } from './status-sheet.tsx';
 
@@ -45,7 +46,7 @@ export function StatusLine() {
   const health = useStoredPart(alarmSounds.state, ({ health: now }) => now);
   const wake = useStored(wakeState);
   const isComing = useStoredPart(useRunStore().link.state, ({ status }) => status !== 'away');
-  const time = useLive(() => new Date().toLocaleTimeString([], { hour: '2-digit', minute: '2-digit' }));
+  const time = useLive(() => clockTime(Date.now()));
   const sound = soundLook[health];
   const heard =
     state.soundCheck?.isHeard === false && !sound.isBad ? { ...sound, word: 'not heard', isBad: true } : sound;
