@@ -1,7 +1,7 @@
 import { fireEvent, render, screen } from '@testing-library/react';
 import { useState } from 'react';
 import { expect, it, vi } from 'vitest';
-import { PressButton } from '#components/press-button.tsx';
+import { PressButton } from './press-button.tsx';
 
 /** jsdom knows no pointer events: a mouse event with what they carry. */
 function touch(target: Element, type: 'pointerdown' | 'pointerup', pointerId: number, isPrimary = true): void {
