@@ -66,12 +66,8 @@ export function createLintConfig({ root, isTyped = true }) {
       languageOptions: { globals: browserGlobals },
       rules: { 'no-unused-vars': ['error', { caughtErrors: 'none' }], 'no-useless-assignment': 'off' },
     },
-    // They print what they measure, and hand functions to a page.
-    {
-      files: ['tablet/e2e/**', '**/bench/**'],
-      languageOptions: { globals: browserGlobals },
-      rules: { 'no-console': 'off' },
-    },
+    // They print what they measure.
+    { files: ['tablet/e2e/**', '**/bench/**'], rules: { 'no-console': 'off' } },
     // Tools ask for a default export in their own files.
     { files: ['**/*.config.{ts,js}', '**/global-setup.ts'], rules: { 'import-x/no-default-export': 'off' } },
   );
@@ -92,7 +88,7 @@ const nodeGlobals = globalsNamed(
   'process console Buffer URL AbortController AbortSignal performance setTimeout clearTimeout fetch',
 );
 const browserGlobals = globalsNamed(
-  'window document navigator location localStorage matchMedia caches addEventListener requestAnimationFrame MutationObserver',
+  'window document navigator location localStorage matchMedia caches addEventListener',
 );
 
 /** @param {string} root */
