@@ -39,6 +39,7 @@ const MOST_LANES = 5;
 const NARROW_PX = 620;
 const LETTER_PX = 8.4;
 const LABEL_INSET_PX = 6;
+const LABEL_STRIDE_PX = 8;
 
 function cssColor(name: string): string {
   return getComputedStyle(document.documentElement).getPropertyValue(name).trim();
@@ -205,16 +206,17 @@ function Overlay({
       const isSpot = bottom - 16 <= lower && bottom >= upper;
       return flag.x >= from - 6 && flag.x <= to + 6 && (isPole || isSpot);
     });
-  /** At the right if that is free, else at the left; with its number only where neither has room for the words. */
-  const labelOf = ({ tempC, title }: Level) => {
+  /** At the right end of the level, or where the first free place is from there; its number alone if there is none for the words. */
+  const labelOf = ({ tempC, title }: Level): { text: string; endX: number } => {
     const number = formatTemp(tempC, { unit: 'C' });
+    const [upper, lower] = [yOf(tempC) - 24, yOf(tempC) - 2];
     for (const text of isNarrow ? [number] : [`${title} ${number}`, number]) {
       const px = text.length * LETTER_PX;
-      const [upper, lower] = [yOf(tempC) - 24, yOf(tempC) - 2];
-      if (isFree(width - LABEL_INSET_PX - px, width, upper, lower)) return { text, isLeft: false };
-      if (isFree(0, LABEL_INSET_PX + px, upper, lower)) return { text, isLeft: true };
+      for (let endX = width - LABEL_INSET_PX; endX - px >= LABEL_INSET_PX; endX -= LABEL_STRIDE_PX) {
+        if (isFree(endX - px, endX, upper, lower)) return { text, endX };
+      }
     }
-    return { text: number, isLeft: false };
+    return { text: number, endX: width - LABEL_INSET_PX };
   };
   return (
     <svg className="pointer-events-none absolute inset-0 h-full w-full overflow-visible" fontFamily="inherit">
@@ -268,13 +270,13 @@ function Overlay({
           );
         })}
         {levelsInSight.map((level) => {
-          const { text, isLeft } = labelOf(level);
+          const { text, endX } = labelOf(level);
           return (
             <text
               key={`${level.tempC}${level.title}`}
-              x={isLeft ? LABEL_INSET_PX : width - LABEL_INSET_PX}
+              x={endX}
               y={yOf(level.tempC) - 7}
-              textAnchor={isLeft ? 'start' : 'end'}
+              textAnchor="end"
               fontSize="15"
               fill="var(--soft)"
               stroke="var(--ground)"
