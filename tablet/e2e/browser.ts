@@ -57,11 +57,16 @@ export interface Finding {
   where: string;
 }
 
+interface PictureChecks {
+  /** What the person has to read there must not lie under the buttons of the run sheet. */
+  isClearOfActBar?: boolean;
+}
+
 /**
  * A picture of the screen as it is now at every size and on both grounds, and what axe finds on it. The clock of a rehearsal should stand
  * nearly still meanwhile.
  */
-export async function picture(page: Page, name: string): Promise<Finding[]> {
+export async function picture(page: Page, name: string, checks: PictureChecks = {}): Promise<Finding[]> {
   const findings: Finding[] = [];
   for (const [ground, colorScheme] of Object.entries(grounds)) {
     await page.emulateMedia({ colorScheme });
@@ -74,6 +79,7 @@ export async function picture(page: Page, name: string): Promise<Finding[]> {
       await page.screenshot({ path, animations: 'disabled' });
       findings.push(...(await axeOn(page, shot)));
       findings.push(...(await overflowOn(page, shot)));
+      if (checks.isClearOfActBar) findings.push(...(await coveredOn(page, shot)));
     }
   }
   await page.setViewportSize(sizes.tablet);
@@ -99,4 +105,19 @@ async function overflowOn(page: Page, shot: string): Promise<Finding[]> {
   return scrollWidth > clientWidth
     ? [{ shot, rule: 'no-sideways-scroll', where: `${scrollWidth} px in ${clientWidth} px` }]
     : [];
+}
+
+/** The words and numbers of the step that the buttons cover. */
+async function coveredOn(page: Page, shot: string): Promise<Finding[]> {
+  const covered = await page.evaluate(() => {
+    const barTop = document.querySelector('.act-bar')?.getBoundingClientRect().top;
+    if (barTop === undefined) return [];
+    return [...document.querySelectorAll('.step-title, .step-amounts, .take-over-amounts, .countdown')].flatMap(
+      (part) => {
+        const { bottom } = part.getBoundingClientRect();
+        return bottom > barTop + 0.5 ? [`${part.className}: ${Math.round(bottom - barTop)} px`] : [];
+      },
+    );
+  });
+  return covered.map((where) => ({ shot, rule: 'clear-of-act-bar', where }));
 }
