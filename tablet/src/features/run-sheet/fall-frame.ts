@@ -10,6 +10,7 @@ const LEAST_AHEAD_SHARE = 0.6;
 /** Axis ends lie on these, so that the picture does not breathe with every reading. */
 const STEP_C = 5;
 const LEAST_SPAN_C = 10;
+const WORDS_PX = 22;
 
 /** Where time and temperature fall on the drawing. */
 export interface FallFrame {
@@ -58,7 +59,9 @@ export function fallFrame(input: FallFrameInput): FallFrame {
   const least = shown.length > 0 ? Math.min(...shown) : 20;
   const most = shown.length > 0 ? Math.max(...shown) : 30;
   const pad = Math.max(1, (most - least) * 0.1);
-  let lowC = Math.floor((least - pad) / STEP_C) * STEP_C;
+  // Words under the lowest level need room above the times, on a low drawing more of it.
+  const below = height > 2 * WORDS_PX ? ((most - least) * WORDS_PX) / (height - WORDS_PX) : 0;
+  let lowC = Math.floor((least - Math.max(pad, below)) / STEP_C) * STEP_C;
   let highC = Math.ceil((most + pad) / STEP_C) * STEP_C;
   if (highC - lowC < LEAST_SPAN_C) highC = lowC + LEAST_SPAN_C;
   if (lowC < -10) lowC = -10;
