@@ -54,6 +54,10 @@ async function log(): Promise<EventRow[]> {
   }));
 }
 
+async function isDone(stepId: string): Promise<boolean> {
+  return (await log()).some(({ type, payload }) => type === 'step.done' && payload.stepId === stepId);
+}
+
 // One day, told in order: each part goes on where the one before ended.
 describe('a whole brew day in a browser', () => {
   it('starts a rehearsal with one tap, and checks the sound first', async () => {
@@ -113,7 +117,7 @@ describe('a whole brew day in a browser', () => {
     await hand.done('Coil in');
     await hand.until('Heat to the steep');
     findings.push(...(await picture(page, 'heating')));
-    await hand.doneWhenCalled('Tea in');
+    await hand.doneWhenCalled('Tea in', () => isDone('heat'));
     await agree('Steep');
   });
 
@@ -132,7 +136,7 @@ describe('a whole brew day in a browser', () => {
   });
 
   it('calls for the tea to come out, and for the hops before the liquid crosses their level', async () => {
-    await hand.doneWhenCalled('Tea out');
+    await hand.doneWhenCalled('Tea out', () => isDone('steep'));
     await hand.done('Chiller on');
     await hand.until('Hops in');
     await hand.setRate(1);

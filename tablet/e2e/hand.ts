@@ -35,11 +35,14 @@ export class Hand {
     await this.press(/^Done/);
   }
 
-  /** Done with an addition the moment its alert says "now". */
-  async doneWhenCalled(title: string): Promise<void> {
+  /**
+   * Done with an addition when its alert has said "now", and what it waits for has come: the call comes early by the time a hand needs, and
+   * this one is quicker.
+   */
+  async doneWhenCalled(title: string, hasCome: () => Promise<boolean> = () => Promise.resolve(true)): Promise<void> {
     const alert = this.page.getByRole('region', { name: 'Alert' });
     await alert.getByRole('heading', { name: title }).waitFor({ timeout: 90_000 });
-    // The step before it ends by itself; only then is this one the current one.
+    while (!(await hasCome())) await this.page.waitForTimeout(50);
     await this.page
       .getByRole('button', { name: new RegExp(`^Done\\s*${title}`) })
       .click({ delay: PRESS_MS, timeout: 30_000 });

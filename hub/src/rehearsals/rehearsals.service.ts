@@ -162,10 +162,14 @@ export class RehearsalsService implements OnApplicationBootstrap, OnModuleDestro
 
   private follow({ log, events }: Appended): void {
     const kettle = this.kettles.get(log.id);
-    const isAboutKettle = events.some(({ type }) => type === 'step.done' || type === 'event.undone');
-    if (!kettle || !isAboutKettle) return;
+    const acts = events.filter(({ type }) => type === 'step.done' || type === 'event.undone');
+    const last = acts.at(-1);
+    if (!kettle || !last) return;
     try {
-      kettle.follow(log.state, runTimeAt(log.clock, this.clock.nowMs()));
+      // The instant that the log keeps, and not this one: made again after a restart, the kettle does it at that instant too.
+      const learnedAtMs = runTimeAt(log.clock, last.receivedAtMs);
+      if (log.projection.probeOutAtMs === null) this.read(log, kettle, learnedAtMs);
+      kettle.follow(log.state, learnedAtMs);
     } catch (error) {
       this.complain(log, error);
     }
