@@ -19,7 +19,7 @@ const { values } = parseArgs({
 const count = Math.min(5_000, Math.max(20, Number(values.count)));
 const everyMs = Math.min(1_000, Math.max(50, Number(values.every)));
 const WARM_UP = 20;
-/** A temperature that rises by one shown digit a reading, so that each reading changes the screen. */
+/** The first readings are for the watch to settle. */
 const SCREEN = { count: 100, everyMs: 500, fromC: 40, stepC: 0.1, settle: 20 };
 const ANSWER_WITHIN_MS = 10_000;
 const brewer = { email: 'brewer@wrenfold.example', password: 'wrenfold-brewer' };
@@ -68,14 +68,14 @@ async function ontoTheScreen({ device, tablet, url, runId }) {
     await pause(SCREEN.everyMs);
   }
   const paintedMs = await screen.paintedAtMs();
-  // A reading that leaves the shown digit as it is paints nothing; what is painted belongs to the newest reading before it.
+  // What is painted belongs to the newest reading before it.
   const waits = paintedMs.flatMap((atMs) => {
     const fromMs = acceptedMs.slice(SCREEN.settle).findLast((accepted) => accepted <= atMs);
     return fromMs === undefined ? [] : [atMs - fromMs];
   });
   console.log(
     `on the screen, from accepted: median ${at(waits, 0.5).toFixed(0)}, p99 ${at(waits, 0.99).toFixed(0)} ` +
-      `(${waits.length} of ${SCREEN.count} readings changed the shown figure)`,
+      `(${waits.length} of ${SCREEN.count} readings seen)`,
   );
 }
 

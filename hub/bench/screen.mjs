@@ -3,7 +3,7 @@ import { chromium } from 'playwright-core';
 
 /**
  * @typedef {object} Screen a tablet in real Chromium, on the run sheet of one run
- * @property {() => Promise<number[]>} paintedAtMs wall time of each frame that showed another temperature
+ * @property {() => Promise<number[]>} paintedAtMs wall time of each frame that showed a newer reading: the age of the newest one, as the sheet tells it, went down
  * @property {() => Promise<void>} close
  */
 
@@ -28,15 +28,16 @@ export async function openScreen({ url, runId, email, password }) {
     /** @type {number[]} */
     const painted = [];
     Object.assign(globalThis, { painted });
-    let shown = '';
+    let shownAgeS = Infinity;
     const look = () => {
-      const now = document.querySelector('.live-figure')?.textContent ?? '';
-      if (now === shown) return;
-      shown = now;
+      const ageS = Number.parseFloat(document.querySelector('.chip[data-name="probe"] .chip-word')?.textContent ?? '');
+      const isNewer = ageS < shownAgeS;
+      shownAgeS = ageS;
       // The second frame begins when the first one is on the glass.
-      requestAnimationFrame(() =>
-        requestAnimationFrame(() => painted.push(performance.timeOrigin + performance.now())),
-      );
+      if (isNewer)
+        requestAnimationFrame(() =>
+          requestAnimationFrame(() => painted.push(performance.timeOrigin + performance.now())),
+        );
     };
     new MutationObserver(look).observe(document, { subtree: true, childList: true, characterData: true });
   });
