@@ -95,6 +95,24 @@ export function buildAlert(
   };
 }
 
+/** The call for the tea to come out, three minutes after the start. */
+export function buildTimerAlert(
+  overrides: Partial<RunEventOf<'alert.raised'>['payload']> = {},
+): RunEventOf<'alert.raised'>['payload'] {
+  return buildAlert({
+    key: 'steep',
+    rule: 'timer',
+    stage: 'now',
+    stepId: 'steep',
+    actStepId: 'tea-out',
+    tempC: null,
+    targetC: null,
+    direction: null,
+    dueAtMs: START_MS + 180_000,
+    ...overrides,
+  });
+}
+
 /** A log with a start, and a way to write the next events: ids and times follow from what was written before. */
 export class LogBuilder {
   readonly entries: RunEvent[] = [];

@@ -1,7 +1,7 @@
 import { act, render } from '@testing-library/react';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import { foldRun } from '@steepfall/shared/runs';
-import { LogBuilder, RUN_ID, START_MS } from '@steepfall/shared/testing';
+import { buildTimerAlert, LogBuilder, RUN_ID } from '@steepfall/shared/testing';
 import { alarmSounds } from '#lib/audio/alarm-sounds.ts';
 import { isRinger, wantToRing } from '#lib/audio/ringer-lock.ts';
 import { hubClock } from '#lib/clock/hub-clock.ts';
@@ -22,19 +22,7 @@ vi.mock('#lib/audio/ringer-lock.ts', async () => {
 });
 
 const running = () => new LogBuilder().done('light-heat', 'heat', 'tea-in');
-const alarmed = (key = 'steep') =>
-  running().add('alert.raised', {
-    key,
-    crossing: 1,
-    rule: 'timer',
-    stage: 'now',
-    stepId: 'steep',
-    actStepId: 'tea-out',
-    tempC: null,
-    targetC: null,
-    direction: null,
-    dueAtMs: START_MS + 180_000,
-  });
+const alarmed = (key = 'steep') => running().add('alert.raised', buildTimerAlert({ key }));
 const acknowledged = () => alarmed().add('alert.acknowledged', { key: 'steep', crossing: 1, stage: 'now' });
 
 function ringerOf(log: LogBuilder) {

@@ -2,7 +2,7 @@ import { render, screen } from '@testing-library/react';
 import userEvent from '@testing-library/user-event';
 import { expect, it, vi } from 'vitest';
 import { foldRun } from '@steepfall/shared/runs';
-import { LogBuilder, RUN_ID, START_MS } from '@steepfall/shared/testing';
+import { buildTimerAlert, LogBuilder, RUN_ID, START_MS } from '@steepfall/shared/testing';
 import { RunProvider } from '#lib/run-store/run-context.tsx';
 import type { RunStore } from '#lib/run-store/run-store.ts';
 import { ValueStore } from '#lib/value-store.ts';
@@ -25,20 +25,7 @@ function openSheet(log: LogBuilder) {
 const steeping = () => new LogBuilder().done('light-heat', 'heat', 'tea-in');
 
 it('says an alert in the panel that lies over it, and takes "heard it" there', async () => {
-  const act = openSheet(
-    steeping().add('alert.raised', {
-      key: 'steep',
-      crossing: 1,
-      rule: 'timer',
-      stage: 'now',
-      stepId: 'steep',
-      actStepId: 'tea-out',
-      tempC: null,
-      targetC: null,
-      direction: null,
-      dueAtMs: START_MS + 180_000,
-    }),
-  );
+  const act = openSheet(steeping().add('alert.raised', buildTimerAlert()));
   const dialog = await screen.findByRole('dialog');
   expect(dialog.contains(screen.getByRole('alert'))).toBe(true);
   expect(screen.getByRole('alert').textContent).toContain('Now:');

@@ -1,5 +1,5 @@
 import { describe, expect, it, vi } from 'vitest';
-import { LogBuilder, MEMBER_ID, RUN_ID, START_MS } from '@steepfall/shared/testing';
+import { buildTimerAlert, LogBuilder, MEMBER_ID, RUN_ID, START_MS } from '@steepfall/shared/testing';
 import { currentStep, foldRun, standingAlerts, type RunCommand } from '@steepfall/shared/runs';
 import { problem } from '@steepfall/shared/problems';
 import { v7 as uuidv7 } from 'uuid';
@@ -240,18 +240,7 @@ describe(RunStore, () => {
   });
 
   it('one acknowledgement silences the other tablet', async () => {
-    const log = steeping().add('alert.raised', {
-      key: 'steep',
-      crossing: 1,
-      rule: 'timer',
-      stage: 'now',
-      stepId: 'steep',
-      actStepId: 'tea-out',
-      tempC: null,
-      targetC: null,
-      direction: null,
-      dueAtMs: START_MS + 180_000,
-    });
+    const log = steeping().add('alert.raised', buildTimerAlert());
     const hub = new FakeHub(RUN_ID, log.stored);
     const one = await tablet(hub.connect(), { station: 'one', nowMs: START_MS + 175_000 });
     const two = await tablet(hub.connect(), { station: 'two', nowMs: START_MS + 175_000 });
