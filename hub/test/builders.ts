@@ -2,6 +2,7 @@ import { getModelToken } from '@nestjs/sequelize';
 import type { CreateEquipment, Role, RunSummary } from '@steepfall/shared/contracts';
 import type { RunEvent, RunEventOf, RunEventType } from '@steepfall/shared/runs';
 import type { RecipeDocument } from '@steepfall/shared/sheets';
+import { buildDocument } from '@steepfall/shared/testing';
 import type { Model, ModelStatic } from 'sequelize';
 import type { Actor } from '../src/common/access/actor.js';
 import { Batch } from '../src/batches/models/batch.model.js';
@@ -109,21 +110,7 @@ export function buildEquipment(
   });
 }
 
-export const usualDocument: RecipeDocument = {
-  volumeL: 20,
-  waterName: 'Reverse-osmosis water',
-  waterL: 22,
-  additions: [
-    { id: 'citric', kind: 'acid', name: 'citric acid', massG: 4 },
-    { id: 'tea', kind: 'tea', name: 'green tea', massG: 100, bag: 'bag 1' },
-    { id: 'hops', kind: 'hops', name: 'hops', massG: 60, bag: 'bag 2' },
-  ],
-  targetPh: { min: 4, max: 4.4 },
-  steep: { tempC: 76, durationS: 180 },
-  hops: { inC: 62, outC: 30 },
-  transferC: 20,
-  gas: { volumes: 2.8, tempC: 4 },
-};
+export const usualDocument = buildDocument();
 
 /** A recipe with as many revisions as documents are given; one without any. */
 export async function buildRecipe(

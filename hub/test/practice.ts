@@ -21,8 +21,11 @@ const quickDocument: RecipeDocument = {
   ...usualDocument,
   volumeL: 7,
   waterL: 8,
-  additions: usualDocument.additions.map((addition) => ({ ...addition, massG: addition.massG / 3 })),
-  steep: { tempC: 76, durationS: 60 },
+  additions: usualDocument.additions.map((addition) => ({
+    ...addition,
+    massG: addition.massG / 3,
+    ...(addition.kind === 'tea' ? { out: { at: 'timer', durationS: 60 } } : {}),
+  })),
 };
 
 export async function startRehearsal(

@@ -56,10 +56,15 @@ async function revisionFor({ targetC, direction }: Trace): Promise<string> {
   const { revisions } = await api.get<Recipe>(`recipes/${summary?.id}`);
   const latest = revisions.reduce((a, b) => (a.number > b.number ? a : b));
   const { document } = latest;
-  const caught =
+  const caught: RecipeDocument =
     direction === 'falling'
-      ? { ...document, hops: { ...document.hops, inC: targetC } }
-      : { ...document, steep: { ...document.steep, tempC: targetC } };
+      ? {
+          ...document,
+          additions: document.additions.map((addition) =>
+            addition.kind === 'hops' ? { ...addition, in: { at: 'falling', tempC: targetC } } : addition,
+          ),
+        }
+      : { ...document, steepC: targetC };
   const id = v7();
   await product.execute(
     `INSERT INTO recipe_revisions (id, house_id, recipe_id, number, note, created_at_ms, created_by, volume_l, document)

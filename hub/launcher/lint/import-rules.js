@@ -37,12 +37,26 @@ const areasOfShared = {
   figures: ['units'],
   problems: [],
   sheets: ['units', 'figures'],
+  stores: ['units', 'figures', 'sheets'],
+  desk: ['units', 'figures', 'sheets', 'stores'],
   readings: ['units', 'figures'],
   timers: ['units', 'figures'],
   watch: ['units', 'figures', 'readings', 'timers', 'sheets'],
   runs: ['units', 'figures', 'sheets', 'readings', 'timers', 'watch', 'problems'],
-  contracts: ['units', 'figures', 'sheets', 'readings', 'timers', 'watch', 'runs', 'problems'],
-  testing: ['units', 'figures', 'sheets', 'readings', 'timers', 'watch', 'runs', 'contracts', 'problems'],
+  contracts: ['units', 'figures', 'sheets', 'stores', 'desk', 'readings', 'timers', 'watch', 'runs', 'problems'],
+  testing: [
+    'units',
+    'figures',
+    'sheets',
+    'stores',
+    'desk',
+    'readings',
+    'timers',
+    'watch',
+    'runs',
+    'contracts',
+    'problems',
+  ],
 };
 
 /** For production code: builders of tests stay out of it. */

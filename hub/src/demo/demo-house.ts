@@ -56,22 +56,78 @@ export const demoProbe = { name: 'Kettle probe', lagS: 7.5, resolutionC: 0.0625,
  * come in, and the drink about pH 4.0 after them (band 3.8 to 4.3 by the figures of this build), below the 4.6 that food codes look at.
  */
 function senchaAndCascade(senchaG: number): RecipeDocument {
+  const inTheCold = { keeps: 'g-per-l', in: { at: 'fill' } } as const;
   return {
+    v: 2,
     volumeL: 20,
-    waterName: 'Reverse-osmosis water',
     waterL: 22.5,
-    additions: [
-      { id: 'calcium-chloride', kind: 'salt', name: 'calcium chloride', massG: 2, bag: 'cup 1' },
-      { id: 'gypsum', kind: 'salt', name: 'gypsum', massG: 1, bag: 'cup 1' },
-      { id: 'citric-acid', kind: 'acid', name: 'citric acid', massG: 4.5, bag: 'cup 2' },
-      { id: 'sencha', kind: 'tea', name: 'sencha', massG: senchaG, bag: 'bag 1' },
-      { id: 'cascade', kind: 'hops', name: 'Cascade', massG: 60, bag: 'bag 2' },
+    waters: [
+      {
+        id: 'ro',
+        name: 'Reverse-osmosis water',
+        percent: 100,
+        report: {
+          caMgPerL: 1,
+          mgMgPerL: 0.3,
+          naMgPerL: 2.5,
+          kMgPerL: 0.3,
+          clMgPerL: 3,
+          so4MgPerL: 0.5,
+          alkalinity: { as: 'caco3', mgPerL: 4.5 },
+        },
+      },
     ],
-    targetPh: { min: 3.1, max: 3.4 },
-    steep: { tempC: 76, durationS: 180 },
-    hops: { inC: 62, outC: 30 },
+    additions: [
+      {
+        id: 'calcium-chloride',
+        kind: 'salt',
+        name: 'calcium chloride',
+        massG: 2,
+        bag: 'cup 1',
+        salt: 'calciumChlorideDihydrate',
+        ...inTheCold,
+      },
+      { id: 'gypsum', kind: 'salt', name: 'gypsum', massG: 1, bag: 'cup 1', salt: 'gypsum', ...inTheCold },
+      {
+        id: 'citric-acid',
+        kind: 'acid',
+        name: 'citric acid',
+        massG: 4.5,
+        bag: 'cup 2',
+        acid: 'citricAnhydrous',
+        ...inTheCold,
+      },
+      {
+        id: 'sencha',
+        kind: 'tea',
+        name: 'sencha',
+        massG: senchaG,
+        keeps: 'g-per-l',
+        bag: 'bag 1',
+        tea: 'green',
+        form: 'whole',
+        in: { at: 'steep', afterS: 0 },
+        out: { at: 'timer', durationS: 180 },
+      },
+      {
+        id: 'cascade',
+        kind: 'hops',
+        name: 'Cascade',
+        massG: 60,
+        keeps: 'g-per-l',
+        bag: 'bag 2',
+        form: 'pellets',
+        alphaPercent: 6.5,
+        in: { at: 'falling', tempC: 62 },
+        out: { at: 'falling', tempC: 30 },
+      },
+    ],
+    steepC: 76,
     transferC: 20,
     gas: { volumes: 2.8, tempC: 4 },
+    targets: { waterPh: { min: 3.1, max: 3.4 }, drinkPh: { min: 3.6, max: 4.2 } },
+    steps: { own: [] },
+    assume: {},
   };
 }
 

@@ -16,6 +16,8 @@ export const permissionTable = {
   'probes:manage': ['owner', 'brewer'],
   'recipes:read': ['owner', 'brewer', 'hand'],
   'recipes:manage': ['owner', 'brewer'],
+  'stores:read': ['owner', 'brewer', 'hand'],
+  'stores:manage': ['owner', 'brewer'],
   // A taster tastes blind: batches and runs would tell them which keg is which.
   'batches:read': ['owner', 'brewer', 'hand', 'pourer'],
   'batches:manage': ['owner', 'brewer'],

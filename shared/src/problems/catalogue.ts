@@ -17,6 +17,8 @@ export const problemCatalogue = {
   'last-owner': { status: 409, title: 'A house keeps at least one owner' },
   'batch-already-running': { status: 409, title: 'This batch has a run already' },
   'probe-in-use': { status: 409, title: 'The probe is in another kettle' },
+  'not-enough-stock': { status: 409, title: 'The stores hold less than that' },
+  'batch-not-planned': { status: 409, title: 'The batch is not waiting any more' },
   'run-already-started': { status: 409, title: 'The run has already started' },
   'run-not-started': { status: 409, title: 'The run has not started' },
   'run-already-ended': { status: 409, title: 'The run has ended' },

@@ -1,23 +1,23 @@
 import { describe, expect, it } from 'vitest';
+import { buildDocument } from '../testing/index.js';
 import { compileSheet } from './compile.js';
-import { recipeDocumentSchema, type RecipeDocument } from './recipe.js';
 import { runSheetSchema } from './step.js';
 
-const document: RecipeDocument = recipeDocumentSchema.parse({
-  volumeL: 20,
-  waterName: 'Reverse-osmosis water',
-  waterL: 22.5,
+const document = buildDocument({
   additions: [
-    { id: 'cacl2', kind: 'salt', name: 'calcium chloride', massG: 3.2 },
-    { id: 'citric', kind: 'acid', name: 'citric acid', massG: 4 },
-    { id: 'sencha', kind: 'tea', name: 'sencha', massG: 120, bag: 'bag 1' },
-    { id: 'cascade', kind: 'hops', name: 'Cascade', massG: 60, bag: 'bag 2' },
+    {
+      id: 'cacl2',
+      kind: 'salt',
+      name: 'calcium chloride',
+      massG: 3.2,
+      keeps: 'g-per-l',
+      salt: 'calciumChlorideDihydrate',
+      in: { at: 'fill' },
+    },
+    ...buildDocument().additions,
   ],
-  targetPh: { min: 4, max: 4.3 },
-  steep: { tempC: 76, durationS: 180 },
-  hops: { inC: 62, outC: 30 },
-  transferC: 20,
   gas: { volumes: 2.5, tempC: 4 },
+  targets: { waterPh: { min: 4, max: 4.3 } },
 });
 const kit = { altitudeM: 0, reachS: 12 };
 const stepOf = (id: string, from = document, on = kit) => compileSheet(from, on).steps.find((step) => step.id === id);

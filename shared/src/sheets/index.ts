@@ -1,4 +1,6 @@
 export * from './cautions.js';
 export * from './compile.js';
+export * from './day-order.js';
+export * from './kit.js';
 export * from './recipe.js';
 export * from './step.js';

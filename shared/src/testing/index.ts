@@ -1,1 +1,2 @@
 export * from './run-builders.js';
+export * from './recipe-builders.js';

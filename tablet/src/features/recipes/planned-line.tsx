@@ -7,8 +7,20 @@ const HEIGHT = 340;
 const TOP = 54;
 const BOTTOM = 26;
 
+/** The first tea and the first hops; the rest stands in words. */
+export function levelsOf({ additions, steepC }: RecipeDocument) {
+  const tea = additions.find(({ kind }) => kind === 'tea');
+  const hops = additions.find(({ kind }) => kind === 'hops');
+  const durationS = tea && 'out' in tea && tea.out.at === 'timer' ? tea.out.durationS : 0;
+  const inC = hops?.in.at === 'falling' ? hops.in.tempC : steepC;
+  const outC = hops && 'out' in hops && hops.out.at === 'falling' ? hops.out.tempC : inC;
+  return { steep: { tempC: steepC, durationS }, hops: { inC, outC } };
+}
+
 /** The day as its levels: to the scale of temperature, not of time. What it says stands in words below it. */
-export function PlannedLine({ document: { steep, hops, transferC } }: { document: RecipeDocument }) {
+export function PlannedLine({ document }: { document: RecipeDocument }) {
+  const { transferC } = document;
+  const { steep, hops } = levelsOf(document);
   const top = Math.max(steep.tempC, hops.inC) + 2;
   const low = Math.min(START_C, transferC) - 2;
   const y = (tempC: number) => TOP + (1 - (tempC - low) / (top - low)) * (HEIGHT - TOP - BOTTOM);

@@ -16,7 +16,7 @@ import { HubProblemError } from '#lib/http.ts';
 import { useKnown, useMay } from '#lib/session.ts';
 import { failureWords } from '#lib/words.ts';
 import { PlanBatchDialog } from './plan-batch-dialog.tsx';
-import { PlannedLine } from './planned-line.tsx';
+import { levelsOf, PlannedLine } from './planned-line.tsx';
 import { SheetSteps } from './sheet-steps.tsx';
 
 /** What the sheet is compiled for when nobody in particular reads it. */
@@ -140,7 +140,7 @@ function WhatGoesIn({ document }: { document: RecipeDocument }) {
       <ul>
         <Ingredient
           mass={formatVolume(document.waterL, { unit: 'L' })}
-          name={document.waterName}
+          name={document.waters.map(({ name }) => name).join(', ')}
           note={`for ${formatVolume(document.volumeL, { unit: 'L' })} of drink`}
         />
         {document.additions.map(({ id, kind, name, massG, bag }) => (
@@ -167,9 +167,11 @@ function Ingredient({ mass, name, note }: { mass: string; name: string; note: st
   );
 }
 
-function Targets({ document: { targetPh, steep, gas, hops, transferC } }: { document: RecipeDocument }) {
+function Targets({ document }: { document: RecipeDocument }) {
+  const { targets, gas, transferC } = document;
+  const { steep, hops } = levelsOf(document);
   const rows: [string, string][] = [
-    ['pH before the heat', `${targetPh.min} to ${targetPh.max}`],
+    ['pH before the heat', `${targets.waterPh.min} to ${targets.waterPh.max}`],
     ['Steep', `${formatDuration(steep.durationS)} from ${formatTemp(steep.tempC, { unit })}`],
     ['Hops', `from ${formatTemp(hops.inC, { unit })} to ${formatTemp(hops.outC, { unit })}`],
     ['Into the keg', `at ${formatTemp(transferC, { unit })}`],

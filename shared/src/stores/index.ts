@@ -1,0 +1,2 @@
+export * from './ingredient.js';
+export * from './stock.js';
