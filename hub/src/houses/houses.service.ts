@@ -9,8 +9,8 @@ import type { Actor } from '../common/access/actor.js';
 import { inTransaction } from '../database/retry-transaction.js';
 import { House } from './models/house.model.js';
 
-export function presentHouse({ id, name, altitudeM, version }: House): HouseAnswer {
-  return { id, name, altitudeM, version };
+export function presentHouse({ id, name, altitudeM, currency, version }: House): HouseAnswer {
+  return { id, name, altitudeM, currency, version };
 }
 
 @Injectable()

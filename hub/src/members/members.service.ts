@@ -2,6 +2,7 @@ import { Injectable } from '@nestjs/common';
 import { InjectConnection, InjectModel } from '@nestjs/sequelize';
 import type { CreateMember, Member, Role, UpdateMember } from '@steepfall/shared/contracts';
 import { ProblemError } from '@steepfall/shared/problems';
+import { metricPreferences } from '@steepfall/shared/units';
 import { Sequelize } from 'sequelize-typescript';
 import { AuditService } from '../audit/audit.service.js';
 import type { Actor } from '../common/access/actor.js';
@@ -17,8 +18,8 @@ import { User } from './models/user.model.js';
 /** A membership that was loaded together with its user. */
 type LoadedMembership = Membership & { user: User };
 
-export function presentMember({ id, displayName, role, isActive, user }: LoadedMembership): Member {
-  return { id, displayName, email: user.email, role, isActive };
+export function presentMember({ id, displayName, role, isActive, units, user }: LoadedMembership): Member {
+  return { id, displayName, email: user.email, role, isActive, units: units ?? metricPreferences };
 }
 
 @Injectable()

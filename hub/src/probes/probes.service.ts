@@ -148,5 +148,8 @@ function presentProbe(row: Probe, lastReadingAtMs: number | null): ProbeAnswer {
     isSimulated,
     isRevoked: row.revokedAtMs !== null,
     lastReadingAtMs,
+    calibration: row.calibration ?? null,
+    calibratedAtMs: row.calibratedAtMs ?? null,
+    version: row.version,
   };
 }

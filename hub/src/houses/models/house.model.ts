@@ -12,6 +12,10 @@ export class House extends Model<InferAttributes<House>, InferCreationAttributes
   @Column({ type: DataType.DOUBLE, allowNull: false })
   declare altitudeM: number;
 
+  /** ISO 4217. */
+  @Column({ type: DataType.CHAR(3), allowNull: false, defaultValue: 'EUR' })
+  declare currency: CreationOptional<string>;
+
   @Column({ type: DataType.BOOLEAN, allowNull: false, defaultValue: false })
   declare isDemo: CreationOptional<boolean>;
 

@@ -1,4 +1,5 @@
 import type { Role } from '@steepfall/shared/contracts';
+import type { UnitPreferences } from '@steepfall/shared/units';
 import type { CreationOptional, InferAttributes, InferCreationAttributes, NonAttribute } from 'sequelize';
 import { BelongsTo, Column, DataType, ForeignKey, Table } from 'sequelize-typescript';
 import { HouseOwnedModel } from '../../common/house-scope/house-owned.model.js';
@@ -19,6 +20,10 @@ export class Membership extends HouseOwnedModel<InferAttributes<Membership>, Inf
 
   @Column({ type: DataType.BOOLEAN, allowNull: false, defaultValue: true })
   declare isActive: CreationOptional<boolean>;
+
+  /** `null`: never chosen. */
+  @Column({ type: DataType.JSON })
+  declare units: CreationOptional<UnitPreferences | null>;
 
   @Column({ type: DataType.BIGINT, allowNull: false })
   declare createdAtMs: number;

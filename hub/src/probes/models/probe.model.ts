@@ -1,3 +1,4 @@
+import type { ProbeCalibration } from '@steepfall/shared/contracts';
 import type { CreationOptional, InferAttributes, InferCreationAttributes } from 'sequelize';
 import { Column, DataType, Table } from 'sequelize-typescript';
 import { HouseOwnedModel } from '../../common/house-scope/house-owned.model.js';
@@ -21,6 +22,13 @@ export class Probe extends HouseOwnedModel<InferAttributes<Probe>, InferCreation
   @Column({ type: DataType.DOUBLE, allowNull: false })
   declare samplePeriodS: number;
 
+  /** What it showed at two points that are known; `null`: it is believed as it is. */
+  @Column({ type: DataType.JSON })
+  declare calibration: CreationOptional<ProbeCalibration | null>;
+
+  @Column({ type: DataType.BIGINT })
+  declare calibratedAtMs: CreationOptional<number | null>;
+
   @Column({ type: DataType.BOOLEAN, allowNull: false, defaultValue: false })
   declare isSimulated: CreationOptional<boolean>;
 
@@ -29,4 +37,7 @@ export class Probe extends HouseOwnedModel<InferAttributes<Probe>, InferCreation
 
   @Column({ type: DataType.BIGINT })
   declare revokedAtMs: CreationOptional<number | null>;
+
+  @Column({ type: DataType.INTEGER, allowNull: false, defaultValue: 1 })
+  declare version: CreationOptional<number>;
 }
