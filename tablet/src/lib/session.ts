@@ -145,6 +145,11 @@ export function noteHouse(house: House): void {
   if (state.status === 'signed-in') become({ ...state, known: { ...state.known, house } });
 }
 
+/** The member who works here changed something of their own. */
+export function noteMember(member: Member): void {
+  if (state.status === 'signed-in') become({ ...state, known: { ...state.known, member } });
+}
+
 export function subscribeSession(listener: () => void): () => void {
   listeners.add(listener);
   return () => listeners.delete(listener);

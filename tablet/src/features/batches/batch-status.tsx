@@ -6,6 +6,7 @@ const dress: Record<Batch['status'], { word: string; shape: Shape; tone: Tone }>
   planned: { word: 'planned', shape: 'ring', tone: 'soft' },
   running: { word: 'running', shape: 'dot', tone: 'text' },
   finished: { word: 'finished', shape: 'flat', tone: 'text' },
+  cancelled: { word: 'cancelled', shape: 'dash', tone: 'soft' },
   abandoned: { word: 'given up', shape: 'dash', tone: 'soft' },
 };
 
