@@ -165,13 +165,14 @@ export class BatchesService {
   }
 }
 
-function statusOf(run: RunSummary | null): BatchAnswer['status'] {
+function statusOf({ cancelledAtMs }: Batch, run: RunSummary | null): BatchAnswer['status'] {
+  if (cancelledAtMs !== null) return 'cancelled';
   if (!run) return 'planned';
   return run.status === 'running' ? 'running' : (run.outcome ?? 'abandoned');
 }
 
 function presentBatch(row: Batch, revision: NamedRevision | undefined, run: RunSummary | null): BatchAnswer {
-  const { id, batchNumber, revisionId, plannedOn, volumeL } = row;
+  const { id, batchNumber, revisionId, plannedOn, volumeL, kettleId, chillerId, kegId, probeId } = row;
   return {
     id,
     batchNumber,
@@ -180,8 +181,12 @@ function presentBatch(row: Batch, revision: NamedRevision | undefined, run: RunS
     revisionId,
     revisionNumber: revision?.number ?? 0,
     plannedOn,
-    status: statusOf(run),
+    status: statusOf(row, run),
     volumeL,
     run,
+    kettleId,
+    chillerId,
+    kegId,
+    probeId,
   };
 }

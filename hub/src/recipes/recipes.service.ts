@@ -35,7 +35,7 @@ export class RecipesService {
       inHouse(this.recipes, houseId).findAll({}, { order: [['name', 'ASC']] }),
       inHouse(this.revisions, houseId).findAll(
         {},
-        { attributes: ['id', 'recipeId', 'number'], order: [['number', 'ASC']] },
+        { attributes: ['id', 'recipeId', 'number', 'volumeL', 'createdAtMs'], order: [['number', 'ASC']] },
       ),
     ]);
     // In ascending order the last one written for a recipe is the newest.
@@ -95,8 +95,17 @@ export class RecipesService {
   }
 }
 
-function summarise({ id, name, summary }: Recipe, latest: RecipeRevision): RecipeSummary {
-  return { id, name, summary, latestRevisionId: latest.id, latestRevisionNumber: latest.number };
+function summarise({ id, name, summary, archivedAtMs }: Recipe, latest: RecipeRevision): RecipeSummary {
+  return {
+    id,
+    name,
+    summary,
+    latestRevisionId: latest.id,
+    latestRevisionNumber: latest.number,
+    isArchived: archivedAtMs !== null,
+    volumeL: latest.volumeL,
+    changedAtMs: latest.createdAtMs,
+  };
 }
 
 function present(row: RecipeRevision, names: Map<string, string>): Revision {

@@ -1,4 +1,5 @@
-import type { InferAttributes, InferCreationAttributes } from 'sequelize';
+import type { RunSheet } from '@steepfall/shared/sheets';
+import type { CreationOptional, InferAttributes, InferCreationAttributes } from 'sequelize';
 import { Column, DataType, Table } from 'sequelize-typescript';
 import { HouseOwnedModel } from '../../common/house-scope/house-owned.model.js';
 
@@ -42,4 +43,14 @@ export class Batch extends HouseOwnedModel<InferAttributes<Batch>, InferCreation
 
   @Column({ type: DataType.CHAR(36), allowNull: false })
   declare createdBy: string;
+
+  /** Changed by hand after it was planned; `null` while it is what follows from the revision. */
+  @Column({ type: DataType.JSON })
+  declare sheet: CreationOptional<RunSheet | null>;
+
+  @Column({ type: DataType.INTEGER, allowNull: false, defaultValue: 1 })
+  declare sheetVersion: CreationOptional<number>;
+
+  @Column({ type: DataType.BIGINT })
+  declare cancelledAtMs: CreationOptional<number | null>;
 }

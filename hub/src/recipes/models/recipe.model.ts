@@ -1,4 +1,4 @@
-import type { InferAttributes, InferCreationAttributes } from 'sequelize';
+import type { CreationOptional, InferAttributes, InferCreationAttributes } from 'sequelize';
 import { Column, DataType, Table } from 'sequelize-typescript';
 import { HouseOwnedModel } from '../../common/house-scope/house-owned.model.js';
 
@@ -13,4 +13,8 @@ export class Recipe extends HouseOwnedModel<InferAttributes<Recipe>, InferCreati
 
   @Column({ type: DataType.BIGINT, allowNull: false })
   declare createdAtMs: number;
+
+  /** Put away: lists leave it out, nothing else changes. */
+  @Column({ type: DataType.BIGINT })
+  declare archivedAtMs: CreationOptional<number | null>;
 }
