@@ -5,3 +5,4 @@ export * from './events.js';
 export * from './fold.js';
 export * from './state.js';
 export * from './selectors.js';
+export * from './spoken.js';

@@ -1,6 +1,8 @@
 import { Howl, Howler } from 'howler';
 import { subscribeTick } from '../clock/ticker.ts';
 import { isShallowSame, ValueStore } from '../value-store.ts';
+import { composeRing } from './compose-ring.ts';
+import { SoundLibrary } from './sound-library.ts';
 import { nextRepair, soundHealth, type AudioSigns, type ContextState, type SoundHealth } from './audio-health.ts';
 
 /** The three families of tones: a soft double, a rising triple, the insistent five. */
@@ -10,6 +12,8 @@ export interface Ring {
   level: AlarmLevel;
   /** Names what rings, so that the same alarm is not started twice. */
   id: string;
+  /** Spoken clips after the tone, by name: "hops-in", "n62", "degrees". */
+  say?: readonly string[];
 }
 
 export interface SoundState {
@@ -30,6 +34,9 @@ const BUZZ: Record<AlarmLevel, number[]> = {
   now: [300, 120, 300, 120, 600],
 };
 
+const tonePath = (level: AlarmLevel) => `/sounds/${level}.wav`;
+const clipPath = (clip: string) => `/speech/${clip}.mp3`;
+
 /** Alarms through howler on Web Audio: one sound at a time, never queued on a locked context. */
 class AlarmSounds {
   readonly state = new ValueStore<SoundState>({ health: 'untested', ringing: null }, isShallowSame);
@@ -44,6 +51,8 @@ class AlarmSounds {
   private isRepairing = false;
   private hasLoadFailed = false;
   private warm: AudioBufferSourceNode | null = null;
+  private spoken: AudioBufferSourceNode | null = null;
+  private readonly library = new SoundLibrary();
   private isWarmWanted = false;
 
   /** Loads the sounds and starts to watch over the output. Silent until a tap. */
@@ -89,6 +98,13 @@ class AlarmSounds {
     this.apply();
   }
 
+  /** Makes the words of a run ready before they are needed; what is missing at its moment is left to the tone. */
+  async prepareSpeech(clips: readonly string[]): Promise<void> {
+    const { context } = this;
+    if (!context) return;
+    await this.library.load(context, [...LEVELS.map(tonePath), ...clips.map(clipPath)]);
+  }
+
   /** Plays an alarm for the ear alone, as for the sound check. Nothing that rings for the run is touched by it. */
   playTest(level: AlarmLevel): void {
     this.stopTest();
@@ -124,7 +140,7 @@ class AlarmSounds {
         this.hasLoadFailed = true;
         this.judge();
       };
-      const howl = new Howl({ src: [`/sounds/${level}.wav`], loop: level === 'now', html5: false });
+      const howl = new Howl({ src: [tonePath(level)], loop: level === 'now', html5: false });
       howl.once('load', onLoad);
       howl.once('loaderror', onFail);
       return howl;
@@ -169,7 +185,8 @@ class AlarmSounds {
     }
     this.judge();
     const { playing } = this;
-    if (playing?.level === 'stand-by' && nowMs - this.lastStartMs >= STAND_BY_EVERY_MS) this.begin(playing);
+    if (playing?.level === 'stand-by' && !this.spoken && nowMs - this.lastStartMs >= STAND_BY_EVERY_MS)
+      this.begin(playing);
   }
 
   private judge(): void {
@@ -196,13 +213,31 @@ class AlarmSounds {
     this.stopAll();
     this.playing = ring;
     this.lastStartMs = performance.now();
-    this.howls?.[ring.level].play();
+    if (!this.speak(ring)) this.howls?.[ring.level].play();
     (navigator as Partial<Navigator>).vibrate?.(BUZZ[ring.level]);
     this.state.set({ ...this.state.get(), ringing: ring.id });
   }
 
+  /** Tone and words in one piece; false when there are no words, or not all of them have come. */
+  private speak({ level, say = [] }: Ring): boolean {
+    const { context } = this;
+    const [tone] = this.library.take([tonePath(level)]) ?? [];
+    const words = this.library.take(say.map(clipPath));
+    if (!context || !tone || !words || words.length === 0) return false;
+    const { buffer, isLooped } = composeRing(context, level, tone, words);
+    const source = context.createBufferSource();
+    source.buffer = buffer;
+    source.loop = isLooped;
+    source.connect(context.destination);
+    source.start();
+    this.spoken = source;
+    return true;
+  }
+
   private stopAll(): void {
     this.test = null;
+    this.spoken?.stop();
+    this.spoken = null;
     for (const level of LEVELS) this.howls?.[level].stop();
   }
 
@@ -235,6 +270,7 @@ class AlarmSounds {
 
   private rebuild(): void {
     this.warm = null;
+    this.spoken = null;
     this.playing = null;
     this.test = null;
     Howler.unload();

@@ -1,0 +1,70 @@
+import type { Step } from '../sheets/index.js';
+import { inUnit } from '../units/index.js';
+import type { Alert, RunState } from './state.js';
+
+/** Names of clips that are recorded once; a sentence is a list of them. Numbers are `n0` to `n220`, tenths `point1` to `point9`. */
+const actClips: Readonly<Record<string, string>> = {
+  'check-kit': 'check-kit',
+  fill: 'fill',
+  'light-heat': 'light-heat',
+  salts: 'salts-in',
+  acid: 'acid-in',
+  'acid-in': 'acid-in',
+  'salt-in': 'salts-in',
+  'other-in': 'aromatics-in',
+  'other-out': 'aromatics-out',
+  ph: 'measure-ph',
+  'coil-in': 'coil-in',
+  heat: 'heat',
+  steep: 'steep-over',
+  chill: 'chiller-on',
+  transfer: 'transfer',
+  purge: 'purge',
+  clean: 'clean',
+  gas: 'gas',
+};
+
+/** The clip that says what this step asks for; a step of the brewer's own has none, and is read from the sheet. */
+export function actClip({ id, acts }: Pick<Step, 'id' | 'acts'>): string {
+  for (const way of ['in', 'out'] as const) {
+    const hasTea = acts.includes(`tea-${way}`);
+    const hasHops = acts.includes(`hops-${way}`);
+    if (hasTea && hasHops) return `tea-and-hops-${way}`;
+    if (hasTea) return `tea-${way}`;
+    if (hasHops) return `hops-${way}`;
+  }
+  return actClips[id.replace(/-\d+$/, '')] ?? 'next-step';
+}
+
+/**
+ * A temperature in words, as clips: whole degrees Fahrenheit, and Celsius to a tenth where the target has one.
+ *
+ * @param tempC 0 to 104 °C; beyond that nothing is said, since no clip knows the number.
+ */
+export function temperatureClips(tempC: number, unit: 'C' | 'F'): string[] {
+  const shown = inUnit('temperature', tempC, unit);
+  const tenths = unit === 'F' ? Math.round(shown) * 10 : Math.round(shown * 10);
+  const whole = Math.floor(tenths / 10);
+  if (whole < 0 || whole > 220) return [];
+  const tenth = tenths % 10;
+  return [`n${whole}`, ...(tenth > 0 ? [`point${tenth}`] : []), 'degrees'];
+}
+
+/** What is said aloud for an alert: verb, thing, number. */
+export function spokenClips(state: RunState, alert: Alert, unit: 'C' | 'F'): string[] {
+  if (alert.rule === 'signal') return ['no-reading'];
+  const act = state.steps.find(({ step }) => step.id === alert.actStepId)?.step;
+  if (!act) return alert.stage === 'now' || alert.stage === 'missed' ? ['timer-over'] : [];
+  const clip = actClip(act);
+  const number = alert.targetC === null ? [] : temperatureClips(alert.targetC, unit);
+  switch (alert.stage) {
+    case 'coming-up':
+      return ['coming-up', clip, ...number];
+    case 'stand-by':
+      return ['stand-by', clip, ...number];
+    case 'now':
+      return number.length > 0 ? [clip, ...number] : [clip, 'now'];
+    case 'missed':
+      return ['late', clip];
+  }
+}
