@@ -50,6 +50,8 @@ export function temperatureClips(tempC: number, unit: 'C' | 'F'): string[] {
   return [`n${whole}`, ...(tenth > 0 ? [`point${tenth}`] : []), 'degrees'];
 }
 
+const alertPhrases = ['coming-up', 'stand-by', 'now', 'late', 'timer-over', 'no-reading'] as const;
+
 /** What is said aloud for an alert: verb, thing, number. */
 export function spokenClips(state: RunState, alert: Alert, unit: 'C' | 'F'): string[] {
   if (alert.rule === 'signal') return ['no-reading'];
@@ -67,4 +69,18 @@ export function spokenClips(state: RunState, alert: Alert, unit: 'C' | 'F'): str
     case 'missed':
       return ['late', clip];
   }
+}
+
+/** Every clip that the alerts of this run can need, so that they are at hand before the first one. */
+export function speechOf(state: RunState, unit: 'C' | 'F'): string[] {
+  const levels = state.steps.flatMap(({ step: { start, done } }) =>
+    [start, done].flatMap((condition) => (condition.by === 'temperature' ? [condition.tempC] : [])),
+  );
+  return [
+    ...new Set([
+      ...alertPhrases,
+      ...state.steps.map(({ step }) => actClip(step)),
+      ...levels.flatMap((tempC) => temperatureClips(tempC, unit)),
+    ]),
+  ];
 }

@@ -14,7 +14,15 @@ const letGo = vi.hoisted(() => vi.fn());
 vi.mock('#lib/audio/alarm-sounds.ts', async () => {
   const { ValueStore: Store } = await import('#lib/value-store.ts');
   const state = new Store({ health: 'fine', ringing: null });
-  return { alarmSounds: { state, start: vi.fn(), keepWarm: vi.fn(), ring: vi.fn() } };
+  return {
+    alarmSounds: {
+      state,
+      start: vi.fn(),
+      keepWarm: vi.fn(),
+      ring: vi.fn(),
+      prepareSpeech: vi.fn(async () => undefined),
+    },
+  };
 });
 vi.mock('#lib/audio/ringer-lock.ts', async () => {
   const { ValueStore: Store } = await import('#lib/value-store.ts');
@@ -54,7 +62,7 @@ describe(Ringer, () => {
   it('rings for what stands, in the name of its run', () => {
     ringerOf(alarmed());
     expect(wantToRing).toHaveBeenCalledWith(RUN_ID);
-    expect(lastRing()).toEqual({ level: 'now', id: 'steep/1/now' });
+    expect(lastRing()).toEqual({ level: 'now', id: 'steep/1/now', say: ['tea-out', 'now'] });
   });
 
   it('starts nothing while the clock is unsettled, and falls silent all the same', () => {

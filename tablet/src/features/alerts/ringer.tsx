@@ -1,24 +1,39 @@
 import { useEffect } from 'react';
-import { standingAlerts } from '@steepfall/shared/runs';
+import { speechOf, spokenClips, standingAlerts, type RunState } from '@steepfall/shared/runs';
 import { alarmSounds, type Ring } from '#lib/audio/alarm-sounds.ts';
 import { isRinger, wantToRing } from '#lib/audio/ringer-lock.ts';
 import { hubClock } from '#lib/clock/hub-clock.ts';
 import { useRunStore } from '#lib/run-store/run-context.tsx';
 import { alertStageId } from '#lib/run-store/take-over.ts';
+import { useUnits } from '#lib/units.ts';
 import { ringFor } from './alert-level.ts';
 
 /** A blocked output often comes back by itself; another tab takes over when it does not. */
 const BLOCKED_PATIENCE_MS = 1_000;
 
+/** What sounds, and what is said with it. */
+function spokenRing(state: RunState, unit: 'C' | 'F'): Ring | null {
+  const ring = ringFor(state);
+  const [worst] = standingAlerts(state);
+  return ring && worst ? { ...ring, say: spokenClips(state, worst, unit) } : null;
+}
+
 /** Makes the run audible: what stands rings, and an acknowledgement from any tablet silences it. Draws nothing. */
 export function Ringer() {
   const store = useRunStore();
+  const { temperature } = useUnits();
   useEffect(() => {
     alarmSounds.start();
     alarmSounds.keepWarm(true);
     let letGo: (() => void) | null = null;
     let letGoTimer: ReturnType<typeof setTimeout> | undefined;
     let rung: Ring | null = null;
+    let areWordsAsked = false;
+    const askForTheWords = () => {
+      if (areWordsAsked || alarmSounds.state.get().health !== 'fine') return;
+      areWordsAsked = true;
+      void alarmSounds.prepareSpeech(speechOf(store.snapshot.get().state, temperature));
+    };
     const giveTheLockBack = () => {
       clearTimeout(letGoTimer);
       letGoTimer = undefined;
@@ -40,7 +55,7 @@ export function Ringer() {
     };
     const wantedRing = (): Ring | null => {
       const { state } = store.snapshot.get();
-      const wanted = isRinger.get() ? ringFor(state) : null;
+      const wanted = isRinger.get() ? spokenRing(state, temperature) : null;
       if (hubClock.isSettled.get() || !wanted || wanted.id === rung?.id) return wanted;
       // While nobody knows why the clock jumped, what rings goes on until it is heard, and nothing new starts.
       const isStanding = standingAlerts(state).some((alert) => alertStageId(alert) === rung?.id);
@@ -48,6 +63,7 @@ export function Ringer() {
     };
     const apply = () => {
       askForTheLock();
+      askForTheWords();
       rung = wantedRing();
       alarmSounds.ring(rung);
     };
@@ -64,6 +80,6 @@ export function Ringer() {
       alarmSounds.ring(null);
       alarmSounds.keepWarm(false);
     };
-  }, [store]);
+  }, [store, temperature]);
   return null;
 }
