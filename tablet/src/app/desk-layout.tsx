@@ -2,6 +2,7 @@ import { useEffect, useRef } from 'react';
 import { Outlet, ScrollRestoration, useLocation } from 'react-router-dom';
 import { Banner } from '#components/banner.tsx';
 import { Button } from '#components/button.tsx';
+import { UndoStrip } from '#components/undo.tsx';
 import { refreshSession, useSession } from '#lib/session.ts';
 import { Rail } from './rail.tsx';
 import { UpdateBanner } from './update-banner.tsx';
@@ -39,6 +40,7 @@ export function DeskLayout() {
         ) : null}
         <Outlet />
       </main>
+      <UndoStrip />
       <ScrollRestoration />
     </div>
   );

@@ -3,7 +3,8 @@ import type { ComponentPropsWithRef, ReactNode } from 'react';
 import { Link, type LinkProps } from 'react-router-dom';
 import { classNames } from './class-names.ts';
 
-export type ButtonLook = 'primary' | 'plain' | 'quiet' | 'danger';
+/** `onText`: on a strip that has the colour of the text. */
+export type ButtonLook = 'primary' | 'plain' | 'quiet' | 'danger' | 'onText';
 /** `desk` 48 px, `sheet` 72 px, for a wet hand. */
 export type ButtonSize = 'desk' | 'sheet';
 
@@ -13,6 +14,7 @@ const looks: Record<ButtonLook, string> = {
   quiet:
     'bg-transparent text-text border-transparent underline decoration-hair decoration-2 underline-offset-4 hover:decoration-text',
   danger: 'bg-transparent text-ember border-ember hover:bg-ember-fill hover:border-ember-fill hover:text-on-fill',
+  onText: 'bg-transparent text-ground border-transparent underline decoration-2 underline-offset-4 hover:border-ground',
 };
 const sizes: Record<ButtonSize, string> = {
   desk: 'min-h-12 px-5 text-body rounded-lg',
