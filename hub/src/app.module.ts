@@ -16,6 +16,7 @@ import { RealtimeModule } from './realtime/realtime.module.js';
 import { RecipesModule } from './recipes/recipes.module.js';
 import { RehearsalsModule } from './rehearsals/rehearsals.module.js';
 import { RunsModule } from './runs/runs.module.js';
+import { StoresModule } from './stores/stores.module.js';
 
 @Module({})
 export class AppModule {
@@ -32,6 +33,7 @@ export class AppModule {
         AuthModule,
         EquipmentModule,
         RecipesModule,
+        StoresModule,
         BatchesModule,
         ProbesModule,
         RunsModule,

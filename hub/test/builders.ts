@@ -20,6 +20,9 @@ import { Recipe } from '../src/recipes/models/recipe.model.js';
 import { RunsService } from '../src/runs/runs.service.js';
 import { AccessTokensService } from '../src/sessions/access-tokens.service.js';
 import { SessionsService } from '../src/sessions/sessions.service.js';
+import { Ingredient } from '../src/stores/models/ingredient.model.js';
+import { LotMove } from '../src/stores/models/lot-move.model.js';
+import { Lot } from '../src/stores/models/lot.model.js';
 import type { TestApp } from './create-test-app.js';
 
 export const TEST_PASSWORD = 'a password of the specs';
@@ -190,6 +193,43 @@ export async function buildBatch(
     createdBy: author.member.id,
   });
   return { batch, author, parts };
+}
+
+/** A lot of hops with this much in its book; of an ingredient of its own unless one is named. */
+export async function buildLot(
+  testApp: TestApp,
+  author: BuiltMember,
+  overrides: { ingredientId?: string; code?: string; massG?: number } = {},
+): Promise<Lot> {
+  serial += 1;
+  const owned = { houseId: author.house.id, createdAtMs: Date.now() };
+  const { massG = 100, code = `Lot ${serial}` } = overrides;
+  const ingredientId =
+    overrides.ingredientId ??
+    (
+      await modelOf(testApp, Ingredient).create({
+        ...owned,
+        id: newId(),
+        kind: 'hops',
+        name: `Hops ${serial}`,
+        facts: { form: 'pellets', lowStockG: null, allergens: '' },
+      })
+    ).id;
+  const lot = await modelOf(testApp, Lot).create({
+    ...owned,
+    id: newId(),
+    ingredientId,
+    code,
+    receivedOn: '2026-03-01',
+    bestBefore: null,
+    pricePerKg: null,
+    note: '',
+    hops: null,
+  });
+  const { houseId, createdAtMs } = owned;
+  const line = { id: newId(), houseId, lotId: lot.id, kind: 'received', massG, reason: '', atMs: createdAtMs } as const;
+  await modelOf(testApp, LotMove).create({ ...line, madeBy: author.member.id });
+  return lot;
 }
 
 export interface SignedInMember extends BuiltMember {

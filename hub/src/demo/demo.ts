@@ -91,8 +91,15 @@ async function planToday(sequelize: Sequelize, transaction: Transaction, nowMs: 
 const removals = [
   'DELETE run_events FROM run_events JOIN runs ON runs.id = run_events.run_id WHERE runs.house_id = :houseId',
   'DELETE readings FROM readings JOIN probes ON probes.id = readings.probe_id WHERE probes.house_id = :houseId',
+  // Lines that take another one back come before it.
+  'DELETE FROM lot_moves WHERE house_id = :houseId AND undoes_id IS NOT NULL',
   ...[
     'runs',
+    'lot_reservations',
+    'lot_moves',
+    'lots',
+    'ingredients',
+    'attachments',
     'batches',
     'recipe_revisions',
     'recipes',

@@ -2,6 +2,7 @@ import type { Sequelize } from 'sequelize-typescript';
 import { foundation } from './0001-foundation.js';
 import { runsAndProbes } from './0002-runs-and-probes.js';
 import { recipeDesk } from './0003-recipe-desk.js';
+import { stores } from './0004-stores.js';
 import { kitAndUnits } from './0005-kit-and-units.js';
 
 export interface Migration {
@@ -10,4 +11,4 @@ export interface Migration {
 }
 
 /** One line, forwards only: a new migration goes to the end. */
-export const migrations: Migration[] = [foundation, runsAndProbes, recipeDesk, kitAndUnits];
+export const migrations: Migration[] = [foundation, runsAndProbes, recipeDesk, stores, kitAndUnits];
