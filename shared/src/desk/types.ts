@@ -1,7 +1,10 @@
 import type { Band, DrinkFigures, PlannedCurve } from '../figures/index.js';
 import type { ChillerFacts, KettleFacts } from '../sheets/index.js';
 
-/** What a recipe is planned on. Without a kettle or a chiller the desk takes usual ones, and says so in the workings. */
+/**
+ * What a recipe is planned on. Without a kettle the desk takes a usual one of fitting size; without a chiller the pot cools by
+ * itself, unless the recipe tells a chiller constant (`assume.chillerConstantPerS`). The workings say so.
+ */
 export interface DeskKit {
   altitudeM: number;
   kettle: KettleFacts | null;
@@ -102,6 +105,24 @@ export interface DeskWarning {
   /** Path in the document that it belongs to, as react-hook-form writes it: 'steepC', 'additions.2.massG'. */
   path: string | null;
 }
+
+/** How much of the recipe's acid brings the drink to a pH. */
+export type AcidAdvice = {
+  /** Of the addition whose grams it is. */
+  additionId: string;
+  name: string;
+  wantedPh: number;
+} & (
+  | {
+      kind: 'dose';
+      /** Of the jar, g, all of this acid that the recipe needs; the band is that of the leaf's base. */
+      massG: Band;
+    }
+  /** The drink is that sour without any of it. */
+  | { kind: 'none-needed'; ph: number }
+  /** This acid cannot do it: too weak for that pH, or more than any drink bears. */
+  | { kind: 'never' }
+);
 
 export type DeskResult =
   | {

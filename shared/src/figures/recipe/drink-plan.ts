@@ -19,6 +19,8 @@ export interface TeaAddition extends InLiquid {
   kind: TeaKind;
   /** Unless told: that of `kind`. */
   caffeineClass?: CaffeineClass;
+  /** Told by its maker or a laboratory, 0 to 100 mg/g; it goes before the class. */
+  caffeineMgPerG?: number;
   form: LeafForm;
 }
 

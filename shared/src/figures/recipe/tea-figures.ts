@@ -6,12 +6,14 @@ import { caffeineContent, servingCaffeineMg, steepedCaffeineMgPerL } from '../te
 import { leafExtraction, leafForms } from '../tea/extraction.js';
 import { steepDoseMin, steepVerdict, type SteepVerdict, type TeaKind } from '../tea/steep-dose.js';
 import { EU_CAFFEINE_LABEL_MG_PER_L } from '../safety/caffeine-label.js';
-import { positive } from '../numeric/guard.js';
-import type { DrinkPlan } from './drink-plan.js';
+import { positive, within } from '../numeric/guard.js';
+import type { DrinkPlan, TeaAddition } from './drink-plan.js';
 
 /** Extraction rates are a judgement with a factor of two. */
 const RATE_FACTOR = 2;
 const RUNS = 500;
+/** A told content is taken to hold within a tenth from lot to lot; a judgement. */
+const TOLD_SPREAD = 0.1;
 
 export interface SteepFigures {
   kind: TeaKind;
@@ -36,7 +38,7 @@ export function teaFigures(plan: DrinkPlan, concentration: number): TeaFigures {
   const steeps = plan.teas.map((tea, index): SteepFigures => {
     const curve = curveBetween(plan.curve, tea.inAtMs, tea.outAtMs);
     const out = leafExtraction(curve, tea.form);
-    const content = caffeineContent(tea.caffeineClass ?? tea.kind);
+    const content = contentOf(tea);
     inputs[`content${index}`] = { kind: 'peaked', ...content, grade: 'judged' };
     inputs[`rate${index}`] = { kind: 'factor', value: 1, factor: RATE_FACTOR, grade: 'judged' };
     const gPerL = (tea.massG / liters) * concentration;
@@ -71,6 +73,12 @@ export function teaFigures(plan: DrinkPlan, concentration: number): TeaFigures {
     caffeineServingMg: mapBand(caffeineMgPerL, (mgPerL) => servingCaffeineMg(mgPerL, plan.servingMl)),
     caffeineLine: caffeineLine(caffeineMgPerL),
   };
+}
+
+function contentOf({ kind, caffeineClass, caffeineMgPerG: told }: TeaAddition) {
+  if (told === undefined) return caffeineContent(caffeineClass ?? kind);
+  const value = within(told, 'A caffeine content', 0, 100, 'mg/g');
+  return { low: value * (1 - TOLD_SPREAD), value, high: value * (1 + TOLD_SPREAD) };
 }
 
 function polyphenolBand(turns: number): Band {

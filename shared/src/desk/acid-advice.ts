@@ -1,0 +1,111 @@
+import {
+  acidDose,
+  acidKinds,
+  acidMolPerL,
+  acidFigures,
+  band,
+  chargeBalance,
+  leafBaseBand,
+  lotMultiplier,
+  saltedWater,
+  type AcidKind,
+  type DrinkAcidity,
+  type DrinkPlan,
+} from '../figures/index.js';
+import type { RecipeDocument } from '../sheets/index.js';
+import { drinkPlanOf } from './drink-plan.js';
+import { plannedDay } from './planned-day.js';
+import type { AcidAdvice, DeskKit } from './types.js';
+
+/** The usual aim of a hop tea: tart, and under the lines of food codes (common practice, no source). */
+export const USUAL_DRINK_PH = 3.8;
+const TEMP_C = 25;
+
+type AcidLine = Extract<RecipeDocument['additions'][number], { kind: 'acid' }>;
+
+/** The acid that is dosed: the first one of the recipe. */
+export function leadingAcid({ additions }: RecipeDocument): AcidLine | null {
+  return additions.find((one): one is AcidLine => one.kind === 'acid') ?? null;
+}
+
+export function wantedPh({ targets: { drinkPh } }: RecipeDocument): number {
+  return drinkPh ? (drinkPh.min + drinkPh.max) / 2 : USUAL_DRINK_PH;
+}
+
+/** The drink as the pH sees it, without the additions that are left out; with a base of leaf. */
+export function acidityOf(
+  plan: DrinkPlan,
+  leafBaseMeqPerL: number,
+  without: (kind: AcidKind) => boolean = () => false,
+): DrinkAcidity {
+  const acidsMolPerL: DrinkAcidity['acidsMolPerL'] = {};
+  for (const addition of plan.acids) {
+    if (without(addition.acid)) continue;
+    const { dissociates } = acidKinds[addition.acid];
+    acidsMolPerL[dissociates] = (acidsMolPerL[dissociates] ?? 0) + acidMolPerL(addition, plan.waterL);
+  }
+  return { water: saltedWater(plan.waterL, plan.salts, plan.source), acidsMolPerL, leafBaseMeqPerL, tempC: TEMP_C };
+}
+
+/** Grams of one acid of the recipe for a still pH, in place of what there is of it, at a base of leaf. */
+export function gramsForPh(
+  plan: DrinkPlan,
+  { acid, strengthPercent }: Pick<AcidLine, 'acid' | 'strengthPercent'>,
+  leafBaseMeqPerL: number,
+  ph: number,
+): { kind: 'dose'; massG: number } | { kind: 'none-needed'; ph: number } | { kind: 'never' } {
+  const rest = acidityOf(plan, leafBaseMeqPerL, (kind) => kind === acid);
+  const dose = acidDose(rest, ph, acid, strengthPercent ?? 100);
+  return dose.kind === 'add' ? { kind: 'dose', massG: dose.gPerL * plan.waterL } : dose;
+}
+
+/**
+ * How much of the recipe's acid brings the drink to the middle of its pH target, or to 3.8; null without an acid or a water
+ * that a pH can be computed from. Other acids stay as they are.
+ *
+ * @param document a valid recipe document.
+ * @see acid-dose.ts; the band is that of the leaf's base, 0.6 to 1.7 times.
+ */
+export function acidAdvice(document: RecipeDocument, kit: DeskKit): AcidAdvice | null {
+  const line = leadingAcid(document);
+  if (!line) return null;
+  try {
+    const plan = drinkPlanOf(document, kit, plannedDay(document, kit));
+    const { teaBaseMeqPerL, hopBaseMeqPerL } = acidFigures(plan, saltedWater(plan.waterL, plan.salts, plan.source));
+    const base = teaBaseMeqPerL + hopBaseMeqPerL;
+    const ph = wantedPh(document);
+    const at = (factor: number) => gramsForPh(plan, line, base * factor, ph);
+    const about = { additionId: line.id, name: line.name, wantedPh: ph };
+    const middle = at(leafBaseBand.middle);
+    if (middle.kind !== 'dose') return { ...about, ...middle };
+    const low = at(leafBaseBand.low);
+    const high = at(leafBaseBand.high);
+    const massG = band(
+      low.kind === 'dose' ? Math.min(low.massG, middle.massG) : 0,
+      middle.massG,
+      high.kind === 'dose' ? Math.max(high.massG, middle.massG) : middle.massG,
+      'judged',
+    );
+    return { ...about, kind: 'dose', massG };
+  } catch (error) {
+    if (error instanceof RangeError) return null;
+    throw error;
+  }
+}
+
+/**
+ * How much more base this tea and these hops bring than usual, from one measured pH of the finished drink: for
+ * `assume.teaBaseRatio` and `assume.hopBaseRatio`. Null when no ratio from 0 to 20 explains it.
+ *
+ * @param measuredPh still, degassed, at 20 to 25 °C, 1 to 9.
+ * @see lot-multiplier.ts.
+ */
+export function baseRatioFromPh(document: RecipeDocument, kit: DeskKit, measuredPh: number): number | null {
+  const usualLeaf = { ...document, assume: { ...document.assume, teaBaseRatio: 1, hopBaseRatio: 1 } };
+  const plan = drinkPlanOf(usualLeaf, kit, plannedDay(usualLeaf, kit));
+  const water = saltedWater(plan.waterL, plan.salts, plan.source);
+  if (chargeBalance(water).verdict === 'refused') return null;
+  const { teaBaseMeqPerL, hopBaseMeqPerL } = acidFigures(plan, water);
+  const base = teaBaseMeqPerL + hopBaseMeqPerL;
+  return base > 0 ? lotMultiplier(acidityOf(plan, base), measuredPh) : null;
+}
