@@ -5,6 +5,9 @@ import { Page } from '#components/page.tsx';
 import { Segmented } from '#components/segmented.tsx';
 import { stationName } from '#lib/ids.ts';
 import { signOut, useKnown } from '#lib/session.ts';
+import { useStored } from '#lib/value-store.ts';
+import { chooseWave, useIsWaveOn, waveTrouble } from '#lib/wave/use-wave.ts';
+import type { WaveTrouble } from '#lib/wave/wave-camera.ts';
 import { chooseGround, useGroundChoice, type GroundChoice } from '#lib/theme.ts';
 
 const grounds: { value: GroundChoice; label: string }[] = [
@@ -12,6 +15,39 @@ const grounds: { value: GroundChoice; label: string }[] = [
   { value: 'day', label: 'Day' },
   { value: 'night', label: 'Night' },
 ];
+
+const waves = [
+  { value: 'off', label: 'Off' },
+  { value: 'on', label: 'On' },
+] as const;
+
+const troubleWords: Record<WaveTrouble, string> = {
+  'no-camera': 'No camera answers on this device. A page-turner pedal does the same.',
+  'not-allowed':
+    'The camera is not allowed for this page. Allow it in the settings of the browser, then switch this on again.',
+};
+
+/** A hand that goes across the picture and back is "done". */
+function WaveChoice() {
+  const isOn = useIsWaveOn();
+  const trouble = useStored(waveTrouble);
+  return (
+    <>
+      <Segmented
+        label="Wave for done"
+        value={isOn ? 'on' : 'off'}
+        onChange={(next) => chooseWave(next === 'on')}
+        segments={[...waves]}
+      />
+      <p className="max-w-prose text-body text-soft">
+        With hands full, wave in front of the tablet, across and back: it does what a pedal does. The camera is on only
+        while a run sheet is open, its pictures are looked at on this device, and none is kept or sent. Steam and a
+        greasy lens get in its way; a pedal never minds them.
+      </p>
+      {isOn && trouble ? <p role="alert">{troubleWords[trouble]}</p> : null}
+    </>
+  );
+}
 
 export function AboutRoute() {
   const { member, house } = useKnown();
@@ -26,6 +62,7 @@ export function AboutRoute() {
           Day is easier to read in steam and by a window, night in a dark corner. The choice stays on this device. In
           the log this device is <span className="font-medium text-text">{stationName()}</span>.
         </p>
+        <WaveChoice />
         <div>
           <Button
             onClick={() => {

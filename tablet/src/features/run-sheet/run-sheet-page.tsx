@@ -7,6 +7,7 @@ import { PressButton } from '#components/press-button.tsx';
 import { ShapeGlyph } from '#components/shapes.tsx';
 import { stationName } from '#lib/ids.ts';
 import { usePedal } from '#lib/press/use-pedal.ts';
+import { useWave } from '#lib/wave/use-wave.ts';
 import { RunProvider, useOpenRun, useRun, useRunState, useRunStore } from '#lib/run-store/run-context.tsx';
 import type { RunSnapshot, RunStore } from '#lib/run-store/run-store.ts';
 import { takeOverAlert } from '#lib/run-store/take-over.ts';
@@ -154,25 +155,28 @@ function Sheet({ rehearsal, soundCheck, strips, TakeOver, ringer }: RunSheetPage
     return () => clearTimeout(timer);
   }, [refusal]);
 
+  const goOn = () => {
+    if (mustCheckSound && !alert) return undefined;
+    const next = pedalNext(store.snapshot.get().state);
+    switch (next.kind) {
+      case 'acknowledge':
+        return act({ type: 'acknowledgeAlert', key: next.key, crossing: next.crossing });
+      case 'complete':
+        return complete(next.progress.step.id);
+      case 'measure':
+        return setSheet({ kind: 'measure', quantity: next.quantity });
+      case 'finish':
+      case 'none':
+        return undefined;
+    }
+  };
   usePedal(
-    (pedal) => {
-      if (pedal === 'back') return act({ type: 'goBack' });
-      if (mustCheckSound && !alert) return undefined;
-      const next = pedalNext(store.snapshot.get().state);
-      switch (next.kind) {
-        case 'acknowledge':
-          return act({ type: 'acknowledgeAlert', key: next.key, crossing: next.crossing });
-        case 'complete':
-          return complete(next.progress.step.id);
-        case 'measure':
-          return setSheet({ kind: 'measure', quantity: next.quantity });
-        case 'finish':
-        case 'none':
-          return undefined;
-      }
-    },
+    (pedal) => (pedal === 'back' ? act({ type: 'goBack' }) : goOn()),
     () => takeOverAlert(store.snapshot.get().state) !== null,
   );
+  useWave(() => {
+    if (sheet === null) goOn();
+  });
 
   const body = alert ? (
     <TakeOver onComplete={(stepIds) => stepIds.forEach(complete)} onAct={act} refusal={refusal} />
