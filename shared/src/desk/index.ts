@@ -1,6 +1,14 @@
-export { acidAdvice, baseRatioFromPh, USUAL_DRINK_PH } from './acid-advice.js';
+export * from './combine.js';
+export * from './cost.js';
 export * from './desk-figures.js';
-export { drinkPlanOf } from './drink-plan.js';
-export { plannedDay } from './planned-day.js';
+export * from './differences.js';
+export * from './reservation.js';
+export * from './scale.js';
+export * from './stocked.js';
+export * from './stores-fit-swaps.js';
+export * from './stores-fit.js';
 export * from './types.js';
 export * from './workings.js';
+export { acidAdvice, baseRatioFromPh, USUAL_DRINK_PH } from './acid-advice.js';
+export { drinkPlanOf } from './drink-plan.js';
+export { plannedDay } from './planned-day.js';

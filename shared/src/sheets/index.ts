@@ -1,4 +1,5 @@
 export * from './cautions.js';
+export * from './check-sheet.js';
 export * from './compile.js';
 export * from './day-order.js';
 export * from './kit.js';
