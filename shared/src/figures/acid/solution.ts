@@ -1,8 +1,8 @@
 import { daviesActivity, debyeHuckelA } from '../water/activity.js';
-import { notNegative, finite, within } from '../numeric/guard.js';
+import { notNegative, within } from '../numeric/guard.js';
 import { acidPkAt, waterPk, type Dissociating } from './dissociation.js';
 
-/** A base brought by leaf: one site of one pK, mol/L. */
+/** A base brought by leaf: mol/L of sites, 0 to 2, of one pK, -5 to 20. */
 export interface BaseSite {
   molPerL: number;
   pK: number;
@@ -66,7 +66,7 @@ export function prepared(solution: AcidSolution): PreparedSolution {
     if (molPerL > 0) ladders.push(ladder(molPerL, acidPkAt(acid, tempC)));
   }
   for (const { molPerL, pK } of solution.sites ?? []) {
-    ladders.push(ladder(within(molPerL, 'A base of leaf', 0, MAX_MOL_PER_L, 'mol/L'), [finite(pK, 'A pK')]));
+    ladders.push(ladder(within(molPerL, 'A base of leaf', 0, MAX_MOL_PER_L, 'mol/L'), [within(pK, 'A pK', -5, 20)]));
   }
   return {
     ladders,

@@ -58,8 +58,9 @@ function shapeOf(stage: PlannedStage, fromC: number): Shaped {
       const usefulW = stage.powerW * stage.efficiency;
       const lossWPerK = stage.lossWPerK ?? 0;
       const line = (s: number) => fromC + (usefulW / stage.heatCapacityJPerK) * s;
+      // With a small loss the limit is hotter than anything that a temperature may be; it is only a number here.
       const limitC = (stage.roomC ?? 0) + usefulW / lossWPerK;
-      const bent = (s: number) => newtonTempC(fromC, limitC, lossWPerK / stage.heatCapacityJPerK, s);
+      const bent = (s: number) => fromC - (limitC - fromC) * Math.expm1((-lossWPerK * s) / stage.heatCapacityJPerK);
       return { durationS: time.durationS, tempAt: lossWPerK === 0 ? line : bent };
     }
     case 'cool': {

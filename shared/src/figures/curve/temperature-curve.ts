@@ -45,8 +45,13 @@ export function curveTempC(curve: TemperatureCurve, atMs: number): number | null
   return before.tempC + ((after.tempC - before.tempC) * (atMs - before.atMs)) / (after.atMs - before.atMs);
 }
 
-/** The part of a curve between two instants, with its ends put in; empty when the curve does not meet them. */
+/**
+ * The part of a curve between two instants, with its ends put in; empty when the curve does not meet them.
+ *
+ * @throws RangeError when an instant is not finite.
+ */
 export function curveBetween(curve: TemperatureCurve, fromMs: number, toMs: number): TemperatureCurve {
+  finite(toMs, 'An instant', 'ms');
   const points = curve.filter(({ atMs }) => atMs > fromMs && atMs < toMs);
   const first = curveTempC(curve, fromMs);
   const last = toMs > fromMs ? curveTempC(curve, toMs) : null;

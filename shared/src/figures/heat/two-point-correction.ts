@@ -1,4 +1,4 @@
-import { finite, notNegative, positive } from '../numeric/guard.js';
+import { finite, notNegative, positive, within } from '../numeric/guard.js';
 
 export interface ProbeCorrection {
   /** Added after the slope, K. */
@@ -37,9 +37,10 @@ export function twoPointCorrection(iceReadingC: number, boilReadingC: number, bo
   return { kind: 'accepted', correction };
 }
 
-/** A reading after correction, °C. @throws RangeError when the reading is not finite. */
+/** A reading after correction, °C. @throws RangeError when the reading or the correction is not finite. */
 export function correctedTempC(readingC: number, correction: ProbeCorrection): number {
-  return correction.offsetC + correction.slope * finite(readingC, 'A reading', '°C');
+  const slope = within(correction.slope, 'A slope', 0, 10);
+  return finite(correction.offsetC, 'An offset', 'K') + slope * finite(readingC, 'A reading', '°C');
 }
 
 /**

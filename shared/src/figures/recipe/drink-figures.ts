@@ -1,3 +1,4 @@
+import { checkedCurve } from '../curve/temperature-curve.js';
 import { chargeGaugeKPa } from '../gas/charge-pressure.js';
 import { co2GPerLFromVolumes } from '../gas/co2-volumes.js';
 import { alkalinityMeqPerL, hardnessAsCaCo3 } from '../water/alkalinity.js';
@@ -48,6 +49,7 @@ const COLD_C = 10;
  * @see the single figures for models, sources and bands.
  */
 export function drinkFigures(plan: DrinkPlan): DrinkFigures {
+  checkedCurve(plan.curve);
   const ions = saltedWater(plan.waterL, plan.salts, plan.source);
   const balance = chargeBalance(ions);
   const concentration = concentrationFactor(plan.waterL, plan.evaporatedL);

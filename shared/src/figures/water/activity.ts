@@ -6,6 +6,11 @@ import { notNegative, within } from '../numeric/guard.js';
 const DAVIES_TO_MOL_PER_L = 0.5;
 /** Per ångström at 25 °C. */
 const SIZE_PER_ANGSTROM = 0.3281;
+const MOST_CHARGE = 4;
+
+function squared(charge: number): number {
+  return within(charge, 'A charge', -MOST_CHARGE, MOST_CHARGE) ** 2;
+}
 
 /**
  * Constant A of the activity formulas, base 10.
@@ -24,17 +29,18 @@ export function debyeHuckelA(tempC: number): number {
 /**
  * Activity coefficient of an ion by the Davies formula, solid below 0.1 mol/L; above 0.5 it is held.
  *
- * @param charge of the ion; 0 gives 1.
+ * @param charge of the ion, -4 to 4; 0 gives 1.
  * @param ionicStrength 0 or more, mol/L.
- * @param a constant A (debyeHuckelA).
- * @throws RangeError when the ionic strength is negative or not finite.
+ * @param a constant A (debyeHuckelA), 0 to 2.
+ * @throws RangeError outside these ranges.
  * @see C. W. Davies, Ion Association, 1962.
  * @example daviesActivity(1, 0.01, 0.511) // 0.90
  */
 export function daviesActivity(charge: number, ionicStrength: number, a: number): number {
   const strength = Math.min(notNegative(ionicStrength, 'An ionic strength', 'mol/L'), DAVIES_TO_MOL_PER_L);
   const root = Math.sqrt(strength);
-  return 10 ** (-a * charge ** 2 * (root / (1 + root) - 0.3 * strength));
+  const slope = within(a, 'A constant of activity', 0, 2);
+  return 10 ** (-slope * squared(charge) * (root / (1 + root) - 0.3 * strength));
 }
 
 /**
@@ -47,5 +53,5 @@ export function daviesActivity(charge: number, ionicStrength: number, a: number)
 export function extendedDebyeHuckelActivity(charge: number, ionicStrength: number, sizeAngstrom: number): number {
   const root = Math.sqrt(notNegative(ionicStrength, 'An ionic strength', 'mol/L'));
   const size = notNegative(sizeAngstrom, 'An ion size', 'Å');
-  return 10 ** ((-debyeHuckelA(25) * charge ** 2 * root) / (1 + SIZE_PER_ANGSTROM * size * root));
+  return 10 ** ((-debyeHuckelA(25) * squared(charge) * root) / (1 + SIZE_PER_ANGSTROM * size * root));
 }

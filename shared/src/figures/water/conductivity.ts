@@ -1,4 +1,4 @@
-import { ionMeqPerL, ions, type Ion, type IonsMgPerL } from './ions.js';
+import { checkedIons, ionMeqPerL, ions, type Ion, type IonsMgPerL } from './ions.js';
 import { ionicStrengthMolPerL } from './ionic-strength.js';
 
 /** Limiting equivalent conductivity at 25 °C, S cm²/eq (CRC Handbook, from memory). */
@@ -28,5 +28,6 @@ export function conductivityUsPerCm(water: IonsMgPerL): { limiting: number; esti
 
 /** Everything dissolved that is followed, mg/L. @throws RangeError when an ion is negative. */
 export function dissolvedIonsMgPerL(water: IonsMgPerL): number {
-  return ions.reduce((sum, ion) => sum + water[ion], 0);
+  const checked = checkedIons(water);
+  return ions.reduce((sum, ion) => sum + checked[ion], 0);
 }

@@ -90,6 +90,7 @@ describe('salts', () => {
       { salt: 'calciumCarbonate', leftG: expect.closeTo(0.487, 9) as number },
     ]);
     expect(undissolvedSalts(20, [{ salt: 'gypsum', massG: 2.4 }])).toEqual([]);
+    expect(undissolvedSalts(1, [{ salt: 'gypsum', massG: 3, assayPercent: 80 }])).toEqual([]);
   });
 
   it('refuses nothing to dissolve in, an empty jar, and an unknown salt', () => {

@@ -58,11 +58,15 @@ export interface SaltAddition {
   assayPercent?: number;
 }
 
+function pureG({ massG, assayPercent = 100 }: SaltAddition): number {
+  return (notNegative(massG, 'A mass of salt', 'g') * within(assayPercent, 'An assay', 1, 100, '%')) / 100;
+}
+
 /**
  * Ions of the water after the salts are dissolved in it, mg/L. Hydroxide is counted as the bicarbonate it turns into.
  *
  * @param volumeL above 0, L at 20 °C.
- * @param salts masses 0 g or more, assay above 0 to 100 %.
+ * @param salts masses 0 g or more, assay 1 to 100 %.
  * @param source the water before; pure water unless told.
  * @throws RangeError outside these ranges.
  * @see stoichiometry.
@@ -74,9 +78,9 @@ export function saltedWater(
 ): IonsMgPerL {
   const liters = positive(volumeL, 'A volume of water', 'L');
   const sum: Record<Ion, number> = { ...checkedIons(source) };
-  for (const { salt, massG, assayPercent = 100 } of salts) {
-    const gPerL =
-      (notNegative(massG, 'A mass of salt', 'g') * within(assayPercent, 'An assay', 1, 100, '%')) / 100 / liters;
+  for (const addition of salts) {
+    const { salt } = addition;
+    const gPerL = pureG(addition) / liters;
     for (const ion of ions) sum[ion] += gPerL * saltIonMgPerG(salt, ion);
     sum.hco3 += (gPerL * saltIonMgPerG(salt, 'oh') * ionMolarMass.hco3) / ionMolarMass.oh;
   }
@@ -88,14 +92,13 @@ export function saltedWater(
  * acid: put them in with it, or leave them.
  *
  * @param volumeL above 0, L.
- * @throws RangeError when a mass is negative or the volume not above 0.
+ * @throws RangeError when a mass is negative, an assay outside 1 to 100 %, or the volume not above 0.
  * @see solubilities at 25 °C, from memory.
  */
 export function undissolvedSalts(volumeL: number, salts: readonly SaltAddition[]): { salt: Salt; leftG: number }[] {
   const liters = positive(volumeL, 'A volume of water', 'L');
   const totals = new Map<Salt, number>();
-  for (const { salt, massG } of salts)
-    totals.set(salt, (totals.get(salt) ?? 0) + notNegative(massG, 'A mass of salt', 'g'));
+  for (const addition of salts) totals.set(addition.salt, (totals.get(addition.salt) ?? 0) + pureG(addition));
   return [...totals].flatMap(([salt, massG]) => {
     const leftG = massG - (kindOf(salt).dissolvesToGPerL ?? Infinity) * liters;
     return leftG > 0 ? [{ salt, leftG }] : [];
