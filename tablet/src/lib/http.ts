@@ -45,10 +45,10 @@ async function readProblem(response: Response): Promise<Problem> {
   return problem(isGone ? 'unavailable' : 'internal-error', `The hub answered with ${response.status} and no reason.`);
 }
 
-/** One request to the hub's API. Gives the JSON of the answer, `undefined` for 204. */
-export async function requestHub(path: string, request: HubRequest = {}, send: Fetch = fetch): Promise<unknown> {
+/** One request to the hub's API, as far as an answer that says yes. */
+async function askHub(path: string, request: HubRequest, accept: string, send: Fetch): Promise<Response> {
   const { method = 'GET', body, query, accessToken, signal } = request;
-  const headers = new Headers({ Accept: 'application/json, application/problem+json' });
+  const headers = new Headers({ Accept: `${accept}, application/problem+json` });
   if (accessToken) headers.set('Authorization', `Bearer ${accessToken}`);
   if (body !== undefined) headers.set('Content-Type', 'application/json');
   let response: Response;
@@ -65,10 +65,54 @@ export async function requestHub(path: string, request: HubRequest = {}, send: F
     throw new HubUnreachableError(error);
   }
   if (!response.ok) throw new HubProblemError(await readProblem(response));
+  return response;
+}
+
+/** Gives the JSON of the answer, `undefined` for 204. */
+export async function requestHub(path: string, request: HubRequest = {}, send: Fetch = fetch): Promise<unknown> {
+  const response = await askHub(path, request, 'application/json', send);
   if (response.status === 204) return undefined;
   try {
     return await response.json();
   } catch (error) {
     throw new HubUnreachableError(error);
   }
+}
+
+/** Gives the body as it is: a picture, a file to keep. */
+export async function requestHubFile(path: string, request: HubRequest = {}): Promise<Blob> {
+  const response = await askHub(path, request, '*/*', fetch);
+  try {
+    return await response.blob();
+  } catch (error) {
+    throw new HubUnreachableError(error);
+  }
+}
+
+export interface Upload {
+  form: FormData;
+  accessToken: string | null;
+  /** From 0 to 1. */
+  onProgress?: ((ratio: number) => void) | undefined;
+  signal?: AbortSignal | undefined;
+}
+
+/** Sends a file. By XMLHttpRequest, since `fetch` does not tell how far it is. */
+export function uploadToHub(path: string, { form, accessToken, onProgress, signal }: Upload): Promise<unknown> {
+  return new Promise((resolve, reject) => {
+    const request = new XMLHttpRequest();
+    request.open('POST', urlOf(path, undefined));
+    request.setRequestHeader('Accept', 'application/json, application/problem+json');
+    if (accessToken) request.setRequestHeader('Authorization', `Bearer ${accessToken}`);
+    request.upload.onprogress = ({ loaded, total }) => onProgress?.(total > 0 ? loaded / total : 0);
+    request.onerror = () => reject(new HubUnreachableError('The connection was cut.'));
+    request.onabort = () => reject(new DOMException('Stopped.', 'AbortError'));
+    request.onload = () => {
+      const answer = new Response(request.responseText, { status: request.status });
+      if (answer.ok) answer.json().then(resolve, (error: unknown) => reject(new HubUnreachableError(error)));
+      else void readProblem(answer).then((told) => reject(new HubProblemError(told)));
+    };
+    signal?.addEventListener('abort', () => request.abort());
+    request.send(form);
+  });
 }

@@ -1,8 +1,11 @@
 import { queryOptions } from '@tanstack/react-query';
 import {
+  batchPlanSchema,
   batchSchema,
   equipmentSchema,
   houseSchema,
+  ingredientSchema,
+  lotMoveSchema,
   memberSchema,
   probeSchema,
   recipeSchema,
@@ -13,7 +16,7 @@ import {
 } from '@steepfall/shared/contracts';
 import type { LogEntry } from '@steepfall/shared/runs';
 import { z } from 'zod';
-import { callHubFor } from './api-client.ts';
+import { callHubFor, fetchHubFile } from './api-client.ts';
 
 /** An event as the log shows it: the envelope is checked, the rest is the fold's business, so that newer types come through. */
 const storedEntrySchema = z.looseObject({
@@ -73,6 +76,41 @@ export function batchQuery(batchId: string) {
   return queryOptions({
     queryKey: ['batches', batchId],
     queryFn: ({ signal }) => callHubFor(batchSchema, `batches/${batchId}`, { signal }),
+  });
+}
+
+export function batchPlanQuery(batchId: string) {
+  return queryOptions({
+    queryKey: ['batches', batchId, 'plan'],
+    queryFn: ({ signal }) => callHubFor(batchPlanSchema, `batches/${batchId}/plan`, { signal }),
+  });
+}
+
+/** Everything on the shelf, each with its lots. */
+export const storesQuery = queryOptions({
+  queryKey: ['stores'],
+  queryFn: ({ signal }) => callHubFor(z.array(ingredientSchema), 'stores', { signal }),
+});
+
+export const removedStoresQuery = queryOptions({
+  queryKey: ['stores', 'removed'],
+  queryFn: ({ signal }) => callHubFor(z.array(ingredientSchema), 'stores', { signal, query: { removed: 'true' } }),
+});
+
+/** The ledger of a lot, newest first. */
+export function lotMovesQuery(lotId: string) {
+  return queryOptions({
+    queryKey: ['stores', 'lots', lotId, 'moves'],
+    queryFn: ({ signal }) => callHubFor(z.array(lotMoveSchema), `stores/lots/${lotId}/moves`, { signal }),
+  });
+}
+
+/** The photo of a label. A lot gets a new version with a new photo, so that the old one is not shown for it. */
+export function lotPhotoQuery({ id, version }: { id: string; version: number }) {
+  return queryOptions({
+    queryKey: ['label-photos', id, version],
+    queryFn: ({ signal }) => fetchHubFile(`stores/lots/${id}/photo`, { signal }),
+    staleTime: Infinity,
   });
 }
 

@@ -1,0 +1,62 @@
+import { useMutation, useQueryClient, type QueryClient } from '@tanstack/react-query';
+import { ingredientSchema, type Ingredient } from '@steepfall/shared/contracts';
+import type { FieldPath, FieldValues, UseFormSetError } from 'react-hook-form';
+import { callHub, callHubFor } from '#lib/api-client.ts';
+import { HubProblemError, type HubRequest } from '#lib/http.ts';
+import { storesQuery } from '#lib/hub-queries.ts';
+import type { ProblemType } from '@steepfall/shared/problems';
+import { offerUndo } from '#lib/undo.ts';
+import { fieldProblems } from '#lib/words.ts';
+
+/** What the hub answered is shown at once; the rest of the stores is asked for again. */
+export function noteIngredient(client: QueryClient, ingredient: Ingredient): void {
+  client.setQueryData(storesQuery.queryKey, (list) =>
+    list?.some(({ id }) => id === ingredient.id)
+      ? list.map((each) => (each.id === ingredient.id ? ingredient : each))
+      : list && [...list, ingredient],
+  );
+}
+
+/** An act on the stores that is answered with the ingredient as it is then. */
+export function useStoresAct<Input>(ask: (input: Input) => [path: string, request: Omit<HubRequest, 'accessToken'>]) {
+  const client = useQueryClient();
+  return useMutation({
+    mutationFn: (input: Input) => callHubFor(ingredientSchema, ...ask(input)),
+    onSuccess: (ingredient) => noteIngredient(client, ingredient),
+    onSettled: () => void client.invalidateQueries({ queryKey: storesQuery.queryKey }),
+  });
+}
+
+/** Takes an ingredient or a lot off the shelf, and offers it back. */
+export function useRemove(kind: 'ingredients' | 'lots') {
+  const client = useQueryClient();
+  const again = () => client.invalidateQueries({ queryKey: storesQuery.queryKey });
+  return useMutation({
+    mutationFn: ({ id }: { id: string; words: string }) => callHub(`stores/${kind}/${id}`, { method: 'DELETE' }),
+    onSuccess: (_, { id, words }) => {
+      offerUndo(words, async () => {
+        await callHub(`stores/${kind}/${id}/restore`, { method: 'POST' });
+        await again();
+      });
+    },
+    onSettled: () => void again(),
+  });
+}
+
+export function isProblem(error: unknown, type: ProblemType): boolean {
+  return error instanceof HubProblemError && error.type === type;
+}
+
+/** Puts what the hub says of single fields at these fields. @returns what is left to be said of the whole. */
+export function spreadProblems<Values extends FieldValues>(
+  error: Error,
+  setError: UseFormSetError<Values>,
+  fieldOf: (field: string) => FieldPath<Values> = (field) => field as FieldPath<Values>,
+): void {
+  for (const { field, detail } of fieldProblems(error)) setError(fieldOf(field), { message: detail });
+}
+
+/** What no field says. */
+export function restOf(error: Error | null): Error | null {
+  return error && fieldProblems(error).length > 0 ? null : error;
+}
