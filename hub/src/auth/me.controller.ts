@@ -1,6 +1,7 @@
-import { Controller, Get } from '@nestjs/common';
+import { Body, Controller, Get, Patch } from '@nestjs/common';
 import { ApiBearerAuth, ApiTags } from '@nestjs/swagger';
-import { houseSchema, memberSchema, type House, type Member } from '@steepfall/shared/contracts';
+import { houseSchema, memberSchema, unitPreferencesSchema, type House, type Member } from '@steepfall/shared/contracts';
+import type { UnitPreferences } from '@steepfall/shared/units';
 import { z } from 'zod';
 import { SignedIn } from '../common/access/access.decorators.js';
 import { Actor } from '../common/access/actor.js';
@@ -28,5 +29,15 @@ export class MeController {
       this.houses.get(actor.houseId),
     ]);
     return { member: presentMember(member), house: presentHouse(house) };
+  }
+
+  @Patch('units')
+  @SignedIn()
+  @Answers(memberSchema)
+  async setUnits(
+    @Actor() actor: Actor,
+    @Body({ schema: unitPreferencesSchema }) body: UnitPreferences,
+  ): Promise<Member> {
+    return presentMember(await this.members.setUnits(actor, body));
   }
 }

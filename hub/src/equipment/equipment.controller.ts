@@ -51,4 +51,11 @@ export class EquipmentController {
   remove(@Actor() actor: Actor, @Param('id', { schema: idSchema }) id: string): Promise<void> {
     return this.equipment.remove(actor, id);
   }
+
+  @Post(':id/restore')
+  @Requires('equipment:manage')
+  @Answers(equipmentSchema)
+  restore(@Actor() actor: Actor, @Param('id', { schema: idSchema }) id: string): Promise<Equipment> {
+    return this.equipment.restore(actor, id);
+  }
 }

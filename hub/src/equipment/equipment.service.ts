@@ -80,6 +80,18 @@ export class EquipmentService {
     });
   }
 
+  /** Brings back what was removed; what is there already stays as it is. */
+  async restore(actor: Actor, id: string): Promise<EquipmentAnswer> {
+    return inTransaction(this.sequelize, async (transaction) => {
+      const row = await this.rows(actor.houseId).get(id, 'equipment', { transaction, lock: transaction.LOCK.UPDATE });
+      if (row.removedAtMs !== null) {
+        await row.update({ removedAtMs: null }, { transaction });
+        await this.audit.record({ ...subjectOf(actor, id), action: 'equipment.restored' }, transaction);
+      }
+      return presentEquipment(row);
+    });
+  }
+
   private rows(houseId: string) {
     return inHouse(this.equipment, houseId);
   }

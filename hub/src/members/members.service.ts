@@ -2,7 +2,7 @@ import { Injectable } from '@nestjs/common';
 import { InjectConnection, InjectModel } from '@nestjs/sequelize';
 import type { CreateMember, Member, Role, UpdateMember } from '@steepfall/shared/contracts';
 import { ProblemError } from '@steepfall/shared/problems';
-import { metricPreferences } from '@steepfall/shared/units';
+import { metricPreferences, type UnitPreferences } from '@steepfall/shared/units';
 import { Sequelize } from 'sequelize-typescript';
 import { AuditService } from '../audit/audit.service.js';
 import type { Actor } from '../common/access/actor.js';
@@ -120,6 +120,12 @@ export class MembersService {
       await this.record(actor, 'member.changed', memberId, changes, transaction);
     });
     return this.get(actor.houseId, memberId);
+  }
+
+  /** What one person reads and types: their own affair, so nobody else's right and nothing for the audit log. */
+  async setUnits({ houseId, memberId }: Actor, units: UnitPreferences): Promise<LoadedMembership> {
+    await inHouse(this.memberships, houseId).update({ id: memberId }, { units });
+    return this.get(houseId, memberId);
   }
 
   private record(

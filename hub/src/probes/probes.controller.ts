@@ -1,12 +1,14 @@
-import { Body, Controller, Delete, Get, Param, Post } from '@nestjs/common';
+import { Body, Controller, Delete, Get, Param, Patch, Post } from '@nestjs/common';
 import { ApiBearerAuth, ApiTags } from '@nestjs/swagger';
 import {
   createProbeSchema,
   probeSchema,
   probeWithTokenSchema,
+  updateProbeSchema,
   type CreateProbe,
   type Probe,
   type ProbeWithToken,
+  type UpdateProbe,
 } from '@steepfall/shared/contracts';
 import { Requires } from '../common/access/access.decorators.js';
 import { Actor } from '../common/access/actor.js';
@@ -32,6 +34,17 @@ export class ProbesController {
   @Answers(probeWithTokenSchema, { status: 201 })
   create(@Actor() actor: Actor, @Body({ schema: createProbeSchema }) body: CreateProbe): Promise<ProbeWithToken> {
     return this.probes.create(actor, body);
+  }
+
+  @Patch(':id')
+  @Requires('probes:manage')
+  @Answers(probeSchema)
+  update(
+    @Actor() actor: Actor,
+    @Param('id', { schema: idSchema }) id: string,
+    @Body({ schema: updateProbeSchema }) body: UpdateProbe,
+  ): Promise<Probe> {
+    return this.probes.update(actor, id, body);
   }
 
   @Post(':id/token')

@@ -1,9 +1,18 @@
-import { Injectable } from '@nestjs/common';
+import { isDeepStrictEqual } from 'node:util';
+import { Injectable, type OnApplicationBootstrap } from '@nestjs/common';
 import { InjectConnection, InjectModel } from '@nestjs/sequelize';
-import type { CreateProbe, Probe as ProbeAnswer, ProbeWithToken } from '@steepfall/shared/contracts';
+import type {
+  CreateProbe,
+  Probe as ProbeAnswer,
+  ProbeCalibration,
+  ProbeWithToken,
+  UpdateProbe,
+} from '@steepfall/shared/contracts';
+import type { ProbeCorrection } from '@steepfall/shared/figures';
 import { ProblemError } from '@steepfall/shared/problems';
+import { calibrationOf, calibrationRefusalWords } from '@steepfall/shared/readings';
 import { Subject, type Observable } from 'rxjs';
-import { QueryTypes, type Transaction } from 'sequelize';
+import { Op, QueryTypes, type Transaction } from 'sequelize';
 import { Sequelize } from 'sequelize-typescript';
 import { AuditService } from '../audit/audit.service.js';
 import type { Actor, DeviceActor } from '../common/access/actor.js';
@@ -26,7 +35,9 @@ export interface ProbeFacts {
 }
 
 @Injectable()
-export class ProbesService extends DeviceAuthenticator {
+export class ProbesService extends DeviceAuthenticator implements OnApplicationBootstrap {
+  /** Of the probes that were calibrated, by id: each reading asks, and must not wait for the database. */
+  private readonly corrections = new Map<string, ProbeCorrection>();
   private readonly endings = new Subject<string>();
   /** Ids of probes whose token no longer holds: sockets that came in with it must be cut. */
   readonly tokenEnded$: Observable<string> = this.endings.asObservable();
@@ -38,6 +49,14 @@ export class ProbesService extends DeviceAuthenticator {
     private readonly clock: Clock,
   ) {
     super();
+  }
+
+  async onApplicationBootstrap(): Promise<void> {
+    const rows = await acrossHouses(this.probes).findAll({
+      where: { calibratedAtMs: { [Op.not]: null } },
+      attributes: ['id', 'calibration'],
+    });
+    for (const { id, calibration } of rows) this.noteCorrection(id, calibration);
   }
 
   /** The probes that somebody owns; each rehearsal brings a simulated one of its own, and those are nobody's to manage. */
@@ -63,6 +82,31 @@ export class ProbesService extends DeviceAuthenticator {
       return created;
     });
     return { probe: presentProbe(row, null), deviceToken };
+  }
+
+  /** What is known of a probe. A new calibration counts for the readings that come from now on; those before stay as they were kept. */
+  async update(actor: Actor, id: string, { version, ...values }: UpdateProbe): Promise<ProbeAnswer> {
+    refuseBadPair(values.calibration);
+    const row = await inTransaction(this.sequelize, async (transaction) => {
+      const probe = await this.getOwned(actor.houseId, id, transaction);
+      if (probe.version !== version) throw new ProblemError('changed-meanwhile', 'Load it again, then change it.');
+      const isCalibratedAnew = !isDeepStrictEqual(probe.calibration, values.calibration);
+      const calibratedAtMs = values.calibration === null ? null : this.clock.nowMs();
+      await probe.update(
+        { ...values, ...(isCalibratedAnew ? { calibratedAtMs } : {}), version: version + 1 },
+        { transaction },
+      );
+      await this.record(actor, 'probe.changed', id, transaction, values);
+      return probe;
+    });
+    this.noteCorrection(id, row.calibration);
+    const lastReadings = await this.lastReadings([id]);
+    return presentProbe(row, lastReadings.get(id) ?? null);
+  }
+
+  /** What the readings of this probe are corrected by; `null`: they are believed as they are. */
+  correctionOf(id: string): ProbeCorrection | null {
+    return this.corrections.get(id) ?? null;
   }
 
   /** A new token for a probe, also for one that was shut out; the old token is worth nothing from now on. */
@@ -111,9 +155,15 @@ export class ProbesService extends DeviceAuthenticator {
     );
   }
 
+  private noteCorrection(id: string, calibration: ProbeCalibration | null): void {
+    const verdict = calibration && calibrationOf(calibration);
+    if (verdict?.kind === 'accepted') this.corrections.set(id, verdict.correction);
+    else this.corrections.delete(id);
+  }
+
   private async getOwned(houseId: string, id: string, transaction: Transaction): Promise<Probe> {
     const probe = await inHouse(this.probes, houseId).get(id, 'probe', { transaction, lock: transaction.LOCK.UPDATE });
-    if (probe.isSimulated) throw new ProblemError('not-found', 'A simulated probe has no token.');
+    if (probe.isSimulated) throw new ProblemError('not-found', 'A simulated probe is nobody’s to change.');
     return probe;
   }
 
@@ -135,6 +185,14 @@ export class ProbesService extends DeviceAuthenticator {
   ): Promise<void> {
     return this.audit.record({ houseId, memberId, action, subject, facts }, transaction);
   }
+}
+
+function refuseBadPair(calibration: ProbeCalibration | null): void {
+  const verdict = calibration && calibrationOf(calibration);
+  if (verdict?.kind !== 'refused') return;
+  throw new ProblemError('not-valid', 'The probe was not calibrated.', {
+    errors: [{ pointer: `/calibration/${verdict.at}/shownC`, detail: calibrationRefusalWords[verdict.reason] }],
+  });
 }
 
 function presentProbe(row: Probe, lastReadingAtMs: number | null): ProbeAnswer {

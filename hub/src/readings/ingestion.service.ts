@@ -4,8 +4,10 @@ import type { Reading } from '@steepfall/shared/readings';
 import { runTimeAt, wallClock, type RunClock } from '@steepfall/shared/timers';
 import { Subject, type Observable } from 'rxjs';
 import { Clock } from '../common/clock.js';
+import { ProbesService } from '../probes/probes.service.js';
 import { RunLogService } from '../runs/run-log.service.js';
 import type { RunLog } from '../runs/run-log.js';
+import { corrected, type CorrectedReading } from './corrected.js';
 import { judgeReadings } from './judge-readings.js';
 import { ReadingBuffer } from './reading-buffer.js';
 import { ReadingsStore } from './readings.store.js';
@@ -24,12 +26,15 @@ export interface AcceptedReadings {
 @Injectable()
 export class IngestionService implements BeforeApplicationShutdown {
   private readonly buffer: ReadingBuffer;
+  /** What each calibrated probe showed last. */
+  private readonly lastShownC = new Map<string, number>();
   private readonly accepts = new Subject<AcceptedReadings>();
   /** Readings of open runs as they are accepted, before they are on disk: for eyes and for alerts, not for records. */
   readonly accepted$: Observable<AcceptedReadings> = this.accepts.asObservable();
 
   constructor(
     store: ReadingsStore,
+    private readonly probes: ProbesService,
     private readonly logs: RunLogService,
     private readonly clock: Clock,
   ) {
@@ -47,10 +52,19 @@ export class IngestionService implements BeforeApplicationShutdown {
     const acceptedMs = this.clock.nowMs();
     const nowMs = log ? runTimeAt(log.clock, acceptedMs) : acceptedMs;
     const { accepted, refused } = judgeReadings(readings, nowMs);
-    if (log && accepted.length > 0) this.accepts.next({ log, readings: inTimeOrder(accepted), nowMs, acceptedMs });
+    const rows = this.correct(probeId, accepted);
+    if (log && rows.length > 0) this.accepts.next({ log, readings: inTimeOrder(rows), nowMs, acceptedMs });
     const keptUnder = log?.facts.probeId ?? probeId;
-    const counts = await this.buffer.add(accepted.map(({ atMs, tempC }) => ({ probeId: keptUnder, atMs, tempC })));
+    const counts = await this.buffer.add(rows.map((row) => ({ probeId: keptUnder, ...row })));
     return { ...counts, refused };
+  }
+
+  /** By the calibration of the probe that sent them, whichever run they are kept under. */
+  private correct(probeId: string, readings: readonly Reading[]): CorrectedReading[] {
+    const rows = corrected(readings, this.probes.correctionOf(probeId), this.lastShownC.get(probeId) ?? null);
+    const last = rows.findLast(({ rawC }) => rawC !== null);
+    if (last?.rawC != null) this.lastShownC.set(probeId, last.rawC);
+    return rows;
   }
 
   /** The clock that the readings of this probe are stamped with: that of its run, or wall time. */
@@ -65,5 +79,5 @@ export class IngestionService implements BeforeApplicationShutdown {
 }
 
 function inTimeOrder(readings: readonly Reading[]): Reading[] {
-  return [...readings].sort((a, b) => a.atMs - b.atMs);
+  return readings.map(({ atMs, tempC }) => ({ atMs, tempC })).sort((a, b) => a.atMs - b.atMs);
 }

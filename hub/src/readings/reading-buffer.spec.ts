@@ -2,7 +2,7 @@ import { describe, expect, it, vi } from 'vitest';
 import { ReadingBuffer, type ReadingRow } from './reading-buffer.js';
 
 const rows = (probeId: string, ...times: number[]): ReadingRow[] =>
-  times.map((atMs) => ({ probeId, atMs, tempC: atMs / 10 }));
+  times.map((atMs) => ({ probeId, atMs, tempC: atMs / 10, rawC: null }));
 
 /** A table in memory, and what was asked of it. */
 function table() {

@@ -1,7 +1,7 @@
 import { ProblemError } from '@steepfall/shared/problems';
-import type { Reading } from '@steepfall/shared/readings';
+import type { CorrectedReading } from './corrected.js';
 
-export interface ReadingRow extends Reading {
+export interface ReadingRow extends CorrectedReading {
   probeId: string;
 }
 

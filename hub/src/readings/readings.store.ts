@@ -65,6 +65,16 @@ export class ReadingsStore {
     return readings;
   }
 
+  /** The newest of a probe since then, oldest first: as kept, and as the probe showed them. */
+  async newest(probeId: string, fromMs: number, limit: number): Promise<(Reading & { shownC: number | null })[]> {
+    const rows = await this.sequelize.query<Reading & { shownC: number | null }>(
+      `SELECT at_ms AS atMs, temp_c AS tempC, COALESCE(raw_c, temp_c) AS shownC FROM readings
+       WHERE probe_id = ? AND at_ms >= ? ORDER BY at_ms DESC LIMIT ?`,
+      { type: QueryTypes.SELECT, replacements: [probeId, fromMs, limit] },
+    );
+    return rows.reverse();
+  }
+
   /** The range with no more points than are of use: the lowest and the highest of every bucket of time, so that no spike is lost. */
   async thinned(
     range: ReadingRange,
@@ -83,10 +93,10 @@ export class ReadingsStore {
     receivedAtMs: number,
     transaction: Transaction,
   ): Promise<number | undefined> {
-    const values = rows.map(({ probeId, atMs, tempC }) => [probeId, atMs, tempC, receivedAtMs]);
+    const values = rows.map(({ probeId, atMs, tempC, rawC }) => [probeId, atMs, tempC, rawC, receivedAtMs]);
     // Not INSERT IGNORE, which would also swallow what does not fit; assigning the key to itself changes nothing.
     const [, newCount] = await this.sequelize.query(
-      `INSERT INTO readings (probe_id, at_ms, temp_c, received_at_ms) VALUES :values
+      `INSERT INTO readings (probe_id, at_ms, temp_c, raw_c, received_at_ms) VALUES :values
        ON DUPLICATE KEY UPDATE probe_id = readings.probe_id`,
       { type: QueryTypes.INSERT, replacements: { values }, transaction },
     );
