@@ -36,7 +36,7 @@ export interface NewMove {
 export const inMilligrams = (massG: number): number => Math.round(massG * 1000) / 1000;
 export const gramsInWords = (massG: number): string => `${inMilligrams(massG)} g`;
 
-const EMPTY: Balance = { stockG: 0, reservedG: 0 };
+export const EMPTY: Balance = { stockG: 0, reservedG: 0 };
 
 /** The ledger of the lots, and what of it is set aside. Sums are made by the database. */
 @Injectable()

@@ -1,15 +1,21 @@
 import { Module } from '@nestjs/common';
 import { SequelizeModule } from '@nestjs/sequelize';
+import { AuditModule } from '../audit/audit.module.js';
+import { MembersModule } from '../members/members.module.js';
+import { LedgerService } from './ledger.service.js';
 import { Ingredient } from './models/ingredient.model.js';
 import { LotMove } from './models/lot-move.model.js';
 import { LotReservation } from './models/lot-reservation.model.js';
 import { Lot } from './models/lot.model.js';
+import { ShelfService } from './shelf.service.js';
 import { StockBook } from './stock-book.service.js';
+import { StoresController } from './stores.controller.js';
 import { StoresService } from './stores.service.js';
 
 @Module({
-  imports: [SequelizeModule.forFeature([Ingredient, Lot, LotMove, LotReservation])],
-  providers: [StoresService, StockBook],
+  imports: [SequelizeModule.forFeature([Ingredient, Lot, LotMove, LotReservation]), AuditModule, MembersModule],
+  controllers: [StoresController],
+  providers: [StoresService, StockBook, ShelfService, LedgerService],
   exports: [StoresService],
 })
 export class StoresModule {}
