@@ -1,11 +1,22 @@
-import { Body, Controller, Get, Param, Post } from '@nestjs/common';
+import { Body, Controller, Delete, Get, Param, Patch, Post, Query } from '@nestjs/common';
 import { ApiBearerAuth, ApiTags } from '@nestjs/swagger';
-import { batchSchema, createBatchSchema, type Batch, type CreateBatch } from '@steepfall/shared/contracts';
+import {
+  batchPlanSchema,
+  batchSchema,
+  createBatchSchema,
+  updateBatchSheetSchema,
+  type Batch,
+  type BatchPlan,
+  type UpdateBatchSheet,
+} from '@steepfall/shared/contracts';
+import { z } from 'zod';
 import { Requires } from '../common/access/access.decorators.js';
 import { Actor } from '../common/access/actor.js';
-import { Answers, AnswersList } from '../common/http/answers.decorator.js';
+import { Answers, AnswersList, AnswersNothing } from '../common/http/answers.decorator.js';
 import { idSchema } from '../common/http/id-param.js';
-import { BatchesService } from './batches.service.js';
+import { BatchesService, type BatchValues } from './batches.service.js';
+
+const listQuerySchema = z.strictObject({ cancelled: z.stringbool().default(false) });
 
 @ApiTags('batches')
 @ApiBearerAuth()
@@ -16,14 +27,17 @@ export class BatchesController {
   @Get()
   @Requires('batches:read')
   @AnswersList(batchSchema)
-  list(@Actor() actor: Actor): Promise<Batch[]> {
-    return this.batches.list(actor.houseId);
+  list(
+    @Actor() actor: Actor,
+    @Query({ schema: listQuerySchema }) query: z.infer<typeof listQuerySchema>,
+  ): Promise<Batch[]> {
+    return this.batches.list(actor.houseId, query);
   }
 
   @Post()
   @Requires('batches:manage')
   @Answers(batchSchema, { status: 201 })
-  create(@Actor() actor: Actor, @Body({ schema: createBatchSchema }) body: CreateBatch): Promise<Batch> {
+  create(@Actor() actor: Actor, @Body({ schema: createBatchSchema }) body: BatchValues): Promise<Batch> {
     return this.batches.create(actor, body);
   }
 
@@ -32,5 +46,37 @@ export class BatchesController {
   @Answers(batchSchema)
   get(@Actor() actor: Actor, @Param('id', { schema: idSchema }) id: string): Promise<Batch> {
     return this.batches.get(actor.houseId, id);
+  }
+
+  @Get(':id/plan')
+  @Requires('batches:read')
+  @Answers(batchPlanSchema)
+  plan(@Actor() actor: Actor, @Param('id', { schema: idSchema }) id: string): Promise<BatchPlan> {
+    return this.batches.plan(actor.houseId, id);
+  }
+
+  @Patch(':id/sheet')
+  @Requires('batches:manage')
+  @Answers(batchPlanSchema)
+  updateSheet(
+    @Actor() actor: Actor,
+    @Param('id', { schema: idSchema }) id: string,
+    @Body({ schema: updateBatchSheetSchema }) body: UpdateBatchSheet,
+  ): Promise<BatchPlan> {
+    return this.batches.updateSheet(actor, id, body);
+  }
+
+  @Delete(':id')
+  @Requires('batches:manage')
+  @AnswersNothing()
+  cancel(@Actor() actor: Actor, @Param('id', { schema: idSchema }) id: string): Promise<void> {
+    return this.batches.cancel(actor, id);
+  }
+
+  @Post(':id/restore')
+  @Requires('batches:manage')
+  @Answers(batchSchema)
+  restore(@Actor() actor: Actor, @Param('id', { schema: idSchema }) id: string): Promise<Batch> {
+    return this.batches.restore(actor, id);
   }
 }

@@ -6,6 +6,7 @@ import { HousesModule } from '../houses/houses.module.js';
 import { ProbesModule } from '../probes/probes.module.js';
 import { RecipesModule } from '../recipes/recipes.module.js';
 import { RunSummariesModule } from '../runs/run-summaries.module.js';
+import { StoresModule } from '../stores/stores.module.js';
 import { BatchesController } from './batches.controller.js';
 import { BatchesService } from './batches.service.js';
 import { Batch } from './models/batch.model.js';
@@ -18,6 +19,7 @@ import { Batch } from './models/batch.model.js';
     EquipmentModule,
     ProbesModule,
     RunSummariesModule,
+    StoresModule,
     AuditModule,
   ],
   controllers: [BatchesController],

@@ -1,9 +1,18 @@
 import { Injectable } from '@nestjs/common';
 import { InjectConnection, InjectModel } from '@nestjs/sequelize';
-import type { Batch as BatchAnswer, CreateBatch, Equipment, RunSummary } from '@steepfall/shared/contracts';
+import type {
+  Batch as BatchAnswer,
+  BatchPlan,
+  createBatchSchema,
+  Equipment,
+  RunSummary,
+  UpdateBatchSheet,
+} from '@steepfall/shared/contracts';
 import { ProblemError } from '@steepfall/shared/problems';
-import type { Transaction } from 'sequelize';
+import { checkSheet, type RunSheet } from '@steepfall/shared/sheets';
+import { Op, type Transaction } from 'sequelize';
 import { Sequelize } from 'sequelize-typescript';
+import type { z } from 'zod';
 import { AuditService } from '../audit/audit.service.js';
 import type { Actor } from '../common/access/actor.js';
 import { Clock } from '../common/clock.js';
@@ -15,14 +24,19 @@ import { HousesService } from '../houses/houses.service.js';
 import { ProbesService } from '../probes/probes.service.js';
 import { RecipesService, type NamedRevision } from '../recipes/recipes.service.js';
 import { RunSummariesService } from '../runs/run-summaries.service.js';
+import { StoresService } from '../stores/stores.service.js';
 import { formatBatchNumber } from './batch-number.js';
 import { Batch } from './models/batch.model.js';
+import { weighOutOf } from './weigh-out.js';
 
 type Kettle = Extract<Equipment, { kind: 'kettle' }>;
 type Chiller = Extract<Equipment, { kind: 'chiller' }>;
 type Keg = Extract<Equipment, { kind: 'keg' }>;
 
-/** Everything a run of this batch starts from. */
+/** What a batch is planned with, as it comes out of its schema. */
+export type BatchValues = z.output<typeof createBatchSchema>;
+
+/** Everything a run of this batch starts from; its sheet comes when the run is written. */
 export interface BatchForRun {
   id: string;
   batchNumber: string;
@@ -44,14 +58,15 @@ export class BatchesService {
     private readonly equipment: EquipmentService,
     private readonly probes: ProbesService,
     private readonly runSummaries: RunSummariesService,
+    private readonly stores: StoresService,
     private readonly audit: AuditService,
     private readonly clock: Clock,
   ) {}
 
   /** The newest day first, and on one day the highest number. */
-  async list(houseId: string): Promise<BatchAnswer[]> {
+  async list(houseId: string, { cancelled }: { cancelled: boolean }): Promise<BatchAnswer[]> {
     const rows = await inHouse(this.batches, houseId).findAll(
-      {},
+      { cancelledAtMs: cancelled ? { [Op.ne]: null } : null },
       {
         order: [
           ['plannedOn', 'DESC'],
@@ -69,9 +84,15 @@ export class BatchesService {
     return answer as BatchAnswer;
   }
 
-  async create(actor: Actor, values: CreateBatch): Promise<BatchAnswer> {
+  /** Plans a batch of a revision, also of a recipe that was put away: putting away only hides. What is set aside comes with it or not at all. */
+  async create(actor: Actor, { reserve, mayGoBelowZero, ...values }: BatchValues): Promise<BatchAnswer> {
     const { houseId, memberId } = actor;
-    const revision = await this.checkParts(houseId, values);
+    const [revision, { altitudeM }] = await Promise.all([
+      this.checkParts(houseId, { ...values, reserve }),
+      this.houses.get(houseId),
+    ]);
+    // Asked here, so that a plan that makes no sheet is told today and not on the day.
+    this.recipes.sheetOf(revision, altitudeM);
     const row = await inTransaction(this.sequelize, async (transaction) => {
       // Two people planning at once get two numbers: the second waits here for the first.
       await this.houses.lock(houseId, transaction);
@@ -90,10 +111,8 @@ export class BatchesService {
         },
         { transaction },
       );
-      await this.audit.record(
-        { houseId, memberId, action: 'batch.planned', subject: batch.id, facts: values },
-        transaction,
-      );
+      await this.stores.reserve(houseId, batch.id, reserve, { mayGoBelowZero }, transaction);
+      await this.record(actor, 'batch.planned', batch.id, { ...values, reserve, mayGoBelowZero }, transaction);
       return batch;
     });
     return this.get(houseId, row.id);
@@ -120,9 +139,101 @@ export class BatchesService {
     };
   }
 
+  /**
+   * In the transaction that writes the run: gives the sheet as it stands at this instant, and turns what was set aside of the stores into
+   * use. Whoever changes or cancels the batch waits until the run is there, and is refused then.
+   */
+  async takeForRun(actor: Actor, batch: BatchForRun, transaction: Transaction): Promise<RunSheet> {
+    const { row, run } = await this.lock(actor.houseId, batch.id, transaction);
+    if (row.cancelledAtMs !== null)
+      throw new ProblemError('batch-not-planned', 'It was cancelled. Bring it back, then start its run.');
+    if (run && run.outcome !== 'abandoned')
+      throw new ProblemError('batch-already-running', 'Open the run that is there.');
+    const sheet = row.sheet ?? this.recipes.sheetOf(batch.revision, batch.altitudeM);
+    // From here on its plan shows what was brewed by, wherever the house moves to.
+    await row.update({ sheet }, { transaction });
+    await this.stores.useReserved(actor, batch, transaction);
+    return sheet;
+  }
+
+  /** What it is brewed by and what is weighed for it: before the start as planned, afterwards as it was. */
+  async plan(houseId: string, id: string): Promise<BatchPlan> {
+    const row = await inHouse(this.batches, houseId).get(id, 'batch');
+    const [revision, { altitudeM }, lots] = await Promise.all([
+      this.recipes.getRevision(houseId, row.revisionId),
+      this.houses.get(houseId),
+      this.stores.linesOf(houseId, id),
+    ]);
+    return {
+      batchId: id,
+      sheet: row.sheet ?? this.recipes.sheetOf(revision, altitudeM),
+      sheetVersion: row.sheetVersion,
+      weighOut: weighOutOf(revision.document, lots),
+    };
+  }
+
+  /** A sheet of its own, in place of the one that follows from the revision. */
+  async updateSheet(actor: Actor, id: string, { sheet, sheetVersion }: UpdateBatchSheet): Promise<BatchPlan> {
+    await inTransaction(this.sequelize, async (transaction) => {
+      const row = await this.lockPlanned(actor.houseId, id, transaction);
+      if (row.sheetVersion !== sheetVersion)
+        throw new ProblemError('changed-meanwhile', 'Somebody else changed this sheet. Load it again, then change it.');
+      refuseBrokenSheet(sheet, row.volumeL);
+      await row.update({ sheet, sheetVersion: sheetVersion + 1 }, { transaction });
+      await this.record(actor, 'batch.sheet-changed', id, { sheetVersion: sheetVersion + 1 }, transaction);
+    });
+    return this.plan(actor.houseId, id);
+  }
+
+  /** Calls a planned batch off. It keeps its number, and gives back what it had set aside. */
+  async cancel(actor: Actor, id: string): Promise<void> {
+    await inTransaction(this.sequelize, async (transaction) => {
+      const row = await this.lockPlanned(actor.houseId, id, transaction);
+      await row.update({ cancelledAtMs: this.clock.nowMs() }, { transaction });
+      await this.stores.release(actor.houseId, id, transaction);
+      await this.record(actor, 'batch.cancelled', id, {}, transaction);
+    });
+  }
+
+  /** Brings a cancelled batch back, with what of its lots is still there. One that was not cancelled stays as it is. */
+  async restore(actor: Actor, id: string): Promise<BatchAnswer> {
+    await inTransaction(this.sequelize, async (transaction) => {
+      const { row } = await this.lock(actor.houseId, id, transaction);
+      if (row.cancelledAtMs === null) return;
+      await row.update({ cancelledAtMs: null }, { transaction });
+      await this.stores.reserveAgain(actor.houseId, id, transaction);
+      await this.record(actor, 'batch.restored', id, {}, transaction);
+    });
+    return this.get(actor.houseId, id);
+  }
+
+  /** The batch with its run, held until the transaction ends. */
+  private async lock(houseId: string, id: string, transaction: Transaction) {
+    const row = await inHouse(this.batches, houseId).get(id, 'batch', { transaction, lock: transaction.LOCK.UPDATE });
+    const run = (await this.runSummaries.ofBatches(houseId, [id], transaction)).get(id) ?? null;
+    return { row, run };
+  }
+
+  private async lockPlanned(houseId: string, id: string, transaction: Transaction): Promise<Batch> {
+    const { row, run } = await this.lock(houseId, id, transaction);
+    const status = statusOf(row, run);
+    if (status !== 'planned') throw new ProblemError('batch-not-planned', notPlanned[status]);
+    return row;
+  }
+
+  private record(
+    { houseId, memberId }: Actor,
+    action: string,
+    subject: string,
+    facts: Record<string, unknown>,
+    transaction: Transaction,
+  ): Promise<void> {
+    return this.audit.record({ houseId, memberId, action, subject, facts }, transaction);
+  }
+
   /** Looks at every id before anything is refused, so that all that is wrong is said at once. */
-  private async checkParts(houseId: string, values: CreateBatch): Promise<NamedRevision> {
-    const { revisionId, kettleId, chillerId, kegId, probeId } = values;
+  private async checkParts(houseId: string, values: Omit<BatchValues, 'mayGoBelowZero'>): Promise<NamedRevision> {
+    const { revisionId, kettleId, chillerId, kegId, probeId, reserve } = values;
     const [revision, equipment, probe] = await Promise.all([
       this.recipes.findRevision(houseId, revisionId),
       this.equipment.findMany(houseId, [kettleId, kegId, ...(chillerId === null ? [] : [chillerId])]),
@@ -140,6 +251,10 @@ export class BatchesService {
     if (!isUsable(kegId, 'keg')) miss('/kegId', 'There is no such keg.');
     if (probeId !== null && (!probe || probe.isSimulated || probe.revokedAtMs !== null))
       miss('/probeId', 'There is no such probe.');
+    const additions = new Set(revision?.document.additions.map(({ id }) => id));
+    for (const [index, { additionId }] of reserve.entries())
+      if (revision && !additions.has(additionId))
+        miss(`/reserve/${index}/additionId`, 'The recipe has no such addition.');
     if (!revision || errors.length > 0)
       throw new ProblemError('not-valid', 'The batch names something that is not there.', { errors });
     return revision;
@@ -163,6 +278,23 @@ export class BatchesService {
     ]);
     return rows.map((row) => presentBatch(row, revisions.get(row.revisionId), runs.get(row.id) ?? null));
   }
+}
+
+const notPlanned = {
+  running: 'Its run has begun. What has to change now is changed on the run sheet.',
+  finished: 'Its run is finished. Plan another batch of this recipe.',
+  abandoned: 'Its run was given up. Start it again as it is, or plan another batch of this recipe.',
+  cancelled: 'It was cancelled. Bring it back first.',
+} as const satisfies Record<Exclude<BatchAnswer['status'], 'planned'>, string>;
+
+function refuseBrokenSheet(sheet: RunSheet, volumeL: number): void {
+  const errors = checkSheet(sheet).map(({ stepId, detail }) => ({
+    pointer: `/sheet/steps/${sheet.steps.findIndex(({ id }) => id === stepId)}`,
+    detail,
+  }));
+  if (sheet.volumeL !== volumeL)
+    errors.push({ pointer: '/sheet/volumeL', detail: `The batch was planned for ${volumeL} L and stays so.` });
+  if (errors.length > 0) throw new ProblemError('not-valid', 'This sheet would not work on the day.', { errors });
 }
 
 function statusOf({ cancelledAtMs }: Batch, run: RunSummary | null): BatchAnswer['status'] {

@@ -20,7 +20,7 @@ import { RunReadingsService } from '../readings/run-readings.service.js';
 import { RecipesService, type NamedRevision } from '../recipes/recipes.service.js';
 import { RunLogService, type Appended } from '../runs/run-log.service.js';
 import type { RunLog } from '../runs/run-log.js';
-import { RunsService, sheetOf, type RunStart } from '../runs/runs.service.js';
+import { RunsService, type RunStart } from '../runs/runs.service.js';
 import { actsOf, RehearsalKettle } from './rehearsal-kettle.js';
 
 type KettleOfHouse = Extract<Equipment, { kind: 'kettle' }>;
@@ -81,7 +81,7 @@ export class RehearsalsService implements OnApplicationBootstrap, OnModuleDestro
   async start(actor: Actor, { rate, revisionId, probeId, seed }: StartRehearsal): Promise<RunSummary> {
     const { houseId } = actor;
     const [revision, house] = await Promise.all([this.revisionFor(houseId, revisionId), this.houses.get(houseId)]);
-    const sheet = sheetOf(revision.document, house.altitudeM);
+    const sheet = this.recipes.sheetOf(revision, house.altitudeM);
     const source = probeId === undefined ? null : await this.sourceProbe(houseId, probeId);
     const kettleSetup = source ? null : await this.kettleFor(houseId, revision, house.altitudeM, seed ?? randomSeed());
     const facts = source ? probeLike(source) : simulatedProbe(kettleSetup as KettleSetup);

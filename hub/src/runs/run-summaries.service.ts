@@ -2,6 +2,7 @@ import { Injectable } from '@nestjs/common';
 import { InjectModel } from '@nestjs/sequelize';
 import type { RunSummary } from '@steepfall/shared/contracts';
 import { ProblemError } from '@steepfall/shared/problems';
+import type { Transaction } from 'sequelize';
 import { inHouse } from '../common/house-scope/in-house.js';
 import { Run } from './models/run.model.js';
 
@@ -58,8 +59,11 @@ export class RunSummariesService {
   }
 
   /** The run that counts for each batch: the open one, else the newest. */
-  async ofBatches(houseId: string, batchIds: string[]): Promise<Map<string, RunSummary>> {
-    const rows = await inHouse(this.runs, houseId).findAll({ batchId: batchIds }, { order: [['createdAtMs', 'ASC']] });
+  async ofBatches(houseId: string, batchIds: string[], transaction?: Transaction): Promise<Map<string, RunSummary>> {
+    const rows = await inHouse(this.runs, houseId).findAll(
+      { batchId: batchIds },
+      { order: [['createdAtMs', 'ASC']], transaction },
+    );
     const found = new Map<string, RunSummary>();
     for (const row of rows) {
       const { batchId } = row;

@@ -3,11 +3,10 @@ import { InjectConnection } from '@nestjs/sequelize';
 import type { RunSummary } from '@steepfall/shared/contracts';
 import { ProblemError } from '@steepfall/shared/problems';
 import type { RunEventOf } from '@steepfall/shared/runs';
-import { compileSheet, type RecipeDocument, type RunSheet } from '@steepfall/shared/sheets';
+import type { RunSheet } from '@steepfall/shared/sheets';
 import { wallClock, type RunClock } from '@steepfall/shared/timers';
 import { UniqueConstraintError, type Transaction } from 'sequelize';
 import { Sequelize } from 'sequelize-typescript';
-import { ZodError } from 'zod';
 import { BatchesService } from '../batches/batches.service.js';
 import type { Actor } from '../common/access/actor.js';
 import { Clock } from '../common/clock.js';
@@ -18,8 +17,6 @@ import { RunLogService, type NewRun } from './run-log.service.js';
 import type { RunLog } from './run-log.js';
 import { RunSummariesService } from './run-summaries.service.js';
 
-/** A hand with its gloves on, from alert to act. */
-const REACH_S = 10;
 /** Written for a run without a probe; nothing is ever read through it. */
 const NO_PROBE = { lagS: 5, resolutionC: 0.1, samplePeriodS: 1 };
 
@@ -49,32 +46,29 @@ export class RunsService {
     private readonly clock: Clock,
   ) {}
 
-  /** Begins the run of a planned batch. Its sheet is compiled now and copied into the first event. */
+  /** Begins the run of a planned batch. Its sheet is copied into the first event, and what it had set aside of the stores is used. */
   async startBatch(actor: Actor, batchId: string): Promise<RunSummary> {
     const { houseId } = actor;
     const batch = await this.batches.getForRun(houseId, batchId);
-    const earlier = (await this.summaries.ofBatches(houseId, [batchId])).get(batchId);
-    if (earlier && earlier.outcome !== 'abandoned') throw batchAlreadyRunning();
-    const { revision, altitudeM, chiller } = batch;
-    const holder = batch.probeId === null ? null : this.logs.attachedTo(batch.probeId);
-    if (holder)
-      throw new ProblemError(
-        'probe-in-use',
-        `Its probe is in the kettle of "${holder.state.title}". End that run or take its probe out first.`,
-      );
-    const start: RunStart = {
-      title: `${revision.recipeName} ${revision.volumeL} L`,
-      batch: { id: batch.id, batchNumber: batch.batchNumber },
-      revisionId: revision.id,
-      sheet: sheetOf(revision.document, altitudeM),
-      clock: wallClock(this.clock.nowMs()),
-      probe: batch.probeId === null ? null : await this.probes.find(houseId, batch.probeId),
-      roomC: null,
-      coolantC: chiller?.facts.coolantC ?? null,
-      rehearsal: null,
+    const probe = batch.probeId === null ? null : await this.probes.find(houseId, batch.probeId);
+    const { revision, chiller } = batch;
+    const prepare = async (transaction: Transaction): Promise<RunStart> => {
+      const sheet = await this.batches.takeForRun(actor, batch, transaction);
+      this.refuseHeldProbe(batch.probeId);
+      return {
+        title: `${revision.recipeName} ${revision.volumeL} L`,
+        batch: { id: batch.id, batchNumber: batch.batchNumber },
+        revisionId: revision.id,
+        sheet,
+        clock: wallClock(this.clock.nowMs()),
+        probe,
+        roomC: null,
+        coolantC: chiller?.facts.coolantC ?? null,
+        rehearsal: null,
+      };
     };
     try {
-      return await this.start(actor, () => Promise.resolve(start));
+      return await this.start(actor, prepare);
     } catch (error) {
       // Two people started it at once: the database lets one through.
       if (error instanceof UniqueConstraintError) throw batchAlreadyRunning();
@@ -89,6 +83,15 @@ export class RunsService {
     );
     this.logs.announce(log);
     return this.summaries.get(actor.houseId, log.id);
+  }
+
+  private refuseHeldProbe(probeId: string | null): void {
+    const holder = probeId === null ? null : this.logs.attachedTo(probeId);
+    if (holder)
+      throw new ProblemError(
+        'probe-in-use',
+        `Its probe is in the kettle of "${holder.state.title}". End that run or take its probe out first.`,
+      );
   }
 
   private write({ houseId, memberId }: Actor, start: RunStart, transaction: Transaction): Promise<RunLog> {
@@ -133,16 +136,6 @@ export class RunsService {
       ...(rehearsal ?? { seed: null, kettleSetup: null, sourceProbeId: null }),
     };
     return this.logs.create(houseId, run, started, transaction);
-  }
-}
-
-/** The sheet of a document at this place; a plan that physics does not allow is said so, not a fault of the hub. */
-export function sheetOf(document: RecipeDocument, altitudeM: number): RunSheet {
-  try {
-    return compileSheet(document, { altitudeM, reachS: REACH_S });
-  } catch (error) {
-    if (error instanceof RangeError || error instanceof ZodError) throw new ProblemError('not-valid', error.message);
-    throw error;
   }
 }
 
