@@ -122,4 +122,24 @@ describe(decide, () => {
     const decision = decide(foldRun([]), { type: 'goBack' }, { nowMs: 0, by: null, station: 's', newId: () => '' });
     expect(decision).toMatchObject({ ok: false, problem: { type: '/problems/run-not-started' } });
   });
+
+  it('holds late hops by a timer of their own', () => {
+    const log = new LogBuilder().add('alert.raised', buildAlert({ stage: 'missed' }));
+    const name = { key: 'hops-in', crossing: 1, stepId: 'hops-in', extraG: null, reheatS: null } as const;
+    expect(when(log, { type: 'chooseForMissed', ...name, choice: 'hold', holdS: 240 })).toEqual([
+      { type: 'choice.made', payload: { ...name, choice: 'hold', holdS: 240 } },
+      { type: 'timer.started', payload: { timerId: idOf('new/2'), label: 'Hold', durationS: 240 } },
+    ]);
+  });
+
+  it('puts a fault aside with a reason and an end, and never what the sheet calls for', () => {
+    const fault = buildAlert({ key: 'signal', rule: 'signal', stage: 'now', actStepId: null });
+    const log = new LogBuilder().add('alert.raised', fault).add('alert.raised', buildAlert());
+    const shelve = (key: string, reason = 'a new battery is coming', forS = 600) =>
+      when(log, { type: 'shelveAlert', key, crossing: 1, forS, reason });
+    expect(shelve('signal')).toMatchObject([{ payload: { untilMs: START_MS + 605_000 } }]);
+    expect(shelve('hops-in')).toBe('not-allowed');
+    expect(shelve('signal', ' ')).toBe('not-valid');
+    expect(shelve('signal', 'lunch', 7200)).toBe('not-valid');
+  });
 });

@@ -1,7 +1,8 @@
 import { problem, type Problem } from '../problems/index.js';
 import type { DoneCondition, MeasuredQuantity } from '../sheets/index.js';
 import { clockAtRate } from '../timers/index.js';
-import type { RunEvent, RunEventOf, RunEventType } from './events.js';
+import { canShelve, LONGEST_SHELF_S } from './alert-priority.js';
+import type { MissedChoiceKind, RunEvent, RunEventOf, RunEventType } from './events.js';
 import { isUndoable } from './fold.js';
 import type { RunState } from './state.js';
 
@@ -22,6 +23,17 @@ export type RunCommand =
   | { type: 'startTimer'; label: string; durationS: number }
   | { type: 'stopTimer'; timerId: string }
   | { type: 'acknowledgeAlert'; key: string; crossing: number }
+  | { type: 'shelveAlert'; key: string; crossing: number; forS: number; reason: string }
+  | {
+      type: 'chooseForMissed';
+      key: string;
+      crossing: number;
+      stepId: string;
+      choice: MissedChoiceKind;
+      holdS: number | null;
+      extraG: number | null;
+      reheatS: number | null;
+    }
   | { type: 'checkSound'; isHeard: boolean }
   | { type: 'changeRate'; rate: number; wallMs: number }
   | { type: 'endRun'; outcome: 'finished' | 'abandoned'; reason?: string };
@@ -122,6 +134,24 @@ export function decide(state: RunState, command: RunCommand, context: DecideCont
       const alert = state.alerts.find((candidate) => candidate.key === key && candidate.crossing === crossing);
       if (!alert) return refuse('not-found', 'This alert is not known here.');
       return facts(fact('alert.acknowledged', { key, crossing, stage: alert.stage }));
+    }
+    case 'shelveAlert': {
+      const { key, crossing, forS } = command;
+      const alert = state.alerts.find((candidate) => candidate.key === key && candidate.crossing === crossing);
+      if (!alert) return refuse('not-found', 'This alert is not known here.');
+      if (!canShelve(alert))
+        return refuse('not-allowed', 'What the sheet calls for cannot be put aside. Do it, or say "heard".');
+      const reason = command.reason.trim();
+      if (!reason) return invalid('/reason', 'Say why, in a few words.');
+      if (!(forS > 0 && forS <= LONGEST_SHELF_S)) return invalid('/forS', 'From a second to an hour.');
+      return facts(fact('alert.shelved', { key, crossing, untilMs: Math.round(context.nowMs + forS * 1000), reason }));
+    }
+    case 'chooseForMissed': {
+      const { type: _type, ...choice } = command;
+      const made = fact('choice.made', choice);
+      // Held by a timer of its own, which goes through the same ladder as every timer.
+      if (choice.holdS === null) return facts(made);
+      return facts(made, fact('timer.started', { timerId: context.newId(), label: 'Hold', durationS: choice.holdS }));
     }
     case 'checkSound':
       return facts(fact('sound.checked', { isHeard: command.isHeard }));

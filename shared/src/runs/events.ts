@@ -1,13 +1,23 @@
 import { z } from 'zod';
-import { measuredQuantitySchema, runSheetSchema, directionSchema } from '../sheets/index.js';
+import {
+  chillerFactsSchema,
+  directionSchema,
+  kettleFactsSchema,
+  measuredQuantitySchema,
+  recipeDocumentSchema,
+  runSheetSchema,
+} from '../sheets/index.js';
 import { runClockSchema } from '../timers/index.js';
 
 /** The stages of an alert, in the order in which they are climbed. */
 export const alertStageSchema = z.enum(['coming-up', 'stand-by', 'now', 'missed']);
 export type AlertStage = z.infer<typeof alertStageSchema>;
 
-/** What an alert is about: a level to catch, a deadline, or a probe that went silent. */
-export const alertRuleSchema = z.enum(['temperature', 'timer', 'signal']);
+/**
+ * What an alert is about: a level to catch, a deadline, a probe that went silent, a hub that a tablet lost, a battery that runs out, or a
+ * tablet that went silent.
+ */
+export const alertRuleSchema = z.enum(['temperature', 'timer', 'signal', 'hub', 'battery', 'station']);
 export type AlertRule = z.infer<typeof alertRuleSchema>;
 
 const id = z.uuid();
@@ -16,6 +26,17 @@ const stepId = z.string().min(1).max(60);
 
 /** Names one climb of one ladder: the same key and crossing is the same alert on every device. */
 const alertKey = z.strictObject({ key: z.string().min(1).max(80), crossing: z.int().positive() });
+
+/** What can be done about a catch that was missed. */
+export const missedChoiceSchema = z.enum(['hold', 'more', 'reheat', 'accept']);
+export type MissedChoiceKind = z.infer<typeof missedChoiceSchema>;
+
+/** What the run is brewed on, as far as its figures need it. */
+const runKitSchema = z.strictObject({
+  altitudeM: z.number(),
+  kettle: kettleFactsSchema.nullable(),
+  chiller: chillerFactsSchema.nullable(),
+});
 
 /**
  * What may be written in the log of a run. Events are facts in the past tense; shapes only grow, and a breaking change
@@ -30,6 +51,9 @@ const payloads = {
     isRehearsal: z.boolean(),
     sheet: runSheetSchema,
     clock: runClockSchema,
+    /** The revision it is brewed from and the kit: the figures while it runs need no hub. Runs of older builds have none. */
+    document: recipeDocumentSchema.optional(),
+    kit: runKitSchema.optional(),
   }),
   'sound.checked': z.strictObject({ isHeard: z.boolean() }),
   'step.done': z.strictObject({
@@ -71,6 +95,17 @@ const payloads = {
   }),
   'alert.acknowledged': z.strictObject({ ...alertKey.shape, stage: alertStageSchema }),
   'alert.cleared': z.strictObject({ ...alertKey.shape }),
+  /** Put aside by a person for a while, with a reason; it comes back by itself. */
+  'alert.shelved': z.strictObject({ ...alertKey.shape, untilMs: atMs, reason: z.string().trim().min(1).max(200) }),
+  'choice.made': z.strictObject({
+    ...alertKey.shape,
+    stepId,
+    choice: missedChoiceSchema,
+    /** How long it is held, how much more goes in, how long the reheat takes; what the choice does not need is null. */
+    holdS: z.number().positive().max(86_400).nullable(),
+    extraG: z.number().positive().max(100_000).nullable(),
+    reheatS: z.number().positive().max(86_400).nullable(),
+  }),
   'run.ended': z.strictObject({ outcome: z.enum(['finished', 'abandoned']), reason: z.string().max(400).optional() }),
 } as const;
 
@@ -110,6 +145,8 @@ export const runEventSchema = z
     eventOf('alert.raised'),
     eventOf('alert.acknowledged'),
     eventOf('alert.cleared'),
+    eventOf('alert.shelved'),
+    eventOf('choice.made'),
     eventOf('run.ended'),
   ])
   .meta({ id: 'RunEvent' });

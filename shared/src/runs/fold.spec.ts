@@ -21,6 +21,22 @@ function fullLog(): LogBuilder {
     .add('alert.raised', buildAlert({ stage: 'now' }), { by: null })
     .wait(4)
     .done('hops-in');
+  log.add('alert.raised', buildAlert({ key: 'battery:tablet', rule: 'battery', stage: 'now' }), { by: null });
+  log.add('alert.shelved', {
+    key: 'battery:tablet',
+    crossing: 1,
+    untilMs: START_MS + 9_000_000,
+    reason: 'cable is coming',
+  });
+  log.add('choice.made', {
+    key: 'hops-in',
+    crossing: 1,
+    stepId: 'hops-in',
+    choice: 'more',
+    holdS: null,
+    extraG: 30,
+    reheatS: null,
+  });
   log.add('timer.started', { timerId: idOf('timer'), label: 'rest', durationS: 60 });
   return log;
 }
@@ -35,6 +51,23 @@ describe(foldRun, () => {
       startedAtMs: START_MS,
     });
     expect(currentStep(state)?.step.id).toBe('light-heat');
+  });
+
+  it('weighs in more after a missed catch, until that is taken back', () => {
+    const log = new LogBuilder();
+    log.add('choice.made', {
+      key: 'hops-in',
+      crossing: 1,
+      stepId: 'hops-in',
+      choice: 'more',
+      holdS: null,
+      extraG: 30,
+      reheatS: null,
+    });
+    const massG = () => foldRun(log.entries).steps.find(({ step }) => step.id === 'hops-in')?.step.amounts[0]?.massG;
+    expect(massG()).toBe(90);
+    log.undo(log.lastId);
+    expect(massG()).toBe(60);
   });
 
   it('takes an empty log', () => {

@@ -18,6 +18,8 @@ const undoable: readonly string[] = [
   'timer.started',
   'timer.stopped',
   'run.ended',
+  'choice.made',
+  'alert.shelved',
 ] satisfies RunEvent['type'][];
 
 export function isUndoable(type: string): boolean {
@@ -67,6 +69,8 @@ function emptyState(): RunState {
     revisionId: null,
     isRehearsal: false,
     sheet: null,
+    document: null,
+    kit: null,
     clock: null,
     startedAtMs: null,
     endedAtMs: null,
@@ -77,6 +81,7 @@ function emptyState(): RunState {
     measurements: [],
     notes: [],
     alerts: [],
+    choices: [],
     conflicts: [],
     soundCheck: null,
     undoneEventIds: [],
@@ -218,6 +223,14 @@ function apply(state: RunState, event: RunEvent): void {
       if (alert) alert.clearedAtMs ??= event.atMs;
       return;
     }
+    case 'alert.shelved': {
+      const alert = alertOf(state, event.payload);
+      if (alert) Object.assign(alert, { shelvedUntilMs: event.payload.untilMs, shelvedReason: event.payload.reason });
+      return;
+    }
+    case 'choice.made':
+      applyChoice(state, event);
+      return;
     case 'run.ended':
       applyEnd(state, event);
       return;
@@ -256,6 +269,20 @@ function applyStepDone(state: RunState, event: RunEventOf<'step.done'>): void {
   moveOn(state, event.atMs);
 }
 
+/** More is weighed in from then on; what was in the bag stays as it was written. */
+function applyChoice(state: RunState, event: RunEventOf<'choice.made'>): void {
+  const { id: eventId, atMs, by, payload } = event;
+  state.choices.push({ eventId, atMs, by, ...payload });
+  const progress = stepOf(state, payload.stepId);
+  if (!progress || payload.extraG === null) return;
+  const { amounts } = progress.step;
+  const plannedG = amounts.reduce((sum, { massG }) => sum + massG, 0);
+  if (plannedG === 0) return;
+  const ratio = (plannedG + payload.extraG) / plannedG;
+  const enlarged = amounts.map((amount) => ({ ...amount, massG: amount.massG * ratio }));
+  progress.step = { ...progress.step, amounts: enlarged };
+}
+
 function applyEnd(state: RunState, event: RunEventOf<'run.ended'>): void {
   if (state.status === 'ended') {
     state.conflicts.push({ kind: 'ended-twice', stepId: null, eventIds: [state.endEventId ?? event.id, event.id] });
@@ -284,6 +311,8 @@ function applyAlert(state: RunState, event: RunEventOf<'alert.raised'>): void {
       acknowledgedAtMs: null,
       acknowledgedBy: null,
       clearedAtMs: null,
+      shelvedUntilMs: null,
+      shelvedReason: null,
       isStanding: false,
     });
   } else if (stageRank(stage) > stageRank(known.stage)) {

@@ -1,6 +1,6 @@
-import { formatTemp } from '../units/index.js';
+import { formatDuration, formatTemp } from '../units/index.js';
 import type { Step, StepAmount } from '../sheets/index.js';
-import type { LogEntry, RunEvent } from './events.js';
+import type { LogEntry, RunEvent, RunEventOf } from './events.js';
 import { isUndoable, stageRank } from './fold.js';
 import type { Alert, RunState, StepProgress } from './state.js';
 
@@ -49,12 +49,18 @@ export interface AlertWords {
 
 const stageWords = { 'coming-up': 'Coming up', 'stand-by': 'Stand by', now: 'Now', missed: 'Late' } as const;
 
+/** Of what helps to watch, not of the brew. */
+const faultWords: Partial<Record<Alert['rule'], { verb: string; why: string }>> = {
+  signal: { verb: 'Check the probe', why: 'No reading comes in. Watch a thermometer by hand.' },
+  hub: { verb: 'Watch by hand', why: 'The hub is away, so no reading comes in. Steps and timers go on here.' },
+  battery: { verb: 'Plug the tablet in', why: 'Its battery is low, and a dark tablet calls nobody.' },
+  station: { verb: 'Look at the other tablet', why: 'It went silent while the run goes on.' },
+};
+
 /** The words of an alert: verb, thing, number. */
 export function alertWords(state: RunState, alert: Alert, unit: 'C' | 'F' = 'C'): AlertWords {
-  if (alert.rule === 'signal') {
-    const verb = 'Check the probe';
-    return { verb, amounts: [], number: null, sentence: `${verb}. No reading comes in. Watch a thermometer by hand.` };
-  }
+  const fault = faultWords[alert.rule];
+  if (fault) return { verb: fault.verb, amounts: [], number: null, sentence: `${fault.verb}. ${fault.why}` };
   const act = state.steps.find(({ step }) => step.id === alert.actStepId)?.step;
   const timer = state.timers.find(({ id }) => alert.key === `timer:${id}`);
   const verb = act?.title ?? (timer ? `Timer: ${timer.label}` : 'Look at the sheet');
@@ -78,6 +84,20 @@ function titleOf(state: RunState, stepId: string | null): string {
 
 function at(tempC: number | null, unit: 'C' | 'F'): string {
   return tempC === null ? '' : ` at ${formatTemp(tempC, { unit })}`;
+}
+
+/** What was chosen, with its number. */
+function choiceWords({ choice, holdS, extraG, reheatS }: RunEventOf<'choice.made'>['payload']): string {
+  switch (choice) {
+    case 'hold':
+      return `add now and hold for ${formatDuration(holdS ?? 0)}`;
+    case 'more':
+      return `add ${Math.round(extraG ?? 0)} g more`;
+    case 'reheat':
+      return `reheat, about ${formatDuration(reheatS ?? 0)}`;
+    case 'accept':
+      return 'add now and accept';
+  }
 }
 
 /** One line of words for the log. Who and when stand beside it. */
@@ -125,6 +145,10 @@ export function describeEvent(entry: LogEntry, state: RunState, unit: 'C' | 'F' 
       return 'Alert acknowledged';
     case 'alert.cleared':
       return event.payload.key === 'signal' ? 'Probe alert over' : 'Call taken back';
+    case 'alert.shelved':
+      return `Alert put aside: ${event.payload.reason}`;
+    case 'choice.made':
+      return `Missed ${titleOf(state, event.payload.stepId)}: ${choiceWords(event.payload)}`;
     case 'run.ended':
       return event.payload.outcome === 'finished'
         ? 'Run finished'

@@ -50,11 +50,29 @@ export function temperatureClips(tempC: number, unit: 'C' | 'F'): string[] {
   return [`n${whole}`, ...(tenth > 0 ? [`point${tenth}`] : []), 'degrees'];
 }
 
-const alertPhrases = ['coming-up', 'stand-by', 'now', 'late', 'timer-over', 'no-reading'] as const;
+const alertPhrases = [
+  'coming-up',
+  'stand-by',
+  'now',
+  'late',
+  'timer-over',
+  'no-reading',
+  'hub-away',
+  'battery-low',
+  'next-step',
+] as const;
+
+const faultClips: Partial<Record<Alert['rule'], string>> = {
+  signal: 'no-reading',
+  hub: 'hub-away',
+  battery: 'battery-low',
+  station: 'next-step',
+};
 
 /** What is said aloud for an alert: verb, thing, number. */
 export function spokenClips(state: RunState, alert: Alert, unit: 'C' | 'F'): string[] {
-  if (alert.rule === 'signal') return ['no-reading'];
+  const fault = faultClips[alert.rule];
+  if (fault) return [fault];
   const act = state.steps.find(({ step }) => step.id === alert.actStepId)?.step;
   if (!act) return alert.stage === 'now' || alert.stage === 'missed' ? ['timer-over'] : [];
   const clip = actClip(act);

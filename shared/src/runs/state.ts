@@ -1,6 +1,6 @@
-import type { Direction, MeasuredQuantity, RunSheet, Step } from '../sheets/index.js';
+import type { Direction, MeasuredQuantity, RecipeDocument, RunSheet, Step } from '../sheets/index.js';
 import type { RunClock, Timer } from '../timers/index.js';
-import type { AlertRule, AlertStage } from './events.js';
+import type { AlertRule, AlertStage, MissedChoiceKind, RunEventOf } from './events.js';
 
 export interface StepProgress {
   step: Step;
@@ -59,8 +59,25 @@ export interface Alert {
   acknowledgedAtMs: number | null;
   acknowledgedBy: string | null;
   clearedAtMs: number | null;
+  /** Put aside until then; null when it is not. */
+  shelvedUntilMs: number | null;
+  shelvedReason: string | null;
   /** True while a person still has to act: not acknowledged, not cleared, its step not done. */
   isStanding: boolean;
+}
+
+/** What a person chose about a catch that was missed. */
+export interface MissedChoiceMade {
+  eventId: string;
+  key: string;
+  crossing: number;
+  stepId: string;
+  choice: MissedChoiceKind;
+  holdS: number | null;
+  extraG: number | null;
+  reheatS: number | null;
+  atMs: number;
+  by: string | null;
 }
 
 /** Two facts that cannot both be the whole truth. Nothing is dropped: the first counts, both are shown. */
@@ -70,6 +87,8 @@ export interface Conflict {
   /** The event that counts, then the other. */
   eventIds: [string, string];
 }
+
+export type RunKit = NonNullable<RunEventOf<'run.started'>['payload']['kit']>;
 
 export interface RunState {
   runId: string | null;
@@ -82,6 +101,9 @@ export interface RunState {
   revisionId: string | null;
   isRehearsal: boolean;
   sheet: RunSheet | null;
+  /** What it is brewed from and on; null in runs of older builds. */
+  document: RecipeDocument | null;
+  kit: RunKit | null;
   clock: RunClock | null;
   startedAtMs: number | null;
   endedAtMs: number | null;
@@ -94,6 +116,7 @@ export interface RunState {
   measurements: Measurement[];
   notes: Note[];
   alerts: Alert[];
+  choices: MissedChoiceMade[];
   conflicts: Conflict[];
   soundCheck: { atMs: number; isHeard: boolean; station: string } | null;
   undoneEventIds: string[];
