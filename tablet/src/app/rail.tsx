@@ -27,6 +27,12 @@ const places: Place[] = [
     drawing: <path d="M4 7h4m5 0h15M4 16h11m5 0h8M4 25h17m5 0h2M10.500 4.500v5M17.500 13.500v5M23.500 22.500v5" />,
   },
   {
+    to: '/stores',
+    word: 'Stores',
+    permission: 'stores:read',
+    drawing: <path d="M3 14h26M3 27h26M7 14V5h6v9M18 14V8h7v6M9 27v-7h12v7" />,
+  },
+  {
     to: '/batches',
     word: 'Book',
     permission: 'batches:read',

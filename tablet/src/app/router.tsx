@@ -13,6 +13,9 @@ const pages = {
   home: () => import('./routes/home.tsx').then(({ HomeRoute }) => HomeRoute),
   recipes: () => import('./routes/recipes.tsx').then(({ RecipesRoute }) => RecipesRoute),
   recipe: () => import('./routes/recipe.tsx').then(({ RecipeRoute }) => RecipeRoute),
+  stores: () => import('./routes/stores.tsx').then(({ StoresRoute }) => StoresRoute),
+  ingredient: () => import('./routes/stores.tsx').then(({ IngredientRoute }) => IngredientRoute),
+  storesImport: () => import('./routes/stores.tsx').then(({ ImportRoute }) => ImportRoute),
   batches: () => import('./routes/batches.tsx').then(({ BatchesRoute }) => BatchesRoute),
   batch: () => import('./routes/batch.tsx').then(({ BatchRoute }) => BatchRoute),
   record: () => import('./routes/record.tsx').then(({ RecordRoute }) => RecordRoute),
@@ -53,6 +56,14 @@ export const router = createBrowserRouter([
               { path: '/recipes/:recipeId', ...page('recipe') },
             ],
           },
+          {
+            ...needs('stores:read'),
+            children: [
+              { path: '/stores', ...page('stores') },
+              { path: '/stores/:ingredientId', ...page('ingredient') },
+            ],
+          },
+          { ...needs('stores:manage'), children: [{ path: '/stores/import', ...page('storesImport') }] },
           {
             ...needs('batches:read'),
             children: [

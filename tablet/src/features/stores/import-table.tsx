@@ -1,0 +1,146 @@
+import { useMemo, useState } from 'react';
+import { Checkbox, Field, Label } from '@headlessui/react';
+import {
+  createColumnHelper,
+  getCoreRowModel,
+  getPaginationRowModel,
+  getSortedRowModel,
+  useReactTable,
+  type SortingState,
+} from '@tanstack/react-table';
+import type { ImportPreview } from '@steepfall/shared/contracts';
+import { formatMass } from '@steepfall/shared/units';
+import { DataTable } from '#components/data-table.tsx';
+import { StatusChip } from '#components/status-chip.tsx';
+import { useUnits } from '#lib/units.ts';
+
+type Row = ImportPreview['rows'][number];
+
+const doesWords: Record<Row['does'], string> = {
+  'new-ingredient': 'a new ingredient',
+  'new-lot': 'a new lot',
+  nothing: 'nothing: it is there already',
+};
+
+interface ImportTableProps {
+  rows: readonly Row[];
+  skipRows: ReadonlySet<number>;
+  onSkip: (rows: ReadonlySet<number>) => void;
+}
+
+const column = createColumnHelper<Row & { isSkipped: boolean }>();
+
+/** Each row of the file: what it would do, or what to mend and at which column. Those to mend come first. */
+export function ImportTable({ rows, skipRows, onSkip }: ImportTableProps) {
+  const { mass: unit } = useUnits();
+  const [sorting, setSorting] = useState<SortingState>([{ id: 'state', desc: true }]);
+  const data = useMemo(() => rows.map((row) => ({ ...row, isSkipped: skipRows.has(row.row) })), [rows, skipRows]);
+  const columns = useMemo(() => {
+    const toggle = (row: number, isSkipped: boolean) => {
+      const next = new Set(skipRows);
+      if (isSkipped) next.add(row);
+      else next.delete(row);
+      onSkip(next);
+    };
+    return [
+      column.accessor('row', {
+        header: 'Row',
+        meta: { isLead: true },
+        cell: ({ getValue }) => <span className="font-medium tabular-nums">{getValue()}</span>,
+      }),
+      column.accessor('ingredient', { header: 'Ingredient', cell: ({ row: { original } }) => <What row={original} /> }),
+      column.accessor('lot', { header: 'Lot' }),
+      column.accessor('massG', {
+        header: 'Mass',
+        meta: { isNumber: true },
+        cell: ({ getValue }) => (
+          <span className="whitespace-nowrap">{getValue() === null ? '' : formatMass(getValue(), { unit })}</span>
+        ),
+      }),
+      column.accessor(({ problems }) => problems.length, {
+        id: 'state',
+        header: 'What it does',
+        sortDescFirst: true,
+        cell: ({ row: { original } }) => <State row={original} />,
+      }),
+      column.display({
+        id: 'skip',
+        header: 'Leave out',
+        cell: ({ row: { original } }) => (
+          <SkipBox
+            row={original.row}
+            isSkipped={original.isSkipped}
+            onChange={(isSkipped) => toggle(original.row, isSkipped)}
+          />
+        ),
+      }),
+    ];
+  }, [unit, skipRows, onSkip]);
+  // eslint-disable-next-line react-hooks/incompatible-library -- its functions are used in this render only
+  const table = useReactTable({
+    data,
+    columns,
+    state: { sorting },
+    onSortingChange: setSorting,
+    getCoreRowModel: getCoreRowModel(),
+    getSortedRowModel: getSortedRowModel(),
+    getPaginationRowModel: getPaginationRowModel(),
+    initialState: { pagination: { pageSize: 20 } },
+    // A ticked row must not throw the person back to the first page.
+    autoResetPageIndex: false,
+  });
+  return <DataTable table={table} caption="Rows of the file" countWord="rows" />;
+}
+
+function What({ row: { ingredient, kind } }: { row: Row }) {
+  return (
+    <span className="text-right sm:text-left">
+      {ingredient || 'without a name'} <span className="text-soft">{kind}</span>
+    </span>
+  );
+}
+
+function State({ row: { problems, does, isSkipped } }: { row: Row & { isSkipped: boolean } }) {
+  if (isSkipped) {
+    return (
+      <StatusChip shape="dash" tone="soft">
+        left out
+      </StatusChip>
+    );
+  }
+  if (problems.length === 0) return <span>{doesWords[does]}</span>;
+  return (
+    <ul className="grid min-w-0 gap-1 text-note text-ember">
+      {problems.map(({ column: name, detail }) => (
+        <li key={`${name} ${detail}`}>
+          <span className="font-semibold">{name || 'row'}:</span> {detail}
+        </li>
+      ))}
+    </ul>
+  );
+}
+
+interface SkipBoxProps {
+  row: number;
+  isSkipped: boolean;
+  onChange: (isSkipped: boolean) => void;
+}
+
+function SkipBox({ row, isSkipped, onChange }: SkipBoxProps) {
+  return (
+    <Field>
+      <Label className="sr-only">Leave out row {row}</Label>
+      <Checkbox
+        checked={isSkipped}
+        onChange={onChange}
+        className="group grid size-12 cursor-pointer place-items-center rounded-lg"
+      >
+        <span className="grid size-7 place-items-center rounded border-2 border-edge group-data-checked:border-text group-data-checked:bg-text">
+          <svg viewBox="0 0 16 16" aria-hidden="true" className="hidden size-5 text-ground group-data-checked:block">
+            <path d="M3 8.500l3.500 3.500L13 4.500" fill="none" stroke="currentColor" strokeWidth="2.500" />
+          </svg>
+        </span>
+      </Checkbox>
+    </Field>
+  );
+}
