@@ -56,21 +56,26 @@ describe('acidDose', () => {
     const kinds = Object.keys(acidKinds) as AcidKind[];
     const cases = fc.record({
       kind: fc.constantFrom(...kinds),
-      targetPh: fc.double({ min: 2.5, max: 6, noNaN: true }),
-      leafBaseMeqPerL: fc.double({ min: 0, max: 20, noNaN: true }),
-      alkalinity: fc.double({ min: 0, max: 400, noNaN: true }),
-      tempC: fc.double({ min: 0, max: 60, noNaN: true }),
+      targetPh: fc.double({ min: 1, max: 8, noNaN: true }),
+      leafBaseMeqPerL: fc.double({ min: 0, max: 200, noNaN: true }),
+      alkalinity: fc.double({ min: 0, max: 2000, noNaN: true }),
+      co2MolPerL: fc.constantFrom(0, 0.1348),
+      tempC: fc.double({ min: 0, max: 77, noNaN: true }),
     });
     fc.assert(
-      fc.property(cases, ({ kind, targetPh, leafBaseMeqPerL, alkalinity, tempC }) => {
+      fc.property(cases, ({ kind, targetPh, leafBaseMeqPerL, alkalinity, co2MolPerL, tempC }) => {
         const hco3 = hco3FromCaCo3(alkalinity);
         const liquid = {
           water: { ...pureWater, hco3, na: (hco3 / 61.016) * 22.99 },
           acidsMolPerL: {},
           leafBaseMeqPerL,
+          co2MolPerL,
           tempC,
         };
         const dose = acidDose(liquid, targetPh, kind);
+        const ph = drinkPh(liquid).ph;
+        if (dose.kind === 'none-needed') expect(ph).toBeLessThanOrEqual(targetPh);
+        else expect(ph).toBeGreaterThan(targetPh);
         if (dose.kind !== 'add') return;
         const { dissociates } = acidKinds[kind];
         expect(drinkPh({ ...liquid, acidsMolPerL: { [dissociates]: dose.molPerL } }).ph).toBeCloseTo(targetPh, 6);

@@ -59,7 +59,11 @@ export function greatestStrength(solution: PreparedSolution): number {
  * @example solvePh({ acidsMolPerL: { citric: 0.001 }, strongIonEqPerL: 0, tempC: 25 }).ph // 3.24
  */
 export function solvePh(solution: AcidSolution): PhResult {
-  const ready = prepared(solution);
+  return solvePrepared(prepared(solution));
+}
+
+/** The same for constants that are worked out already. */
+export function solvePrepared(ready: PreparedSolution): PhResult {
   let ph = 4;
   const strengthOf = (ionicStrength: number) => {
     ph = phAtStrength(ready, ionicStrength, ph);

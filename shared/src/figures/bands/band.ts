@@ -1,4 +1,4 @@
-import { finite, positive } from '../numeric/guard.js';
+import { finite, notNegative, within } from '../numeric/guard.js';
 
 /**
  * How well a number is known. `solid`: equilibrium, molar mass or standard, below 2 % or 0.03 pH. `measured`: in a system next
@@ -36,13 +36,16 @@ export function sure(value: number): Band {
   return band(value, value, value, 'solid');
 }
 
-/** A value that may be off by a factor either way. @param factor 1 or more. @throws RangeError otherwise. */
+/** Beyond it a factor says nothing. */
+const MOST_FACTOR = 1e6;
+
+/** A value that may be off by a factor either way. @param factor 1 to a million. @throws RangeError otherwise. */
 export function withinFactor(value: number, factor: number, grade: Grade): Band {
-  const f = Math.max(1, positive(factor, 'A factor'));
+  const f = within(factor, 'A factor', 1, MOST_FACTOR);
   return value < 0 ? band(value * f, value, value / f, grade) : band(value / f, value, value * f, grade);
 }
 
 /** A value that may be off by so much either way. @param spread 0 or more. @throws RangeError otherwise. */
 export function plusMinus(value: number, spread: number, grade: Grade): Band {
-  return band(value - Math.abs(finite(spread, 'A spread')), value, value + Math.abs(spread), grade);
+  return band(value - notNegative(spread, 'A spread'), value, value + spread, grade);
 }

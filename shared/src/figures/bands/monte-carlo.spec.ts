@@ -39,4 +39,20 @@ describe('monteCarlo', () => {
     expect(() => monteCarlo({}, () => 1, { runs: 10 })).toThrow(/more runs/);
     expect(() => monteCarlo({}, () => Number.NaN)).toThrow(/Check its inputs/);
   });
+
+  it.each<Unsure>([
+    { kind: 'even', low: 2, high: 1, grade: 'solid' },
+    { kind: 'peaked', low: 1, value: 3, high: 2, grade: 'solid' },
+    { kind: 'peaked', low: 1, value: Number.NaN, high: 2, grade: 'solid' },
+    { kind: 'factor', value: 1, factor: 0.5, grade: 'solid' },
+    { kind: 'spread', value: 1, spread: -1, grade: 'solid' },
+  ])('refuses %j', (x) => {
+    expect(() => monteCarlo({ x }, () => 1)).toThrow(RangeError);
+  });
+
+  it('carries a range across nothing', () => {
+    const found = monteCarlo({ x: { kind: 'spread', value: 0, spread: 1, grade: 'measured' } }, ({ x }) => x);
+    expect(found.low).toBeLessThan(-0.8);
+    expect(found.high).toBeGreaterThan(0.8);
+  });
 });

@@ -1,5 +1,5 @@
-import { notNegative, positive } from '../numeric/guard.js';
-import { weakest, type Band, type Grade } from './band.js';
+import { notNegative, within } from '../numeric/guard.js';
+import { band, weakest, type Band, type Grade } from './band.js';
 
 /** A stream of numbers from 0 to below 1 that a seed alone decides. */
 export type Draw = () => number;
@@ -51,17 +51,24 @@ function one(input: Unsure, draw: Draw): number {
   if (input.kind === 'sure') return input.value;
   if (input.kind === 'even') return input.low + (input.high - input.low) * draw();
   if (input.kind === 'peaked') return triangle(input, draw());
-  if (input.kind === 'spread') return input.value + (normal(draw) * notNegative(input.spread, 'A spread')) / NINETY;
-  return input.value * Math.max(1, positive(input.factor, 'A factor')) ** (normal(draw) / NINETY);
+  if (input.kind === 'spread') return input.value + (normal(draw) * input.spread) / NINETY;
+  return input.value * input.factor ** (normal(draw) / NINETY);
+}
+
+function checked(input: Unsure): void {
+  if (input.kind === 'even') band(input.low, input.low, input.high, input.grade);
+  else if (input.kind === 'peaked') band(input.low, input.value, input.high, input.grade);
+  else if (input.kind === 'spread') notNegative(input.spread, 'A spread');
+  else if (input.kind === 'factor') within(input.factor, 'A factor', 1, 1e6);
 }
 
 /**
  * The median and the nine-in-ten range of a figure whose inputs are unsure and independent.
  *
- * @param inputs what goes in.
- * @param figure the sum; called `runs` times.
+ * @param inputs what goes in: ends in order, spread 0 or more, factor 1 or more.
+ * @param figure the sum; called `runs` times, each time with the same object: it must not keep it.
  * @param options seed, and runs from 100 up (1000 unless told): ends are then good to about 3 %.
- * @throws RangeError when there are fewer runs, or `figure` gives something that is not a number.
+ * @throws RangeError when there are fewer runs, an input is out of range, or `figure` gives something that is not a number.
  * @see Monte Carlo with order statistics.
  */
 export function monteCarlo<Name extends string>(
@@ -74,9 +81,11 @@ export function monteCarlo<Name extends string>(
   }
   const draw = seededDraw(seed);
   const entries = Object.entries<Unsure>(inputs) as [Name, Unsure][];
+  for (const [, input] of entries) checked(input);
   const results = new Float64Array(runs);
+  const drawn = Object.fromEntries(entries.map(([name]) => [name, 0])) as Record<Name, number>;
   for (let run = 0; run < runs; run += 1) {
-    const drawn = Object.fromEntries(entries.map(([name, input]) => [name, one(input, draw)])) as Record<Name, number>;
+    for (const [name, input] of entries) drawn[name] = one(input, draw);
     const result = figure(drawn);
     if (!Number.isFinite(result)) throw new RangeError(`A figure must give a number, got ${result}. Check its inputs.`);
     results[run] = result;
