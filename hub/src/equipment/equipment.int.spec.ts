@@ -42,6 +42,12 @@ describe('/api/equipment', () => {
     const changed = await call('patch', `/${id}`).send(change);
     expect(changed.body).toEqual({ id, ...change, version: 2 });
     expectProblem(await call('patch', `/${id}`).send(change), 'changed-meanwhile');
+    for (const massG of [Number.NaN, 1e9, '4200', null])
+      expectProblem(
+        await call('patch', `/${id}`).send({ ...change, facts: { ...keg.facts, tareG: massG }, version: 2 }),
+        'not-valid',
+        ['/facts/tareG'],
+      );
     const chiller = { ...usualEquipmentOf('chiller'), version: 2 };
     expectProblem(await call('patch', `/${id}`).send(chiller), 'not-valid', ['/kind']);
     expect((await call('get')).body).toContainEqual(changed.body);
@@ -52,6 +58,25 @@ describe('/api/equipment', () => {
     await call('delete', `/${id}`).expect(204);
     expectProblem(await call('delete', `/${id}`), 'not-found');
     expect((await call('get')).body).not.toContainEqual(expect.objectContaining({ id }));
+  });
+
+  it('brings back what was removed, as it was, twice the same way', async () => {
+    const created = await call('post').send({
+      kind: 'scale',
+      name: 'Small scale',
+      facts: { resolutionG: 0.1, capacityG: 2000 },
+    });
+    const { id } = created.body as { id: string };
+    await call('delete', `/${id}`).expect(204);
+    for (let n = 0; n < 2; n += 1) {
+      const restored = await call('post', `/${id}/restore`);
+      expect(restored.status).toBe(200);
+      expect(restored.body).toEqual(created.body);
+    }
+    expect((await call('get')).body).toContainEqual(created.body);
+    const hand = await signInAs(testApp, 'hand', { house: brewer.house });
+    expectProblem(await call('post', `/${id}/restore`, hand), 'not-allowed');
+    expectProblem(await call('post', `/${id}/restore`, await signInAs(testApp, 'owner')), 'not-found');
   });
 
   it('hides what belongs to another house', async () => {

@@ -18,20 +18,20 @@ describe('/api/house', () => {
   it('needs a sign-in, and an owner to change it', async () => {
     expectProblem(await request(testApp.url).get('/api/house'), 'not-signed-in');
     const { bearer } = await signInAs(testApp, 'brewer');
-    expectProblem(await patch(bearer, { name: 'X', altitudeM: 0, version: 1 }), 'not-allowed');
+    expectProblem(await patch(bearer, { name: 'X', altitudeM: 0, currency: 'EUR', version: 1 }), 'not-allowed');
   });
 
   it('refuses what does not fit', async () => {
     const { bearer } = await signInAs(testApp, 'owner');
-    const response = await patch(bearer, { name: 'x'.repeat(81), altitudeM: 9000 });
-    expectProblem(response, 'not-valid', ['/name', '/altitudeM', '/version']);
+    const response = await patch(bearer, { name: 'x'.repeat(81), altitudeM: 1e9, currency: 'euro' });
+    expectProblem(response, 'not-valid', ['/name', '/altitudeM', '/currency', '/version']);
   });
 
   it('changes it once for one version, and writes down who did', async () => {
     const { bearer, house, member } = await signInAs(testApp, 'owner');
-    const body = { name: 'Blue Gate 🍃', altitudeM: 840.5, version: 1 };
+    const body = { name: 'Blue Gate 🍃', altitudeM: 840.5, currency: 'NOK', version: 1 };
     const changed = await patch(bearer, body);
-    expect(changed.body).toEqual({ id: house.id, name: 'Blue Gate 🍃', altitudeM: 840.5, version: 2 });
+    expect(changed.body).toEqual({ id: house.id, ...body, version: 2 });
     expectProblem(await patch(bearer, body), 'changed-meanwhile');
     const read = await request(testApp.url).get('/api/house').set('authorization', bearer);
     expect(read.body).toEqual(changed.body);

@@ -108,3 +108,33 @@ describe('PATCH /api/members/:id', () => {
     );
   });
 });
+
+describe('PATCH /api/me/units', () => {
+  const units = { temperature: 'F', mass: 'oz', volume: 'gal', pressure: 'psi' };
+  const setUnits = (who: SignedInMember, body: object) =>
+    request(testApp.url).patch('/api/me/units').set('authorization', who.bearer).send(body);
+  const me = (who: SignedInMember) => request(testApp.url).get('/api/me').set('authorization', who.bearer);
+
+  it('is metric until somebody chooses, and then theirs alone', async () => {
+    const taster = await signInAs(testApp, 'taster', { house: owner.house });
+    expect((await me(taster)).body).toMatchObject({
+      member: { units: { temperature: 'C', mass: 'g', volume: 'L', pressure: 'kPa' } },
+    });
+    for (let n = 0; n < 2; n += 1) {
+      const answer = await setUnits(taster, units);
+      expect(answer.status).toBe(200);
+      expect(answer.body).toMatchObject({ id: taster.member.id, units });
+    }
+    expect((await me(taster)).body).toMatchObject({ member: { units } });
+    expect((await me(owner)).body).toMatchObject({ member: { units: { temperature: 'C' } } });
+  });
+
+  it('needs a sign-in, and units that there are', async () => {
+    expectProblem(await request(testApp.url).patch('/api/me/units').send(units), 'not-signed-in');
+    expectProblem(await setUnits(owner, { ...units, temperature: 'K', mass: 1e9 }), 'not-valid', [
+      '/temperature',
+      '/mass',
+    ]);
+    expectProblem(await setUnits(owner, { temperature: 'F' }), 'not-valid');
+  });
+});

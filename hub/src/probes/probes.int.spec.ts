@@ -15,7 +15,7 @@ beforeAll(async () => {
 afterEach(() => closeSockets());
 afterAll(() => testApp.close());
 
-const call = (method: 'get' | 'post' | 'delete', path = '', who: SignedInMember = brewer) =>
+const call = (method: 'get' | 'post' | 'patch' | 'delete', path = '', who: SignedInMember = brewer) =>
   request(testApp.url)[method](`/api/probes${path}`).set('authorization', who.bearer);
 const values = { name: 'Kettle probe', lagS: 7.5, resolutionC: 0.0625, samplePeriodS: 1 };
 const push = (deviceToken: string) =>
@@ -52,7 +52,16 @@ describe('/api/probes', () => {
     const created = await call('post').send(values);
     expect(created.status).toBe(201);
     const { probe, deviceToken } = created.body as { probe: { id: string }; deviceToken: string };
-    expect(probe).toEqual({ id: probe.id, ...values, isSimulated: false, isRevoked: false, lastReadingAtMs: null });
+    expect(probe).toEqual({
+      id: probe.id,
+      ...values,
+      isSimulated: false,
+      isRevoked: false,
+      lastReadingAtMs: null,
+      calibration: null,
+      calibratedAtMs: null,
+      version: 1,
+    });
     expect(deviceToken).toMatch(new RegExp(`^${probe.id.replaceAll('-', '')}\\.[\\w-]{43}$`));
     const row = await modelOf(testApp, Probe).findByPk(probe.id);
     expect(JSON.stringify(row)).not.toContain(deviceToken.split('.')[1]);
@@ -102,5 +111,53 @@ describe('/api/probes', () => {
     expect((await call('get', '', stranger)).body).toEqual([]);
     expectProblem(await call('post', `/${probe.id}/token`, stranger), 'not-found');
     expectProblem(await call('delete', `/${probe.id}/token`, stranger), 'not-found');
+  });
+});
+
+const calibration = { low: { shownC: 0.4, trueC: 0 }, high: { shownC: 97.9, trueC: 98.31 } };
+
+describe('PATCH /api/probes/:id', () => {
+  it('changes it at a version, and refuses the old version', async () => {
+    const { probe } = await buildProbe(testApp, brewer.house);
+    const change = { ...values, name: 'Long finger', lagS: 12.5, calibration, version: 1 };
+    const beforeMs = Date.now();
+    const changed = await call('patch', `/${probe.id}`).send(change);
+    expect(changed.body).toMatchObject({ id: probe.id, ...change, version: 2 });
+    const { calibratedAtMs } = changed.body as { calibratedAtMs: number };
+    expect(calibratedAtMs).toBeGreaterThanOrEqual(beforeMs);
+    expectProblem(await call('patch', `/${probe.id}`).send(change), 'changed-meanwhile');
+    // A new name is no new calibration.
+    const renamed = await call('patch', `/${probe.id}`).send({ ...change, name: 'Finger', version: 2 });
+    expect(renamed.body).toMatchObject({ name: 'Finger', calibration, calibratedAtMs, version: 3 });
+    const cleared = await call('patch', `/${probe.id}`).send({ ...change, calibration: null, version: 3 });
+    expect(cleared.body).toMatchObject({ calibration: null, calibratedAtMs: null });
+  });
+
+  it.each([
+    ['swapped points', { low: calibration.high, high: calibration.low }, '/calibration/high/shownC', /swapped/],
+    ['a bad slope', { ...calibration, high: { shownC: 93, trueC: 98.31 } }, '/calibration/high/shownC', /3 %/],
+    [
+      'a bad ice bath',
+      { low: { shownC: 3, trueC: 0 }, high: { shownC: 101.2, trueC: 98.31 } },
+      '/calibration/low/shownC',
+      /ice bath/,
+    ],
+    ['letters', { ...calibration, low: { shownC: 'cold', trueC: 0 } }, '/calibration/low/shownC', /./],
+    ['1e9', { ...calibration, high: { shownC: 1e9, trueC: 98.31 } }, '/calibration/high/shownC', /./],
+    ['NaN', { ...calibration, low: { shownC: Number.NaN, trueC: 0 } }, '/calibration/low/shownC', /./],
+  ])('refuses %s, says where, and keeps what it had', async (_case, bad, pointer, words) => {
+    const { probe } = await buildProbe(testApp, brewer.house);
+    const response = await call('patch', `/${probe.id}`).send({ ...values, calibration: bad, version: 1 });
+    expectProblem(response, 'not-valid', [pointer]);
+    expect((response.body as { errors: { detail: string }[] }).errors[0]?.detail).toMatch(words);
+    expect(await modelOf(testApp, Probe).findByPk(probe.id)).toMatchObject({ calibration: null, version: 1 });
+  });
+
+  it('is for those who look after the kit, of this house', async () => {
+    const { probe } = await buildProbe(testApp, brewer.house);
+    const body = { ...values, calibration: null, version: 1 };
+    const hand = await signInAs(testApp, 'hand', { house: brewer.house });
+    expectProblem(await call('patch', `/${probe.id}`, hand).send(body), 'not-allowed');
+    expectProblem(await call('patch', `/${probe.id}`, await signInAs(testApp, 'owner')).send(body), 'not-found');
   });
 });
