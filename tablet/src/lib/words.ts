@@ -33,6 +33,12 @@ export function spanWords(durationS: number): string {
   return rest === 0 ? `${hours} h` : `${hours} h ${rest} min`;
 }
 
+/** "sencha, Cascade and citric acid". */
+export function listWords(names: readonly string[]): string {
+  if (names.length < 2) return names[0] ?? '';
+  return `${names.slice(0, -1).join(', ')} and ${names.at(-1)}`;
+}
+
 /** What happened and what to do, for a person. */
 export function failureWords(error: unknown): string {
   if (error instanceof HubUnreachableError) {
