@@ -1,8 +1,11 @@
 import { Module } from '@nestjs/common';
 import { SequelizeModule } from '@nestjs/sequelize';
+import { AttachmentsModule } from '../attachments/attachments.module.js';
 import { AuditModule } from '../audit/audit.module.js';
 import { MembersModule } from '../members/members.module.js';
 import { LedgerService } from './ledger.service.js';
+import { LotPhotosController } from './lot-photos.controller.js';
+import { LotPhotosService } from './lot-photos.service.js';
 import { Ingredient } from './models/ingredient.model.js';
 import { LotMove } from './models/lot-move.model.js';
 import { LotReservation } from './models/lot-reservation.model.js';
@@ -13,9 +16,14 @@ import { StoresController } from './stores.controller.js';
 import { StoresService } from './stores.service.js';
 
 @Module({
-  imports: [SequelizeModule.forFeature([Ingredient, Lot, LotMove, LotReservation]), AuditModule, MembersModule],
-  controllers: [StoresController],
-  providers: [StoresService, StockBook, ShelfService, LedgerService],
+  imports: [
+    SequelizeModule.forFeature([Ingredient, Lot, LotMove, LotReservation]),
+    AttachmentsModule,
+    AuditModule,
+    MembersModule,
+  ],
+  controllers: [StoresController, LotPhotosController],
+  providers: [StoresService, StockBook, ShelfService, LedgerService, LotPhotosService],
   exports: [StoresService],
 })
 export class StoresModule {}

@@ -26,3 +26,13 @@ export function AnswersNothing() {
     ApiResponse({ status: 'default', standardSchema: problemSchema, description: 'A problem (RFC 9457)' }),
   );
 }
+
+/** For handlers that answer with a file of this media type. */
+export function AnswersFile(mediaType: string) {
+  const schema = { type: 'string', format: 'binary' };
+  return applyDecorators(
+    HttpCode(200),
+    ApiResponse({ status: 200, content: { [mediaType]: { schema } }, description: 'Done' }),
+    ApiResponse({ status: 'default', standardSchema: problemSchema, description: 'A problem (RFC 9457)' }),
+  );
+}
