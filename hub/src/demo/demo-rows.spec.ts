@@ -1,8 +1,9 @@
 import { createMemberSchema } from '@steepfall/shared/contracts';
 import { foldRun, runEventSchema, type RunEvent } from '@steepfall/shared/runs';
-import { recipeDocumentSchema } from '@steepfall/shared/sheets';
+import { checkSheet, compileSheet, recipeDocumentSchema } from '@steepfall/shared/sheets';
 import { beforeAll, describe, expect, it } from 'vitest';
-import { demoId, demoRecipe, demoSignIns } from './demo-house.js';
+import { demoHouse, demoId, demoSignIns } from './demo-house.js';
+import { demoRecipes } from './demo-recipes.js';
 import { demoTables, localDate, type Row, type Tables } from './demo-rows.js';
 
 const NOW_MS = new Date(2026, 4, 20, 7, 30).getTime();
@@ -33,8 +34,20 @@ describe(demoTables, () => {
   });
 
   it('holds what the contracts ask of everybody else', () => {
-    for (const { document } of demoRecipe.revisions) expect(recipeDocumentSchema.parse(document)).toEqual(document);
+    for (const { document } of demoRecipes.flatMap(({ revisions }) => revisions))
+      expect(recipeDocumentSchema.parse(document)).toEqual(document);
     for (const member of demoSignIns) expect(createMemberSchema.parse(member)).toEqual(member);
+  });
+
+  it('has recipes of which a sheet can be made, each revision another than the one before', () => {
+    for (const { revisions } of demoRecipes) {
+      const documents = revisions.map(({ document }) => document);
+      for (const document of documents)
+        expect(checkSheet(compileSheet(document, { altitudeM: demoHouse.altitudeM, reachS: 10 }))).toEqual([]);
+      expect(new Set(documents.map((document) => JSON.stringify(document))).size).toBe(documents.length);
+    }
+    const saved = rowsOf('recipe_revisions').map((row) => Number(row['created_at_ms']));
+    expect(saved.every((atMs) => atMs < NOW_MS)).toBe(true);
   });
 
   it('tells a day that went to its end without a clash', () => {

@@ -5,7 +5,8 @@ import { formatBatchNumber } from '../batches/batch-number.js';
 import { hashPassword } from '../common/passwords.js';
 import { kettleSetupOf } from '../rehearsals/kettle-setup.js';
 import { projectionOf } from '../runs/projection.js';
-import { demoEquipment, demoHouse, demoId, demoMemberId, demoProbe, demoRecipe, demoSignIns } from './demo-house.js';
+import { demoEquipment, demoHouse, demoId, demoMemberId, demoProbe, demoSignIns } from './demo-house.js';
+import { demoRecipes, oolongRecipe, senchaRecipe, type DemoRecipe } from './demo-recipes.js';
 import { recordDay } from './recorded-day.js';
 
 export type Row = Record<string, string | number | boolean | null>;
@@ -35,9 +36,8 @@ export async function demoTables(nowMs: number): Promise<Tables> {
   const owned = { house_id: houseId };
   const brewedAtMs = localTime(nowMs - 5 * DAY_MS, 8, 14);
   const madeAtMs = localTime(nowMs - 9 * DAY_MS, 19, 30);
-  const createdBy = demoMemberId('brewer');
   const probeId = demoId('probe');
-  const brewed = { id: demoId('batch/brewed'), revision: demoRecipe.revisions[0] };
+  const brewed = { id: demoId('batch/brewed'), revision: senchaRecipe.revisions[0] };
   const finished = finishedRun(brewed.id, batchNumberOf(brewedAtMs, 1), brewedAtMs, probeId);
   const endedAtMs = finished.run['ended_at_ms'] as number;
   const today = plannedBatch(demoId('batch/today'), nowMs, isSameYear(brewedAtMs, nowMs) ? 2 : 1);
@@ -96,21 +96,24 @@ export async function demoTables(nowMs: number): Promise<Tables> {
     ],
     [
       'recipes',
-      [{ ...owned, id: demoRecipe.id, name: demoRecipe.name, summary: demoRecipe.summary, created_at_ms: madeAtMs }],
+      demoRecipes.map(({ id, name, summary }, index) => ({
+        ...owned,
+        id,
+        name,
+        summary,
+        // The first is the one that a rehearsal practises.
+        created_at_ms: madeAtMs + index,
+      })),
     ],
     [
       'recipe_revisions',
-      demoRecipe.revisions.map(({ id, note, document }, index) => ({
-        ...owned,
-        id,
-        recipe_id: demoRecipe.id,
-        number: index + 1,
-        note,
-        created_at_ms: index === 0 ? madeAtMs : endedAtMs + 600_000,
-        created_by: createdBy,
-        volume_l: document.volumeL,
-        document: JSON.stringify(document),
-      })),
+      [
+        ...revisionRows(senchaRecipe, [madeAtMs, endedAtMs + 600_000]),
+        ...revisionRows(
+          oolongRecipe,
+          [7, 6, 2].map((daysAgo) => localTime(nowMs - daysAgo * DAY_MS, 20, 40)),
+        ),
+      ],
     ],
     [
       'batches',
@@ -129,6 +132,20 @@ export async function demoTables(nowMs: number): Promise<Tables> {
   ];
 }
 
+function revisionRows({ id: recipeId, revisions }: DemoRecipe, savedAtMs: readonly number[]): Row[] {
+  return revisions.map(({ id, note, document }, index) => ({
+    house_id: demoHouse.id,
+    id,
+    recipe_id: recipeId,
+    number: index + 1,
+    note,
+    created_at_ms: savedAtMs[index] as number,
+    created_by: demoMemberId('brewer'),
+    volume_l: document.volumeL,
+    document: JSON.stringify(document),
+  }));
+}
+
 function isSameYear(aMs: number, bMs: number): boolean {
   return localDate(aMs).slice(0, 4) === localDate(bMs).slice(0, 4);
 }
@@ -139,7 +156,7 @@ function batchNumberOf(atMs: number, numberInYear: number): string {
 
 /** A batch of the newest revision, planned for the day of this instant. */
 export function plannedBatch(id: string, atMs: number, numberInYear: number): Row {
-  const newest = demoRecipe.revisions[1];
+  const newest = senchaRecipe.revisions[1];
   return {
     id,
     house_id: demoHouse.id,
@@ -165,12 +182,12 @@ function finishedRun(
   probeId: string,
 ): { run: Row; events: Row[]; readings: Row[] } {
   const { altitudeM } = demoHouse;
-  const revision = demoRecipe.revisions[0];
+  const revision = senchaRecipe.revisions[0];
   const { document } = revision;
   const coolantC = demoEquipment.coil.facts.coolantC;
   const runId = demoId('run');
   const memberId = demoMemberId('brewer');
-  const title = `${demoRecipe.name} ${document.volumeL} L`;
+  const title = `${senchaRecipe.name} ${document.volumeL} L`;
   const clock = wallClock(startedAtMs);
   let serial = 0;
   const newId = () => {
