@@ -1,6 +1,9 @@
 import { describe, expect, it } from 'vitest';
 import { co2MolPerLFromVolumes } from '../gas/co2-volumes.js';
+import { hco3FromCaCo3 } from '../water/alkalinity.js';
+import { pureWater } from '../water/ions.js';
 import { saltedWater } from '../water/salts.js';
+import { acidDose } from './acid-dose.js';
 import { acidMolPerL } from './acids.js';
 import { drinkPh, drinkPhBand } from './drink-ph.js';
 import type { DrinkAcidity } from './drink-acidity.js';
@@ -24,6 +27,28 @@ describe('pH of a drink', () => {
     ['at 3 volumes, 4 °C', { ...drink, co2MolPerL: co2MolPerLFromVolumes(3), tempC: 4 }, 3.72],
   ])('Goldberg 2002 and Davies, computed: %s', (_name, liquid, expected) => {
     expect(Math.abs(drinkPh(liquid).ph - expected)).toBeLessThan(0.01);
+  });
+
+  it.each([
+    [3.5, 3.45],
+    [3.7, 3.61],
+    [4.2, 3.93],
+  ])('Plummer and Busenberg 1982, computed: a still pH of %s is %s at 3 volumes', (still, gassed) => {
+    const dose = acidDose({ ...drink, acidsMolPerL: {} }, still, 'citricAnhydrous');
+    if (dose.kind !== 'add') throw new Error('must add');
+    const liquid = { ...drink, acidsMolPerL: { citric: dose.molPerL }, co2MolPerL: co2MolPerLFromVolumes(3) };
+    expect(Math.abs(drinkPh(liquid).ph - gassed)).toBeLessThan(0.03);
+  });
+
+  it('Plummer and Busenberg 1982, computed: without acid 5.5 is 4.2; cold water of 1 meq/L alkalinity at 0.12 mol/L 4.4', () => {
+    const bare = { ...drink, acidsMolPerL: {} };
+    expect(Math.abs(drinkPh(bare).ph - 5.5)).toBeLessThan(0.1);
+    expect(Math.abs(drinkPh({ ...bare, co2MolPerL: co2MolPerLFromVolumes(3) }).ph - 4.2)).toBeLessThan(0.1);
+    const hco3 = hco3FromCaCo3(50.043);
+    const hard = { ...pureWater, hco3, na: 22.99 };
+    expect(
+      Math.abs(drinkPh({ ...bare, water: hard, leafBaseMeqPerL: 0, co2MolPerL: 0.12, tempC: 8 }).ph - 4.4),
+    ).toBeLessThan(0.05);
   });
 
   it('judgement (factor of two on the leaf): 3.23 to 3.50 after the tea, 3.53 to 4.09 after the hops', () => {

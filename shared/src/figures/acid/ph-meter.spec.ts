@@ -20,8 +20,14 @@ describe('pH meter', () => {
 
   it.each([
     ['seven', 0, 7.12],
+    ['seven', 5, 7.09],
+    ['seven', 20, 7.02],
     ['seven', 22.5, 7.01],
+    ['seven', 25, 7.0],
+    ['seven', 30, 6.99],
     ['seven', 40, 6.98],
+    ['ten', 0, 10.32],
+    ['ten', 20, 10.06],
     ['ten', 25, 10.01],
     ['ten', 40, 9.89],
   ] as const)('technical buffer table, MI 611-211: %s at %s °C is %s', (buffer, tempC, ph) => {

@@ -23,6 +23,13 @@ describe('serving line', () => {
     expect(lineDrop(5, 4.7625).kPaPerM).toBeCloseTo(direct, 9);
   });
 
+  it('White, Fluid Mechanics (from memory): tables of the trade are not this; a bore of 4.0 mm is 2.3 times', () => {
+    const psiPerFoot = (boreMm: number) => lineDrop(59.15, boreMm).kPaPerM * 0.3048 * 0.1450377;
+    expect(Math.abs(0.85 / psiPerFoot(6.35) - 2.1)).toBeLessThan(0.1);
+    expect(Math.abs(0.1 / psiPerFoot(7.94) - 0.7)).toBeLessThan(0.05);
+    expect(Math.abs(lineDrop(59.15, 4).kPaPerM / lineDrop(59.15, 4.7625).kPaPerM - 2.3)).toBeLessThan(0.05);
+  });
+
   it.each([
     [59.15, 1.86],
     [30, 7.03],

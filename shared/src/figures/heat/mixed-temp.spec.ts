@@ -28,6 +28,12 @@ describe('mixedTempC', () => {
     },
   );
 
+  it('energy balance (leaf from memory): 100 g of dry tea in 9 kg of water costs about 0.3 K', () => {
+    const leaf = { massG: 100, specificHeatJPerKgK: 1600, tempC: 20 };
+    const tempC = mixedTempC([{ massG: 9000, specificHeatJPerKgK: 4186, tempC: 82 }, leaf]);
+    expect(Math.abs(82 - tempC - 0.3)).toBeLessThan(0.05);
+  });
+
   it('refuses nothing at all, and a negative mass', () => {
     expect(() => mixedTempC([])).toThrow(RangeError);
     expect(() => mixedTempC([{ ...coil, massG: -5 }])).toThrow(RangeError);

@@ -16,6 +16,14 @@ describe('power-law cooling', () => {
     expect(Math.abs(answer / durationS - 1)).toBeLessThan(0.003);
   });
 
+  it('heat balance, computed: the full model takes 507 s, a straight line says 446, a power of 2.2 to 2.4 is within 8 s', () => {
+    const steep = { ...pot, fallCPerS: 0.01346 };
+    expect(Math.abs(6 / steep.fallCPerS - 446)).toBeLessThan(0.5);
+    for (const exponent of [2.2, 2.4]) {
+      expect(Math.abs((powerLawDurationS({ ...steep, exponent }, 77) ?? 0) - 507)).toBeLessThan(8);
+    }
+  });
+
   it('comes back from temperature to time', () => {
     const exponents = fc.constantFrom(...Object.values(coolingExponent));
     fc.assert(

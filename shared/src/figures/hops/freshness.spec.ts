@@ -8,6 +8,11 @@ describe('freshness of hops', () => {
     expect(alphaLossPercent(0.22)).toBe(0);
   });
 
+  it('Nickerson and Likens 1979: laboratories differ by 2.8 % in the index, 1.3 points in the loss', () => {
+    expect(Math.abs(alphaLossPercent(0.4 * 1.028) - alphaLossPercent(0.4) - 1.3)).toBeLessThan(0.05);
+    expect(alphaLossPercent(0.4, 101.8)).toBeLessThan(alphaLossPercent(0.4, 114.6));
+  });
+
   it('Purdue 2020: 14.5 to 23.4 % lost in 168 days', () => {
     const now = alphaNowPercent({ harvestPercent: 10, ageDays: 168 });
     expect(100 - 10 * now.high).toBeCloseTo(14.5, 0);
