@@ -2,7 +2,8 @@ import { standingAlerts, type Alert, type AlertStage, type RunState } from '@ste
 import type { AlarmLevel, Ring } from '#lib/audio/alarm-sounds.ts';
 import { alertStageId } from '#lib/run-store/take-over.ts';
 import type { LiveState } from '#lib/run-store/run-store.ts';
-import { formatDuration, formatTemp } from '@steepfall/shared/units';
+import { formatLevel } from '#lib/units.ts';
+import { formatDuration, type UnitPreferences } from '@steepfall/shared/units';
 
 const levelOf: Record<AlertStage, AlarmLevel> = {
   'coming-up': 'coming-up',
@@ -35,6 +36,6 @@ export function dueText(atMs: number | null, nowMs: number): string | null {
 }
 
 /** The level in words without false digits: "62 °C". */
-export function alertLevel({ targetC }: Pick<Alert, 'targetC'>): string | null {
-  return targetC === null ? null : formatTemp(targetC, { unit: 'C', digits: Number.isInteger(targetC) ? 0 : 1 });
+export function alertLevel({ targetC }: Pick<Alert, 'targetC'>, units: UnitPreferences): string | null {
+  return targetC === null ? null : formatLevel(targetC, units);
 }

@@ -3,6 +3,7 @@ import { PressButton } from '#components/press-button.tsx';
 import { ShapeGlyph } from '#components/shapes.tsx';
 import { alarmSounds } from '#lib/audio/alarm-sounds.ts';
 import { useLive, useRunState, useRunStore } from '#lib/run-store/run-context.tsx';
+import { useUnits } from '#lib/units.ts';
 import { alertLevel, dueAtMs, dueText } from './alert-level.ts';
 import { useSoundOff } from './use-sound-off.ts';
 
@@ -18,11 +19,12 @@ export function AlertStrips() {
 }
 
 function Strip({ alert }: { alert: Alert }) {
+  const units = useUnits();
   const state = useRunState();
   const store = useRunStore();
   const due = useLive((live) => dueText(dueAtMs(alert, live), live.nowMs));
   const { verb } = alertWords(state, alert);
-  const number = alertLevel(alert);
+  const number = alertLevel(alert, units);
   const { key, crossing, stage } = alert;
   const isSoundOff = useSoundOff();
   const acknowledge = () => {

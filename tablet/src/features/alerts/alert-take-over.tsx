@@ -14,6 +14,7 @@ import { ShapeGlyph } from '#components/shapes.tsx';
 import { alarmSounds } from '#lib/audio/alarm-sounds.ts';
 import { useLive, useRun, useRunState } from '#lib/run-store/run-context.tsx';
 import { alertStageId, heardCommands, takeOverAlert } from '#lib/run-store/take-over.ts';
+import { useUnits } from '#lib/units.ts';
 import { alertLevel, dueAtMs, dueText } from './alert-level.ts';
 import { useSoundOff } from './use-sound-off.ts';
 
@@ -41,10 +42,11 @@ function stepsUpTo(state: RunState, stepId: string | null): StepProgress[] {
 
 function TakeOver({ alert, onComplete, onAct, refusal }: AlertTakeOverProps & { alert: Alert }) {
   const { state, isJoined } = useRun();
+  const units = useUnits();
   const heading = useRef<HTMLHeadingElement>(null);
   const due = useLive((live) => dueText(dueAtMs(alert, live), live.nowMs));
-  const { verb, amounts, sentence } = alertWords(state, alert);
-  const number = alertLevel(alert);
+  const { verb, amounts, sentence } = alertWords(state, alert, units.temperature);
+  const number = alertLevel(alert, units);
   const current = currentStep(state);
   const path = stepsUpTo(state, alert.actStepId);
   const forgotten = path.slice(0, -1).find(({ step }) => step.done.by === 'hand' || step.done.by === 'measurement');
@@ -93,7 +95,7 @@ function TakeOver({ alert, onComplete, onAct, refusal }: AlertTakeOverProps & { 
         <p role="alert" className="sr-only">
           {sentence}{' '}
           {amounts
-            .map(({ name, massG, bag }) => `${formatMass(massG, { unit: 'g' })} ${name}${bag ? `, ${bag}` : ''}`)
+            .map(({ name, massG, bag }) => `${formatMass(massG, { unit: units.mass })} ${name}${bag ? `, ${bag}` : ''}`)
             .join('. ')}
         </p>
         <div className="take-over-line">
@@ -106,7 +108,7 @@ function TakeOver({ alert, onComplete, onAct, refusal }: AlertTakeOverProps & { 
           <ul className="take-over-amounts" data-many={amounts.length > 2 || undefined}>
             {amounts.map(({ name, massG, bag }) => (
               <li key={name}>
-                {formatMass(massG, { unit: 'g' })} {name}
+                {formatMass(massG, { unit: units.mass })} {name}
                 {bag ? <span className="step-bag">{bag}</span> : null}
               </li>
             ))}

@@ -1,12 +1,14 @@
 import type { Member } from '@steepfall/shared/contracts';
 import type { RunState } from '@steepfall/shared/runs';
 import { LevelRule } from '#components/level-rule.tsx';
+import { useUnits } from '#lib/units.ts';
 import { clockTime } from '#lib/words.ts';
 import { accountOf, measurementWords } from './run-account.ts';
 
 /** What was planned with a number and what came of it; then what was measured and noted. */
 export function Account({ state, members }: { state: RunState; members: readonly Member[] }) {
-  const rows = accountOf(state);
+  const units = useUnits();
+  const rows = accountOf(state, units);
   const who = (memberId: string | null) => members.find(({ id }) => id === memberId)?.displayName;
   return (
     <div className="grid gap-x-14 gap-y-12 xl:grid-cols-[1.2fr_1fr]">
@@ -53,7 +55,7 @@ export function Account({ state, members }: { state: RunState; members: readonly
         <ul className="grid gap-4">
           {state.measurements.map(({ eventId, quantity, value, atMs, by, stepId }) => (
             <li key={eventId} className="flex flex-wrap items-baseline gap-x-4">
-              <span className="text-title tabular-nums">{measurementWords(quantity, value)}</span>
+              <span className="text-title tabular-nums">{measurementWords(quantity, value, units)}</span>
               <span className="text-body text-soft">
                 {titleOf(state, stepId)} {clockTime(atMs)}
                 {who(by) ? `, ${who(by)}` : ''}

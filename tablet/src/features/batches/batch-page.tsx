@@ -8,6 +8,7 @@ import { Failed, Waiting } from '#components/quiet-state.tsx';
 import { batchQuery } from '#lib/hub-queries.ts';
 import { HubProblemError } from '#lib/http.ts';
 import { useMay } from '#lib/session.ts';
+import { useUnits } from '#lib/units.ts';
 import { calendarDay, failureWords } from '#lib/words.ts';
 import { BatchStatus } from './batch-status.tsx';
 import { RunRecord } from './run-record.tsx';
@@ -15,6 +16,7 @@ import { RunRecord } from './run-record.tsx';
 export function BatchPage() {
   const { batchId = '' } = useParams();
   const may = useMay();
+  const units = useUnits();
   const batch = useQuery({ ...batchQuery(batchId), refetchInterval: 15_000 });
   if (!batch.data) {
     const isGone = batch.error instanceof HubProblemError && batch.error.problem.status === 404;
@@ -41,7 +43,7 @@ export function BatchPage() {
           <BatchStatus status={status} />
         </span>
       }
-      lead={`${calendarDay(plannedOn)} · ${formatVolume(volumeL, { unit: 'L' })} · revision ${revisionNumber}`}
+      lead={`${calendarDay(plannedOn)} · ${formatVolume(volumeL, { unit: units.volume })} · revision ${revisionNumber}`}
       action={
         run?.status === 'running' && may('runs:read') ? (
           <ButtonLink look="primary" size="sheet" to={`/runs/${run.id}`}>

@@ -22,6 +22,7 @@ import { Failed, Waiting } from '#components/quiet-state.tsx';
 import { Segmented } from '#components/segmented.tsx';
 import { batchesQuery } from '#lib/hub-queries.ts';
 import { useKnown, useMay } from '#lib/session.ts';
+import { useUnits } from '#lib/units.ts';
 import { calendarDay, failureWords } from '#lib/words.ts';
 import { BatchStatus } from './batch-status.tsx';
 
@@ -60,7 +61,7 @@ const columns = [
   column.accessor('volumeL', {
     header: 'Volume',
     meta: { isNumber: true },
-    cell: ({ getValue }) => formatVolume(getValue(), { unit: 'L' }),
+    cell: ({ getValue }) => <VolumeText volumeL={getValue()} />,
   }),
   column.accessor('status', {
     header: 'State',
@@ -68,6 +69,10 @@ const columns = [
     cell: ({ getValue }) => <BatchStatus status={getValue()} />,
   }),
 ];
+
+function VolumeText({ volumeL }: { volumeL: number }) {
+  return formatVolume(volumeL, { unit: useUnits().volume });
+}
 
 const none: Batch[] = [];
 

@@ -1,10 +1,17 @@
 import { useEffect, useMemo, useRef, useState } from 'react';
-import { formatTemp } from '@steepfall/shared/units';
+import {
+  celsiusToFahrenheit,
+  fahrenheitToCelsius,
+  formatTemp,
+  inUnit,
+  kelvinToFahrenheitDegrees,
+} from '@steepfall/shared/units';
 import uPlot from 'uplot';
 import 'uplot/dist/uPlot.min.css';
 import { directionDress } from '#components/direction-dress.ts';
 import type { LinePoint, Stretch } from '#lib/liquid-line.ts';
 import { useGround } from '#lib/theme.ts';
+import { useUnits } from '#lib/units.ts';
 import { clockTime } from '#lib/words.ts';
 import { footnotesOf, layoutFlags, PENNANT_PX, type Flag, type PlacedFlag } from './flag-layout.ts';
 
@@ -70,6 +77,16 @@ function rangeOf({ line, levels, fromMs, toMs, isClose }: Omit<CurveProps, 'flag
   return { low: low - margin, high: high + margin };
 }
 
+const STEPS_F = [1, 2, 5, 10, 20, 50, 100];
+
+/** The lines of the axis lie on round numbers of the person's unit, about as far apart as uPlot would have them. */
+function fahrenheitSplits(_plot: uPlot, _axis: number, lowC: number, highC: number, stepC: number): number[] {
+  const step = STEPS_F.find((choice) => choice >= kelvinToFahrenheitDegrees(stepC)) ?? 100;
+  const first = Math.ceil(celsiusToFahrenheit(lowC) / step);
+  const last = Math.floor(celsiusToFahrenheit(highC) / step);
+  return Array.from({ length: Math.max(0, last - first + 1) }, (_, i) => fahrenheitToCelsius((first + i) * step));
+}
+
 function temperatureAt(line: readonly LinePoint[], atMs: number): number | null {
   const index = line.findIndex((point) => point.atMs >= atMs);
   if (index < 0) return line.at(-1)?.tempC ?? null;
@@ -92,6 +109,7 @@ export function Curve({ line, stretches, levels, flags, fromMs, toMs, isClose }:
   const readout = useRef<HTMLParagraphElement>(null);
   const [geometry, setGeometry] = useState<Geometry | null>(null);
   const ground = useGround();
+  const { temperature: unit } = useUnits();
   const lanes = Math.min(MOST_LANES, flags.length);
 
   useEffect(() => {
@@ -121,7 +139,8 @@ export function Curve({ line, stretches, levels, flags, fromMs, toMs, isClose }:
           ...axis,
           grid: { stroke: cssColor('--hair'), width: 1 },
           size: 52,
-          values: (_plot, splits) => splits.map((tempC) => `${tempC}°`),
+          ...(unit === 'F' ? { splits: fahrenheitSplits } : {}),
+          values: (_plot, splits) => splits.map((tempC) => `${Number(inUnit('temperature', tempC, unit).toFixed(1))}°`),
         },
       ],
       hooks: {
@@ -144,9 +163,7 @@ export function Curve({ line, stretches, levels, flags, fromMs, toMs, isClose }:
             if (!readout.current) return;
             const index = plot.cursor.idx;
             const point = index === null || index === undefined ? undefined : line[index];
-            readout.current.textContent = point
-              ? `${clockTime(point.atMs)}  ${formatTemp(point.tempC, { unit: 'C' })}`
-              : '';
+            readout.current.textContent = point ? `${clockTime(point.atMs)}  ${formatTemp(point.tempC, { unit })}` : '';
           },
         ],
       },
@@ -159,7 +176,7 @@ export function Curve({ line, stretches, levels, flags, fromMs, toMs, isClose }:
       observer.disconnect();
       plot.destroy();
     };
-  }, [line, stretches, levels, fromMs, toMs, isClose, lanes, ground]);
+  }, [line, stretches, levels, fromMs, toMs, isClose, lanes, ground, unit]);
 
   return (
     <div className="relative" aria-hidden="true">
@@ -180,6 +197,7 @@ function Overlay({
   lanes,
 }: Omit<CurveProps, 'stretches' | 'isClose'> & { geometry: Geometry; lanes: number }) {
   const { left, top, width, height, minC, maxC } = geometry;
+  const { temperature: unit } = useUnits();
   const isNarrow = width < NARROW_PX;
   const levelsInSight = levels.filter(({ tempC }) => tempC >= minC && tempC <= maxC);
   const xOf = (atMs: number) => ((atMs - fromMs) / (toMs - fromMs)) * width;
@@ -208,7 +226,7 @@ function Overlay({
     });
   /** At the right end of the level, or where the first free place is from there; its number alone if there is none for the words. */
   const labelOf = ({ tempC, title }: Level): { text: string; endX: number } => {
-    const number = formatTemp(tempC, { unit: 'C' });
+    const number = formatTemp(tempC, { unit });
     const [upper, lower] = [yOf(tempC) - 24, yOf(tempC) - 2];
     for (const text of isNarrow ? [number] : [`${title} ${number}`, number]) {
       const px = text.length * LETTER_PX;

@@ -3,6 +3,7 @@ import { createColumnHelper, getCoreRowModel, getPaginationRowModel, useReactTab
 import { formatDuration, formatTemp } from '@steepfall/shared/units';
 import { DataTable } from '#components/data-table.tsx';
 import { clockTime } from '#lib/words.ts';
+import { useUnits } from '#lib/units.ts';
 import type { LinePoint } from '#lib/liquid-line.ts';
 import type { Flag } from './flag-layout.ts';
 import { lineRows, type LineRow } from './record-view.ts';
@@ -18,6 +19,7 @@ const column = createColumnHelper<LineRow>();
 
 /** The recorded line as numbers. */
 export function LineTable({ line, flags, startedAtMs }: LineTableProps) {
+  const { temperature } = useUnits();
   const rows = useMemo(() => lineRows(line, flags), [line, flags]);
   const columns = useMemo(
     () => [
@@ -36,7 +38,7 @@ export function LineTable({ line, flags, startedAtMs }: LineTableProps) {
         header: 'Liquid',
         enableSorting: false,
         meta: { isNumber: true },
-        cell: ({ getValue }) => formatTemp(getValue(), { unit: 'C' }),
+        cell: ({ getValue }) => formatTemp(getValue(), { unit: temperature }),
       }),
       column.accessor('happened', {
         header: 'What happened',
@@ -44,7 +46,7 @@ export function LineTable({ line, flags, startedAtMs }: LineTableProps) {
         cell: ({ getValue }) => <span className="font-medium">{getValue()}</span>,
       }),
     ],
-    [startedAtMs],
+    [startedAtMs, temperature],
   );
   // eslint-disable-next-line react-hooks/incompatible-library -- its functions are used in this render only
   const table = useReactTable({

@@ -1,10 +1,17 @@
 import type { Alert, LogEntry, RunEventOf, RunState, StepProgress } from '@steepfall/shared/runs';
 import { alertWords } from '@steepfall/shared/runs';
-import { formatDuration, formatTemp } from '@steepfall/shared/units';
+import type { DoneCondition, MeasuredQuantity } from '@steepfall/shared/sheets';
+import {
+  formatDuration,
+  formatMass,
+  formatPressure,
+  formatTemp,
+  formatVolume,
+  kelvinToFahrenheitDegrees,
+  type UnitPreferences,
+} from '@steepfall/shared/units';
 import { spanWords } from '#lib/words.ts';
 import type { LinePoint } from '#lib/liquid-line.ts';
-
-const unit = 'C' as const;
 
 export interface AccountRow {
   stepId: string;
@@ -22,7 +29,17 @@ function signed(value: number, digits: number): string {
   return value < 0 ? `−${text}` : `+${text}`;
 }
 
-function rowOf({ step, status, tempC, startedAtMs, doneAtMs }: StepProgress, state: RunState): AccountRow | null {
+/** A difference has no zero to start from. */
+function degrees(deltaC: number, unit: UnitPreferences['temperature']): number {
+  return unit === 'F' ? kelvinToFahrenheitDegrees(deltaC) : deltaC;
+}
+
+function rowOf(
+  { step, status, tempC, startedAtMs, doneAtMs }: StepProgress,
+  state: RunState,
+  units: UnitPreferences,
+): AccountRow | null {
+  const unit = units.temperature;
   const base = { stepId: step.id, title: step.title };
   const isDone = status === 'done';
   const level = step.done.by === 'temperature' ? step.done : step.start.by === 'temperature' ? step.start : null;
@@ -32,7 +49,7 @@ function rowOf({ step, status, tempC, startedAtMs, doneAtMs }: StepProgress, sta
       ...base,
       planned: `${formatTemp(level.tempC, { unit })}, ${level.direction}`,
       happened: isKnown ? formatTemp(tempC, { unit }) : isDone ? 'not measured' : 'not done',
-      difference: isKnown ? `${signed(tempC - level.tempC, 1)} °C` : '',
+      difference: isKnown ? `${signed(degrees(tempC - level.tempC, unit), 1)} °${unit}` : '',
     };
   }
   if (step.done.by === 'timer') {
@@ -48,36 +65,40 @@ function rowOf({ step, status, tempC, startedAtMs, doneAtMs }: StepProgress, sta
   const asked = step.done.by === 'measurement' ? step.done.quantity : step.asks;
   if (!asked) return null;
   const measured = state.measurements.findLast(({ stepId, quantity }) => stepId === step.id && quantity === asked);
-  const range = step.done.by === 'measurement' ? rangeWords(step.done.min, step.done.max) : '';
+  const range = step.done.by === 'measurement' ? rangeWords(step.done, units) : '';
   return {
     ...base,
     planned: range,
-    happened: measured ? measurementWords(measured.quantity, measured.value) : 'not measured',
+    happened: measured ? measurementWords(measured.quantity, measured.value, units) : 'not measured',
     difference: '',
   };
 }
 
-function rangeWords(min: number | undefined, max: number | undefined): string {
-  if (min !== undefined && max !== undefined) return `${min} to ${max}`;
-  if (min !== undefined) return `${min} or more`;
-  return max === undefined ? '' : `${max} or less`;
+function rangeWords(
+  { quantity, min, max }: Extract<DoneCondition, { by: 'measurement' }>,
+  units: UnitPreferences,
+): string {
+  const words = (value: number) => (quantity === 'pH' ? String(value) : measurementWords(quantity, value, units));
+  if (min !== undefined && max !== undefined) return `${words(min)} to ${words(max)}`;
+  if (min !== undefined) return `${words(min)} or more`;
+  return max === undefined ? '' : `${words(max)} or less`;
 }
 
-export function measurementWords(quantity: RunState['measurements'][number]['quantity'], value: number): string {
-  const words: Record<typeof quantity, string> = {
+export function measurementWords(quantity: MeasuredQuantity, value: number, units: UnitPreferences): string {
+  const words: Record<MeasuredQuantity, string> = {
     pH: `pH ${value}`,
-    tempC: formatTemp(value, { unit }),
-    volumeL: `${value} L`,
-    massG: `${value} g`,
-    pressureKPa: `${value} kPa`,
+    tempC: formatTemp(value, { unit: units.temperature }),
+    volumeL: formatVolume(value, { unit: units.volume }),
+    massG: formatMass(value, { unit: units.mass }),
+    pressureKPa: formatPressure(value, { unit: units.pressure }),
     tasteScore: `${value} of 9`,
   };
   return words[quantity];
 }
 
 /** Every step that was planned with a number, and the number that came of it. */
-export function accountOf(state: RunState): AccountRow[] {
-  return state.steps.flatMap((progress) => rowOf(progress, state) ?? []);
+export function accountOf(state: RunState, units: UnitPreferences): AccountRow[] {
+  return state.steps.flatMap((progress) => rowOf(progress, state, units) ?? []);
 }
 
 export interface AlertRow {
@@ -92,7 +113,7 @@ export interface AlertRow {
 }
 
 /** Every alert with its climb, and how long it waited for a person. */
-export function alertRowsOf(log: readonly LogEntry[], state: RunState): AlertRow[] {
+export function alertRowsOf(log: readonly LogEntry[], state: RunState, { temperature }: UnitPreferences): AlertRow[] {
   const raised = log.filter((entry): entry is LogEntry & RunEventOf<'alert.raised'> => entry.type === 'alert.raised');
   return state.alerts.map((alert) => {
     const own = raised.filter(({ payload }) => payload.key === alert.key && payload.crossing === alert.crossing);
@@ -101,7 +122,7 @@ export function alertRowsOf(log: readonly LogEntry[], state: RunState): AlertRow
     const actedAtMs = state.steps.find(({ step }) => step.id === alert.actStepId)?.doneAtMs ?? null;
     const answers = [alert.acknowledgedAtMs, actedAtMs].filter((atMs) => atMs !== null);
     const answeredAtMs = answers.length > 0 ? Math.min(...answers) : null;
-    const words = alertWords(state, alert);
+    const words = alertWords(state, alert, temperature);
     const waitS = nowAtMs === null || answeredAtMs === null ? null : Math.max(0, (answeredAtMs - nowAtMs) / 1000);
     return {
       id: `${alert.key}/${alert.crossing}`,
@@ -122,7 +143,7 @@ export function alertRowsOf(log: readonly LogEntry[], state: RunState): AlertRow
 }
 
 /** What the drawing shows, in a breath: for those who do not see it, and for those in a hurry. */
-export function summaryOf(state: RunState, line: readonly LinePoint[]): string {
+export function summaryOf(state: RunState, line: readonly LinePoint[], { temperature: unit }: UnitPreferences): string {
   const sentences: string[] = [];
   if (state.startedAtMs !== null && state.endedAtMs !== null) {
     sentences.push(`The run took ${spanWords((state.endedAtMs - state.startedAtMs) / 1000)}.`);

@@ -2,6 +2,7 @@ import { useMemo } from 'react';
 import type { LogEntry, RunState } from '@steepfall/shared/runs';
 import { LevelRule } from '#components/level-rule.tsx';
 import { StatusChip } from '#components/status-chip.tsx';
+import { useUnits } from '#lib/units.ts';
 import { clockTime } from '#lib/words.ts';
 import { alertRowsOf } from './run-account.ts';
 
@@ -9,7 +10,8 @@ const stageWords = { 'coming-up': 'coming up', 'stand-by': 'stand by', now: 'now
 
 /** Each alert with its climb and how long it waited for a person. */
 export function RunAlerts({ log, state }: { log: readonly LogEntry[]; state: RunState }) {
-  const rows = useMemo(() => alertRowsOf(log, state), [log, state]);
+  const units = useUnits();
+  const rows = useMemo(() => alertRowsOf(log, state, units), [log, state, units]);
   return (
     <section aria-labelledby="alerts" className="grid gap-4">
       <LevelRule id="alerts">Alerts</LevelRule>

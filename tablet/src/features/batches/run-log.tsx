@@ -1,8 +1,10 @@
 import type { Member } from '@steepfall/shared/contracts';
 import { describeEvent, type RunEvent, type RunState } from '@steepfall/shared/runs';
+import type { UnitPreferences } from '@steepfall/shared/units';
 import { format } from 'date-fns';
 import { classNames } from '#components/class-names.ts';
 import type { StoredEntry } from '#lib/hub-queries.ts';
+import { useUnits } from '#lib/units.ts';
 import { clockTime } from '#lib/words.ts';
 import type { Flag } from './flag-layout.ts';
 
@@ -18,15 +20,21 @@ function nameOf(members: readonly Member[], memberId: string | null): string | n
   return members.find(({ id }) => id === memberId)?.displayName ?? 'a former member';
 }
 
-function wordsOf(entry: StoredEntry, log: readonly StoredEntry[], state: RunState): string {
+function wordsOf(
+  entry: StoredEntry,
+  log: readonly StoredEntry[],
+  state: RunState,
+  unit: UnitPreferences['temperature'],
+): string {
   const event = entry as unknown as RunEvent;
-  if (event.type !== 'event.undone') return describeEvent(entry, state);
+  if (event.type !== 'event.undone') return describeEvent(entry, state, unit);
   const target = log.find(({ id }) => id === event.payload.eventId);
-  return target ? `Taken back: ${describeEvent(target, state)}` : 'Taken back';
+  return target ? `Taken back: ${describeEvent(target, state, unit)}` : 'Taken back';
 }
 
 /** Everything that happened, in words, in the hub's order. What was taken back stays, struck through. */
 export function RunLog({ log, state, flags, members }: RunLogProps) {
+  const { temperature } = useUnits();
   const undone = new Set(state.undoneEventIds);
   return (
     <ol className="border-l-2 border-edge">
@@ -70,7 +78,7 @@ export function RunLog({ log, state, flags, members }: RunLogProps) {
                     {flag.number}
                   </span>
                 ) : null}
-                {wordsOf(entry, log, state)}
+                {wordsOf(entry, log, state, temperature)}
                 {isUndone ? <span className="sr-only"> (taken back later)</span> : null}
               </p>
               <p className="col-start-2 text-note text-soft sm:col-start-auto sm:text-right">

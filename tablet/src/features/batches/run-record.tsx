@@ -10,6 +10,7 @@ import { Segmented } from '#components/segmented.tsx';
 import { membersQuery, runLogQuery, runReadingsQuery, type StoredEntry } from '#lib/hub-queries.ts';
 import { linePoints, stretchesOf } from '#lib/liquid-line.ts';
 import { useMay } from '#lib/session.ts';
+import { useUnits } from '#lib/units.ts';
 import { clockTime, failureWords } from '#lib/words.ts';
 import { Account } from './account.tsx';
 import { LineTable } from './line-table.tsx';
@@ -90,6 +91,7 @@ const windowWords: Record<Window, string> = { whole: 'All of it', steep: 'The st
 
 function Line({ run, state, refetchInterval }: { run: RunSummary; state: RunState; refetchInterval: number | false }) {
   const summaryId = useId();
+  const units = useUnits();
   const [window, setWindow] = useState<Window>('whole');
   const [isTable, setIsTable] = useState(false);
   const windows = useMemo(() => windowsOf(state), [state]);
@@ -122,7 +124,7 @@ function Line({ run, state, refetchInterval }: { run: RunSummary; state: RunStat
   return (
     <Section id="line" title="The line">
       <p id={summaryId} className="max-w-[60ch] text-lead">
-        {whole.data ? summaryOf(state, wholeLine) : 'The readings are on their way.'}
+        {whole.data ? summaryOf(state, wholeLine, units) : 'The readings are on their way.'}
       </p>
       {whole.error && !whole.data ? (
         <Failed title="The readings could not be fetched" onRetry={() => void whole.refetch()}>

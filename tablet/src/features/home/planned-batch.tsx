@@ -1,7 +1,7 @@
 import { useState } from 'react';
 import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { runSummarySchema, type Batch } from '@steepfall/shared/contracts';
-import { formatVolume } from '@steepfall/shared/units';
+import { formatVolume, type UnitPreferences } from '@steepfall/shared/units';
 import { format } from 'date-fns';
 import { Link, useNavigate } from 'react-router-dom';
 import { Banner } from '#components/banner.tsx';
@@ -9,19 +9,21 @@ import { Button } from '#components/button.tsx';
 import { Dialog } from '#components/dialog.tsx';
 import { callHubFor } from '#lib/api-client.ts';
 import { useMay } from '#lib/session.ts';
+import { formatLevel, useUnits } from '#lib/units.ts';
 import { failureWords, localDate } from '#lib/words.ts';
 
 /** What is looked at with the own eyes before the first step. */
-const kitWords = [
+const kitWords = (units: UnitPreferences) => [
   'The keg is sanitised, purged and vented.',
   'The kettle is clean, and the chiller is at hand.',
-  'The probe reads 0 °C in ice water.',
+  `The probe reads ${formatLevel(0, units)} in ice water.`,
 ];
 
 /** A batch that waits for its day. */
 export function PlannedBatch({ batch, today }: { batch: Batch; today: string }) {
   const may = useMay();
   const [isAsking, setIsAsking] = useState(false);
+  const units = useUnits();
   const day = localDate(batch.plannedOn);
   const isDue = batch.plannedOn <= today;
   return (
@@ -37,7 +39,8 @@ export function PlannedBatch({ batch, today }: { batch: Batch; today: string }) 
           </Link>
         </p>
         <p className="mt-1 text-body text-soft">
-          batch {batch.batchNumber} · {formatVolume(batch.volumeL, { unit: 'L' })} · revision {batch.revisionNumber}
+          batch {batch.batchNumber} · {formatVolume(batch.volumeL, { unit: units.volume })} · revision{' '}
+          {batch.revisionNumber}
         </p>
       </div>
       {may('runs:act') ? (
@@ -52,6 +55,7 @@ export function PlannedBatch({ batch, today }: { batch: Batch; today: string }) 
 
 function StartRunDialog({ batch, isOpen, onClose }: { batch: Batch; isOpen: boolean; onClose: () => void }) {
   const navigate = useNavigate();
+  const units = useUnits();
   const client = useQueryClient();
   const start = useMutation({
     mutationFn: () => callHubFor(runSummarySchema, `batches/${batch.id}/runs`, { method: 'POST' }),
@@ -87,7 +91,7 @@ function StartRunDialog({ batch, isOpen, onClose }: { batch: Batch; isOpen: bool
         {batch.recipeName}, batch {batch.batchNumber}
       </p>
       <ul className="mt-4 grid gap-3 text-lead">
-        {kitWords.map((words) => (
+        {kitWords(units).map((words) => (
           <li key={words} className="flex gap-3">
             <span aria-hidden="true" className="mt-[0.7em] h-0.5 w-5 shrink-0 bg-edge" />
             {words}

@@ -7,6 +7,7 @@ import { ButtonLink } from '#components/button.tsx';
 import { directionDress } from '#components/direction-dress.ts';
 import { StatusChip } from '#components/status-chip.tsx';
 import { runLogQuery } from '#lib/hub-queries.ts';
+import { useUnits } from '#lib/units.ts';
 import { clockTime } from '#lib/words.ts';
 import { LiquidSketch } from './liquid-sketch.tsx';
 import { useLiquid, type Liquid } from './use-liquid.ts';
@@ -66,6 +67,7 @@ export function RunningRun({ run }: { run: RunSummary }) {
 }
 
 function Temperature({ liquid: { estimate } }: { liquid: Liquid }) {
+  const { temperature: unit } = useUnits();
   if (!estimate || estimate.tempC === null) {
     return (
       <p className="self-start text-lead text-soft">
@@ -80,8 +82,8 @@ function Temperature({ liquid: { estimate } }: { liquid: Liquid }) {
   return (
     <div className="md:text-right">
       <p className="text-figure whitespace-nowrap">
-        {formatTemp(estimate.tempC, { unit: 'C', showUnit: false })}
-        <span className="text-[0.45em] text-soft"> °C</span>
+        {formatTemp(estimate.tempC, { unit, showUnit: false })}
+        <span className="text-[0.45em] text-soft"> °{unit}</span>
       </p>
       <p className="mt-3 text-lead">
         {isLive ? (
@@ -89,7 +91,7 @@ function Temperature({ liquid: { estimate } }: { liquid: Liquid }) {
             {word}
             {estimate.mode === 'holding' || estimate.rateCPerMin === null
               ? ''
-              : ` ${formatRate(estimate.rateCPerMin, { unit: 'C' })}`}
+              : ` ${formatRate(estimate.rateCPerMin, { unit })}`}
           </StatusChip>
         ) : (
           <StatusChip shape="diamond" tone="ember">

@@ -2,8 +2,9 @@ import type { RunCommand } from '@steepfall/shared/runs';
 import type { MeasuredQuantity } from '@steepfall/shared/sheets';
 import { PressButton } from '#components/press-button.tsx';
 import { useRunState } from '#lib/run-store/run-context.tsx';
+import { useUnits } from '#lib/units.ts';
 import { primaryAct } from './primary-act.ts';
-import { quantityWords } from './quantities.ts';
+import { quantityNames } from './quantities.ts';
 import { selfDoneText } from './sheet-words.ts';
 
 export type ExtraSheet = 'note' | 'measure' | 'timer';
@@ -45,6 +46,7 @@ export function ActBar({ onAct, onComplete, onMeasure, onExtra, onAllSteps }: Ac
 
 function Primary({ onAct, onComplete, onMeasure }: Pick<ActBarProps, 'onAct' | 'onComplete' | 'onMeasure'>) {
   const state = useRunState();
+  const units = useUnits();
   const act = primaryAct(state);
   switch (act.kind) {
     case 'finish':
@@ -61,7 +63,7 @@ function Primary({ onAct, onComplete, onMeasure }: Pick<ActBarProps, 'onAct' | '
       return (
         <div className="act-pair">
           <PressButton className="act-main" onPress={() => onMeasure(act.quantity)} note="opens the number pad">
-            Type the {quantityWords[act.quantity].name}
+            Type the {quantityNames[act.quantity]}
           </PressButton>
           <PressButton
             className="act-main act-quiet"
@@ -73,7 +75,7 @@ function Primary({ onAct, onComplete, onMeasure }: Pick<ActBarProps, 'onAct' | '
         </div>
       );
     case 'complete': {
-      const byItself = selfDoneText(act.progress.step);
+      const byItself = selfDoneText(act.progress.step, units);
       return (
         <PressButton
           className={byItself ? 'act-main act-quiet' : 'act-main'}

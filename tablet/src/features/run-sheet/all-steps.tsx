@@ -5,6 +5,7 @@ import { HoldButton } from '#components/hold-button.tsx';
 import { ShapeGlyph } from '#components/shapes.tsx';
 import { PressButton } from '#components/press-button.tsx';
 import { useRun } from '#lib/run-store/run-context.tsx';
+import { useUnits } from '#lib/units.ts';
 import { clockTime } from '#lib/words.ts';
 import { measurementText } from './quantities.ts';
 import { amountText } from './step-area.tsx';
@@ -12,6 +13,7 @@ import { conditionText, conflictText } from './sheet-words.ts';
 
 /** The whole sheet as a list, what contradicts itself, and the way out. */
 export function AllSteps({ onAct, onClose }: { onAct: (command: RunCommand) => void; onClose: () => void }) {
+  const units = useUnits();
   const { state, entries } = useRun();
   const ticked = tickedTasks(state, entries);
   const end = (outcome: 'finished' | 'abandoned') => {
@@ -58,7 +60,7 @@ export function AllSteps({ onAct, onClose }: { onAct: (command: RunCommand) => v
               <Recorded
                 key={measurement.eventId}
                 atMs={measurement.atMs}
-                text={measurementText(measurement)}
+                text={measurementText(measurement, units)}
                 onTakeBack={() =>
                   onAct({ type: 'undoEvent', eventId: measurement.eventId, eventType: 'measurement.recorded' })
                 }
@@ -144,6 +146,7 @@ function Recorded({ atMs, text, onTakeBack }: { atMs: number; text: string; onTa
 
 function StepLine({ progress }: { progress: StepProgress }) {
   const { step, status, doneAtMs, tempC } = progress;
+  const units = useUnits();
   return (
     <li data-status={status} aria-current={status === 'current' ? 'step' : undefined}>
       <ShapeGlyph
@@ -154,13 +157,15 @@ function StepLine({ progress }: { progress: StepProgress }) {
         <span className="sr-only">{status === 'done' ? 'Done: ' : status === 'current' ? 'Now: ' : ''}</span>
         <span className="text-lead font-medium">{step.title}</span>
         <span className="block text-body text-soft">
-          {[conditionText(step), ...step.amounts.map((amount) => amountText(amount).what)].filter(Boolean).join(' · ')}
+          {[conditionText(step, units), ...step.amounts.map((amount) => amountText(amount, units).what)]
+            .filter(Boolean)
+            .join(' · ')}
         </span>
       </span>
       {doneAtMs !== null ? (
         <span className="shrink-0 text-right text-body tabular-nums text-soft">
           {clockTime(doneAtMs)}
-          {tempC !== null ? <span className="block">{formatTemp(tempC, { unit: 'C' })}</span> : null}
+          {tempC !== null ? <span className="block">{formatTemp(tempC, { unit: units.temperature })}</span> : null}
         </span>
       ) : null}
     </li>

@@ -6,9 +6,10 @@ import { ShapeGlyph } from '#components/shapes.tsx';
 import { useLive, useRunState, useRunStore } from '#lib/run-store/run-context.tsx';
 import type { RunStore } from '#lib/run-store/run-store.ts';
 import { useGround } from '#lib/theme.ts';
+import { formatLevel, useUnits } from '#lib/units.ts';
 import { fallFrame, levelMarks, strokesOf, type Doing, type LevelMark } from './fall-frame.ts';
 import { levelsInSight, levelsOf } from './levels.ts';
-import { forecastText, levelText } from './sheet-words.ts';
+import { forecastText } from './sheet-words.ts';
 
 const GAP_MS = 30_000;
 /** Three times the pixels on a fine screen are nine times the work; two is enough for a line. */
@@ -187,10 +188,11 @@ export function FallLine() {
 }
 
 function LevelLabel({ mark: { x, y, label, labelX, isBelow, isDone, tempC } }: { mark: LevelMark }) {
+  const units = useUnits();
   return (
     <>
       <span className="fall-level" style={{ top: y }}>
-        {levelText(tempC, false)}
+        {formatLevel(tempC, units, false)}
       </span>
       <span className="fall-mark" data-done={isDone || undefined} style={{ top: y, left: x }}>
         <ShapeGlyph shape="diamond" className="size-5" />
@@ -204,22 +206,25 @@ function LevelLabel({ mark: { x, y, label, labelX, isBelow, isDone, tempC } }: {
 
 /** The picture in a sentence. */
 function FallSummary() {
+  const units = useUnits();
+  const unit = units.temperature;
   const text = useLive(({ view, nowMs }) => {
     if (!view) return 'No reading yet.';
     const { estimate, target, forecast } = view;
     if (estimate.status !== 'live') return 'No reading comes in.';
     const rate =
-      estimate.mode === 'holding' ? 'holding' : `${estimate.mode} ${formatRate(estimate.rateCPerMin, { unit: 'C' })}`;
+      estimate.mode === 'holding' ? 'holding' : `${estimate.mode} ${formatRate(estimate.rateCPerMin, { unit })}`;
     const soon = target
-      ? ` ${levelText(target.tempC)}, ${target.direction}: ${forecastText(forecast, nowMs) ?? 'no forecast yet'}.`
+      ? ` ${formatLevel(target.tempC, units)}, ${target.direction}: ${forecastText(forecast, nowMs) ?? 'no forecast yet'}.`
       : '';
-    return `${formatTemp(estimate.tempC, { unit: 'C' })}, ${rate}.${soon}`;
+    return `${formatTemp(estimate.tempC, { unit })}, ${rate}.${soon}`;
   });
   return text;
 }
 
 /** One row a minute, for those who cannot see the line. */
 function FallTable() {
+  const { temperature } = useUnits();
   const store = useRunStore();
   const minute = useLive(({ nowMs }) => Math.floor(nowMs / 60_000));
   const rows: { agoMin: number; tempC: number }[] = [];
@@ -243,7 +248,7 @@ function FallTable() {
         {rows.map(({ agoMin, tempC }) => (
           <tr key={agoMin}>
             <td>{agoMin}</td>
-            <td>{formatTemp(tempC, { unit: 'C' })}</td>
+            <td>{formatTemp(tempC, { unit: temperature })}</td>
           </tr>
         ))}
       </tbody>

@@ -1,6 +1,7 @@
 import { currentStep, upcomingSteps, type RunCommand } from '@steepfall/shared/runs';
 import { PressButton } from '#components/press-button.tsx';
 import { useRunState } from '#lib/run-store/run-context.tsx';
+import { useUnits } from '#lib/units.ts';
 import { conditionText } from './sheet-words.ts';
 
 interface FootProps {
@@ -11,6 +12,7 @@ interface FootProps {
 
 /** What can be done meanwhile, what comes next, and the way to the whole sheet. */
 export function Foot({ onAct, onTimer, onAllSteps }: FootProps) {
+  const units = useUnits();
   const state = useRunState();
   const current = currentStep(state);
   const next = upcomingSteps(state, 2);
@@ -46,7 +48,7 @@ export function Foot({ onAct, onTimer, onAllSteps }: FootProps) {
               {next.length === 0 ? <span>the end</span> : null}
               {next.map(({ step }) => (
                 <span key={step.id}>
-                  {step.title} <span className="text-soft">{conditionText(step)}</span>
+                  {step.title} <span className="text-soft">{conditionText(step, units)}</span>
                 </span>
               ))}
             </span>

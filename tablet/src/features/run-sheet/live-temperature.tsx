@@ -1,8 +1,10 @@
-import { formatDuration, formatRate, formatTemp } from '@steepfall/shared/units';
+import { formatDuration, formatRate, formatTemp, type UnitPreferences } from '@steepfall/shared/units';
 import { ShapeGlyph, type Shape } from '#components/shapes.tsx';
 import { useLive, useRun } from '#lib/run-store/run-context.tsx';
 import type { LiveState } from '#lib/run-store/run-store.ts';
+import { useUnits } from '#lib/units.ts';
 
+type Unit = UnitPreferences['temperature'];
 type Look = 'climbing' | 'holding' | 'falling' | 'unsure' | 'silent';
 
 const shapeOf: Record<Look, Shape> = {
@@ -28,14 +30,14 @@ function lookOf({ view, newest }: LiveState): Look {
 }
 
 /** The liquid itself, the lag of the probe taken out; the bare reading while there are too few of them. */
-function figureOf(live: LiveState): string {
+function figureOf(live: LiveState, unit: Unit): string {
   const look = lookOf(live);
   if (look === 'silent') return '–';
   const tempC = look === 'unsure' ? live.newest?.tempC : live.view?.estimate.tempC;
-  return formatTemp(tempC, { unit: 'C', showUnit: false });
+  return formatTemp(tempC, { unit, showUnit: false });
 }
 
-function rateOf(live: LiveState): string {
+function rateOf(live: LiveState, unit: Unit): string {
   const look = lookOf(live);
   if (look === 'silent') {
     const atMs = live.view?.estimate.lastGoodAtMs ?? live.newest?.atMs ?? null;
@@ -44,13 +46,14 @@ function rateOf(live: LiveState): string {
   }
   if (look === 'unsure') return 'settling';
   if (look === 'holding') return 'holding';
-  return formatRate(live.view?.estimate.rateCPerMin, { unit: 'C' });
+  return formatRate(live.view?.estimate.rateCPerMin, { unit });
 }
 
 /** The number to be read from three metres. Each part is a leaf: a reading changes its text and nothing else. */
 export function LiveTemperature() {
   const { summary } = useRun();
   const look = useLive(lookOf);
+  const { temperature } = useUnits();
   const isAwaited = useLive(({ view }) => view?.target != null);
   if (summary && summary.probeId === null) {
     return (
@@ -74,7 +77,7 @@ export function LiveTemperature() {
     <div className="live-temp" data-look={look}>
       <p className={`live-figure ${hueOf[look]}`}>
         <LiveFigure />
-        <span className="live-unit">°C</span>
+        <span className="live-unit">°{temperature}</span>
       </p>
       <p className={`live-rate ${hueOf[look]}`}>
         <ShapeGlyph shape={shapeOf[look]} className="size-[0.8em]" />
@@ -86,9 +89,11 @@ export function LiveTemperature() {
 }
 
 export function LiveFigure() {
-  return <span>{useLive(figureOf)}</span>;
+  const { temperature } = useUnits();
+  return <span>{useLive((live) => figureOf(live, temperature))}</span>;
 }
 
 function LiveRate() {
-  return <span>{useLive(rateOf)}</span>;
+  const { temperature } = useUnits();
+  return <span>{useLive((live) => rateOf(live, temperature))}</span>;
 }

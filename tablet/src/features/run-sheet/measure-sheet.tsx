@@ -3,8 +3,9 @@ import { measurableRange, isInRange, type Decision, type RunCommand } from '@ste
 import type { DoneCondition, MeasuredQuantity } from '@steepfall/shared/sheets';
 import { Button } from '#components/button.tsx';
 import { Segmented } from '#components/segmented.tsx';
+import { inPersonsWords, useUnits } from '#lib/units.ts';
 import { NumberPad, typed } from './number-pad.tsx';
-import { quantityWords } from './quantities.ts';
+import { quantityNames, typedQuantity } from './quantities.ts';
 
 interface MeasureSheetProps {
   quantity: MeasuredQuantity;
@@ -23,8 +24,11 @@ export function MeasureSheet({ quantity: first, stepId, done, tempC, onRecord, o
   const [quantity, setQuantity] = useState(first);
   const [text, setText] = useState('');
   const [error, setError] = useState<string | null>(null);
-  const { name, unit } = quantityWords[quantity];
-  const value = text === '' ? Number.NaN : Number(text);
+  const units = useUnits();
+  const name = quantityNames[quantity];
+  const { symbol, fromInside, toInside } = typedQuantity(quantity, units);
+  const value = text === '' ? Number.NaN : toInside(Number(text));
+  const shown = (inside: number | undefined) => (inside === undefined ? 'any' : Number(fromInside(inside).toFixed(2)));
   const choices = offered.includes(first) ? offered : [first, ...offered];
   const wanted = done?.by === 'measurement' && done.quantity === quantity ? done : null;
   const isWanted = wanted !== null && isInRange(wanted, quantity, value);
@@ -32,10 +36,10 @@ export function MeasureSheet({ quantity: first, stepId, done, tempC, onRecord, o
   const record = async (event: FormEvent) => {
     event.preventDefault();
     const { min, max } = measurableRange[quantity];
-    if (!Number.isFinite(value)) return setError(`Type a number from ${min} to ${max}.`);
+    if (!Number.isFinite(value)) return setError(`Type a number from ${shown(min)} to ${shown(max)}.`);
     const decision = await onRecord({ type: 'recordMeasurement', quantity, value, stepId, tempC: tempC() });
     if (decision.ok) onClose();
-    else setError(decision.problem.detail);
+    else setError(inPersonsWords(decision.problem.detail, units));
   };
 
   return (
@@ -49,11 +53,11 @@ export function MeasureSheet({ quantity: first, stepId, done, tempC, onRecord, o
             setQuantity(next);
             setError(null);
           }}
-          segments={choices.map((choice) => ({ value: choice, label: quantityWords[choice].name }))}
+          segments={choices.map((choice) => ({ value: choice, label: quantityNames[choice] }))}
         />
         <label className="measure-value">
           <span className="sr-only">
-            {name} {unit}
+            {name} {symbol}
           </span>
           <input
             value={text}
@@ -65,13 +69,13 @@ export function MeasureSheet({ quantity: first, stepId, done, tempC, onRecord, o
               if (/^\d{0,7}\.?\d{0,4}$/.test(target.value)) setText(target.value);
             }}
           />
-          <span aria-hidden="true">{quantity === 'pH' ? 'pH' : unit}</span>
+          <span aria-hidden="true">{quantity === 'pH' ? 'pH' : symbol}</span>
         </label>
         <p className="text-lead" role="status">
           {error ? <span className="text-ember">{error}</span> : null}
           {!error && wanted ? (
             <span className="text-soft">
-              Wanted: {wanted.min ?? 'any'} to {wanted.max ?? 'any'}.{' '}
+              Wanted: {shown(wanted.min)} to {shown(wanted.max)}.{' '}
               {Number.isFinite(value)
                 ? isWanted
                   ? 'In range: the step is done then.'

@@ -1,41 +1,51 @@
 import type { MeasuredQuantity } from '@steepfall/shared/sheets';
 import type { Measurement } from '@steepfall/shared/runs';
-import { formatMass, formatPressure, formatTemp, formatVolume } from '@steepfall/shared/units';
+import { formatMass, formatPressure, formatVolume, type UnitPreferences } from '@steepfall/shared/units';
+import { formatLevel, quantityOf, type QuantityKind } from '#lib/units.ts';
 
-interface QuantityWords {
-  /** "pH", "temperature". */
-  name: string;
-  unit: string;
-  digits: number;
-}
-
-export const quantityWords: Record<MeasuredQuantity, QuantityWords> = {
-  pH: { name: 'pH', unit: '', digits: 2 },
-  tempC: { name: 'temperature', unit: '°C', digits: 1 },
-  volumeL: { name: 'volume', unit: 'L', digits: 1 },
-  massG: { name: 'weight', unit: 'g', digits: 1 },
-  pressureKPa: { name: 'pressure', unit: 'kPa', digits: 0 },
-  tasteScore: { name: 'taste, 1 to 9', unit: '', digits: 0 },
+/** "pH", "temperature". */
+export const quantityNames: Record<MeasuredQuantity, string> = {
+  pH: 'pH',
+  tempC: 'temperature',
+  volumeL: 'volume',
+  massG: 'weight',
+  pressureKPa: 'pressure',
+  tasteScore: 'taste, 1 to 9',
 };
 
+const kindOf: Partial<Record<MeasuredQuantity, QuantityKind>> = {
+  tempC: 'temperature',
+  volumeL: 'volume',
+  massG: 'mass',
+  pressureKPa: 'pressure',
+};
+
+const asItIs = { symbol: '', fromInside: (inside: number) => inside, toInside: (shown: number) => shown };
+
+/** How a person with these units types it. */
+export function typedQuantity(quantity: MeasuredQuantity, units: UnitPreferences): ReturnType<typeof quantityOf> {
+  const kind = kindOf[quantity];
+  return kind ? quantityOf(kind, units) : asItIs;
+}
+
 /** A measured or set value in words: "pH 5.4", "96 kPa". */
-export function quantityText(quantity: MeasuredQuantity, value: number): string {
+export function quantityText(quantity: MeasuredQuantity, value: number, units: UnitPreferences): string {
   switch (quantity) {
     case 'pH':
       return `pH ${value}`;
     case 'tempC':
-      return formatTemp(value, { unit: 'C', digits: Number.isInteger(value) ? 0 : 1 });
+      return formatLevel(value, units);
     case 'volumeL':
-      return formatVolume(value, { unit: 'L' });
+      return formatVolume(value, { unit: units.volume });
     case 'massG':
-      return formatMass(value, { unit: 'g' });
+      return formatMass(value, { unit: units.mass });
     case 'pressureKPa':
-      return formatPressure(value, { unit: 'kPa' });
+      return formatPressure(value, { unit: units.pressure });
     case 'tasteScore':
       return `${value} of 9`;
   }
 }
 
-export function measurementText({ quantity, value }: Measurement): string {
-  return quantityText(quantity, value);
+export function measurementText({ quantity, value }: Measurement, units: UnitPreferences): string {
+  return quantityText(quantity, value, units);
 }

@@ -11,6 +11,7 @@ import { useWave } from '#lib/wave/use-wave.ts';
 import { RunProvider, useOpenRun, useRun, useRunState, useRunStore } from '#lib/run-store/run-context.tsx';
 import type { RunSnapshot, RunStore } from '#lib/run-store/run-store.ts';
 import { takeOverAlert } from '#lib/run-store/take-over.ts';
+import { useUnits } from '#lib/units.ts';
 import { useStored } from '#lib/value-store.ts';
 import { holdRunLock } from '#lib/wake-lock/run-lock.ts';
 import { keepAwake } from '#lib/wake-lock/wake-lock.ts';
@@ -242,9 +243,10 @@ function Sheet({ rehearsal, soundCheck, strips, TakeOver, ringer }: RunSheetPage
 }
 
 function Place({ state }: { state: RunState }) {
+  const units = useUnits();
   const { number, count } = stepPosition(state);
   const current = currentStep(state);
-  const condition = current ? conditionText(current.step) : null;
+  const condition = current ? conditionText(current.step, units) : null;
   return (
     <p className="slot-place">
       <span className="tabular-nums">

@@ -5,6 +5,7 @@ import { PressButton } from '#components/press-button.tsx';
 import { ShapeGlyph } from '#components/shapes.tsx';
 import { useRunState, useRunStore } from '#lib/run-store/run-context.tsx';
 import { heardCommands, takeOverAlert } from '#lib/run-store/take-over.ts';
+import { useUnits } from '#lib/units.ts';
 import { LiveFigure } from './live-temperature.tsx';
 
 interface SheetDialogProps {
@@ -57,6 +58,7 @@ export function SheetDialog({ isOpen, onClose, title, children, isSide = false }
 function AlertRow() {
   const state = useRunState();
   const store = useRunStore();
+  const { temperature } = useUnits();
   const alert = takeOverAlert(state);
   if (!alert) return null;
   return (
@@ -67,7 +69,7 @@ function AlertRow() {
       </p>
       {/* Outside what is announced: it changes every second. */}
       <span className="shrink-0 text-lead font-semibold tabular-nums">
-        <LiveFigure /> °C
+        <LiveFigure /> °{temperature}
       </span>
       <PressButton
         className="strip-act"

@@ -3,7 +3,7 @@ import { foldRun } from '@steepfall/shared/runs';
 import { LogBuilder } from '@steepfall/shared/testing';
 import { levelsInSight, levelsOf } from './levels.ts';
 import { pedalNext, primaryAct } from './primary-act.ts';
-import { aboutText, conflictText, forecastText, levelText } from './sheet-words.ts';
+import { aboutText, conflictText, forecastText } from './sheet-words.ts';
 import { typed } from './number-pad.tsx';
 
 describe(aboutText, () => {
@@ -26,12 +26,6 @@ describe(forecastText, () => {
     expect(forecastText({ kind: 'too-early' }, 0)).toBeNull();
     expect(forecastText({ kind: 'never' }, 0)).toBeNull();
     expect(forecastText({ kind: 'crossed', atMs: 0 }, 0)).toBe('reached');
-  });
-});
-
-describe(levelText, () => {
-  it('has no false digits', () => {
-    expect([levelText(62), levelText(62.5)].map((text) => text.replace(/\s/, ' '))).toEqual(['62 °C', '62.5 °C']);
   });
 });
 

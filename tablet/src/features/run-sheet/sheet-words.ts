@@ -1,24 +1,20 @@
 import type { Step } from '@steepfall/shared/sheets';
-import { formatDuration, formatTemp } from '@steepfall/shared/units';
+import { formatDuration, type UnitPreferences } from '@steepfall/shared/units';
 import type { Conflict, LogEntry, RunState } from '@steepfall/shared/runs';
 import type { CrossingForecast } from '@steepfall/shared/watch';
+import { formatLevel } from '#lib/units.ts';
 import { clockTime } from '#lib/words.ts';
 
-/** A level without false digits: "62 °C", "62.5 °C". */
-export function levelText(tempC: number, showUnit = true): string {
-  return formatTemp(tempC, { unit: 'C', digits: Number.isInteger(tempC) ? 0 : 1, showUnit });
-}
-
 /** When a step is to be done, in words: "at 62 °C, falling". */
-export function conditionText(step: Step): string | null {
+export function conditionText(step: Step, units: UnitPreferences): string | null {
   const condition = step.start.by === 'temperature' ? step.start : step.done.by === 'temperature' ? step.done : null;
-  return condition ? `at ${levelText(condition.tempC)}, ${condition.direction}` : null;
+  return condition ? `at ${formatLevel(condition.tempC, units)}, ${condition.direction}` : null;
 }
 
 /** What makes the step done when nobody taps. */
-export function selfDoneText(step: Step): string | null {
+export function selfDoneText(step: Step, units: UnitPreferences): string | null {
   const { done } = step;
-  if (done.by === 'temperature') return `goes on by itself at ${levelText(done.tempC)}`;
+  if (done.by === 'temperature') return `goes on by itself at ${formatLevel(done.tempC, units)}`;
   if (done.by === 'timer') return 'goes on by itself when the time is up';
   return null;
 }

@@ -9,6 +9,7 @@ import { openOutbox } from '#lib/run-store/open-runs.ts';
 import { useLive, useRun } from '#lib/run-store/run-context.tsx';
 import { useSession } from '#lib/session.ts';
 import { chooseGround, useGroundChoice } from '#lib/theme.ts';
+import { useUnits } from '#lib/units.ts';
 import { useStored, useStoredPart } from '#lib/value-store.ts';
 import { askToStayAwake, wakeState, type WakeState } from '#lib/wake-lock/wake-lock.ts';
 import { SheetDialog } from './sheet-dialog.tsx';
@@ -46,7 +47,10 @@ function StatusFacts() {
   const errorMs = useStored(hubClock.errorMs);
   const groundChoice = useGroundChoice();
   const probe = useLive(probeText);
-  const bare = useLive(({ newest }) => (newest?.tempC == null ? null : formatTemp(newest.tempC, { unit: 'C' })));
+  const { temperature } = useUnits();
+  const bare = useLive(({ newest }) =>
+    newest?.tempC == null ? null : formatTemp(newest.tempC, { unit: temperature }),
+  );
   return (
     <dl className="status-facts">
       <Fact name="probe" word={summary?.probeId === null ? 'none' : probe}>
@@ -127,6 +131,7 @@ function PlayAlarm() {
 function Refused() {
   const { parked, state } = useRun();
   const { known } = useSession();
+  const { temperature } = useUnits();
   if (!known) return null;
   const outbox = openOutbox(known.house.id);
   return (
@@ -134,7 +139,7 @@ function Refused() {
       {parked.map(({ eventId, runId, event, problem }) => (
         <li key={eventId} className="grid gap-2 text-text">
           <span>
-            {describeEvent(event, state)}. {problem?.detail ?? problem?.title}
+            {describeEvent(event, state, temperature)}. {problem?.detail ?? problem?.title}
           </span>
           <span className="flex flex-wrap gap-3">
             <Button size="sheet" onClick={() => void outbox.then((box) => box.retry(eventId))}>

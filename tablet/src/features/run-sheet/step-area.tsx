@@ -1,19 +1,24 @@
 import { useEffect, useRef } from 'react';
 import { cautionWords, type Caution, type StepAmount } from '@steepfall/shared/sheets';
 import { currentStep } from '@steepfall/shared/runs';
-import { formatMass } from '@steepfall/shared/units';
+import { formatMass, type UnitPreferences } from '@steepfall/shared/units';
 import { CautionMark } from '#components/caution-mark.tsx';
 import { useRunState } from '#lib/run-store/run-context.tsx';
+import { useUnits } from '#lib/units.ts';
 import { Waiting } from './countdown.tsx';
 import { measurementText, quantityText } from './quantities.ts';
 
-export function amountText({ name, massG, bag }: StepAmount): { what: string; where: string | null } {
-  return { what: `${formatMass(massG, { unit: 'g' })} ${name}`, where: bag ?? null };
+export function amountText(
+  { name, massG, bag }: StepAmount,
+  { mass }: UnitPreferences,
+): { what: string; where: string | null } {
+  return { what: `${formatMass(massG, { unit: mass })} ${name}`, where: bag ?? null };
 }
 
 /** The one thing to do, verb first. */
 export function StepArea({ onStopTimer }: { onStopTimer: (timerId: string) => void }) {
   const state = useRunState();
+  const units = useUnits();
   const progress = currentStep(state);
   const heading = useRef<HTMLHeadingElement>(null);
   const stepId = progress?.step.id ?? null;
@@ -47,7 +52,7 @@ export function StepArea({ onStopTimer }: { onStopTimer: (timerId: string) => vo
         {step.amounts.length > 0 ? (
           <ul className="step-amounts" data-many={step.amounts.length > 2 || undefined}>
             {step.amounts.map((amount) => {
-              const { what, where } = amountText(amount);
+              const { what, where } = amountText(amount, units);
               return (
                 <li key={amount.name}>
                   {what}
@@ -59,12 +64,14 @@ export function StepArea({ onStopTimer }: { onStopTimer: (timerId: string) => vo
         ) : null}
         {step.settings.length > 0 ? (
           <p className="step-amounts step-settings">
-            {step.settings.map(({ label, quantity, value }) => `${label} ${quantityText(quantity, value)}`).join(' · ')}
+            {step.settings
+              .map(({ label, quantity, value }) => `${label} ${quantityText(quantity, value, units)}`)
+              .join(' · ')}
           </p>
         ) : null}
         {step.detail ? <p className="step-detail">{step.detail}</p> : null}
         {measured.length > 0 ? (
-          <p className="step-detail">Measured: {measured.map(measurementText).join(', ')}</p>
+          <p className="step-detail">Measured: {measured.map((one) => measurementText(one, units)).join(', ')}</p>
         ) : null}
       </div>
       <Waiting onStop={onStopTimer} />
