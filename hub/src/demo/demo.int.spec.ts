@@ -1,4 +1,4 @@
-import type { RunEvents, RunSummary } from '@steepfall/shared/contracts';
+import type { Batch, Ingredient, LotMove, RunEvents } from '@steepfall/shared/contracts';
 import { foldRun } from '@steepfall/shared/runs';
 import { QueryTypes } from 'sequelize';
 import { Sequelize } from 'sequelize-typescript';
@@ -41,11 +41,38 @@ describe('the demo house', () => {
     }
     return rows;
   };
-  const batches = async () => {
+  let bearer = '';
+  const asBrewer = (method: 'get' | 'post' | 'delete', path: string) =>
+    request(testApp.url)[method](`/api${path}`).set('authorization', bearer);
+  const signInAsBrewer = async () => {
     const { email, password } = demoSignIns[1]!;
     const { accessToken } = (await signIn(testApp.url, email, password)).body as { accessToken: string };
-    const listed = await request(testApp.url).get('/api/batches').set('authorization', `Bearer ${accessToken}`);
-    return listed.body as { batchNumber: string; plannedOn: string; status: string }[];
+    bearer = `Bearer ${accessToken}`;
+  };
+  const batches = async () => {
+    await signInAsBrewer();
+    return (await asBrewer('get', '/batches')).body as Batch[];
+  };
+
+  /** Receives a lot, uses some of it by mistake, and sets some aside. */
+  const workInTheStores = async () => {
+    await signInAsBrewer();
+    const facts = { kind: 'other', name: 'lemon peel', lowStockG: null, allergens: '' };
+    const { id } = (await asBrewer('post', '/stores/ingredients').send({ facts }).expect(201)).body as Ingredient;
+    const lotFacts = { code: 'P-1', receivedOn: '2026-05-01', bestBefore: null, pricePerKg: 9, note: '', hops: null };
+    const received = await asBrewer('post', `/stores/ingredients/${id}/lots`)
+      .send({ facts: lotFacts, massG: 200 })
+      .expect(201);
+    const lotId = (received.body as Ingredient).lots[0]!.id;
+    const used = { kind: 'used', massG: 20, reason: 'tea', mayGoBelowZero: false };
+    await asBrewer('post', `/stores/lots/${lotId}/moves`).send(used).expect(201);
+    const [move] = (await asBrewer('get', `/stores/lots/${lotId}/moves`)).body as LotMove[];
+    await asBrewer('delete', `/stores/moves/${move!.id}`).expect(200);
+    const { revisionId, kettleId, chillerId, kegId, plannedOn } = (await batches())[0]!;
+    const reserve = [{ additionId: 'sencha', lotId, massG: 50 }];
+    await asBrewer('post', '/batches')
+      .send({ revisionId, kettleId, chillerId, kegId, plannedOn, probeId: null, reserve })
+      .expect(201);
   };
 
   it('is made once, whoever asks again', async () => {
@@ -67,19 +94,27 @@ describe('the demo house', () => {
     expect((await counts())['batches']).toBe(before);
   });
 
+  it('plans another one when that was called off', async () => {
+    const nowMs = Date.now();
+    const { id } = (await batches()).find(({ status }) => status === 'planned')!;
+    await asBrewer('delete', `/batches/${id}`).expect(204);
+    await ensureDemo(testApp.databaseUrl, nowMs);
+    const next = (await batches()).filter(({ status }) => status === 'planned');
+    expect(next).toMatchObject([{ plannedOn: localDate(nowMs) }]);
+    expect(next[0]?.id).not.toBe(id);
+  });
+
   it('has a finished batch in the book, with its log and its curve', async () => {
-    const { email, password } = demoSignIns[1]!;
-    const { accessToken } = (await signIn(testApp.url, email, password)).body as { accessToken: string };
-    const get = async (path: string) =>
-      (await request(testApp.url).get(path).set('authorization', `Bearer ${accessToken}`).expect(200)).body as unknown;
-    const listed = (await get('/api/batches')) as { status: string; run: RunSummary | null }[];
+    const listed = await batches();
     const finished = listed.find(({ status }) => status === 'finished');
     expect(finished?.run).toMatchObject({ outcome: 'finished', currentStepTitle: null, alertStage: null });
     const { id, lastSeq } = finished!.run!;
-    const { events } = (await get(`/api/runs/${id}/events?afterSeq=0`)) as RunEvents;
+    const { events } = (await asBrewer('get', `/runs/${id}/events?afterSeq=0`)).body as RunEvents;
     expect(events).toHaveLength(lastSeq);
     expect(foldRun(events)).toMatchObject({ status: 'ended', conflicts: [] });
-    const { readings } = (await get(`/api/runs/${id}/readings`)) as { readings: { tempC: number | null }[] };
+    const { readings } = (await asBrewer('get', `/runs/${id}/readings`)).body as {
+      readings: { tempC: number | null }[];
+    };
     expect(Math.max(...readings.map(({ tempC }) => tempC ?? 0))).toBeGreaterThan(76);
   });
 
@@ -91,6 +126,8 @@ describe('the demo house', () => {
   it('is made anew, and takes nothing of another house with it', async () => {
     const { author } = await buildBatch(testApp);
     const stranger = await signInAs(testApp, 'brewer', { house: author.house });
+    await workInTheStores();
+    await resetDemo(testApp.databaseUrl, Date.now());
     const before = await counts();
     await resetDemo(testApp.databaseUrl, Date.now());
     expect(await counts()).toEqual(before);

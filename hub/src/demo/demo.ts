@@ -67,7 +67,8 @@ async function planToday(sequelize: Sequelize, transaction: Transaction, nowMs: 
   const waiting = await sequelize.query<{ id: string; plannedOn: string }>(
     `SELECT batches.id AS id, CAST(batches.planned_on AS CHAR) AS plannedOn FROM batches
      LEFT JOIN runs ON runs.batch_id = batches.id
-     WHERE batches.house_id = ? AND runs.id IS NULL ORDER BY batches.planned_on DESC LIMIT 1`,
+     WHERE batches.house_id = ? AND runs.id IS NULL AND batches.cancelled_at_ms IS NULL
+     ORDER BY batches.planned_on DESC LIMIT 1`,
     { type: QueryTypes.SELECT, replacements: [demoHouse.id], transaction },
   );
   const [batch] = waiting;
