@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import { conductivityUsPerCm, dissolvedIonsMgPerL } from './conductivity.js';
+import { conductivityUsPerCm, dissolvedIonsMgPerL, ionicStrengthFromConductivity } from './conductivity.js';
+import { ionicStrengthMolPerL } from './ionic-strength.js';
 import { pureWater } from './ions.js';
 import { saltedWater } from './salts.js';
 
@@ -14,6 +15,13 @@ describe('conductivityUsPerCm', () => {
     expect(Math.abs(limiting / 659 - 1)).toBeLessThan(0.01);
     expect(Math.abs(estimate / 606 - 1)).toBeLessThan(0.05);
     expect(dissolvedIonsMgPerL(water) / estimate).toBeCloseTo(0.47, 1);
+  });
+
+  it('aqion: the quick way reads 20 to 25 % too high for calcium water', () => {
+    const quick = ionicStrengthFromConductivity(conductivityUsPerCm(water).estimate);
+    expect(quick / ionicStrengthMolPerL(water)).toBeGreaterThan(1.19);
+    expect(quick / ionicStrengthMolPerL(water)).toBeLessThan(1.26);
+    expect(() => ionicStrengthFromConductivity(-1)).toThrow(RangeError);
   });
 
   it('is none in pure water', () => {
