@@ -68,6 +68,8 @@ export class BatchesService {
     const rows = await inHouse(this.batches, houseId).findAll(
       { cancelledAtMs: cancelled ? { [Op.ne]: null } : null },
       {
+        // Much to carry for every batch there ever was, and no list shows it.
+        attributes: { exclude: ['sheet'] },
         order: [
           ['plannedOn', 'DESC'],
           ['year', 'DESC'],
