@@ -14,7 +14,10 @@ interface Document {
 }
 
 /** Handlers that answer with a file, and those that take one in a form. */
-const files: Record<string, string> = { 'LotPhotosController.get': 'image/jpeg' };
+const files: Record<string, string> = {
+  'LotPhotosController.get': 'image/jpeg',
+  'StoresCsvController.export': 'text/csv',
+};
 const forms = ['LotPhotosController.set'];
 
 describe('the API document', () => {
