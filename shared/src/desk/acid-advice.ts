@@ -4,7 +4,6 @@ import {
   acidMolPerL,
   acidFigures,
   band,
-  chargeBalance,
   leafBaseBand,
   lotMultiplier,
   saltedWater,
@@ -59,53 +58,63 @@ export function gramsForPh(
   return dose.kind === 'add' ? { kind: 'dose', massG: dose.gPerL * plan.waterL } : dose;
 }
 
-/**
- * How much of the recipe's acid brings the drink to the middle of its pH target, or to 3.8; null without an acid or a water
- * that a pH can be computed from. Other acids stay as they are.
- *
- * @param document a valid recipe document.
- * @see acid-dose.ts; the band is that of the leaf's base, 0.6 to 1.7 times.
- */
-export function acidAdvice(document: RecipeDocument, kit: DeskKit): AcidAdvice | null {
-  const line = leadingAcid(document);
-  if (!line) return null;
+/** Null where the sum refuses: the page then says why. */
+function orNull<Value>(work: () => Value): Value | null {
   try {
-    const plan = drinkPlanOf(document, kit, plannedDay(document, kit));
-    const { teaBaseMeqPerL, hopBaseMeqPerL } = acidFigures(plan, saltedWater(plan.waterL, plan.salts, plan.source));
-    const base = teaBaseMeqPerL + hopBaseMeqPerL;
-    const ph = wantedPh(document);
-    const at = (factor: number) => gramsForPh(plan, line, base * factor, ph);
-    const about = { additionId: line.id, name: line.name, wantedPh: ph };
-    const middle = at(leafBaseBand.middle);
-    if (middle.kind !== 'dose') return { ...about, ...middle };
-    const low = at(leafBaseBand.low);
-    const high = at(leafBaseBand.high);
-    const massG = band(
-      low.kind === 'dose' ? Math.min(low.massG, middle.massG) : 0,
-      middle.massG,
-      high.kind === 'dose' ? Math.max(high.massG, middle.massG) : middle.massG,
-      'judged',
-    );
-    return { ...about, kind: 'dose', massG };
+    return work();
   } catch (error) {
     if (error instanceof RangeError) return null;
     throw error;
   }
 }
 
+function basesOf(document: RecipeDocument, kit: DeskKit): { plan: DrinkPlan; baseMeqPerL: number } {
+  const plan = drinkPlanOf(document, kit, plannedDay(document, kit));
+  const { teaBaseMeqPerL, hopBaseMeqPerL } = acidFigures(plan, saltedWater(plan.waterL, plan.salts, plan.source));
+  return { plan, baseMeqPerL: teaBaseMeqPerL + hopBaseMeqPerL };
+}
+
+/**
+ * How much of the recipe's acid brings the drink to the middle of its pH target, or to 3.8; null without an acid, or where no pH
+ * can be worked out. Other acids stay as they are.
+ *
+ * @param document a valid recipe document.
+ * @see acid-dose.ts; the band is that of the leaf's base, 0.6 to 1.7 times.
+ */
+export function acidAdvice(document: RecipeDocument, kit: DeskKit): AcidAdvice | null {
+  const line = leadingAcid(document);
+  return line && orNull(() => adviceOn(document, kit, line));
+}
+
+function adviceOn(document: RecipeDocument, kit: DeskKit, line: AcidLine): AcidAdvice {
+  const { plan, baseMeqPerL } = basesOf(document, kit);
+  const ph = wantedPh(document);
+  const at = (factor: number) => gramsForPh(plan, line, baseMeqPerL * factor, ph);
+  const about = { additionId: line.id, name: line.name, wantedPh: ph };
+  const middle = at(leafBaseBand.middle);
+  if (middle.kind !== 'dose') return { ...about, ...middle };
+  const low = at(leafBaseBand.low);
+  const high = at(leafBaseBand.high);
+  const massG = band(
+    low.kind === 'dose' ? Math.min(low.massG, middle.massG) : 0,
+    middle.massG,
+    high.kind === 'dose' ? Math.max(high.massG, middle.massG) : middle.massG,
+    'judged',
+  );
+  return { ...about, kind: 'dose', massG };
+}
+
 /**
  * How much more base this tea and these hops bring than usual, from one measured pH of the finished drink: for
- * `assume.teaBaseRatio` and `assume.hopBaseRatio`. Null when no ratio from 0 to 20 explains it.
+ * `assume.teaBaseRatio` and `assume.hopBaseRatio`. Null when no ratio from 0 to 20 explains it, or there is no leaf.
  *
  * @param measuredPh still, degassed, at 20 to 25 °C, 1 to 9.
  * @see lot-multiplier.ts.
  */
 export function baseRatioFromPh(document: RecipeDocument, kit: DeskKit, measuredPh: number): number | null {
   const usualLeaf = { ...document, assume: { ...document.assume, teaBaseRatio: 1, hopBaseRatio: 1 } };
-  const plan = drinkPlanOf(usualLeaf, kit, plannedDay(usualLeaf, kit));
-  const water = saltedWater(plan.waterL, plan.salts, plan.source);
-  if (chargeBalance(water).verdict === 'refused') return null;
-  const { teaBaseMeqPerL, hopBaseMeqPerL } = acidFigures(plan, water);
-  const base = teaBaseMeqPerL + hopBaseMeqPerL;
-  return base > 0 ? lotMultiplier(acidityOf(plan, base), measuredPh) : null;
+  return orNull(() => {
+    const { plan, baseMeqPerL } = basesOf(usualLeaf, kit);
+    return baseMeqPerL > 0 ? lotMultiplier(acidityOf(plan, baseMeqPerL), measuredPh) : null;
+  });
 }

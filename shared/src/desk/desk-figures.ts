@@ -1,31 +1,33 @@
-import { drinkFigures } from '../figures/index.js';
+import { drinkFigures, type DrinkPlan } from '../figures/index.js';
 import type { RecipeDocument } from '../sheets/index.js';
 import type { UnitPreferences } from '../units/index.js';
 import { drinkPlanOf } from './drink-plan.js';
 import { figureRows } from './figure-rows.js';
+import { impossibleFigures, refusedFigures } from './impossible.js';
 import { plannedDay } from './planned-day.js';
 import type { DeskKit, DeskResult } from './types.js';
 import { deskWarnings } from './warnings.js';
 
 /**
- * Everything that the desk shows beside a recipe as it is typed. It never throws on a document that the schema takes.
+ * Everything that the desk shows beside a recipe as it is typed: the planned day, the figures as rows, what to think of. It never
+ * throws on a document that the schema takes: a sum that cannot be done is an answer, with what to do and where.
  *
+ * @param document a valid recipe document.
  * @param units of the person who reads the words.
+ * @see workings for what each figure is, its model, source and band.
  */
 export function deskFigures(document: RecipeDocument, kit: DeskKit, units: UnitPreferences): DeskResult {
+  let plan: DrinkPlan | null = null;
   try {
     const day = plannedDay(document, kit);
-    const plan = drinkPlanOf(document, kit, day);
+    plan = drinkPlanOf(document, kit, day);
     const figures = drinkFigures(plan);
-    return {
-      kind: 'figures',
-      day,
-      figures,
-      rows: figureRows({ document, day, plan, figures, units }),
-      warnings: deskWarnings({ document, kit, day, figures, units }),
-    };
+    const impossible = impossibleFigures(document, figures);
+    if (impossible) return impossible;
+    const context = { document, kit, day, plan, figures, units };
+    return { kind: 'figures', day, figures, rows: figureRows(context), warnings: deskWarnings(context) };
   } catch (error) {
-    if (!(error instanceof RangeError)) throw error;
-    return { kind: 'impossible', what: error.message, act: 'Look at the amounts once more.', path: null };
+    if (error instanceof RangeError) return refusedFigures(document, plan, error);
+    throw error;
   }
 }

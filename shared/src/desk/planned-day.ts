@@ -63,7 +63,13 @@ interface Pot {
   never: PlannedDay['never'];
   /** Of what is in the kettle, and the kettle, J/K. */
   heatCapacityJPerK: number;
-  chills: { surroundC: number; kPerS: number } | null;
+  chills: ChillLaw | null;
+}
+
+/** How the chiller takes the temperature down, by Newton. */
+export interface ChillLaw {
+  surroundC: number;
+  kPerS: number;
 }
 
 /**
@@ -166,10 +172,12 @@ function coilIn(pot: Pot, chiller: ChillerFacts): void {
 /** Puts in something that stood in the room. */
 function mixIn(pot: Pot, ownJPerK: number): void {
   if (ownJPerK === 0) return;
-  const part = (jPerK: number, tempC: number) => ({ massG: jPerK * 1000, specificHeatJPerKgK: 1, tempC });
+  const together = pot.heatCapacityJPerK + ownJPerK;
+  // Only shares of the heat capacity count, whatever they are made of.
+  const part = (jPerK: number, tempC: number) => ({ massG: jPerK / together, specificHeatJPerKgK: 1, tempC });
   const toC = mixedTempC([part(pot.heatCapacityJPerK, pot.line.tempC), part(ownJPerK, pot.kit.roomC)]);
   pot.line.add({ kind: 'mix', toC }, false);
-  pot.heatCapacityJPerK += ownJPerK;
+  pot.heatCapacityJPerK = together;
 }
 
 function addIn(pot: Pot, additions: readonly Addition[]): void {
@@ -233,8 +241,13 @@ function openExponent(tempC: number): number {
   return tempC > warmC ? coolingExponent.openPotHot : coolingExponent.openPotWarm;
 }
 
+/** Whether a chiller takes the temperature down; without one the pot cools by itself. */
+export function isChilled({ assume }: RecipeDocument, { chiller }: Pick<DeskKit, 'chiller'>): boolean {
+  return chiller !== null || assume.chillerConstantPerS !== undefined;
+}
+
 /** Toward the coolant, by a told, a learned or a computed constant; null when there is no chiller. */
-function chillOf({ assume }: RecipeDocument, { chiller }: DayKit, heatCapacityJPerK: number): Pot['chills'] {
+function chillOf({ assume }: RecipeDocument, { chiller }: DayKit, heatCapacityJPerK: number): ChillLaw | null {
   const surroundC = chiller?.coolantC ?? usual.coolantC;
   const known = assume.chillerConstantPerS ?? chiller?.coolingConstantPerS;
   if (known !== undefined) return { surroundC, kPerS: known };

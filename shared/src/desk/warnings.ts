@@ -1,16 +1,15 @@
-import type { DrinkFigures } from '../figures/index.js';
-import type { RecipeDocument } from '../sheets/index.js';
-import type { UnitPreferences } from '../units/index.js';
-import type { DeskKit, DeskWarning, PlannedDay } from './types.js';
+import type { RowContext } from './figure-row.js';
+import type { DeskWarning, WarningGrade } from './types.js';
+import { acidWarnings } from './warnings-acid.js';
+import { kitWarnings } from './warnings-kit.js';
+import { leafWarnings } from './warnings-leaf.js';
+import { waterWarnings } from './warnings-water.js';
 
-export interface WarningContext {
-  document: RecipeDocument;
-  kit: DeskKit;
-  day: PlannedDay;
-  figures: DrinkFigures;
-  units: UnitPreferences;
-}
+const order: readonly WarningGrade[] = ['danger', 'care', 'note'];
 
-export function deskWarnings(context: WarningContext): DeskWarning[] {
-  return context.day.never ? [] : [];
+/** What the brewer should think of, the gravest first. None of it blocks anything. */
+export function deskWarnings(context: RowContext): DeskWarning[] {
+  return [...acidWarnings(context), ...kitWarnings(context), ...waterWarnings(context), ...leafWarnings(context)].sort(
+    (a, b) => order.indexOf(a.grade) - order.indexOf(b.grade),
+  );
 }
