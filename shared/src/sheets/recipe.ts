@@ -173,6 +173,8 @@ export const assumptionsSchema = z
   .meta({ id: 'Assumptions' });
 export type Assumptions = z.infer<typeof assumptionsSchema>;
 
+const haveOwnIds = (list: readonly { id: string }[]) => new Set(list.map(({ id }) => id)).size === list.length;
+
 const ph = number().min(2, 'From pH 2.').max(9, 'At most pH 9.');
 const phRange = z
   .strictObject({ min: ph, max: ph })
@@ -186,11 +188,15 @@ export const recipeDocumentSchema = z
     volumeL: number().positive('A volume above 0 L.').max(500, 'At most 500 L.'),
     /** Water filled into the kettle; more than the drink, for leaf, hops and loss. */
     waterL: number().positive('A volume above 0 L.').max(600, 'At most 600 L.'),
-    waters: z.array(waterPartSchema).min(1, 'Add a water.').max(6),
+    waters: z
+      .array(waterPartSchema)
+      .min(1, 'Add a water.')
+      .max(6, 'At most 6 waters.')
+      .refine(haveOwnIds, 'Two waters have the same id.'),
     additions: z
       .array(additionSchema)
       .max(40, 'At most 40 additions.')
-      .refine((list) => new Set(list.map(({ id }) => id)).size === list.length, 'Two additions have the same id.'),
+      .refine(haveOwnIds, 'Two additions have the same id.'),
     /** Where the treated water leaves the cold, and the tea goes in. */
     steepC: number().min(1, 'From 1 °C.').max(100, 'At most 100 °C: it is water.'),
     transferC: number().min(0, 'From 0 °C.').max(60, 'At most 60 °C.'),
@@ -206,7 +212,10 @@ export const recipeDocumentSchema = z
       caffeineMostMgPerL: number().positive('Above 0 mg/L.').max(2000, 'At most 2000 mg/L.').optional(),
     }),
     steps: z.strictObject({
-      own: z.array(ownStepSchema).max(20, 'At most 20 steps of your own.'),
+      own: z
+        .array(ownStepSchema)
+        .max(20, 'At most 20 steps of your own.')
+        .refine(haveOwnIds, 'Two steps of your own have the same id.'),
       /** Ids in the order that the brewer wants; steps that are not named keep their place after the one before. */
       order: z.array(z.string().min(1).max(60)).max(100).optional(),
     }),

@@ -190,12 +190,24 @@ export const recipeDocuments: fc.Arbitrary<RecipeDocument> = fc
  * everything would differ, and a difference that nobody lists would never be noticed.
  */
 export const revisedDocuments: fc.Arbitrary<[RecipeDocument, RecipeDocument]> = fc
-  .tuple(recipeDocuments, recipeDocuments, fc.infiniteStream(fc.integer({ min: 0, max: 11 })))
-  .map(([before, other, chance]): [RecipeDocument, RecipeDocument] => {
-    const takes = () => chance.next().value === 0;
-    return [before, grafted(before, other, takes)];
-  })
+  .tuple(recipeDocuments, recipeDocuments, chances())
+  .map(([before, other, takes]): [RecipeDocument, RecipeDocument] => [before, grafted(before, other, takes)])
   .filter(([, after]) => recipeDocumentSchema.safeParse(after).success);
+
+/** A document and two that were made from it. */
+export const revisedTwice: fc.Arbitrary<[RecipeDocument, RecipeDocument, RecipeDocument]> = fc
+  .tuple(revisedDocuments, recipeDocuments, chances())
+  .map(([[base, mine], other, takes]): [RecipeDocument, RecipeDocument, RecipeDocument] => [
+    base,
+    mine,
+    grafted(base, other, takes),
+  ])
+  .filter(([, , theirs]) => recipeDocumentSchema.safeParse(theirs).success);
+
+/** True one time in twelve. */
+function chances(): fc.Arbitrary<() => boolean> {
+  return fc.infiniteStream(fc.integer({ min: 0, max: 11 })).map((stream) => () => stream.next().value === 0);
+}
 
 /** `before` with some of its parts, large or small, taken from `other`. */
 function grafted<T>(before: T, other: T, takes: () => boolean): T;
