@@ -1,5 +1,6 @@
 export * from './acid/acid-dose.js';
 export * from './acid/acids.js';
+export * from './acid/complexed-ph.js';
 export * from './acid/dissociation.js';
 export * from './acid/drink-acidity.js';
 export * from './acid/drink-ph.js';

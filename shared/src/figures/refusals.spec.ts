@@ -14,6 +14,7 @@ const solution = {
   sulfateMolPerL: 0.001,
   strongIonicStrength: 0.004,
   sites: [{ molPerL: 0.001, pK: 4 }],
+  citrateMetals: { calciumMolPerL: 0.002, magnesiumMolPerL: 0.001 },
   tempC: 25,
 };
 const inLiquid = { inAtMs: 0, outAtMs: 240_000, baseMultiplier: 1 };
@@ -118,6 +119,7 @@ const calls: Partial<Record<keyof typeof figures, readonly unknown[]>> = {
   coilEffectiveness: [240, 0.1],
   coilTransferWPerK: [{ outerMm: 9.5, lengthM: 7.6, stirred: false, tempC: 60 }],
   compareWithBeerChart: [4, 190],
+  complexedDrinkPh: [drink],
   concentrationFactor: [20, 1],
   conductivityUsPerCm: [water],
   contrastUnderLight: [{ whiteCdPerM2: 400, blackCdPerM2: 0.4, lux: 500, reflectance: 0.05 }],

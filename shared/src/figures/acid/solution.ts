@@ -1,6 +1,7 @@
 import { daviesActivity, debyeHuckelA } from '../water/activity.js';
 import { notNegative, within } from '../numeric/guard.js';
 import { acidPkAt, waterPk, type Dissociating } from './dissociation.js';
+import { bindingMetals, complexedCharge, type BindingMetal, type CitrateMetals } from './metal-citrate.js';
 
 /** A base brought by leaf: mol/L of sites, 0 to 2, of one pK, -5 to 20. */
 export interface BaseSite {
@@ -19,6 +20,8 @@ export interface AcidSolution {
   /** Share of the strong ions in the ionic strength, mol/L; half of `strongIonEqPerL` unless told. */
   strongIonicStrength?: number;
   sites?: readonly BaseSite[];
+  /** Metals whose complexes with citrate are counted, 0 to 2 mol/L each; left out unless told. They are strong ions as well. */
+  citrateMetals?: CitrateMetals;
   /** °C, 0 to 77. */
   tempC: number;
   /** False leaves activities out, for teaching: everything at zero ionic strength. */
@@ -29,6 +32,8 @@ export interface AcidSolution {
 interface Ladder {
   molPerL: number;
   betas: readonly number[];
+  /** That hold the ions of this acid; most acids have none. */
+  metals: readonly BindingMetal[];
 }
 
 export interface PreparedSolution {
@@ -47,7 +52,14 @@ const MAX_MOL_PER_L = 2;
 function ladder(molPerL: number, pKs: readonly number[]): Ladder {
   const betas = [1];
   for (const pK of pKs) betas.push((betas.at(-1) ?? 1) * 10 ** -pK);
-  return { molPerL, betas };
+  return { molPerL, betas, metals: [] };
+}
+
+/** @throws RangeError when a metal is out of range. */
+function held(citric: Ladder, metals: CitrateMetals): Ladder {
+  const calciumMolPerL = within(metals.calciumMolPerL, 'The calcium of the drink', 0, MAX_MOL_PER_L, 'mol/L');
+  const magnesiumMolPerL = within(metals.magnesiumMolPerL, 'The magnesium of the drink', 0, MAX_MOL_PER_L, 'mol/L');
+  return { ...citric, metals: bindingMetals({ calciumMolPerL, magnesiumMolPerL }, citric.betas[3] ?? 0) };
 }
 
 /** @throws RangeError when a total or the temperature is out of range. */
@@ -63,7 +75,9 @@ export function prepared(solution: AcidSolution): PreparedSolution {
   const ladders: Ladder[] = [];
   for (const [acid, molPerL] of Object.entries(solution.acidsMolPerL) as [Dissociating, number][]) {
     within(molPerL, `The ${acid} of the drink`, 0, MAX_MOL_PER_L, 'mol/L');
-    if (molPerL > 0) ladders.push(ladder(molPerL, acidPkAt(acid, tempC)));
+    if (molPerL === 0) continue;
+    const own = ladder(molPerL, acidPkAt(acid, tempC));
+    ladders.push(acid === 'citric' && solution.citrateMetals ? held(own, solution.citrateMetals) : own);
   }
   for (const { molPerL, pK } of solution.sites ?? []) {
     ladders.push(ladder(within(molPerL, 'A base of leaf', 0, MAX_MOL_PER_L, 'mol/L'), [within(pK, 'A pK', -5, 20)]));
@@ -107,7 +121,7 @@ export function chargeAt(solution: PreparedSolution, ph: number, ionicStrength: 
   let left = solution.strongIonEqPerL + hydrogen - hydroxide;
   let buffer = hydrogen + hydroxide;
   let strength = hydrogen + hydroxide + 2 * solution.strongIonicStrength;
-  for (const { molPerL, betas } of solution.ladders) {
+  for (const { molPerL, betas, metals } of solution.ladders) {
     let weights = 0;
     let charges = 0;
     let squares = 0;
@@ -118,6 +132,13 @@ export function chargeAt(solution: PreparedSolution, ph: number, ionicStrength: 
       charges += i * weight;
       squares += i * i * weight;
       perH /= aH;
+    }
+    if (metals.length > 0) {
+      const bound = complexedCharge(molPerL, { weights, charges, squares }, metals, { aH, g1, g2 });
+      left -= bound.chargeEqPerL;
+      buffer += bound.slopeEqPerL;
+      strength += bound.squaresMolPerL;
+      continue;
     }
     const mean = charges / weights;
     left -= molPerL * mean;

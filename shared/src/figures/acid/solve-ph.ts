@@ -51,7 +51,7 @@ export function greatestStrength(solution: PreparedSolution): number {
 /**
  * pH of a mixture of weak acids, leaf bases, strong ions and water, with activities. Exact for its model: every charge is
  * counted and must cancel. It ends after a bounded number of steps for any valid input. Complexes of calcium with citrate
- * are left out: at 110 mg/L of calcium the pH reads 0.02 to 0.06 too high.
+ * are left out unless `citrateMetals` are told: at 110 mg/L of calcium the pH then reads 0.02 to 0.06 too high.
  *
  * @param solution see AcidSolution for the ranges.
  * @throws RangeError when an input is out of range.

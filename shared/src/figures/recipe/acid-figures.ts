@@ -1,4 +1,5 @@
 import { acidKinds, acidMolPerL } from '../acid/acids.js';
+import { complexedDrinkPh } from '../acid/complexed-ph.js';
 import type { DrinkAcidity } from '../acid/drink-acidity.js';
 import { drinkPh, drinkPhBand } from '../acid/drink-ph.js';
 import { juiceMl } from '../acid/lemon-juice.js';
@@ -23,6 +24,8 @@ export interface AcidFigures {
   phAfterTea: PhBand;
   /** Still, degassed, 25 °C: what limits are judged on, and what to store. */
   phStill: PhBand;
+  /** The same with calcium and magnesium holding citrate (complexedDrinkPh): where the middle would lie in hard water. */
+  phStillComplexed: number;
   /** While the hops are in. */
   phAtHops: number;
   phCarbonated: PhBand;
@@ -62,6 +65,7 @@ export function acidFigures(plan: DrinkPlan, water: IonsMgPerL): AcidFigures {
     phAfterAcid: drinkPh(bare).ph,
     phAfterTea: drinkPhBand(tea),
     phStill,
+    phStillComplexed: complexedDrinkPh(all).ph,
     phAtHops: plan.acidAfterHops ? drinkPh({ ...all, acidsMolPerL: {} }).ph : phStill.value,
     phCarbonated: drinkPhBand(gassed),
     phCarbonatedServed: drinkPhBand({ ...gassed, tempC: plan.gas.tempC }),

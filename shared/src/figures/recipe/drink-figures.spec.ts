@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { planCurve } from '../curve/planned-curve.js';
 import { pureWater } from '../water/ions.js';
+import { steepVerdict } from '../tea/steep-dose.js';
 import { drinkFigures } from './drink-figures.js';
 import type { DrinkPlan } from './drink-plan.js';
 
@@ -56,7 +57,10 @@ describe('the worked example, whole chain', () => {
     near(acid.teaBaseMeqPerL, 0.935, 0.002);
     near(acid.hopBaseMeqPerL, 1.92, 0.002);
     near(acid.phAfterTea.value, 3.33, 0.01);
+    near(acid.phAfterTea.low, 3.23, 0.01);
+    near(acid.phAfterTea.high, 3.5, 0.01);
     near(acid.phStill.value, 3.78, 0.01);
+    near(acid.phStillComplexed, 3.72, 0.01);
     near(acid.phStill.low, 3.53, 0.02);
     near(acid.phStill.high, 4.09, 0.02);
     near(acid.phCarbonated.value, 3.67, 0.01);
@@ -84,6 +88,9 @@ describe('the worked example, whole chain', () => {
     near(left.tea.steeps[0]?.steepDoseMin, 11.4, 0.1);
     near(left.tea.steeps[0]?.polyphenolRatio.value, 0.97, 0.005);
     expect(left.tea.steeps[0]?.verdict).toBe('good');
+    expect(steepVerdict('green', left.tea.steeps[0]?.steepDoseMin ?? 0)).toBe('amber');
+    // All that 0.90 of 35 mg/g can give.
+    near(left.tea.caffeineMgPerL.value / (5 * 35 * 0.9), 1, 0.01);
   });
 
   it('hops (Malowicki and Shellhammer 2005, Maye 2015; solubility a judgement with a factor of three)', () => {
@@ -125,6 +132,8 @@ describe('the worked example, whole chain', () => {
 
   it('yield, haze and gas', () => {
     near(figures.yield.value, 19.1, 0.05);
+    near(figures.yield.leafL, 0.4, 1e-9);
+    near(figures.yield.hopsL, 0.42, 1e-9);
     expect(figures.haze).toContainEqual({ kind: 'calcium', level: 'amber' });
     near(figures.gas.gaugeKPa ?? 0, 107.9, 2.5);
   });
