@@ -1,8 +1,9 @@
+import type { ReactNode } from 'react';
 import { useQuery } from '@tanstack/react-query';
+import type { Batch } from '@steepfall/shared/contracts';
 import { formatVolume } from '@steepfall/shared/units';
 import { useParams } from 'react-router-dom';
 import { ButtonLink } from '#components/button.tsx';
-import { EmptyState } from '#components/empty-state.tsx';
 import { Page } from '#components/page.tsx';
 import { Failed, Waiting } from '#components/quiet-state.tsx';
 import { batchQuery } from '#lib/hub-queries.ts';
@@ -11,9 +12,15 @@ import { useMay } from '#lib/session.ts';
 import { useUnits } from '#lib/units.ts';
 import { calendarDay, failureWords } from '#lib/words.ts';
 import { BatchStatus } from './batch-status.tsx';
+import { CancelledBatch, PlanSection } from './plan-section.tsx';
 import { RunRecord } from './run-record.tsx';
 
-export function BatchPage() {
+interface BatchPageProps {
+  /** The button that starts its run. */
+  startRun: (batch: Batch) => ReactNode;
+}
+
+export function BatchPage({ startRun }: BatchPageProps) {
   const { batchId = '' } = useParams();
   const may = useMay();
   const units = useUnits();
@@ -45,24 +52,32 @@ export function BatchPage() {
       }
       lead={`${calendarDay(plannedOn)} · ${formatVolume(volumeL, { unit: units.volume })} · revision ${revisionNumber}`}
       action={
-        run?.status === 'running' && may('runs:read') ? (
-          <ButtonLink look="primary" size="sheet" to={`/runs/${run.id}`}>
-            Open the run sheet
-          </ButtonLink>
-        ) : may('recipes:read') ? (
-          <ButtonLink to={`/recipes/${recipeId}`}>The recipe</ButtonLink>
-        ) : null
+        <div className="flex flex-wrap items-center gap-3 print:hidden">
+          {run?.status === 'running' && may('runs:read') ? (
+            <ButtonLink look="primary" size="sheet" to={`/runs/${run.id}`}>
+              Open the run sheet
+            </ButtonLink>
+          ) : status === 'planned' ? (
+            startRun(batch.data)
+          ) : null}
+          {may('recipes:read') && recipeId ? (
+            <ButtonLink look="quiet" to={`/recipes/${recipeId}`}>
+              The recipe
+            </ButtonLink>
+          ) : null}
+        </div>
       }
     >
-      {run && may('runs:read') ? (
-        <RunRecord run={run} />
-      ) : run ? (
-        <p className="max-w-prose text-lead text-soft">How the day went is shown to those who brew.</p>
-      ) : (
-        <EmptyState action={<ButtonLink to="/">Go to today</ButtonLink>}>
-          This batch has not been run yet. Its line is drawn here while it runs, and stays.
-        </EmptyState>
-      )}
+      {run ? (
+        <div className="grid gap-12 print:hidden">
+          {may('runs:read') ? (
+            <RunRecord run={run} />
+          ) : (
+            <p className="max-w-prose text-lead text-soft">How the day went is shown to those who brew.</p>
+          )}
+        </div>
+      ) : null}
+      {status === 'cancelled' ? <CancelledBatch batch={batch.data} /> : <PlanSection batch={batch.data} />}
     </Page>
   );
 }

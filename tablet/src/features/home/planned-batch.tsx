@@ -21,8 +21,6 @@ const kitWords = (units: UnitPreferences) => [
 
 /** A batch that waits for its day. */
 export function PlannedBatch({ batch, today }: { batch: Batch; today: string }) {
-  const may = useMay();
-  const [isAsking, setIsAsking] = useState(false);
   const units = useUnits();
   const day = localDate(batch.plannedOn);
   const isDue = batch.plannedOn <= today;
@@ -43,13 +41,23 @@ export function PlannedBatch({ batch, today }: { batch: Batch; today: string }) 
           {batch.revisionNumber}
         </p>
       </div>
-      {may('runs:act') ? (
-        <Button look={isDue ? 'primary' : 'plain'} size="sheet" onClick={() => setIsAsking(true)}>
-          Start the run
-        </Button>
-      ) : null}
-      <StartRunDialog batch={batch} isOpen={isAsking} onClose={() => setIsAsking(false)} />
+      <StartRun batch={batch} isDue={isDue} />
     </li>
+  );
+}
+
+/** The button that starts the run of a batch, and the question before it. */
+export function StartRun({ batch, isDue }: { batch: Batch; isDue: boolean }) {
+  const may = useMay();
+  const [isAsking, setIsAsking] = useState(false);
+  if (!may('runs:act')) return null;
+  return (
+    <>
+      <Button look={isDue ? 'primary' : 'plain'} size="sheet" onClick={() => setIsAsking(true)}>
+        Start the run
+      </Button>
+      <StartRunDialog batch={batch} isOpen={isAsking} onClose={() => setIsAsking(false)} />
+    </>
   );
 }
 
@@ -62,6 +70,7 @@ function StartRunDialog({ batch, isOpen, onClose }: { batch: Batch; isOpen: bool
     onSuccess: (run) => {
       void client.invalidateQueries({ queryKey: ['runs'] });
       void client.invalidateQueries({ queryKey: ['batches'] });
+      void client.invalidateQueries({ queryKey: ['stores'] });
       void navigate(`/runs/${run.id}`);
     },
   });

@@ -1,5 +1,4 @@
 import { useMemo, useState } from 'react';
-import { Checkbox, Field, Label } from '@headlessui/react';
 import {
   createColumnHelper,
   getCoreRowModel,
@@ -12,6 +11,7 @@ import type { ImportPreview } from '@steepfall/shared/contracts';
 import { formatMass } from '@steepfall/shared/units';
 import { DataTable } from '#components/data-table.tsx';
 import { StatusChip } from '#components/status-chip.tsx';
+import { TickBox } from '#components/tick-box.tsx';
 import { useUnits } from '#lib/units.ts';
 
 type Row = ImportPreview['rows'][number];
@@ -67,10 +67,11 @@ export function ImportTable({ rows, skipRows, onSkip }: ImportTableProps) {
         id: 'skip',
         header: 'Leave out',
         cell: ({ row: { original } }) => (
-          <SkipBox
-            row={original.row}
-            isSkipped={original.isSkipped}
-            onChange={(isSkipped) => toggle(original.row, isSkipped)}
+          <TickBox
+            label={`Leave out row ${original.row}`}
+            isLabelHidden
+            isTicked={original.isSkipped}
+            onTick={(isSkipped) => toggle(original.row, isSkipped)}
           />
         ),
       }),
@@ -117,30 +118,5 @@ function State({ row: { problems, does, isSkipped } }: { row: Row & { isSkipped:
         </li>
       ))}
     </ul>
-  );
-}
-
-interface SkipBoxProps {
-  row: number;
-  isSkipped: boolean;
-  onChange: (isSkipped: boolean) => void;
-}
-
-function SkipBox({ row, isSkipped, onChange }: SkipBoxProps) {
-  return (
-    <Field>
-      <Label className="sr-only">Leave out row {row}</Label>
-      <Checkbox
-        checked={isSkipped}
-        onChange={onChange}
-        className="group grid size-12 cursor-pointer place-items-center rounded-lg"
-      >
-        <span className="grid size-7 place-items-center rounded border-2 border-edge group-data-checked:border-text group-data-checked:bg-text">
-          <svg viewBox="0 0 16 16" aria-hidden="true" className="hidden size-5 text-ground group-data-checked:block">
-            <path d="M3 8.500l3.500 3.500L13 4.500" fill="none" stroke="currentColor" strokeWidth="2.500" />
-          </svg>
-        </span>
-      </Checkbox>
-    </Field>
   );
 }
