@@ -1,5 +1,5 @@
 import { foldRun } from '@steepfall/shared/runs';
-import { compileSheet } from '@steepfall/shared/sheets';
+import { compileSheet, type RecipeDocument } from '@steepfall/shared/sheets';
 import { wallClock } from '@steepfall/shared/timers';
 import { formatBatchNumber } from '../batches/batch-number.js';
 import { hashPassword } from '../common/passwords.js';
@@ -7,6 +7,7 @@ import { kettleSetupOf } from '../rehearsals/kettle-setup.js';
 import { projectionOf } from '../runs/projection.js';
 import { demoEquipment, demoHouse, demoId, demoMemberId, demoProbe, demoSignIns } from './demo-house.js';
 import { demoRecipes, oolongRecipe, senchaRecipe, type DemoRecipe } from './demo-recipes.js';
+import { storesTables } from './demo-stores.js';
 import { recordDay } from './recorded-day.js';
 
 export type Row = Record<string, string | number | boolean | null>;
@@ -18,6 +19,7 @@ const DAY_MS = 24 * 3_600_000;
 const REACH_S = 10;
 const ROOM_C = 21;
 const SEED = 7;
+const newestSencha = senchaRecipe.revisions[1];
 
 /** The calendar date at this place, `YYYY-MM-DD`. */
 export function localDate(atMs: number): string {
@@ -126,10 +128,35 @@ export async function demoTables(nowMs: number): Promise<Tables> {
         today,
       ],
     ],
+    ...storesTables({
+      nowMs,
+      madeAtMs,
+      brewed: {
+        id: brewed.id,
+        batchNumber: batchNumberOf(brewedAtMs, 1),
+        document: brewed.revision.document,
+        startedAtMs: brewedAtMs,
+      },
+      localDate,
+    }),
+    ['lot_reservations', setAside(demoId('batch/today'), newestSencha.document, nowMs)],
     ['runs', [finished.run]],
     ['run_events', finished.events],
     ['readings', finished.readings],
   ];
+}
+
+/** What a planned batch holds of the shelf: additions have the key of their lot. */
+function setAside(batchId: string, { additions }: RecipeDocument, atMs: number): Row[] {
+  return additions.map(({ id, massG }) => ({
+    house_id: demoHouse.id,
+    id: demoId(`reservation/${id}`),
+    batch_id: batchId,
+    lot_id: demoId(`lot/${id}`),
+    addition_id: id,
+    mass_g: massG,
+    created_at_ms: atMs,
+  }));
 }
 
 function revisionRows({ id: recipeId, revisions }: DemoRecipe, savedAtMs: readonly number[]): Row[] {
@@ -156,20 +183,19 @@ function batchNumberOf(atMs: number, numberInYear: number): string {
 
 /** A batch of the newest revision, planned for the day of this instant. */
 export function plannedBatch(id: string, atMs: number, numberInYear: number): Row {
-  const newest = senchaRecipe.revisions[1];
   return {
     id,
     house_id: demoHouse.id,
     year: Number(localDate(atMs).slice(0, 4)),
     number_in_year: numberInYear,
     batch_number: batchNumberOf(atMs, numberInYear),
-    revision_id: newest.id,
+    revision_id: newestSencha.id,
     planned_on: localDate(atMs),
     kettle_id: demoId('equipment/kettle'),
     chiller_id: demoId('equipment/coil'),
     keg_id: demoId('equipment/kegA'),
     probe_id: demoId('probe'),
-    volume_l: newest.document.volumeL,
+    volume_l: newestSencha.document.volumeL,
     created_at_ms: atMs,
     created_by: demoMemberId('brewer'),
   };
