@@ -13,6 +13,7 @@ const pages = {
   home: () => import('./routes/home.tsx').then(({ HomeRoute }) => HomeRoute),
   recipes: () => import('./routes/recipes.tsx').then(({ RecipesRoute }) => RecipesRoute),
   recipe: () => import('./routes/recipe.tsx').then(({ RecipeRoute }) => RecipeRoute),
+  recipeEditor: () => import('./routes/recipe-editor.tsx').then(({ RecipeEditorRoute }) => RecipeEditorRoute),
   stores: () => import('./routes/stores.tsx').then(({ StoresRoute }) => StoresRoute),
   ingredient: () => import('./routes/stores.tsx').then(({ IngredientRoute }) => IngredientRoute),
   storesImport: () => import('./routes/stores.tsx').then(({ ImportRoute }) => ImportRoute),
@@ -54,6 +55,13 @@ export const router = createBrowserRouter([
             children: [
               { path: '/recipes', ...page('recipes') },
               { path: '/recipes/:recipeId', ...page('recipe') },
+            ],
+          },
+          {
+            ...needs('recipes:manage'),
+            children: [
+              { path: '/recipes/new', ...page('recipeEditor') },
+              { path: '/recipes/:recipeId/edit', ...page('recipeEditor') },
             ],
           },
           {

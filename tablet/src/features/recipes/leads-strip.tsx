@@ -1,0 +1,71 @@
+import { useState, type ReactNode } from 'react';
+import type { FigureGroup } from '@steepfall/shared/desk';
+import { classNames } from '#components/class-names.ts';
+import { Dialog } from '#components/dialog.tsx';
+import { Button } from '#components/button.tsx';
+import { useUnits } from '#lib/units.ts';
+import { figureText } from './figure-words.ts';
+import type { Desk } from './use-desk.ts';
+
+/** What a brewer looks at first, one of a group, in this order. */
+const first: readonly FigureGroup[] = ['acid', 'tea', 'hops', 'yield'];
+
+interface LeadsStripProps {
+  desk: Desk;
+  /** All that stands beside the form on a larger screen; `close` goes back to where one was. */
+  children: (close: () => void) => ReactNode;
+}
+
+/** Where there is no room beside the form: the leads at the foot, always in sight; a tap opens the rest over it. */
+export function LeadsStrip({ desk, children }: LeadsStripProps) {
+  const units = useUnits();
+  const [isOpen, setIsOpen] = useState(false);
+  const { figures, moved, isOld } = desk;
+  const leads = first.flatMap((group) => figures?.rows.find((row) => row.group === group && row.isLead) ?? []);
+  const warned = figures?.warnings.length ?? 0;
+  const close = () => setIsOpen(false);
+  return (
+    <>
+      <div className="fixed inset-x-0 bottom-18 z-20 border-t-2 border-text bg-ground pb-[env(safe-area-inset-bottom)] md:bottom-0 md:left-28 lg:hidden">
+        <button
+          type="button"
+          aria-haspopup="dialog"
+          onClick={() => setIsOpen(true)}
+          className="flex min-h-16 w-full cursor-pointer items-center justify-between gap-4 px-5 text-left"
+        >
+          <span className={classNames('flex min-w-0 gap-x-6 overflow-hidden', isOld && 'opacity-60')}>
+            {leads.map((row, index) => (
+              <span key={row.id} className={classNames('grid min-w-0', index > 2 && 'max-sm:hidden')}>
+                <span className="truncate text-note text-soft">{row.label}</span>
+                <span
+                  className={classNames(
+                    'truncate text-body font-semibold tabular-nums',
+                    moved.has(row.id) && 'underline decoration-2 underline-offset-4',
+                  )}
+                >
+                  {figureText(row, units).value}
+                </span>
+              </span>
+            ))}
+            {leads.length === 0 ? <span className="text-body">Line and figures</span> : null}
+          </span>
+          <span className="shrink-0 text-right text-note font-medium">
+            <span className="block underline decoration-hair decoration-2 underline-offset-4">All figures</span>
+            {warned > 0 ? <span className="block text-soft">{warned} to look at</span> : null}
+          </span>
+        </button>
+      </div>
+      {isOpen ? (
+        <Dialog
+          isOpen
+          onClose={close}
+          title="Line and figures"
+          size="wide"
+          actions={<Button onClick={close}>Back to the recipe</Button>}
+        >
+          {children(close)}
+        </Dialog>
+      ) : null}
+    </>
+  );
+}
