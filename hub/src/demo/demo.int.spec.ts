@@ -1,4 +1,4 @@
-import type { Batch, Ingredient, LotMove, RunEvents } from '@steepfall/shared/contracts';
+import type { Batch, BatchPlan, Ingredient, LotMove, RunEvents } from '@steepfall/shared/contracts';
 import { foldRun } from '@steepfall/shared/runs';
 import { QueryTypes } from 'sequelize';
 import { Sequelize } from 'sequelize-typescript';
@@ -92,6 +92,19 @@ describe('the demo house', () => {
     const before = (await counts())['batches'];
     await ensureDemo(testApp.databaseUrl, nowMs);
     expect((await counts())['batches']).toBe(before);
+  });
+
+  it('has set aside from its stores what that batch needs', async () => {
+    const { id } = (await batches()).find(({ status }) => status === 'planned')!;
+    const { sheet, weighOut } = (await asBrewer('get', `/batches/${id}/plan`)).body as BatchPlan;
+    expect(sheet.steps.map((step) => step.id)).toContain('hops-in');
+    expect(weighOut.map(({ name, massG, lots }) => [name, massG, lots.map((lot) => [lot.massG, lot.state])])).toEqual([
+      ['calcium chloride', 2, [[2, 'reserved']]],
+      ['gypsum', 1, [[1, 'reserved']]],
+      ['citric acid', 4.5, [[4.5, 'reserved']]],
+      ['sencha', 90, [[90, 'reserved']]],
+      ['Cascade', 60, [[60, 'reserved']]],
+    ]);
   });
 
   it('plans another one when that was called off', async () => {
