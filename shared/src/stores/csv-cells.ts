@@ -13,7 +13,7 @@ const gramsPer = new Map([
 ]);
 
 /** A number in plain digits, then whatever is written behind it. */
-const NUMBER_AND_UNIT = /^([+-]?(?:\d+\.?\d*|\.\d+)(?:e[+-]?\d+)?)\s*(\D*)$/i;
+const NUMBER_AND_UNIT = /^([+-]?(?:\d+\.?\d*|\.\d+)(?:e[+-]?\d+)?)\s*([a-z%].*)?$/i;
 const GROUPED = /^[+-]?\d{1,3}(?:[,\s]\d{3})+(?!\d)/;
 const DECIMAL_COMMA = /^([+-]?\d+),(\d+)/;
 
