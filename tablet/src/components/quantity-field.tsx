@@ -1,9 +1,9 @@
 import type { ReactNode } from 'react';
-import { inPersonsWords, useQuantity, useUnits, type QuantityKind } from '#lib/units.ts';
+import { inPersonsWords, useQuantity, useUnits, type Quantity, type QuantityKind } from '#lib/units.ts';
 import { TextField } from './field.tsx';
 
 interface QuantityFieldProps {
-  kind: QuantityKind;
+  kind: QuantityKind | Quantity;
   label: ReactNode;
   hint?: ReactNode;
   /** As the contract or the hub says it: metric numbers in it are turned into the person's. */

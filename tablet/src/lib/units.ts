@@ -1,4 +1,4 @@
-import { useMemo, useState } from 'react';
+import { useState } from 'react';
 import {
   fahrenheitDegreesToKelvin,
   formatMass,
@@ -23,12 +23,17 @@ export function useUnits(): UnitPreferences {
 /** What a field can ask for: `kelvin` is a difference of temperatures, `kilograms` a mass kept in kg. */
 export type QuantityKind = keyof UnitPreferences | 'kelvin' | 'kilograms';
 
-interface Quantity {
+export interface Quantity {
   /** Written behind the value: "°F". */
   symbol: string;
   /** °C, g, L, kPa (K, kg) to the number a person reads, not rounded. */
   fromInside: (inside: number) => number;
   toInside: (shown: number) => number;
+}
+
+/** A number that everybody types the same way: watts, seconds. */
+export function plainQuantity(symbol: string): Quantity {
+  return { symbol, fromInside: (inside) => inside, toInside: (shown) => shown };
 }
 
 const POUNDS_PER_KILOGRAM = 1 / 0.45359237;
@@ -95,12 +100,12 @@ export function quantityInside(text: string, { toInside }: Quantity): number | u
  * that nobody touches is not rounded by having been shown. For `QuantityField`, or a field of your own.
  */
 export function useQuantity(
-  kind: QuantityKind,
+  kind: QuantityKind | Quantity,
   value: number | null | undefined,
   onChange: (inside: number | undefined) => void,
 ): { symbol: string; text: string; onText: (text: string) => void } {
   const units = useUnits();
-  const quantity = useMemo(() => quantityOf(kind, units), [kind, units]);
+  const quantity = typeof kind === 'string' ? quantityOf(kind, units) : kind;
   const [typed, setTyped] = useState<{ text: string; symbol: string } | null>(null);
   const isStillTyped =
     typed?.symbol === quantity.symbol && Object.is(quantityInside(typed.text, quantity), value ?? undefined);

@@ -3,6 +3,7 @@ import { Button } from '#components/button.tsx';
 import { LevelRule } from '#components/level-rule.tsx';
 import { Page } from '#components/page.tsx';
 import { Segmented } from '#components/segmented.tsx';
+import { UnitsSection } from '#features/house/units-section.tsx';
 import { stationName } from '#lib/ids.ts';
 import { signOut, useKnown } from '#lib/session.ts';
 import { useStored } from '#lib/value-store.ts';
@@ -74,6 +75,7 @@ export function AboutRoute() {
           </Button>
         </div>
       </section>
+      <UnitsSection />
       <section aria-labelledby="what-it-is-not" className="grid gap-6">
         <LevelRule id="what-it-is-not">What Steepfall does not do</LevelRule>
         <p className="max-w-prose text-lead">

@@ -2,6 +2,8 @@ import { useState } from 'react';
 import { zodResolver } from '@hookform/resolvers/zod';
 import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { houseSchema, updateHouseSchema, type House, type UpdateHouse } from '@steepfall/shared/contracts';
+import { boilingPointAtAltitudeC } from '@steepfall/shared/figures';
+import { formatTemp } from '@steepfall/shared/units';
 import { useForm } from 'react-hook-form';
 import { Button } from '#components/button.tsx';
 import { Dialog } from '#components/dialog.tsx';
@@ -10,12 +12,14 @@ import { LevelRule } from '#components/level-rule.tsx';
 import { callHubFor } from '#lib/api-client.ts';
 import { houseQuery } from '#lib/hub-queries.ts';
 import { noteHouse, useKnown, useMay } from '#lib/session.ts';
+import { useUnits } from '#lib/units.ts';
 import { SendForm } from './send-form.tsx';
 
 /** Name and altitude. The altitude sets the gas pressure and the boiling point. */
 export function HouseFacts() {
   const known = useKnown();
   const may = useMay();
+  const { temperature } = useUnits();
   const [isOpen, setIsOpen] = useState(false);
   const { data: house = known.house } = useQuery(houseQuery);
   return (
@@ -27,8 +31,12 @@ export function HouseFacts() {
         The place
       </LevelRule>
       <p className="text-lead">
-        {house.altitudeM} m above the sea.{' '}
+        {house.altitudeM} m above the sea: water boils at{' '}
+        {formatTemp(boilingPointAtAltitudeC(house.altitudeM), { unit: temperature })}.{' '}
         <span className="text-soft">Gas pressures and the boiling point are computed for that height.</span>
+      </p>
+      <p className="text-lead">
+        Money in {house.currency}. <span className="text-soft">Prices in the stores and the cost of a batch.</span>
       </p>
       {isOpen ? <HouseDialog house={house} onClose={() => setIsOpen(false)} /> : null}
     </section>
@@ -39,7 +47,12 @@ function HouseDialog({ house, onClose }: { house: House; onClose: () => void }) 
   const client = useQueryClient();
   const { register, handleSubmit, formState } = useForm<UpdateHouse>({
     resolver: zodResolver(updateHouseSchema),
-    defaultValues: { name: house.name, altitudeM: house.altitudeM, version: house.version },
+    defaultValues: {
+      name: house.name,
+      altitudeM: house.altitudeM,
+      currency: house.currency,
+      version: house.version,
+    },
   });
   const save = useMutation({
     mutationFn: (body: UpdateHouse) => callHubFor(houseSchema, 'house', { method: 'PATCH', body }),
@@ -67,6 +80,15 @@ function HouseDialog({ house, onClose }: { house: House; onClose: () => void }) 
           unit="m"
           error={formState.errors.altitudeM ? 'A number from −430 to 6000.' : undefined}
           {...register('altitudeM', { valueAsNumber: true })}
+        />
+        <TextField
+          label="Money"
+          hint="Prices and costs are in it. Three letters: EUR, USD, GBP."
+          autoComplete="off"
+          autoCapitalize="characters"
+          maxLength={3}
+          error={formState.errors.currency?.message}
+          {...register('currency', { setValueAs: (text: string) => text.trim().toUpperCase() })}
         />
       </SendForm>
     </Dialog>

@@ -1,20 +1,14 @@
 import { useState } from 'react';
-import { zodResolver } from '@hookform/resolvers/zod';
 import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
-import {
-  createProbeSchema,
-  probeWithTokenSchema,
-  type CreateProbe,
-  type Probe,
-  type ProbeWithToken,
-} from '@steepfall/shared/contracts';
+import { probeWithTokenSchema, type Probe, type ProbeWithToken } from '@steepfall/shared/contracts';
+import { correctedTempC } from '@steepfall/shared/figures';
+import { calibrationOf } from '@steepfall/shared/readings';
+import { kelvinToFahrenheitDegrees, MINUS, type UnitPreferences } from '@steepfall/shared/units';
 import { format } from 'date-fns';
-import { useForm } from 'react-hook-form';
 import { Banner } from '#components/banner.tsx';
 import { Button } from '#components/button.tsx';
 import { Dialog } from '#components/dialog.tsx';
 import { EmptyState } from '#components/empty-state.tsx';
-import { TextField } from '#components/field.tsx';
 import { LevelRule } from '#components/level-rule.tsx';
 import { Menu } from '#components/menu.tsx';
 import { Failed, Waiting } from '#components/quiet-state.tsx';
@@ -22,11 +16,17 @@ import { StatusChip } from '#components/status-chip.tsx';
 import { callHub, callHubFor } from '#lib/api-client.ts';
 import { probesQuery } from '#lib/hub-queries.ts';
 import { useMay } from '#lib/session.ts';
-import { failureWords, fieldProblems } from '#lib/words.ts';
+import { offerUndo } from '#lib/undo.ts';
+import { quantityOf, quantityText, useUnits } from '#lib/units.ts';
+import { failureWords } from '#lib/words.ts';
+import { CalibrationDialog } from './calibration-dialog.tsx';
+import { LagTestDialog } from './lag-test-dialog.tsx';
+import { AddProbeDialog, EditProbeDialog } from './probe-dialog.tsx';
 import { TokenDialog } from './token-dialog.tsx';
-import { SendForm } from './send-form.tsx';
+import { patchProbe } from './use-save-probe.ts';
 
 type Asked = { act: 'rotate' | 'revoke'; probe: Probe };
+type Opened = { dialog: 'edit' | 'lag' | 'calibration'; probe: Probe };
 
 export function ProbesSection() {
   const may = useMay();
@@ -35,6 +35,9 @@ export function ProbesSection() {
   const [asked, setAsked] = useState<Asked | null>(null);
   const [told, setTold] = useState<ProbeWithToken | null>(null);
   const probes = useQuery({ ...probesQuery, refetchInterval: 15_000 });
+  const [opened, setOpened] = useState<Opened | null>(null);
+  const units = useUnits();
+  const clear = useClearCalibration();
   const mayManage = may('probes:manage');
   const again = () => void client.invalidateQueries({ queryKey: probesQuery.queryKey });
   return (
@@ -47,10 +50,16 @@ export function ProbesSection() {
           {failureWords(probes.error)}
         </Failed>
       ) : null}
+      {clear.isError ? (
+        <Banner tone="act" title="The calibration was kept">
+          {failureWords(clear.error)}
+        </Banner>
+      ) : null}
       {probes.isPending ? <Waiting>Fetching the probes.</Waiting> : null}
       {probes.data?.length === 0 ? (
         <EmptyState>
-          Any thermometer that can make a web request is a probe. Add it here, and give it its token.
+          Any thermometer that can make a web request is a probe. Add it here, and give it its token. Then test how late
+          it is and calibrate it: the moment the hops go in depends on both.
         </EmptyState>
       ) : null}
       <ul>
@@ -58,20 +67,24 @@ export function ProbesSection() {
           <li key={probe.id} className="flex flex-wrap items-center gap-x-8 gap-y-1 border-b border-hair py-3">
             <div className="min-w-60 flex-1">
               <p className="text-lead font-medium">{probe.name}</p>
-              <p className="text-body tabular-nums text-soft">
-                {probe.isSimulated ? 'simulated · ' : ''}
-                lag {probe.lagS} s · a reading every {probe.samplePeriodS} s · steps of {probe.resolutionC} °C
-              </p>
+              <p className="text-body tabular-nums text-soft">{probeWords(probe, units)}</p>
+              <p className="text-body tabular-nums text-soft">{calibrationWords(probe, units.temperature)}</p>
             </div>
             <ProbeState probe={probe} />
-            {mayManage && !probe.isSimulated ? (
+            {mayManage ? (
               <Menu
                 label={
                   <>
-                    Token<span className="sr-only"> of {probe.name}</span>
+                    Change<span className="sr-only"> {probe.name}</span>
                   </>
                 }
                 choices={[
+                  { label: 'Edit', onChoose: () => setOpened({ dialog: 'edit', probe }) },
+                  { label: 'Test the lag', onChoose: () => setOpened({ dialog: 'lag', probe }) },
+                  { label: 'Calibrate', onChoose: () => setOpened({ dialog: 'calibration', probe }) },
+                  ...(probe.calibration
+                    ? [{ label: 'Forget the calibration', onChoose: () => clear.mutate(probe) }]
+                    : []),
                   { label: 'Make a new token', onChoose: () => setAsked({ act: 'rotate', probe }) },
                   {
                     label: 'Take the token away',
@@ -85,6 +98,11 @@ export function ProbesSection() {
           </li>
         ))}
       </ul>
+      {opened?.dialog === 'edit' ? <EditProbeDialog probe={opened.probe} onClose={() => setOpened(null)} /> : null}
+      {opened?.dialog === 'lag' ? <LagTestDialog probe={opened.probe} onClose={() => setOpened(null)} /> : null}
+      {opened?.dialog === 'calibration' ? (
+        <CalibrationDialog probe={opened.probe} onClose={() => setOpened(null)} />
+      ) : null}
       {isAdding ? (
         <AddProbeDialog
           onClose={() => setIsAdding(false)}
@@ -109,6 +127,38 @@ export function ProbesSection() {
       {told ? <TokenDialog made={told} onClose={() => setTold(null)} /> : null}
     </section>
   );
+}
+
+function useClearCalibration() {
+  const client = useQueryClient();
+  const again = () => client.invalidateQueries({ queryKey: probesQuery.queryKey });
+  return useMutation({
+    mutationFn: (probe: Probe) => patchProbe(probe, { calibration: null }),
+    onSuccess: (bare, { name, calibration }) => {
+      void again();
+      offerUndo(`${name} is not calibrated any more.`, async () => {
+        await patchProbe(bare, { calibration });
+        await again();
+      });
+    },
+  });
+}
+
+function probeWords({ lagS, samplePeriodS, resolutionC }: Probe, units: UnitPreferences): string {
+  const step = quantityOf('kelvin', units);
+  return `lag ${lagS} s · a reading every ${samplePeriodS} s · steps of ${quantityText(resolutionC, step)} ${step.symbol}`;
+}
+
+const LOOKED_AT_C = 80;
+
+/** "calibrated 3 May: 0.4 °C more near the steep". */
+function calibrationWords({ calibration, calibratedAtMs }: Probe, unit: UnitPreferences['temperature']): string {
+  const verdict = calibration && calibrationOf(calibration);
+  if (verdict?.kind !== 'accepted' || calibratedAtMs === null) return 'not calibrated';
+  const offK = correctedTempC(LOOKED_AT_C, verdict.correction) - LOOKED_AT_C;
+  const off = (unit === 'F' ? kelvinToFahrenheitDegrees(offK) : offK).toFixed(1);
+  const at = unit === 'F' ? '176 °F' : '80 °C';
+  return `calibrated ${format(calibratedAtMs, 'd MMM yyyy')} · ${Number(off) < 0 ? off.replace('-', MINUS) : `+${off}`} °${unit} at ${at}`;
 }
 
 function ProbeState({ probe: { isRevoked, lastReadingAtMs } }: { probe: Probe }) {
@@ -191,64 +241,6 @@ function TokenActDialog({
           </Banner>
         </div>
       ) : null}
-    </Dialog>
-  );
-}
-
-const probeFields = [
-  {
-    name: 'lagS',
-    label: 'Lag in stirred water',
-    unit: 's',
-    hint: 'As its maker tells, or as you measured it. A steel finger: near 8.',
-  },
-  { name: 'resolutionC', label: 'Smallest step it shows', unit: '°C', hint: undefined },
-  { name: 'samplePeriodS', label: 'Time between two readings', unit: 's', hint: undefined },
-] as const;
-
-function AddProbeDialog({ onClose, onAdded }: { onClose: () => void; onAdded: (made: ProbeWithToken) => void }) {
-  const { register, handleSubmit, setError, formState } = useForm<CreateProbe>({
-    resolver: zodResolver(createProbeSchema),
-    defaultValues: { name: '', lagS: 8, resolutionC: 0.1, samplePeriodS: 1 },
-  });
-  const add = useMutation({
-    mutationFn: (body: CreateProbe) => callHubFor(probeWithTokenSchema, 'probes', { method: 'POST', body }),
-    onSuccess: onAdded,
-    onError: (error) => {
-      for (const { field, detail } of fieldProblems(error)) setError(field as keyof CreateProbe, { message: detail });
-    },
-  });
-  const { errors } = formState;
-  return (
-    <Dialog isOpen onClose={onClose} title="Add a probe">
-      <SendForm
-        onSubmit={(event) => void handleSubmit((body) => add.mutate(body))(event)}
-        onClose={onClose}
-        act="Add"
-        busyLabel="Adding"
-        isBusy={add.isPending}
-        failedTitle="The probe was not added"
-        error={add.isError && fieldProblems(add.error).length === 0 ? add.error : null}
-      >
-        <TextField
-          label="Name"
-          hint="Where it hangs: kettle, fridge."
-          autoComplete="off"
-          error={errors.name?.message}
-          {...register('name')}
-        />
-        {probeFields.map(({ name, label, unit, hint }) => (
-          <TextField
-            key={name}
-            label={label}
-            unit={unit}
-            hint={hint}
-            inputMode="decimal"
-            error={errors[name] ? 'A number that can be true of this.' : undefined}
-            {...register(name, { valueAsNumber: true })}
-          />
-        ))}
-      </SendForm>
     </Dialog>
   );
 }
