@@ -102,6 +102,7 @@ export * from './water/chloride-sulfate.js';
 export * from './water/conductivity.js';
 export * from './water/ionic-strength.js';
 export * from './water/ions.js';
+export * from './water/salinity.js';
 export * from './water/salts.js';
 export * from './water/source-water.js';
 export * from './yield/drink-yield.js';

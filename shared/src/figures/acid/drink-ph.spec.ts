@@ -65,6 +65,18 @@ describe('pH of a drink', () => {
     expect(drinkPh(drink).bufferEqPerLPerPh * 1000).toBeCloseTo(2.8, 1);
   });
 
+  it('Plummer and Busenberg 1982, computed: alkalinity that meets no acid stays bicarbonate, pH 8.3 in air', () => {
+    const hard = { ca: 140, mg: 25, na: 30, k: 3, cl: 60, so4: 80, hco3: 430 };
+    const liquid = { ...drink, water: hard, leafBaseMeqPerL: 2 };
+    const band = drinkPhBand(liquid);
+    expect(Math.abs(band.value - 8.3)).toBeLessThan(0.1);
+    expect(band.low).toBeLessThanOrEqual(band.value);
+    expect(band.value).toBeLessThanOrEqual(band.high);
+    expect(drinkPh({ ...liquid, co2MolPerL: co2MolPerLFromVolumes(3) }).ph).toBeLessThan(5.2);
+    const pure = { water: pureWater, acidsMolPerL: {}, leafBaseMeqPerL: 0, tempC: 25 };
+    expect(Math.abs(drinkPh(pure).ph - 5.6)).toBeLessThan(0.05);
+  });
+
   it('refuses water whose charges cannot be right', () => {
     expect(() => drinkPh({ ...drink, water: { ...water, cl: 0 } })).toThrow(/Check the water report/);
   });

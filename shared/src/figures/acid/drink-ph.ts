@@ -20,5 +20,8 @@ export function drinkPh(drink: DrinkAcidity): PhResult {
  */
 export function drinkPhBand(drink: DrinkAcidity): { low: number; value: number; high: number } {
   const at = (factor: number) => drinkPh({ ...drink, leafBaseMeqPerL: factor * drink.leafBaseMeqPerL }).ph;
-  return { low: at(leafBaseBand.low), value: at(leafBaseBand.middle), high: at(leafBaseBand.high) };
+  const value = at(leafBaseBand.middle);
+  const ends = [at(leafBaseBand.low), at(leafBaseBand.high)];
+  // In alkaline water more leaf brings the pH down instead of up.
+  return { low: Math.min(value, ...ends), value, high: Math.max(value, ...ends) };
 }

@@ -11,7 +11,7 @@ export interface BaseSite {
 
 /** What decides the pH of a liquid. Neutral salts bring only ionic strength; bicarbonate water brings `strongIonEqPerL`. */
 export interface AcidSolution {
-  /** Totals of each acid, mol/L, 0 to 2; carbonic stands for all CO2 that is dissolved. */
+  /** Totals of each acid, mol/L, 0 to 2; carbonic is for CO2 that is shut in, bicarbonate and all. */
   acidsMolPerL: Partial<Record<Dissociating, number>>;
   /** Na + K + 2 Ca + 2 Mg - Cl - 2 SO4, eq/L, -2 to 2. */
   strongIonEqPerL: number;
@@ -20,6 +20,8 @@ export interface AcidSolution {
   /** Share of the strong ions in the ionic strength, mol/L; half of `strongIonEqPerL` unless told. */
   strongIonicStrength?: number;
   sites?: readonly BaseSite[];
+  /** CO2 that the gas over the liquid keeps dissolved, air's or a keg's, 0 to 2 mol/L: bicarbonate comes on top of it. */
+  gasCo2MolPerL?: number;
   /** Metals whose complexes with citrate are counted, 0 to 2 mol/L each; left out unless told. They are strong ions as well. */
   citrateMetals?: CitrateMetals;
   /** °C, 0 to 77. */
@@ -42,6 +44,9 @@ export interface PreparedSolution {
   sulfateMolPerL: number;
   strongIonicStrength: number;
   hydrogenSulfateK: number;
+  /** Bicarbonate and carbonate under the gas, times the activity of hydrogen once and twice. */
+  bicarbonateK: number;
+  carbonateK: number;
   waterK: number;
   /** Davies constant; null leaves activities out. */
   activityA: number | null;
@@ -82,6 +87,8 @@ export function prepared(solution: AcidSolution): PreparedSolution {
   for (const { molPerL, pK } of solution.sites ?? []) {
     ladders.push(ladder(within(molPerL, 'A base of leaf', 0, MAX_MOL_PER_L, 'mol/L'), [within(pK, 'A pK', -5, 20)]));
   }
+  const gasCo2 = within(solution.gasCo2MolPerL ?? 0, 'The CO2 of the drink', 0, MAX_MOL_PER_L, 'mol/L');
+  const [carbonic1 = 0, carbonic2 = 0] = acidPkAt('carbonic', tempC);
   return {
     ladders,
     strongIonEqPerL,
@@ -92,6 +99,8 @@ export function prepared(solution: AcidSolution): PreparedSolution {
       'mol/L',
     ),
     hydrogenSulfateK: 10 ** -(acidPkAt('hydrogenSulfate', tempC)[0] ?? 0),
+    bicarbonateK: gasCo2 * 10 ** -carbonic1,
+    carbonateK: gasCo2 * 10 ** -(carbonic1 + carbonic2),
     waterK: 10 ** -waterPk(tempC),
     activityA: solution.activity === false ? null : debyeHuckelA(tempC),
   };
@@ -118,9 +127,12 @@ export function chargeAt(solution: PreparedSolution, ph: number, ionicStrength: 
   const aH = 10 ** -ph;
   const hydrogen = aH / g1;
   const hydroxide = solution.waterK / (aH * g1);
-  let left = solution.strongIonEqPerL + hydrogen - hydroxide;
-  let buffer = hydrogen + hydroxide;
-  let strength = hydrogen + hydroxide + 2 * solution.strongIonicStrength;
+  const bicarbonate = solution.bicarbonateK / (aH * g1);
+  const carbonate = solution.carbonateK / (aH * aH * g2);
+  const squared = hydrogen + hydroxide + bicarbonate + 4 * carbonate;
+  let left = solution.strongIonEqPerL + hydrogen - hydroxide - bicarbonate - 2 * carbonate;
+  let buffer = squared;
+  let strength = squared + 2 * solution.strongIonicStrength;
   for (const { molPerL, betas, metals } of solution.ladders) {
     let weights = 0;
     let charges = 0;

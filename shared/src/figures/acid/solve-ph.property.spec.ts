@@ -18,6 +18,7 @@ const anything = fc.record({
   acidsMolPerL: everyAcid,
   strongIonEqPerL: fc.oneof(fc.constantFrom(-2, 0, 2), number(-0.1, 0.1)),
   sulfateMolPerL: amount,
+  gasCo2MolPerL: amount,
   strongIonicStrength: fc.oneof(fc.constantFrom(0, 0.49, 0.51, 20), number(0, 1)),
   sites: fc.array(fc.record({ molPerL: amount, pK: number(2, 9) }), { maxLength: 4 }),
   tempC: fc.oneof(fc.constantFrom(0, 50, 77), number(0, 77)),

@@ -32,7 +32,8 @@ export function titratedAcidityGPerL(titration: { baseMl: number; normality: num
  * @see solve-ph.ts, solved for the strong base.
  */
 export function titratableAcidityGPerL(drink: DrinkAcidity, endPh = END_PH): number | null {
-  const base = drinkSolution({ ...drink, co2MolPerL: 0, tempC: 25 });
+  // It takes minutes: no air comes into it.
+  const base = { ...drinkSolution({ ...drink, co2MolPerL: 0, tempC: 25 }), gasCo2MolPerL: 0 };
   const strongBase = { acidsMolPerL: {}, strongIonEqPerL: 1, tempC: 25 };
   const eqPerL = amountAtPh(base, strongBase, within(endPh, 'An end point', 7, 9), MOST_EQ_PER_L);
   return eqPerL === null ? null : Math.max(0, eqPerL) * CITRIC_G_PER_EQ;

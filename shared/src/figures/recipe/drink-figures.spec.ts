@@ -140,9 +140,25 @@ describe('the worked example, whole chain', () => {
 
   it('gives no pH for water whose report cannot be right, and all the rest', () => {
     const wrong = drinkFigures({ ...plan, source: { ...pureWater, na: 300 } });
+    const sea = { ca: 412, mg: 1290, na: 10_770, k: 399, cl: 19_350, so4: 2712, hco3: 142 };
+    expect(drinkFigures({ ...plan, source: sea })).toMatchObject({ acid: null, water: { salinity: 'salt' } });
     expect(wrong.acid).toBeNull();
     expect(wrong.hops).toBeNull();
     expect(wrong.tea.caffeineMgPerL.value).toBeGreaterThan(100);
+  });
+
+  it('gives all figures of hard water that the acid cannot turn, and of a jar of chalk', () => {
+    const hard = { ca: 140, mg: 25, na: 30, k: 3, cl: 60, so4: 80, hco3: 430 };
+    for (const other of [
+      { ...plan, source: hard, acidAfterHops: true },
+      { ...plan, salts: [{ salt: 'calciumCarbonate', massG: 20 }] } as const,
+      { ...plan, acids: [{ acid: 'citricAnhydrous', massG: 4000 }] } as const,
+    ]) {
+      const { acid, hops } = drinkFigures(other);
+      expect(acid?.phStill.low).toBeLessThanOrEqual(acid?.phStill.high ?? 0);
+      expect(hops?.bitternessIndex.value).toBeGreaterThan(3);
+    }
+    near(drinkFigures({ ...plan, source: hard }).acid?.phStill.value, 8.3, 0.15);
   });
 
   it('works with nothing in it, and never flickers', () => {

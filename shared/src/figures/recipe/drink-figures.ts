@@ -7,6 +7,7 @@ import { chlorideSulfate, type ChlorideSulfate } from '../water/chloride-sulfate
 import { conductivityUsPerCm } from '../water/conductivity.js';
 import type { IonsMgPerL } from '../water/ions.js';
 import { ionicStrengthMolPerL } from '../water/ionic-strength.js';
+import { salinity, type Salinity } from '../water/salinity.js';
 import { saltedWater } from '../water/salts.js';
 import { concentrationFactor, drinkYieldL, type DrinkYield } from '../yield/drink-yield.js';
 import { hazeFlags, type HazeFlag } from '../yield/haze.js';
@@ -23,12 +24,14 @@ export interface WaterFigures {
   conductivityUsPerCm: number;
   chlorideSulfate: ChlorideSulfate;
   balance: ChargeBalance;
+  /** No pH is computed for `salt`; `brackish` wants another water. */
+  salinity: Salinity;
 }
 
 export interface DrinkFigures {
   /** Treated water, before heat. */
   water: WaterFigures;
-  /** Null when the water report is refused: no pH can be computed from it. */
+  /** Null when the water report is refused, or the water salt: no pH can be computed from it. */
   acid: AcidFigures | null;
   tea: TeaFigures;
   /** Null with `acid`: dissolved alpha depends on the pH. */
@@ -54,7 +57,8 @@ export function drinkFigures(plan: DrinkPlan): DrinkFigures {
   const balance = chargeBalance(ions);
   const concentration = concentrationFactor(plan.waterL, plan.evaporatedL);
   const hardness = hardnessAsCaCo3(ions);
-  const acid = balance.verdict === 'refused' ? null : acidFigures(plan, ions);
+  const saltiness = salinity(ions);
+  const acid = balance.verdict === 'refused' || saltiness === 'salt' ? null : acidFigures(plan, ions);
   const sumG = (list: readonly { massG: number }[]) => list.reduce((sum, { massG }) => sum + massG, 0);
   return {
     water: {
@@ -65,6 +69,7 @@ export function drinkFigures(plan: DrinkPlan): DrinkFigures {
       conductivityUsPerCm: conductivityUsPerCm(ions).estimate,
       chlorideSulfate: chlorideSulfate(ions, plan.salts),
       balance,
+      salinity: saltiness,
     },
     acid,
     tea: teaFigures(plan, concentration),

@@ -19,6 +19,8 @@ const RATE_SPREAD = 1.35;
 /** Humulinones in pellets, low and high over the default: 0.2 and 0.5 over 0.35 (Maye 2015). */
 const HUMULINONE_SPREAD = { low: 0.2 / 0.35, high: 0.5 / 0.35 };
 const SOLUBILITY_FACTOR = 3;
+/** Ends of what is believed of alpha's solubility; held beyond. */
+const SOLUBILITY_PH = { from: 2, to: 9 } as const;
 const RUNS = 500;
 
 export interface HopFigures {
@@ -35,6 +37,9 @@ export interface HopFigures {
 
 /** Hop side of a drink. @param phAtHops while they are in. @param phStill of the drink. @param concentration factor by evaporation. */
 export function hopFigures(plan: DrinkPlan, phAtHops: number, phStill: number, concentration: number): HopFigures {
+  const [hopPh, stillPh] = [phAtHops, phStill].map((ph) =>
+    Math.min(SOLUBILITY_PH.to, Math.max(SOLUBILITY_PH.from, ph)),
+  ) as [number, number];
   const liters = positive(plan.waterL, 'A volume of water', 'L');
   const gPerL = (hops: HopAddition) => (notNegative(hops.massG, 'A mass of hops', 'g') / liters) * concentration;
   const alphaOf = (hops: HopAddition) => gPerL(hops) * within(hops.alphaPercent, 'Alpha acids', 0, 30, '%') * 10;
@@ -45,7 +50,7 @@ export function hopFigures(plan: DrinkPlan, phAtHops: number, phStill: number, c
       // All hops share what the liquid can dissolve; each gets its part of it.
       const share = alphaMgPerL > 0 ? alphaOf(hops) / alphaMgPerL : 0;
       if (share === 0) return sum;
-      const contact = { alphaMgPerL: alphaOf(hops), ph: phAtHops, solubilityAt60MgPerL: solubilityAt60MgPerL * share };
+      const contact = { alphaMgPerL: alphaOf(hops), ph: hopPh, solubilityAt60MgPerL: solubilityAt60MgPerL * share };
       return sum + isomerise(curve, contact).isoMgPerL;
     }, 0);
   const isoMgPerL = band(
@@ -55,7 +60,7 @@ export function hopFigures(plan: DrinkPlan, phAtHops: number, phStill: number, c
     'judged',
   );
   const pool = plan.hops.reduce((sum, hops) => sum + gPerL(hops) * humulinonePercent(hops.storageIndex) * 10, 0);
-  const soluble = alphaSolubilityMgPerL(plan.gas.tempC, phStill);
+  const soluble = alphaSolubilityMgPerL(plan.gas.tempC, stillPh);
   const dissolved = (factor: number) => Math.min(alphaMgPerL, soluble * factor);
   const alphaDissolvedMgPerL = band(
     dissolved(1 / SOLUBILITY_FACTOR),
