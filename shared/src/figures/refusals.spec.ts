@@ -235,6 +235,7 @@ const calls: Partial<Record<keyof typeof figures, readonly unknown[]>> = {
   solvePh: [solution],
   stationPressureKPa: [101, 500],
   steepDoseMin: [steep],
+  steepLinesHold: [steep],
   steepVerdict: ['white', 4],
   steepedCaffeineMgPerL: [{ doseGPerL: 5, contentMgPerG: 35, extractedRatio: 0.8 }],
   stillDurationS: [keg, 4],

@@ -3,6 +3,7 @@ import { alkalinityMeqPerL } from '../water/alkalinity.js';
 import { chargeBalance } from '../water/charge-balance.js';
 import { ionMolarMass, type IonsMgPerL } from '../water/ions.js';
 import { ionicStrengthMolPerL } from '../water/ionic-strength.js';
+import { salinity } from '../water/salinity.js';
 import { carbonicLogHenry, type Dissociating } from './dissociation.js';
 import { leafBase } from './leaf-base.js';
 import type { AcidSolution } from './solution.js';
@@ -25,8 +26,8 @@ export interface DrinkAcidity {
  * What the solver needs for a drink. The alkalinity of the water is its strong-ion difference: the CO2 that acid makes of it
  * leaves the open kettle. What meets no acid stays bicarbonate, in balance with the air, or with `co2MolPerL` in the keg.
  *
- * @throws RangeError when a number is out of range, or when the charges of the water differ by more than 20 %: its report
- * must be wrong, and no pH can be computed from it.
+ * @throws RangeError when a number is out of range, when the charges of the water differ by more than 20 % (its report
+ * must be wrong, and no pH can be computed from it), or when it is salt water.
  */
 export function drinkSolution(drink: DrinkAcidity): AcidSolution {
   const balance = chargeBalance(drink.water);
@@ -34,6 +35,9 @@ export function drinkSolution(drink: DrinkAcidity): AcidSolution {
     throw new RangeError(
       `The charges of the water must agree within 20 %, got ${Math.round(balance.imbalancePercent)} %. Check the water report.`,
     );
+  }
+  if (salinity(drink.water) === 'salt') {
+    throw new RangeError('The water must be fresh, got salt water of 0.5 mol/L or more. Take another water.');
   }
   const airCo2 = AIR_CO2_ATM * 10 ** carbonicLogHenry(drink.tempC);
   const leaf = leafBase(drink.leafBaseMeqPerL);

@@ -79,5 +79,6 @@ describe('pH of a drink', () => {
 
   it('refuses water whose charges cannot be right', () => {
     expect(() => drinkPh({ ...drink, water: { ...water, cl: 0 } })).toThrow(/Check the water report/);
+    expect(() => drinkPh({ ...drink, water: { ...pureWater, na: 11_495, cl: 17_725 } })).toThrow(/another water/);
   });
 });

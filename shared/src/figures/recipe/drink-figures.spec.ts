@@ -72,7 +72,7 @@ describe('the worked example, whole chain', () => {
   it('tea (Jaganyi and Price 1999, J. Tea Sci. Res. 2024; rates a judgement with a factor of two)', () => {
     const { steeps, caffeineMgPerL, caffeineServingMg, caffeineLine } = figures.tea;
     near(steeps[0]?.steepDoseMin, 4.28, 0.02);
-    expect(steeps[0]?.verdict).toBe('good');
+    expect(steeps[0]).toMatchObject({ verdict: 'good', linesHold: true });
     near(steeps[0]?.polyphenolRatio.value, 0.72, 0.005);
     near(steeps[0]?.polyphenolRatio.low, 0.47, 0.005);
     near(steeps[0]?.polyphenolRatio.high, 0.92, 0.005);
@@ -145,6 +145,19 @@ describe('the worked example, whole chain', () => {
     expect(wrong.acid).toBeNull();
     expect(wrong.hops).toBeNull();
     expect(wrong.tea.caffeineMgPerL.value).toBeGreaterThan(100);
+  });
+
+  it('takes a night in the fridge for a cold steep, and leaf without caffeine for what it is', () => {
+    const night = [
+      { atMs: 0, tempC: 5 },
+      { atMs: 12 * 3_600_000, tempC: 5 },
+    ];
+    const leaf = { form: 'whole', massG: 100, inAtMs: 0, outAtMs: 12 * 3_600_000 } as const;
+    const cold = drinkFigures({ ...plan, curve: night, teas: [{ kind: 'green', ...leaf }], hops: [] }).tea;
+    expect(cold.steeps[0]?.linesHold).toBe(false);
+    near(cold.caffeineMgPerL.value / (5 * 27 * 0.9), 1, 0.03);
+    const herbs = drinkFigures({ ...plan, curve: night, teas: [{ kind: 'herbal', ...leaf }] }).tea;
+    expect(herbs).toMatchObject({ caffeineMgPerL: { low: 0, value: 0, high: 0 }, caffeineLine: 'below' });
   });
 
   it('gives all figures of hard water that the acid cannot turn, and of a jar of chalk', () => {

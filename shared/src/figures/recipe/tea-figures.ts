@@ -4,7 +4,7 @@ import { monteCarlo, type Unsure } from '../bands/monte-carlo.js';
 import { curveBetween } from '../curve/temperature-curve.js';
 import { caffeineContent, servingCaffeineMg, steepedCaffeineMgPerL } from '../tea/caffeine.js';
 import { leafExtraction, leafForms } from '../tea/extraction.js';
-import { steepDoseMin, steepVerdict, type SteepVerdict, type TeaKind } from '../tea/steep-dose.js';
+import { steepDoseMin, steepLinesHold, steepVerdict, type SteepVerdict, type TeaKind } from '../tea/steep-dose.js';
 import { EU_CAFFEINE_LABEL_MG_PER_L } from '../safety/caffeine-label.js';
 import { positive, within } from '../numeric/guard.js';
 import type { DrinkPlan, TeaAddition } from './drink-plan.js';
@@ -19,6 +19,8 @@ export interface SteepFigures {
   kind: TeaKind;
   steepDoseMin: number;
   verdict: SteepVerdict;
+  /** False for a cold steep: the verdict says nothing there. */
+  linesHold: boolean;
   polyphenolRatio: Band;
 }
 
@@ -53,6 +55,7 @@ export function teaFigures(plan: DrinkPlan, concentration: number): TeaFigures {
       kind: tea.kind,
       steepDoseMin: doseMin,
       verdict: steepVerdict(tea.kind, doseMin),
+      linesHold: steepLinesHold(curve),
       polyphenolRatio: polyphenolBand(out.polyphenolTurns),
     };
   });

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { steepDoseMin, steepVerdict, type TeaKind } from './steep-dose.js';
+import { steepDoseMin, steepLinesHold, steepVerdict, type TeaKind } from './steep-dose.js';
 
 const hold = (tempC: number, minutes: number) => [
   { atMs: 0, tempC },
@@ -29,6 +29,13 @@ describe('steep dose', () => {
     ['herbal', 300, 'good'],
   ])('Saklar 2015, Perez-Burillo 2018 and judgement: %s at %s is %s', (tea, dose, verdict) => {
     expect(steepVerdict(tea, dose)).toBe(verdict);
+  });
+
+  it('Perez-Burillo 2018: the lines are of hot steeps, not of a night in the fridge', () => {
+    expect(steepLinesHold(hold(82, 4))).toBe(true);
+    expect(steepLinesHold([...hold(82, 4), { atMs: 3_600_000, tempC: 20 }])).toBe(true);
+    expect(steepLinesHold(hold(5, 720))).toBe(false);
+    expect(steepLinesHold([])).toBe(false);
   });
 
   it('refuses a negative dose and an unknown tea', () => {

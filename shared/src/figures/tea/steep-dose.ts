@@ -1,4 +1,4 @@
-import type { TemperatureCurve } from '../curve/temperature-curve.js';
+import { checkedCurve, type TemperatureCurve } from '../curve/temperature-curve.js';
 import { entryOf, notNegative } from '../numeric/guard.js';
 import { extractionTurns } from './extraction.js';
 
@@ -30,6 +30,21 @@ export const steepWindows = {
 
 export type TeaKind = keyof typeof steepWindows;
 export type SteepVerdict = 'short' | 'good' | 'long' | 'amber' | 'red';
+
+/** The windows come from steeps of 60 °C and up. */
+const LINES_FROM_C = 60;
+
+/**
+ * Whether the windows and lines mean anything for a steep: not for a cold one. A night at 5 °C counts as far past red, and is not:
+ * what makes tea harsh hardly leaves cold leaf. Go by taste there.
+ *
+ * @param curve from leaf in to leaf out.
+ * @throws RangeError on a curve that is out of order or not finite.
+ * @see the coolest steeps behind the windows, Perez-Burillo et al. 2018.
+ */
+export function steepLinesHold(curve: TemperatureCurve): boolean {
+  return checkedCurve(curve).some(({ tempC }) => tempC >= LINES_FROM_C);
+}
 
 /**
  * Where a steep stands. `long` is past the good window and before the amber line. Past amber little is gained but
