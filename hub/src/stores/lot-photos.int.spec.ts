@@ -118,6 +118,18 @@ describe('the photo of a label', () => {
     expect([streamed.status, await streamed.json()]).toMatchObject([413, { errors: [{ pointer: '/photo' }] }]);
   });
 
+  it('may be broken off half way: nothing is kept, and the next one goes through', async () => {
+    const broken = new AbortController();
+    const form = new FormData();
+    form.append('photo', new Blob([new Uint8Array(11_000_000)]), 'label.jpg');
+    const headers = { authorization: brewer.bearer };
+    const sending = fetch(`${testApp.url}${path}`, { method: 'POST', headers, body: form, signal: broken.signal });
+    setTimeout(() => broken.abort(), 2);
+    await expect(sending).rejects.toThrow('aborted');
+    expect(await keptCount()).toBe(0);
+    await send(await label().jpeg().toBuffer()).expect(200);
+  });
+
   it('needs a right, and is of its house', async () => {
     const jpeg = await label().jpeg().toBuffer();
     await send(jpeg);

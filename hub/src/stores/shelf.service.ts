@@ -195,8 +195,9 @@ export class ShelfService {
   }
 }
 
-/** What goes off first at the head, what bears no date last; then in the order in which it came. */
+/** What goes off first at the head, what bears no date after that; then in the order in which it came. What was removed comes last. */
 const firstToUse = [
+  [Sequelize.literal('removed_at_ms IS NOT NULL'), 'ASC'],
   [Sequelize.literal('best_before IS NULL'), 'ASC'],
   ['bestBefore', 'ASC'],
   ['receivedOn', 'ASC'],

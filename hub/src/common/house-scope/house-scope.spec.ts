@@ -24,7 +24,10 @@ const QUERY =
 describe('rows of a house', () => {
   it('are all known here', () => {
     expect(ownedModels).toEqual(
-      expect.arrayContaining(['Membership', 'Equipment', 'Recipe', 'RecipeRevision', 'Batch']),
+      expect.arrayContaining([
+        ...['Membership', 'Equipment', 'Recipe', 'RecipeRevision', 'Batch'],
+        ...['Ingredient', 'Lot', 'LotMove', 'LotReservation', 'Attachment'],
+      ]),
     );
   });
 

@@ -27,13 +27,16 @@ function uploadOf(field: string): new () => NestInterceptor {
   return class extends FileInterceptor(field, { limits: { fileSize: MOST_BYTES, files: 1, parts: 4 } }) {
     override async intercept(context: ExecutionContext, next: CallHandler) {
       // Answered before it is read; what still comes is thrown away as it comes, so that the sender gets to see the answer.
-      const { headers } = context.switchToHttp().getRequest<Request>();
-      if (Number(headers['content-length'] ?? 0) > MOST_BYTES + AROUND_BYTES) throw tooLarge();
+      const request = context.switchToHttp().getRequest<Request>();
+      if (Number(request.headers['content-length'] ?? 0) > MOST_BYTES + AROUND_BYTES) throw tooLarge();
       try {
         return await super.intercept(context, next);
       } catch (error) {
         const status = (error as { getStatus?: () => number }).getStatus?.();
         if (status === 413) throw tooLarge();
+        // Nobody is there any more to read it; it is no fault of the hub either.
+        if (status === undefined && !request.complete)
+          throw new ProblemError('not-readable', 'The sending was broken off.');
         if (status === undefined || status >= 500) throw error;
         throw pointed(
           'not-valid',
