@@ -19,6 +19,8 @@ import type { AcidAdvice, DeskKit } from './types.js';
 /** The usual aim of a hop tea: tart, and under the lines of food codes (common practice, no source). */
 export const USUAL_DRINK_PH = 3.8;
 const TEMP_C = 25;
+/** More acid than any drink bears, of the jar, g/L (common practice, no source). */
+const MOST_G_PER_L = 50;
 
 type AcidLine = Extract<RecipeDocument['additions'][number], { kind: 'acid' }>;
 
@@ -55,7 +57,8 @@ export function gramsForPh(
 ): { kind: 'dose'; massG: number } | { kind: 'none-needed'; ph: number } | { kind: 'never' } {
   const rest = acidityOf(plan, leafBaseMeqPerL, (kind) => kind === acid);
   const dose = acidDose(rest, ph, acid, strengthPercent ?? 100);
-  return dose.kind === 'add' ? { kind: 'dose', massG: dose.gPerL * plan.waterL } : dose;
+  if (dose.kind !== 'add') return dose;
+  return dose.gPerL > MOST_G_PER_L ? { kind: 'never' } : { kind: 'dose', massG: dose.gPerL * plan.waterL };
 }
 
 /** Null where the sum refuses: the page then says why. */

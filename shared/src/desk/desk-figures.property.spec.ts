@@ -7,7 +7,8 @@ import { deskFigures } from './desk-figures.js';
 import type { DeskKit } from './types.js';
 import { workings } from './workings.js';
 
-const real = (min: number, max: number) => fc.double({ min, max, noNaN: true });
+const real = (min: number, max: number) =>
+  fc.integer({ min: 0, max: 10_000 }).map((x) => min + ((max - min) * x) / 10_000);
 /** As often near nothing as near the most: a digit too few or too many. */
 const amount = (max: number) => fc.oneof(real(1e-6, 1), real(1, Math.min(max, 100)), real(1e-6, max));
 const timeS = fc.oneof(real(1, 1200), real(1e-3, 24 * 3600));
@@ -35,7 +36,13 @@ const addition = fc.oneof(
   fc.record({
     ...shape,
     kind: fc.constant('salt' as const),
-    salt: fc.constantFrom('calciumChlorideDihydrate', 'gypsum', 'sodiumBicarbonate', 'calciumHydroxide', 'calciumCarbonate'),
+    salt: fc.constantFrom(
+      'calciumChlorideDihydrate',
+      'gypsum',
+      'sodiumBicarbonate',
+      'calciumHydroxide',
+      'calciumCarbonate',
+    ),
     assayPercent: maybe(real(1, 100)),
   }),
   fc.record({
@@ -108,7 +115,10 @@ const anyDocument = fc
   .map(({ report: one, ...rest }) =>
     recipeDocumentSchema.parse({
       ...JSON.parse(JSON.stringify(rest)),
-      additions: JSON.parse(JSON.stringify(rest.additions)).map((each: object, index: number) => ({ ...each, id: `a${index}` })),
+      additions: JSON.parse(JSON.stringify(rest.additions)).map((each: object, index: number) => ({
+        ...each,
+        id: `a${index}`,
+      })),
       waters: [{ id: 'w', name: 'water', percent: 100, report: JSON.parse(JSON.stringify(one)) }],
       steps: { own: [] },
     }),
@@ -169,7 +179,7 @@ function promises(document: RecipeDocument, kit: DeskKit): void {
 
 describe('deskFigures', () => {
   it('gives figures or says what is impossible for whatever the schema takes, and never a number that is none', () => {
-    fc.assert(fc.property(anyDocument, anyKit, promises), { numRuns: 400 });
+    fc.assert(fc.property(anyDocument, anyKit, promises), { numRuns: 250 });
   });
 
   it('advises on the acid of whatever the schema takes', () => {

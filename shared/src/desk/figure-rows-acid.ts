@@ -2,6 +2,7 @@ import {
   acidKinds,
   acidMolPerL,
   band,
+  complexedDrinkPh,
   drinkPh,
   juiceCitricGPerL,
   leafBaseBand,
@@ -22,6 +23,8 @@ const ASKED_PHS = [3.5, 3.8, 4.0];
 /** A meter that shows less or more than the figures: how much it says about the leaf. */
 const IF_MEASURED = [-0.2, 0.1];
 const BUFFER_STEP = 0.01;
+/** Less than this is not worth a line. */
+const SHOWN_PH = 0.005;
 
 /** Acid, what leaf and hops do to it, and the pH at every stage. */
 export function acidRows(context: RowContext): FigureRow[] {
@@ -49,6 +52,7 @@ export function acidRows(context: RowContext): FigureRow[] {
       isLead: true,
       target: targetOf(acid.phAfterAcid, waterPh.min, waterPh.max),
     }),
+    ...complexedRows(context, acid),
     ...amountRows(context),
     row({ id: 'acid.tea-base', label: 'Base from the tea', quantity: 'meqPerL', band: baseBand(acid.teaBaseMeqPerL) }),
     row({
@@ -88,6 +92,29 @@ export function acidRows(context: RowContext): FigureRow[] {
         ]),
     ...doseRows(context, acid),
     ...lotRows(context, acid),
+  ];
+}
+
+/** Where calcium and magnesium hold citric acid the pH lies a little lower: a line beside the plain one. */
+function complexedRows({ document, plan }: RowContext, acid: AcidFigures): FigureRow[] {
+  const before = complexedDrinkPh(acidityOf(plan, 0)).ph;
+  if (acid.phStill.value - acid.phStillComplexed < SHOWN_PH && acid.phAfterAcid - before < SHOWN_PH) return [];
+  const { low, value, high } = acid.phStill;
+  const off = acid.phStillComplexed - value;
+  const still = { low: low + off, value: value + off, high: high + off };
+  return [
+    row({
+      id: 'acid.ph-still-complexed',
+      label: 'pH of the drink, with calcium holding citrate',
+      quantity: 'pH',
+      band: phBandOf(document, still),
+    }),
+    row({
+      id: 'acid.ph-after-acid-complexed',
+      label: 'pH of the water, with calcium holding citrate',
+      quantity: 'pH',
+      band: plainPhBand(before),
+    }),
   ];
 }
 

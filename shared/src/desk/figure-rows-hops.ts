@@ -16,8 +16,8 @@ import { hopsOf, row, within, type RowContext } from './figure-row.js';
 import type { FigureRow } from './types.js';
 
 const HELD_MS = 20 * 60_000;
-/** So soluble that all of it is dissolved, mg/L. */
-const ALL_DISSOLVED = 1e6;
+/** Ends of what is believed of solubility; held beyond. */
+const SOLUBILITY_PH = { from: 2, to: 9 } as const;
 /** Below 80 °C the rate is extrapolated. */
 const RATE_SPREAD = 1.35;
 
@@ -80,7 +80,7 @@ function alternativeRows(context: RowContext): FigureRow[] {
   const { acid, hops } = figures;
   const chill = day.marks.find(({ kind }) => kind === 'chill');
   if (!acid || !hops || hops.alphaMgPerL === 0) return [];
-  const iso = (curveOf: (one: HopAddition) => TemperatureCurve, ph: number, at60: number) =>
+  const iso = (curveOf: (one: HopAddition) => TemperatureCurve, ph: number, at60: number | null) =>
     plan.hops.reduce((sum, one) => sum + isoOf(context, one, curveOf(one), ph, at60), 0);
   const spread = (curveOf: (one: HopAddition) => TemperatureCurve, ph: number): Band => {
     const { low, value, high } = alphaSolubilityAt60;
@@ -92,7 +92,7 @@ function alternativeRows(context: RowContext): FigureRow[] {
     );
   };
   const asPlanned = (one: HopAddition) => curveBetween(plan.curve, one.inAtMs, one.outAtMs);
-  const allDissolved = iso(asPlanned, acid.phAtHops, ALL_DISSOLVED);
+  const allDissolved = iso(asPlanned, acid.phAtHops, null);
   const rows = [
     row({
       id: 'hops.iso-all-dissolved',
@@ -120,7 +120,7 @@ function alternativeRows(context: RowContext): FigureRow[] {
 
 function phWithoutAcid({ plan, figures: { acid } }: RowContext): number {
   const base = (acid?.teaBaseMeqPerL ?? 0) + (acid?.hopBaseMeqPerL ?? 0);
-  return Math.min(9, drinkPh(acidityOf(plan, base, () => true)).ph);
+  return drinkPh(acidityOf(plan, base, () => true)).ph;
 }
 
 /** All hops share what the liquid can dissolve. */
@@ -129,11 +129,13 @@ function isoOf(
   one: HopAddition,
   curve: TemperatureCurve,
   ph: number,
-  at60: number,
+  at60: number | null,
 ): number {
   const all = hops?.alphaMgPerL ?? 0;
   const sumG = plan.hops.reduce((sum, { massG, alphaPercent }) => sum + massG * alphaPercent, 0);
   const share = sumG > 0 ? (one.massG * one.alphaPercent) / sumG : 0;
   if (share === 0) return 0;
-  return isomerise(curve, { alphaMgPerL: all * share, ph, solubilityAt60MgPerL: at60 * share }).isoMgPerL;
+  const solubilityAt60MgPerL = at60 === null ? null : at60 * share;
+  const held = Math.min(SOLUBILITY_PH.to, Math.max(SOLUBILITY_PH.from, ph));
+  return isomerise(curve, { alphaMgPerL: all * share, ph: held, solubilityAt60MgPerL }).isoMgPerL;
 }

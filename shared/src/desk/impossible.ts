@@ -1,11 +1,16 @@
-import { blendedWater, chargeBalance, waterFromReport, type DrinkFigures, type DrinkPlan } from '../figures/index.js';
+import {
+  blendedWater,
+  chargeBalance,
+  salinity,
+  waterFromReport,
+  type DrinkFigures,
+  type DrinkPlan,
+} from '../figures/index.js';
 import type { Addition, RecipeDocument } from '../sheets/index.js';
 import type { DeskResult } from './types.js';
 
 type Impossible = Extract<DeskResult, { kind: 'impossible' }>;
 
-/** End of the activity formula, mol/L. */
-const MOST_STRENGTH = 0.5;
 /** More dry leaf than this in a litre of water is no drink, g/L. */
 const MOST_LEAF_G_PER_L = 400;
 /** More acid than this in a litre, g/L. */
@@ -13,8 +18,8 @@ const MOST_ACID_G_PER_L = 150;
 
 /** Why there are no figures although they were summed; null when they are good. */
 export function impossibleFigures(document: RecipeDocument, figures: DrinkFigures): Impossible | null {
+  if (figures.water.salinity === 'salt') return saltWater(document);
   if (!figures.acid) return refusedWater(document);
-  if (figures.water.ionicStrength > MOST_STRENGTH) return brackish(document);
   if (figures.gas.gaugeKPa === null) {
     return impossible(
       `No pressure that a keg bears gives ${document.gas.volumes} volumes at this temperature.`,
@@ -43,20 +48,7 @@ export function refusedFigures(document: RecipeDocument, plan: DrinkPlan | null,
     );
   }
   if (plan && chargeBalance(plan.source).verdict === 'refused') return refusedWater(document);
-  return (
-    outsidePh(document, error) ?? impossible(error.message, 'Look at the amounts and at the volume of water.', null)
-  );
-}
-
-/** Dissolved alpha acids are known from pH 2 to 9. */
-function outsidePh(document: RecipeDocument, error: RangeError): Impossible | null {
-  if (!error.message.startsWith('A pH ')) return null;
-  const acidPath = largestPath(document, (one) => one.kind === 'acid');
-  return impossible(
-    'The pH of this drink lies outside 2 to 9, where nothing is known of hops.',
-    acidPath ? 'Plan less acid, or less bicarbonate.' : 'Plan less bicarbonate, or add an acid.',
-    acidPath ?? largestPath(document, (one) => one.kind === 'salt') ?? 'waters',
-  );
+  return impossible(error.message, 'Look at the amounts and at the volume of water.', null);
 }
 
 function refusedWater(document: RecipeDocument): Impossible {
@@ -71,11 +63,9 @@ function refusedWater(document: RecipeDocument): Impossible {
   );
 }
 
-function brackish(document: RecipeDocument): Impossible {
-  const source = blendedWater(
-    document.waters.map(({ report, percent }) => ({ water: waterFromReport(report), volumeL: percent })),
-  );
-  const isSource = Object.values(source).reduce((sum, mgPerL) => sum + mgPerL, 0) > 5000;
+function saltWater(document: RecipeDocument): Impossible {
+  const waters = document.waters.map(({ report, percent }) => ({ water: waterFromReport(report), volumeL: percent }));
+  const isSource = salinity(blendedWater(waters)) !== 'fresh';
   return impossible(
     'This water is as salt as the sea: the pH of it cannot be worked out.',
     isSource ? 'Look at the water report: every ion in mg/L.' : 'Look at the grams of salt and at the volume of water.',

@@ -1,6 +1,7 @@
 import {
   boilingPointAtAltitudeC,
   chillerConstantPerS,
+  coilTransferWPerK,
   coolingExponent,
   curveBetween,
   curveTempC,
@@ -253,7 +254,12 @@ function chillOf({ assume }: RecipeDocument, { chiller }: DayKit, heatCapacityJP
   if (known !== undefined) return { surroundC, kPerS: known };
   if (!chiller) return null;
   const kPerS = chillerConstantPerS({
-    transferWPerK: usual.coilWPerKPerM * chiller.lengthM,
+    transferWPerK: coilTransferWPerK({
+      outerMm: usual.coilOuterMm,
+      lengthM: chiller.lengthM,
+      stirred: false,
+      tempC: usual.coilAtC,
+    }).value,
     coolantKgPerS: usual.coolantKgPerS,
     coolantInC: surroundC,
     heatCapacityJPerK,

@@ -9,8 +9,9 @@ export const usual = {
   servingMl: 355,
   /** Coolant through a coil, kg/s. */
   coolantKgPerS: 0.1,
-  /** Per metre of 9.5 mm tube in a gently stirred pot: 240 W/K for 7.6 m, between still and well stirred (computed). */
-  coilWPerKPerM: 240 / 7.6,
+  /** Where a gently stirred coil takes as much as a still one, °C: 240 W/K for 7.6 m, half of a well stirred one. */
+  coilAtC: 60,
+  coilOuterMm: 9.5,
   /** 2.2 kg for 7.6 m of copper with its ends; stainless tube is thinner (computed). */
   coilKgPerM: { copper: 2.2 / 7.6, stainless: 0.16 },
   coilBoreMm: 7.9,

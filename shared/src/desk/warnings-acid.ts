@@ -1,4 +1,4 @@
-import { phBand, type Band, type PhBand } from '../figures/index.js';
+import { phBand, tooAcidForCopper, type Band, type PhBand } from '../figures/index.js';
 import { leadingAcid, gramsForPh, wantedPh } from './acid-advice.js';
 import { contactMs } from './drink-plan.js';
 import type { RowContext } from './figure-row.js';
@@ -8,8 +8,6 @@ import { CODES_FIRST, pathOf, warning, wordsIn } from './warning.js';
 
 /** As sour as lemonade, g/L as citric acid (common practice, no source). */
 const SOUR_G_PER_L = 4;
-/** Food codes forbid copper below this. */
-const COPPER_PH = 6;
 const ASKS: readonly PhBand[] = ['assessment', 'low-acid'];
 
 export function acidWarnings(context: RowContext): DeskWarning[] {
@@ -128,7 +126,7 @@ function copperWarnings({ kit }: RowContext, lowestPh: number): DeskWarning[] {
     ...(kit.kettle?.metal === 'copper' ? ['kettle'] : []),
     ...(kit.chiller?.metal === 'copper' ? ['chiller'] : []),
   ];
-  if (parts.length === 0 || lowestPh >= COPPER_PH) return [];
+  if (parts.length === 0 || !tooAcidForCopper(clampPh(lowestPh))) return [];
   return [
     warning('copper', 'danger', null, {
       what: `The ${parts.join(' and the ')} ${parts.length > 1 ? 'are' : 'is'} of copper, and the liquid is below pH 6.`,

@@ -5,6 +5,7 @@ import {
   coolingRuleLimit,
   drinkYieldL,
   phBand,
+  tubeVolumeL,
   volumeAtTemperatureL,
   warmKegGaugeKPa,
 } from '../figures/index.js';
@@ -13,6 +14,7 @@ import { YIELD_SHARE } from './figure-rows.js';
 import type { RowContext } from './figure-row.js';
 import { altitudeOf, isChilled } from './planned-day.js';
 import { phBandOf } from './still-ph.js';
+import { usual } from './usual-kit.js';
 import type { DeskWarning } from './types.js';
 import { CODES_FIRST, warning, wordsIn } from './warning.js';
 
@@ -20,8 +22,6 @@ import { CODES_FIRST, warning, wordsIn } from './warning.js';
 const HEADROOM_SHARE = 0.05;
 /** Room that a gram of leaf or hops takes beside the water it holds, L (common practice, no source). */
 const LEAF_L_PER_G = 0.0008;
-/** Outer width of the tube of a coil, m. */
-const COIL_TUBE_M = 0.0095;
 /** A kitchen in summer. */
 const WARM_C = 30;
 const WARM_DRINK_C = 21;
@@ -50,7 +50,7 @@ function neverWarnings({ document, day, kit, units }: RowContext): DeskWarning[]
     const isChiller = isChilled(document, kit);
     return [
       warning(isChiller ? 'coolant-too-warm' : 'room-too-warm', 'care', fallPath(document, never.wantedC), {
-        what: `${isChiller ? 'The coolant' : 'The room'} is at ${limit}: the pot never falls to ${wanted}.`,
+        what: `The pot never falls to ${wanted}: ${isChiller ? 'its coolant' : 'the room'} leaves it at ${limit}.`,
         why: 'A pot comes no colder than what cools it. The figures are planned until near there.',
         act: isChiller
           ? 'Plan a warmer temperature, colder coolant, or ice around the pot.'
@@ -69,7 +69,7 @@ function neverWarnings({ document, day, kit, units }: RowContext): DeskWarning[]
   }
   return [
     warning('kettle-too-weak', 'care', 'steepC', {
-      what: `This kettle settles at ${limit}, below the steep of ${wanted}.`,
+      what: `This kettle gets to ${limit} and no further, below the steep of ${wanted}.`,
       why: 'There it loses as much heat as reaches it. The figures are planned until near there.',
       act: 'Put the lid on, take less water, or a stronger burner.',
     }),
@@ -93,7 +93,7 @@ function fullWarnings({ document, kit, day, units }: RowContext): DeskWarning[] 
   if (!kettle) return [];
   const hottestC = Math.max(...day.curve.map(({ tempC }) => tempC));
   const leafG = document.additions.reduce((sum, one) => sum + ('out' in one ? one.massG : 0), 0);
-  const coilL = chiller ? chiller.lengthM * ((Math.PI * COIL_TUBE_M ** 2) / 4) * 1000 : 0;
+  const coilL = chiller ? tubeVolumeL(chiller.lengthM, usual.coilOuterMm) : 0;
   const hotL = volumeAtTemperatureL(document.waterL, 20, hottestC);
   const fullL = hotL + LEAF_L_PER_G * leafG + coilL;
   const most = kettle.volumeL * (1 - HEADROOM_SHARE);

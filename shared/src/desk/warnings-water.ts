@@ -6,6 +6,7 @@ import { pathOf, warning, wordsIn } from './warning.js';
 export function waterWarnings(context: RowContext): DeskWarning[] {
   return [
     ...reportWarnings(context),
+    ...brackishWarnings(context),
     ...floorWarnings(context),
     ...context.figures.haze.map((flag) => hazeWarning(context, flag)),
   ];
@@ -27,6 +28,18 @@ function reportWarnings({ document }: RowContext): DeskWarning[] {
       }),
     ];
   });
+}
+
+function brackishWarnings({ document, figures }: RowContext): DeskWarning[] {
+  if (figures.water.salinity !== 'brackish') return [];
+  const salt = document.additions.filter((one) => one.kind === 'salt').sort((a, b) => b.massG - a.massG)[0];
+  return [
+    warning('brackish', 'care', pathOf(document, salt ?? null, 'massG') ?? 'waters', {
+      what: 'The treated water holds more than 1 g of salts in a litre: it is brackish.',
+      why: 'It tastes of salt whatever is put in.',
+      act: 'Take less salt, or blend with reverse-osmosis water.',
+    }),
+  ];
 }
 
 function floorWarnings({ document, plan, units }: RowContext): DeskWarning[] {

@@ -36,7 +36,8 @@ export const dayWorkings = {
   'day.boil': {
     meaning: 'The hottest that water gets in the open where this house stands.',
     model: 'Air pressure from the altitude, then the temperature at which steam has that pressure.',
-    source: 'US Standard Atmosphere 1976; IAPWS SR1-86 (W. Wagner and A. Pruss, J. Phys. Chem. Ref. Data 22, 783, 1993).',
+    source:
+      'US Standard Atmosphere 1976; IAPWS SR1-86 (W. Wagner and A. Pruss, J. Phys. Chem. Ref. Data 22, 783, 1993).',
     band: 'Weather moves the pressure by 2 to 3 kPa: 0.8 °C.',
     assumptions: ['The altitude of the house.'],
     defaults: [],
@@ -70,7 +71,8 @@ export const dayWorkings = {
   'yield.keg': {
     meaning: 'What reaches the keg, as it would read at 20 °C.',
     model: 'Water filled, less what leaf and hops hold, what steams off and what stays in the kettle.',
-    source: 'Volume balance. Held by leaf: a judgement from spent leaf at 75 to 80 % moisture (from memory). Held by hops: common practice, no source.',
+    source:
+      'Volume balance. Held by leaf: a judgement from spent leaf at 75 to 80 % moisture (from memory). Held by hops: common practice, no source.',
     band: 'Leaf holds 3 to 5.5 mL for each gram, hops 4 to 9.',
     assumptions: ['The dead space of the kettle; none without a kettle.', 'Bags drain and are not squeezed.'],
     defaults: ['lidOn', 'roomC', 'chillerConstantPerS'],

@@ -30,7 +30,10 @@ export const drinkWorkings = {
     model: 'Grams of leaf times its caffeine times the share that is out.',
     source: caffeineSource,
     band: 'Nine times out of ten, drawn 500 times: the content of this kind of leaf, and a factor of two on the rate. A content that you type counts within a tenth.',
-    assumptions: [...rateAssumptions, 'The kind of tea says little about its caffeine: never promise that white is low.'],
+    assumptions: [
+      ...rateAssumptions,
+      'The kind of tea says little about its caffeine: never promise that white is low.',
+    ],
     defaults: curveDefaults,
   },
   'tea.caffeine-serving': {
@@ -133,7 +136,7 @@ export const drinkWorkings = {
     source: 'The recipe.',
     band: 'A tenth, from lot and analysis.',
     assumptions: ['Alpha acids as typed: those of today. A storage index raises the humulinones, not this.'],
-    defaults: [],
+    defaults: curveDefaults,
   },
   'hops.iso': {
     meaning: 'Iso-alpha acids in the drink: what makes boiled hops bitter. Here there is next to none.',
@@ -176,13 +179,14 @@ export const drinkWorkings = {
     defaults: ['teaBaseRatio', 'hopBaseRatio'],
   },
   'hops.humulinones': {
-    meaning: 'Alpha acids that air has changed: they dissolve in acid water, and make most of the bitterness of this drink.',
+    meaning:
+      'Alpha acids that air has changed: they dissolve in acid water, and make most of the bitterness of this drink.',
     model: 'Grams of hops times 0.35 % times 0.8 that come out; 0.5 % from a storage index of 0.4 up.',
     source:
       'J. P. Maye, MBAA 2015 (content); Brauwelt 2017 (0.9 out in three days cold); 0.8 in a quarter of an hour warm is a judgement.',
     band: 'Content 0.2 to 0.5 % of the hops, 0.6 to all of it out.',
-    assumptions: ['The length of the contact is not in it.'],
-    defaults: [],
+    assumptions: ['The length of the contact is not in it; what steams off makes it stronger.'],
+    defaults: curveDefaults,
   },
   'hops.alpha-dissolved': {
     meaning: 'Alpha acids that stay dissolved in the cold drink; the rest is haze and sediment.',
@@ -219,7 +223,8 @@ export const drinkWorkings = {
   'gas.beer-chart': {
     meaning: 'What a chart made for beer would set, to compare with and not to use: water holds 2 to 6 % more gas.',
     model: 'A fit to that chart at the same gas and temperature.',
-    source: 'A. J. deLange, CO₂ volumes in beer, 2011: a private fit to the ASBC Beer-13 chart (coefficients from memory).',
+    source:
+      'A. J. deLange, CO₂ volumes in beer, 2011: a private fit to the ASBC Beer-13 chart (coefficients from memory).',
     band: '3 %.',
     assumptions: ['The chart holds from 0 to 15.6 °C.'],
     defaults: [],

@@ -1,6 +1,7 @@
 import type { Workings } from './types.js';
 
-const saltBand = 'Salts as labelled and the scale: 1 %. Calcium chloride that took up water, or is another hydrate, moves it by a quarter or more.';
+const saltBand =
+  'Salts as labelled and the scale: 1 %. Calcium chloride that took up water, or is another hydrate, moves it by a quarter or more.';
 const saltAssumptions = [
   'Every salt dissolves, also where a warning says that it will not.',
   'Water named as reverse-osmosis water holds what its report says; real water from a membrane holds 5 to 20 mg/L (from memory).',
@@ -14,10 +15,12 @@ const leafBand =
   'The base of leaf and hops, 0.6 to 1.7 times. Once it was learned from a measured pH: a tenth of pH either way.';
 const leafAssumptions = [
   'Tea brings 0.22 meq of base for each gram, as far as the steep brings it out; hops bring 0.64.',
-  'Complexes of calcium with citric acid are left out: at 110 mg/L of calcium the pH reads 0.02 to 0.06 too high.',
+  'Complexes of calcium with citric acid are left out here and shown on a line of their own: at 110 mg/L of calcium the pH is 0.02 to 0.06 lower with them.',
   'All CO₂ that acid makes of bicarbonate leaves the open pot.',
 ];
-const leafDefaults = ['teaBaseRatio', 'hopBaseRatio'];
+/** The leaf's base comes out along the planned curve. */
+const curveDefaults = ['chillerConstantPerS', 'roomC', 'lidOn'];
+const leafDefaults = ['teaBaseRatio', 'hopBaseRatio', ...curveDefaults];
 const ashSource =
   'Alkalinity of tea ash: ISO 3720 and ISO 11287. Hops: how they move the pH of beer (Brauwelt). A judgement with a factor of two.';
 
@@ -73,7 +76,8 @@ export const waterAcidWorkings = {
   },
   'water.anions': {
     meaning: 'Minus charges of chloride, sulfate and bicarbonate. In water they equal the plus charges.',
-    model: 'Each ion over its mass for one charge, summed. Above 5 % apart the report is doubtful, above 20 % no pH is worked out.',
+    model:
+      'Each ion over its mass for one charge, summed. Above 5 % apart the report is doubtful, above 20 % no pH is worked out.',
     source: stoichiometry,
     band: 'None: it is arithmetic on what was typed.',
     assumptions: [],
@@ -111,6 +115,23 @@ export const waterAcidWorkings = {
     assumptions: ['All acid of the recipe is in, also what goes in later.', 'At 25 °C: cool the sample.'],
     defaults: [],
   },
+  'acid.ph-still-complexed': {
+    meaning:
+      'The pH of the finished drink when calcium and magnesium hold part of the citric acid: where the middle lies in hard water.',
+    model: `${solver} Three complexes of each metal with citrate are counted too.`,
+    source: 'USGS minteq.v4 for the complexes; R. N. Goldberg et al. 2002; C. W. Davies 1962.',
+    band: leafBand,
+    assumptions: ['Doses and the base ratio are worked out without them; a measured pH takes the difference in.'],
+    defaults: leafDefaults,
+  },
+  'acid.ph-after-acid-complexed': {
+    meaning: 'The pH of water, salts and acid when calcium and magnesium hold part of the citric acid.',
+    model: `${solver} Three complexes of each metal with citrate are counted too.`,
+    source: 'USGS minteq.v4 for the complexes; R. N. Goldberg et al. 2002; C. W. Davies 1962.',
+    band: '0.03, from constants and activities.',
+    assumptions: ['All acid of the recipe is in, also what goes in later.'],
+    defaults: [],
+  },
   'acid.dose': {
     meaning: 'All the acid, as it comes from the jar, for each litre of water.',
     model: 'Grams over litres.',
@@ -141,7 +162,7 @@ export const waterAcidWorkings = {
     source: ashSource,
     band: '0.6 to 1.7 times. Herbs and rooibos: up to a factor of three.',
     assumptions: ['A steep of 4 minutes at 82 °C brings out 0.85 of it.'],
-    defaults: ['teaBaseRatio'],
+    defaults: ['teaBaseRatio', ...curveDefaults],
   },
   'acid.ph-after-tea': {
     meaning: 'The pH once the tea is out and before the hops.',
@@ -149,7 +170,7 @@ export const waterAcidWorkings = {
     source: solverSource,
     band: leafBand,
     assumptions: leafAssumptions,
-    defaults: ['teaBaseRatio'],
+    defaults: ['teaBaseRatio', ...curveDefaults],
   },
   'acid.hop-base': {
     meaning: 'Base that the hops bring: more for each gram than tea.',
