@@ -120,7 +120,7 @@ export const stepSchema = z
     title: z.string().min(1).max(80),
     /** What to know while doing it, in a sentence or two. */
     detail: z.string().max(400).optional(),
-    amounts: z.array(stepAmountSchema).max(20).default([]),
+    amounts: z.array(stepAmountSchema).max(40).default([]),
     start: startConditionSchema,
     done: doneConditionSchema,
     /** What doing this step does to the vessel. */
@@ -143,7 +143,8 @@ export const runSheetSchema = z
     steps: z
       .array(stepSchema)
       .min(1)
-      .max(80)
+      // Forty additions that each go in, stand and come out by themselves, those of the brewer, and the usual ones.
+      .max(250)
       .refine((steps) => new Set(steps.map((step) => step.id)).size === steps.length, 'Two steps have the same id.'),
     /** Volume of finished drink the sheet was compiled for. */
     volumeL: z.number().positive().max(500),

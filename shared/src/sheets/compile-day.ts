@@ -1,0 +1,113 @@
+import { inStep, outStep, standStep } from './compile-event.js';
+import { isInBag, type Namer } from './compile-words.js';
+import { dayOrder, isColdSteep, timedFromFill, type ClockEvent, type FallEvent } from './day-order.js';
+import type { RecipeDocument } from './recipe.js';
+import type { StepDraft } from './step-order.js';
+import type { VesselAct } from './step.js';
+
+/** From the steep temperature to the keg: what goes in and comes out, by clock first, then by the falling temperature. */
+export function theDay(document: RecipeDocument, name: Namer): StepDraft[] {
+  const { byClock, byFall } = dayOrder(document);
+  if (isColdSteep(document)) {
+    return [
+      ...steeping(document, withFillOuts(document, byClock), name),
+      ...byFall.flatMap((event) => fallSteps(event, name)),
+    ];
+  }
+  return [
+    ...steeping(document, byClock, name),
+    chill(byClock.length === 0),
+    ...byFall.flatMap((event) => caughtSteps(event, name)),
+  ];
+}
+
+/** Cold leaf that went in with the water comes out by the same clock as the rest. */
+function withFillOuts(document: RecipeDocument, byClock: readonly ClockEvent[]): ClockEvent[] {
+  const outs = timedFromFill(document).map(({ afterS, additions }): ClockEvent => ({
+    kind: 'out',
+    atS: afterS,
+    additions,
+  }));
+  return [...byClock, ...outs].sort((a, b) => a.atS - b.atS);
+}
+
+function steeping(document: RecipeDocument, events: readonly ClockEvent[], name: Namer): StepDraft[] {
+  const isCold = isColdSteep(document);
+  let atS = 0;
+  return events.flatMap((event, index) => {
+    const waitS = event.atS - atS;
+    atS = event.atS;
+    const isFirst = index === 0;
+    const step = event.kind === 'in' ? inStep(event.additions, name) : outStep(event.additions, name);
+    return [
+      ...(waitS > 0 ? [isFirst && !isCold ? holdStep(name, waitS) : steepStep(document, name, waitS)] : []),
+      isFirst && !isCold ? withHeatOff(step, event) : step,
+    ];
+  });
+}
+
+/** The heat goes off with the first thing that goes in; lid and time do the rest. */
+function withHeatOff(step: StepDraft, { additions }: ClockEvent): StepDraft {
+  const acts: VesselAct[] = ['heat-off', ...(step.acts ?? [])];
+  return {
+    ...step,
+    detail: additions.some(isInBag) ? 'Heat off, bag under, lid back on.' : 'Heat off, lid back on.',
+    acts,
+  };
+}
+
+/** What goes in later than the steep temperature is reached finds the same temperature. */
+function holdStep(name: Namer, durationS: number): StepDraft {
+  return { id: name('hold'), kind: 'heat', title: 'Hold the temperature', done: { by: 'timer', durationS } };
+}
+
+function steepStep({ additions }: RecipeDocument, name: Namer, durationS: number): StepDraft {
+  const id = name('steep');
+  const step: StepDraft = { id, kind: 'steep', title: 'Steep', done: { by: 'timer', durationS } };
+  if (id !== 'steep') return step;
+  const hasHops = additions.some(({ kind, in: { at } }) => kind === 'hops' && at === 'falling');
+  return {
+    ...step,
+    meanwhile: [
+      ...(hasHops ? [{ id: 'weigh-hops', text: 'weigh the hops into their bag' }] : []),
+      { id: 'hoses', text: 'check the hoses of the chiller' },
+    ],
+  };
+}
+
+function chill(isHeatStillOn: boolean): StepDraft {
+  return {
+    id: 'chill',
+    kind: 'chill',
+    title: 'Chiller on',
+    detail: isHeatStillOn ? 'Heat off first. Stir gently while it runs.' : 'Stir gently while it runs.',
+    acts: [...(isHeatStillOn ? (['heat-off'] as const) : []), 'lid-off', 'chiller-on'],
+  };
+}
+
+/** What goes in or comes out, and what of it comes out again by the clock. */
+function fallSteps({ kind, additions, outs }: FallEvent, name: Namer): [StepDraft, ...StepDraft[]] {
+  if (kind === 'out') return [outStep(additions, name)];
+  let atS = 0;
+  return [
+    inStep(additions, name),
+    ...outs.flatMap(({ afterS, additions: done }) => {
+      const waitS = afterS - atS;
+      atS = afterS;
+      return [...(waitS > 0 ? [standStep(name('contact'), waitS)] : []), outStep(done, name)];
+    }),
+  ];
+}
+
+/** The same, called for by the falling temperature. Leaf and hops are caught; a dose can wait for its hand. */
+function caughtSteps(event: FallEvent, name: Namer): StepDraft[] {
+  const [first, ...rest] = fallSteps(event, name);
+  return [
+    {
+      ...first,
+      ...(first.kind === 'add' ? { kind: 'catch' } : {}),
+      start: { by: 'temperature', direction: 'falling', tempC: event.tempC },
+    },
+    ...rest,
+  ];
+}
