@@ -12,6 +12,8 @@ declare module '@tanstack/react-table' {
     isNumber?: boolean;
     /** Leads the card on a phone, without its label. */
     isLead?: boolean;
+    /** Only where the table has room for it; a card always has. */
+    from?: 'lg' | 'xl';
   }
 }
 
@@ -23,6 +25,7 @@ interface DataTableProps<Row extends RowData> {
   countWord: string;
 }
 
+const roomy = { lg: 'sm:max-lg:hidden', xl: 'sm:max-xl:hidden' } as const;
 const sortWords = { asc: 'ascending', desc: 'descending' } as const;
 
 /** A table that sorts and turns pages; on a phone each row is a card. Roles are written out, since the card layout takes them away. */
@@ -38,7 +41,7 @@ export function DataTable<Row extends RowData>({ table, caption, countWord }: Da
             <tr role="row" key={group.id} className="border-b-2 border-edge">
               {group.headers.map((header) => {
                 const sorted = header.column.getIsSorted();
-                const isNumber = header.column.columnDef.meta?.isNumber;
+                const { isNumber, from } = header.column.columnDef.meta ?? {};
                 const label = flexRender(header.column.columnDef.header, header.getContext());
                 return (
                   <th
@@ -46,7 +49,11 @@ export function DataTable<Row extends RowData>({ table, caption, countWord }: Da
                     key={header.id}
                     scope="col"
                     aria-sort={sorted ? sortWords[sorted] : undefined}
-                    className={classNames('pr-6 text-note font-medium text-soft last:pr-0', isNumber && 'text-right')}
+                    className={classNames(
+                      'pr-6 text-note font-medium text-soft last:pr-0',
+                      isNumber && 'text-right',
+                      from && roomy[from],
+                    )}
                   >
                     {header.column.getCanSort() ? (
                       <button
@@ -84,6 +91,7 @@ export function DataTable<Row extends RowData>({ table, caption, countWord }: Da
                       'flex justify-between gap-6 py-0.5 align-middle sm:table-cell sm:h-14 sm:py-2 sm:pr-6 sm:last:pr-0',
                       meta?.isNumber && 'tabular-nums sm:text-right',
                       meta?.isLead && 'text-lead sm:text-body',
+                      meta?.from && roomy[meta.from],
                       cell.getValue() === '' && 'max-sm:hidden',
                     )}
                   >

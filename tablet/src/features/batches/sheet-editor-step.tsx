@@ -88,7 +88,7 @@ function Amounts({ control }: { control: Control<Step> }) {
               />
             )}
           />
-          <Button look="quiet" className="px-2 sm:mt-7" onClick={() => remove(index)}>
+          <Button look="quiet" className="-mx-5 sm:mt-7" onClick={() => remove(index)}>
             Leave out<span className="sr-only"> amount {index + 1}</span>
           </Button>
         </div>
@@ -96,7 +96,7 @@ function Amounts({ control }: { control: Control<Step> }) {
       <div>
         <Button
           look="quiet"
-          className="px-0"
+          className="-ml-5"
           // The empty mass is refused with words; a made-up one would be weighed.
           onClick={() => append({ name: '', massG: Number.NaN })}
         >

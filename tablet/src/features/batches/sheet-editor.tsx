@@ -215,7 +215,6 @@ function StepActs({ step: { id, title }, isFirst, isLast, onMove, onChange, onAd
         <Button
           key={by}
           look="quiet"
-          className="px-3.5"
           data-step={id}
           data-by={by}
           aria-label={`${word}: ${title}`}

@@ -137,8 +137,8 @@ function PlanForm({ revision, onClose, equipment, probes, stores }: PlanFormProp
                 title="The stores hold less than that"
                 action={<Button onClick={() => void send(true)()}>Set it aside all the same</Button>}
               >
-                {plan.error?.message} Take less of the lots that are marked, or set it aside all the same: they go below
-                zero when the run starts.
+                Take less of the lots that are marked, or another lot. Or set it aside all the same: they go below zero
+                when the run starts.
               </Banner>
             ) : plan.error && fieldProblems(plan.error).length === 0 ? (
               <Banner tone="act" title="The batch was not planned">

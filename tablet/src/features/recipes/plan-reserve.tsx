@@ -86,7 +86,7 @@ function AdditionLots({ addition, stores, control, lines, missing, onAdd, onRemo
       ))}
       {next && missing > 0 ? (
         <div>
-          <Button look="quiet" className="px-0" onClick={() => onAdd(next.id, Math.min(missing, freeG(next)))}>
+          <Button look="quiet" className="-ml-5" onClick={() => onAdd(next.id, Math.min(missing, freeG(next)))}>
             {lines.length === 0 ? 'Take it from another lot' : 'Add another lot'}
             <span className="sr-only"> for {addition.name}</span>
           </Button>
@@ -147,8 +147,8 @@ function LotLine({ name, index, control, groups, onRemove }: LotLineProps) {
         kind="mass"
         label={<span className="sr-only">How much of it for {name}</span>}
       />
-      <div className="pt-1.5">
-        <Button look="quiet" className="px-2" onClick={onRemove}>
+      <div className="-mr-5 pt-1.5">
+        <Button look="quiet" onClick={onRemove}>
           Leave out<span className="sr-only"> this lot for {name}</span>
         </Button>
       </div>

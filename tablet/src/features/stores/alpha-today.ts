@@ -15,6 +15,6 @@ export function alphaTodayWords(hops: NonNullable<LotFacts['hops']>, today: stri
 
 function words({ low, value, high }: { low: number; value: number; high: number }, from: string): string {
   const percent = (part: number) => formatSignificant(part);
-  const band = percent(low) === percent(high) ? '' : `, ${percent(low)} to ${percent(high)}`;
+  const band = percent(low) === percent(high) ? '' : ` (${percent(low)} to ${percent(high)})`;
   return `${percent(value)} %${band}, ${from}`;
 }

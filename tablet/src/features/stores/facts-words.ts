@@ -121,6 +121,6 @@ export function factsWords(facts: IngredientFacts): string {
   }
 }
 
-export function lowWords({ lowStockG }: IngredientFacts, unit: UnitPreferences['mass']): string {
-  return lowStockG === null ? 'No line for low stock.' : `Low below ${formatMass(lowStockG, { unit })}.`;
+export function lowWords({ lowStockG }: IngredientFacts, unit: UnitPreferences['mass']): string | null {
+  return lowStockG === null ? null : `low below ${formatMass(lowStockG, { unit })}`;
 }

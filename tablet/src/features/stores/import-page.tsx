@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { useEffect, useState, type ReactNode } from 'react';
 import { useMutation, useQueryClient } from '@tanstack/react-query';
 import {
   importPreviewSchema,
@@ -17,7 +17,7 @@ import { ShapeGlyph } from '#components/shapes.tsx';
 import { callHubFor } from '#lib/api-client.ts';
 import { storesQuery } from '#lib/hub-queries.ts';
 import { saveFile } from '#lib/save-file.ts';
-import { failureWords, fieldProblems } from '#lib/words.ts';
+import { failureWords, fieldProblems, listWords } from '#lib/words.ts';
 import { csvTemplate } from './csv-template.ts';
 import { FileDrop } from './file-drop.tsx';
 import { ImportTable } from './import-table.tsx';
@@ -146,7 +146,7 @@ interface PreviewProps {
   preview: ImportPreview;
   skipRows: ReadonlySet<number>;
   onSkip: (rows: ReadonlySet<number>) => void;
-  act: React.ReactNode;
+  act: ReactNode;
 }
 
 function Preview({ preview, skipRows, onSkip, act }: PreviewProps) {
@@ -154,7 +154,7 @@ function Preview({ preview, skipRows, onSkip, act }: PreviewProps) {
   return (
     <section aria-labelledby="rows" className="grid gap-5">
       <LevelRule id="rows" aside={`${preview.goodCount} good, ${preview.badCount} to mend`}>
-        What each row would do
+        The rows
       </LevelRule>
       <ImportTable rows={preview.rows} skipRows={skipRows} onSkip={onSkip} />
       <div className="flex flex-wrap items-center gap-x-6 gap-y-3">
@@ -188,7 +188,7 @@ function Columns() {
           <div key={name} className="grid grid-cols-[8.5rem_1fr] items-baseline gap-x-4 border-b border-hair py-2.5">
             <dt className="font-medium">{name}</dt>
             <dd className="text-soft">
-              {meaning} <span className="whitespace-nowrap text-text">{example}</span>
+              {meaning}, <span className="whitespace-nowrap text-text">such as {example}</span>
             </dd>
           </div>
         ))}
@@ -197,18 +197,20 @@ function Columns() {
   );
 }
 
+function importedWords({ ingredientCount, lotCount, skippedCount }: ImportedStores): string {
+  const count = (number: number, one: string, many: string) =>
+    number === 0 ? [] : [`${number} ${number === 1 ? one : many}`];
+  const came = [...count(ingredientCount, 'new ingredient', 'new ingredients'), ...count(lotCount, 'lot', 'lots')];
+  const left = count(skippedCount, 'row was', 'rows were').map((rows) => ` ${rows} left out on purpose.`);
+  return `${came.length > 0 ? listWords(came) : 'Nothing new'} came in.${left.join('')}`;
+}
+
 function Imported({ result, onAgain }: { result: ImportedStores; onAgain: () => void }) {
-  const { ingredientCount, lotCount, skippedCount } = result;
-  const count = (number: number, one: string, many: string) => `${number} ${number === 1 ? one : many}`;
+  // The page turned without a change of place: whoever listens is taken to the result.
+  useEffect(() => document.querySelector('h1')?.focus(), []);
   return (
-    <Page
-      title="It is on the shelf"
-      above="Stores"
-      lead={`${count(ingredientCount, 'new ingredient', 'new ingredients')} and ${count(lotCount, 'lot', 'lots')} came in${
-        skippedCount > 0 ? `; ${count(skippedCount, 'row was', 'rows were')} left out on purpose` : ''
-      }.`}
-    >
-      <div role="status" className="flex flex-wrap gap-3">
+    <Page title="It is on the shelf" above="Stores" lead={importedWords(result)}>
+      <div className="flex flex-wrap gap-3">
         <ButtonLink look="primary" to="/stores">
           Look at the stores
         </ButtonLink>

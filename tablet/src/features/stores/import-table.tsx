@@ -28,12 +28,13 @@ interface ImportTableProps {
   onSkip: (rows: ReadonlySet<number>) => void;
 }
 
+const STATE = 'What it does';
 const column = createColumnHelper<Row & { isSkipped: boolean }>();
 
 /** Each row of the file: what it would do, or what to mend and at which column. Those to mend come first. */
 export function ImportTable({ rows, skipRows, onSkip }: ImportTableProps) {
   const { mass: unit } = useUnits();
-  const [sorting, setSorting] = useState<SortingState>([{ id: 'state', desc: true }]);
+  const [sorting, setSorting] = useState<SortingState>([{ id: STATE, desc: true }]);
   const data = useMemo(() => rows.map((row) => ({ ...row, isSkipped: skipRows.has(row.row) })), [rows, skipRows]);
   const columns = useMemo(() => {
     const toggle = (row: number, isSkipped: boolean) => {
@@ -49,17 +50,20 @@ export function ImportTable({ rows, skipRows, onSkip }: ImportTableProps) {
         cell: ({ getValue }) => <span className="font-medium tabular-nums">{getValue()}</span>,
       }),
       column.accessor('ingredient', { header: 'Ingredient', cell: ({ row: { original } }) => <What row={original} /> }),
-      column.accessor('lot', { header: 'Lot' }),
-      column.accessor('massG', {
+      column.accessor('lot', {
+        header: 'Lot',
+        cell: ({ getValue }) => <span className="max-w-40 break-words sm:min-w-20">{getValue()}</span>,
+      }),
+      column.accessor(({ massG }) => massG ?? '', {
+        id: 'massG',
         header: 'Mass',
         meta: { isNumber: true },
-        cell: ({ getValue }) => (
-          <span className="whitespace-nowrap">{getValue() === null ? '' : formatMass(getValue(), { unit })}</span>
-        ),
+        cell: ({ row }) => <span className="whitespace-nowrap">{formatMass(row.original.massG, { unit })}</span>,
       }),
       column.accessor(({ problems }) => problems.length, {
-        id: 'state',
-        header: 'What it does',
+        id: STATE,
+        // As a card the words need the whole width: no label beside them.
+        header: () => STATE,
         sortDescFirst: true,
         cell: ({ row: { original } }) => <State row={original} />,
       }),

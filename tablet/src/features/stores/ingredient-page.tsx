@@ -67,7 +67,7 @@ function IngredientView({ ingredient }: { ingredient: Ingredient }) {
           <span>{kindWords[facts.kind]}</span>
         </span>
       }
-      lead={factsWords(facts)}
+      lead={[factsWords(facts), facts.allergens, lowWords(facts, units.mass)].filter(Boolean).join(' · ')}
       action={
         mayManage ? (
           <div className="flex flex-wrap items-center gap-3">
@@ -122,10 +122,6 @@ function IngredientView({ ingredient }: { ingredient: Ingredient }) {
           </ul>
         )}
       </section>
-      <p className="max-w-prose text-body text-soft">
-        {facts.allergens ? `Allergens: ${facts.allergens}. ` : ''}
-        {lowWords(facts, units.mass)}
-      </p>
       {asked === 'receive' ? <ReceiveLotDialog ingredient={ingredient} onClose={() => setAsked(null)} /> : null}
       {asked === 'edit' ? <EditIngredientDialog ingredient={ingredient} onClose={() => setAsked(null)} /> : null}
     </Page>
@@ -143,7 +139,7 @@ function StockFigures({ ingredient }: { ingredient: Ingredient }) {
   ];
   return (
     <div className="flex flex-wrap items-end gap-x-12 gap-y-5">
-      <dl className="flex flex-wrap gap-x-12 gap-y-4">
+      <dl className="flex flex-wrap gap-x-8 gap-y-4 sm:gap-x-12">
         {figures.map(({ label, massG }) => (
           <div key={label} className="flex flex-col-reverse">
             <dt className="text-body text-soft">{label}</dt>

@@ -32,7 +32,7 @@ export function LabelPhoto({ lot, mayManage }: { lot: Lot; mayManage: boolean })
       <button
         type="button"
         onClick={() => setIsOpen(true)}
-        className="grid aspect-4/3 w-full max-w-52 cursor-pointer place-items-center overflow-hidden rounded-lg border-2 border-dashed border-hair bg-sunken text-body font-medium text-soft hover:border-edge hover:text-text data-full:border-solid"
+        className="grid aspect-4/3 w-full max-w-52 max-md:not-data-full:aspect-auto max-md:not-data-full:min-h-12 cursor-pointer place-items-center overflow-hidden rounded-lg border-2 border-dashed border-hair bg-sunken text-body font-medium text-soft hover:border-edge hover:text-text data-full:border-solid"
         data-full={url ? '' : undefined}
       >
         {url ? (
@@ -63,6 +63,7 @@ function PhotoDialog({ lot, shown, mayManage, onClose }: PhotoDialogProps) {
   const errorId = useId();
   const [file, setFile] = useState<File | null>(null);
   const [sentRatio, setSentRatio] = useState(0);
+  const [isUnreadable, setIsUnreadable] = useState(false);
   const preview = useObjectUrl(file);
   const send = useMutation({
     mutationFn: (photo: File) => {
@@ -81,6 +82,7 @@ function PhotoDialog({ lot, shown, mayManage, onClose }: PhotoDialogProps) {
     if (!chosen) return;
     send.reset();
     setSentRatio(0);
+    setIsUnreadable(false);
     setFile(chosen);
   };
   const error = send.error ?? remove.error;
@@ -88,9 +90,12 @@ function PhotoDialog({ lot, shown, mayManage, onClose }: PhotoDialogProps) {
   return (
     <Dialog isOpen onClose={onClose} title={`Label of lot ${lot.code}`} size="wide">
       <div className="grid gap-5">
-        {seen ? (
+        {seen && isUnreadable ? (
+          <p>This device cannot show {file?.name ?? 'it'} as a picture. It may be of another kind.</p>
+        ) : seen ? (
           <img
             src={seen}
+            onError={() => setIsUnreadable(true)}
             alt={file ? `${file.name}, not sent yet` : `Label of lot ${lot.code}`}
             className="max-h-[60dvh] w-full rounded-lg bg-sunken object-contain"
           />

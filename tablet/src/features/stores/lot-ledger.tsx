@@ -55,7 +55,7 @@ function LedgerLine({ move, onTakeBack }: { move: LotMove; onTakeBack: (() => vo
   const { mass: unit } = useUnits();
   const { massG, reason, atMs, by, isUndone } = move;
   return (
-    <li className="grid grid-cols-[1fr_auto] items-center gap-x-5 border-t border-hair py-2 sm:grid-cols-[8.5rem_1fr_7rem_8rem]">
+    <li className="grid grid-cols-[1fr_auto] items-center gap-x-5 border-t border-hair py-2 sm:grid-cols-[8.5rem_1fr_7rem_9rem]">
       <span className="text-soft tabular-nums max-sm:order-3">{format(atMs, 'd MMM yyyy')}</span>
       <span className={classNames('max-sm:order-1', isUndone && 'text-soft')}>
         <WhatMoved move={move} />
@@ -73,7 +73,7 @@ function LedgerLine({ move, onTakeBack }: { move: LotMove; onTakeBack: (() => vo
       </span>
       <span className="text-right max-sm:order-4">
         {onTakeBack ? (
-          <Button look="quiet" className="px-2" onClick={onTakeBack}>
+          <Button look="quiet" className="-mr-5 whitespace-nowrap" onClick={onTakeBack}>
             Take back
           </Button>
         ) : null}

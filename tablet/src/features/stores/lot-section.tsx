@@ -9,7 +9,7 @@ import { Menu } from '#components/menu.tsx';
 import { StatusChip } from '#components/status-chip.tsx';
 import { priceMass, useMoney } from '#lib/money.ts';
 import { useUnits } from '#lib/units.ts';
-import { calendarDay } from '#lib/words.ts';
+import { calendarDay, failureWords } from '#lib/words.ts';
 import { alphaTodayWords } from './alpha-today.ts';
 import { LabelPhoto } from './label-photo.tsx';
 import { EditLotDialog } from './lot-form.tsx';
@@ -67,35 +67,44 @@ export function LotSection({ ingredient, lot, isFirst, mayManage }: LotSectionPr
           </Banner>
         ) : null}
         <LotFactList lot={lot} today={today} />
-        {mayManage ? (
-          <div className="flex flex-wrap gap-3">
-            <Button onClick={() => setAsked('count')}>Count</Button>
-            <Button onClick={() => setAsked('use')}>Use some</Button>
-            <Menu
-              label={
-                <>
-                  More<span className="sr-only"> for lot {lot.code}</span>
-                </>
-              }
-              choices={[
-                { label: 'Change what it says', onChoose: () => setAsked('edit') },
-                {
-                  label: 'Take the lot off the shelf',
-                  isDanger: true,
-                  onChoose: () => remove.mutate({ id: lot.id, words: `Lot ${lot.code} taken off the shelf.` }),
-                },
-              ]}
-            />
-          </div>
-        ) : null}
         <Disclosure>
-          <DisclosureButton className={buttonClass('quiet', 'desk', 'justify-self-start px-0')}>
-            Ledger<span className="sr-only"> of lot {lot.code}</span>
-          </DisclosureButton>
+          <div className="flex flex-wrap gap-3">
+            {mayManage ? (
+              <>
+                <Button onClick={() => setAsked('count')}>Count</Button>
+                <Button onClick={() => setAsked('use')}>Use some</Button>
+              </>
+            ) : null}
+            <DisclosureButton className={buttonClass('quiet', 'desk', mayManage ? '' : '-ml-5')}>
+              Ledger<span className="sr-only"> of lot {lot.code}</span>
+            </DisclosureButton>
+            {mayManage ? (
+              <Menu
+                label={
+                  <>
+                    More<span className="sr-only"> for lot {lot.code}</span>
+                  </>
+                }
+                choices={[
+                  { label: 'Change what it says', onChoose: () => setAsked('edit') },
+                  {
+                    label: 'Take the lot off the shelf',
+                    isDanger: true,
+                    onChoose: () => remove.mutate({ id: lot.id, words: `Lot ${lot.code} taken off the shelf.` }),
+                  },
+                ]}
+              />
+            ) : null}
+          </div>
           <DisclosurePanel>
             <LotLedger lot={lot} mayManage={mayManage} />
           </DisclosurePanel>
         </Disclosure>
+        {remove.error ? (
+          <p role="alert" className="font-medium text-ember">
+            {failureWords(remove.error)}
+          </p>
+        ) : null}
       </div>
       {asked === 'count' ? <CountLotDialog lot={lot} onClose={close} /> : null}
       {asked === 'use' ? <UseLotDialog lot={lot} onClose={close} /> : null}

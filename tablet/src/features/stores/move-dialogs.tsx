@@ -125,7 +125,8 @@ export function UseLotDialog({ lot, onClose }: MoveProps) {
             title="The stores hold less than that"
             action={<Button onClick={() => void send(true)()}>Take it all the same</Button>}
           >
-            {move.error?.message} The lot then stands below zero, until somebody counts it.
+            It holds {formatMass(lot.stockG, { unit })}. Take less, or take it all the same: the lot then stands below
+            zero until somebody counts it.
           </Banner>
         ) : null}
       </SendForm>

@@ -9,7 +9,7 @@ export interface StockMark {
 
 const belowZero: StockMark = { word: 'below zero', shape: 'diamond', tone: 'ember' };
 const pastDate: StockMark = { word: 'past its date', shape: 'diamond', tone: 'ember' };
-const low: StockMark = { word: 'low', shape: 'down', tone: 'text' };
+const low: StockMark = { word: 'low', shape: 'dash', tone: 'text' };
 const none: StockMark = { word: 'none left', shape: 'ring', tone: 'soft' };
 
 export function isPast({ bestBefore, stockG }: Pick<Lot, 'bestBefore' | 'stockG'>, today: string): boolean {

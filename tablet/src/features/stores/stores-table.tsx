@@ -107,7 +107,7 @@ function useColumns(onReceive: ((ingredient: Ingredient) => void) | null) {
       }),
       column.accessor('pricePerKg', {
         header: `Price a ${word}`,
-        meta: { isNumber: true },
+        meta: { isNumber: true, from: 'lg' },
         sortUndefined: 'last',
         cell: ({ getValue }) => {
           const price = getValue();
@@ -118,9 +118,10 @@ function useColumns(onReceive: ((ingredient: Ingredient) => void) | null) {
         ? [
             column.display({
               id: 'receive',
+              meta: { from: 'xl' },
               header: () => <span className="sr-only">Receive</span>,
               cell: ({ row: { original } }) => (
-                <Button look="quiet" className="px-2" onClick={() => onReceive(original.ingredient)}>
+                <Button look="quiet" className="-mr-5" onClick={() => onReceive(original.ingredient)}>
                   Receive<span className="sr-only"> {original.name}</span>
                 </Button>
               ),
