@@ -75,6 +75,7 @@ const calls: Partial<Record<keyof typeof figures, readonly unknown[]>> = {
   alphaNowPercent: [{ harvestPercent: 9, ageDays: 100 }],
   alphaSolubilityMgPerL: [60, 3.7, 20],
   atmosphericPressureKPa: [1500],
+  bestBeforePrecision: [2],
   bitternessWord: [6],
   blendedWater: [
     [
@@ -197,6 +198,7 @@ const calls: Partial<Record<keyof typeof figures, readonly unknown[]>> = {
   lineLengthM: [line, 30],
   liquidGoneBelowG: [2268, 20, 0.68],
   lotMultiplier: [drink, 3.5],
+  massBalance: [{ producedL: 40, onHandL: 18.5, deliveredL: 19, samplesL: 0.6, lossesL: 1.5 }],
   meanAcidCharge: ['citric', 3.5, 25],
   mixedTempC: [
     [
