@@ -1,4 +1,5 @@
 import type { Batch as BatchAnswer, BatchPlan, Ingredient, Recipe, RunSummary } from '@steepfall/shared/contracts';
+import type { Problem } from '@steepfall/shared/problems';
 import { foldRun, type StoredRunEvent } from '@steepfall/shared/runs';
 import { buildDocument } from '@steepfall/shared/testing';
 import request from 'supertest';
@@ -206,6 +207,25 @@ describe('PATCH /api/batches/:id/sheet', () => {
     const answers = await Promise.all([1, 2, 3].map(() => patch(batch, { sheet, sheetVersion: 1 })));
     expect(answers.map(({ status }) => status).sort()).toEqual([200, 409, 409]);
     expect((await planOf(batch)).sheetVersion).toBe(2);
+  });
+
+  it('refuses a sheet that would not work on the day, at the step', async () => {
+    const batch = await plan();
+    const { sheet } = await planOf(batch);
+    const placeOf = (id: string) => sheet.steps.findIndex((step) => step.id === id);
+    const send = (steps: unknown[]) => patch(batch, { sheet: { ...sheet, steps }, sheetVersion: 1 });
+    const swapped = sheet.steps.with(placeOf('tea-in'), sheet.steps[placeOf('tea-out')]!);
+    const teaFirst = swapped.with(placeOf('tea-out'), sheet.steps[placeOf('tea-in')]!);
+    const refused = await send(teaFirst);
+    expectProblem(refused, 'not-valid');
+    expect((refused.body as Problem).errors).toContainEqual(
+      expect.objectContaining({ pointer: `/sheet/steps/${placeOf('tea-in')}` }),
+    );
+    const lost = await send(sheet.steps.filter(({ id }) => id !== 'tea-out'));
+    expect((lost.body as Problem).errors).toContainEqual(
+      expect.objectContaining({ pointer: `/sheet/steps/${placeOf('tea-in')}` }),
+    );
+    expect((await planOf(batch)).sheetVersion).toBe(1);
   });
 
   it('refuses what is no sheet, at the field, and whoever may not', async () => {

@@ -290,10 +290,11 @@ const notPlanned = {
 } as const satisfies Record<Exclude<BatchAnswer['status'], 'planned'>, string>;
 
 function refuseBrokenSheet(sheet: RunSheet, volumeL: number): void {
-  const errors = checkSheet(sheet).map(({ stepId, detail }) => ({
-    pointer: `/sheet/steps/${sheet.steps.findIndex(({ id }) => id === stepId)}`,
-    detail,
-  }));
+  const errors = checkSheet(sheet).map(({ stepId, detail }) => {
+    const index = sheet.steps.findIndex(({ id }) => id === stepId);
+    // What is lost has no step to say it at.
+    return { pointer: index === -1 ? '/sheet/steps' : `/sheet/steps/${index}`, detail };
+  });
   if (sheet.volumeL !== volumeL)
     errors.push({ pointer: '/sheet/volumeL', detail: `The batch was planned for ${volumeL} L and stays so.` });
   if (errors.length > 0) throw new ProblemError('not-valid', 'This sheet would not work on the day.', { errors });
