@@ -11,10 +11,10 @@ import { usePart } from './use-part.ts';
 const NEAR_SHARE = 0.03;
 
 /** How much acid brings the drink to its target, to be taken with one tap. */
-export function AcidProposal({ desk: { document, isOld }, kit }: { desk: Desk; kit: DeskKit }) {
+export function AcidProposal({ desk: { document, isOld }, kit }: { desk: Desk; kit: DeskKit | null }) {
   const units = useUnits();
   const { value: additions, change } = usePart('additions');
-  const advice = useMemo(() => (document ? acidAdvice(document, kit) : null), [document, kit]);
+  const advice = useMemo(() => (document && kit ? acidAdvice(document, kit) : null), [document, kit]);
   if (!advice || isOld) return null;
   const index = additions.findIndex(({ id }) => id === advice.additionId);
   const addition = additions[index];

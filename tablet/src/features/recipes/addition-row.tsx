@@ -5,6 +5,7 @@ import { NO_BREAK_SPACE } from '@steepfall/shared/units';
 import { Menu } from '#components/menu.tsx';
 import { quantityOf, useUnits } from '#lib/units.ts';
 import { AdditionFacts } from './addition-facts.tsx';
+import { Chevron } from './chevron.tsx';
 import { conditionWords } from './condition-words.ts';
 import { ConditionFields } from './condition-fields.tsx';
 import { useDeskPlace } from './desk-place.tsx';
@@ -112,20 +113,5 @@ function Of({ name, children }: { name: string; children: string }) {
       {children}
       <span className="sr-only"> of {name}</span>
     </>
-  );
-}
-
-export function Chevron({ isOpen }: { isOpen: boolean }) {
-  return (
-    <svg
-      viewBox="0 0 16 16"
-      className={`size-3.5 shrink-0 ${isOpen ? 'rotate-180' : ''}`}
-      fill="none"
-      stroke="currentColor"
-      strokeWidth="2.25"
-      aria-hidden="true"
-    >
-      <path d="M2 5l6 6 6-6" />
-    </svg>
   );
 }

@@ -48,7 +48,7 @@ export function AdditionsPart({ title, kinds, empty, stores }: AdditionsPartProp
 
   return (
     <section aria-label={title} className="grid gap-3">
-      <LevelRule level={3}>{title}</LevelRule>
+      <LevelRule>{title}</LevelRule>
       {shown.length === 0 ? <p className="text-body text-soft">{empty}</p> : null}
       <ul className="grid">
         {shown.map(({ addition, index }, place) => (

@@ -14,7 +14,7 @@ export function DaySection() {
   const gas = usePart('gas');
   return (
     <section aria-label="The day and the gas" className="grid gap-4">
-      <LevelRule level={3}>The day and the gas</LevelRule>
+      <LevelRule>The day and the gas</LevelRule>
       <div className="grid grid-cols-2 gap-3">
         <NumberField
           label="Steep at"
@@ -66,7 +66,7 @@ export function TargetsSection() {
   };
   return (
     <section aria-label="Targets" className="grid gap-4">
-      <LevelRule level={3}>Targets</LevelRule>
+      <LevelRule>Targets</LevelRule>
       <div className="grid grid-cols-2 gap-3">
         <NumberField
           label="Water, cold: from"

@@ -2,10 +2,12 @@ import { useMemo } from 'react';
 import { useQuery } from '@tanstack/react-query';
 import type { Equipment } from '@steepfall/shared/contracts';
 import type { DeskKit } from '@steepfall/shared/desk';
+import { Disclosure, DisclosureButton, DisclosurePanel } from '@headlessui/react';
 import { SelectField } from '#components/field.tsx';
 import { equipmentQuery } from '#lib/hub-queries.ts';
 import { useKnown } from '#lib/session.ts';
 import { useStored, ValueStore } from '#lib/value-store.ts';
+import { Chevron } from './chevron.tsx';
 import { SmallLabel } from './number-field.tsx';
 
 type Kettle = Extract<Equipment, { kind: 'kettle' }>;
@@ -16,7 +18,8 @@ const chosen = new ValueStore<{ kettleId?: string | null; chillerId?: string | n
 const none: Equipment[] = [];
 
 interface KitChoice {
-  kit: DeskKit;
+  /** Null until it is known what the house has, so that no figure jumps when it comes. */
+  kit: DeskKit | null;
   kettles: readonly Kettle[];
   chillers: readonly Chiller[];
   kettleId: string;
@@ -29,7 +32,8 @@ interface KitChoice {
 export function useDeskKit(): KitChoice {
   const { house } = useKnown();
   const choice = useStored(chosen);
-  const { data = none } = useQuery(equipmentQuery);
+  const { data = none, isLoading, failureCount } = useQuery(equipmentQuery);
+  const isAwaited = isLoading && failureCount === 0;
   return useMemo(() => {
     const kettles = data.filter((item) => item.kind === 'kettle');
     const chillers = data.filter((item) => item.kind === 'chiller');
@@ -39,45 +43,61 @@ export function useDeskKit(): KitChoice {
     const kettle = pick(kettles, choice.kettleId);
     const chiller = pick(chillers, choice.chillerId);
     return {
-      kit: { altitudeM: house.altitudeM, kettle: kettle?.facts ?? null, chiller: chiller?.facts ?? null },
+      kit: isAwaited
+        ? null
+        : { altitudeM: house.altitudeM, kettle: kettle?.facts ?? null, chiller: chiller?.facts ?? null },
       kettles,
       chillers,
       kettleId: kettle?.id ?? '',
       chillerId: chiller?.id ?? '',
       resolutionG: scales.length > 0 ? Math.min(...scales) : undefined,
     };
-  }, [data, choice, house.altitudeM]);
+  }, [data, isAwaited, choice, house.altitudeM]);
 }
 
-/** Which kettle, which chiller: the day and everything that hangs on it follow. */
+/** Which kettle, which chiller: the day and everything that hangs on it follow. One line until it is to be changed. */
 export function KitChooser() {
   const { kettles, chillers, kettleId, chillerId } = useDeskKit();
+  const nameOf = (items: readonly Equipment[], id: string) => items.find((item) => item.id === id)?.name;
+  const kettle = nameOf(kettles, kettleId) ?? 'a usual kettle';
+  const chiller = nameOf(chillers, chillerId) ?? 'no chiller';
   return (
-    <div className="grid grid-cols-2 gap-3">
-      <SelectField
-        label={<SmallLabel>Worked out for</SmallLabel>}
-        value={kettleId}
-        onChange={({ target }) => chosen.set({ ...chosen.get(), kettleId: target.value || null })}
-      >
-        {kettles.map(({ id, name }) => (
-          <option key={id} value={id}>
-            {name}
-          </option>
-        ))}
-        <option value="">a usual kettle</option>
-      </SelectField>
-      <SelectField
-        label={<SmallLabel>with</SmallLabel>}
-        value={chillerId}
-        onChange={({ target }) => chosen.set({ ...chosen.get(), chillerId: target.value || null })}
-      >
-        {chillers.map(({ id, name }) => (
-          <option key={id} value={id}>
-            {name}
-          </option>
-        ))}
-        <option value="">no chiller</option>
-      </SelectField>
-    </div>
+    <Disclosure as="div">
+      <DisclosureButton className="group flex min-h-12 w-full cursor-pointer items-center justify-between gap-3 text-left text-body">
+        <span>
+          <span className="text-soft">Worked out for </span>
+          {kettle}, {chiller}
+        </span>
+        <span className="group-data-open:rotate-180">
+          <Chevron isOpen={false} />
+        </span>
+      </DisclosureButton>
+      <DisclosurePanel className="grid gap-3 py-3">
+        <SelectField
+          label={<SmallLabel>Kettle</SmallLabel>}
+          value={kettleId}
+          onChange={({ target }) => chosen.set({ ...chosen.get(), kettleId: target.value || null })}
+        >
+          {kettles.map(({ id, name }) => (
+            <option key={id} value={id}>
+              {name}
+            </option>
+          ))}
+          <option value="">a usual kettle</option>
+        </SelectField>
+        <SelectField
+          label={<SmallLabel>Chiller</SmallLabel>}
+          value={chillerId}
+          onChange={({ target }) => chosen.set({ ...chosen.get(), chillerId: target.value || null })}
+        >
+          {chillers.map(({ id, name }) => (
+            <option key={id} value={id}>
+              {name}
+            </option>
+          ))}
+          <option value="">no chiller</option>
+        </SelectField>
+      </DisclosurePanel>
+    </Disclosure>
   );
 }

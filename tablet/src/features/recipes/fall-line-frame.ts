@@ -40,7 +40,8 @@ const GAP_PX = 14;
 /** Of the type that the words are set in, on average. */
 const LETTER_PX = 8.2;
 const TICK_STEPS_MIN = [2, 5, 10, 15, 20, 30, 60, 120, 180, 240, 360, 720, 1440];
-const MOST_TICKS = 6;
+/** Room for "1 h 30 min" and some air. */
+const TICK_PX = 84;
 
 type Part = 'climb' | 'hold' | 'fall';
 
@@ -89,7 +90,7 @@ export function fallLineFrame(
       y: y(tempC),
       isNamed: all.slice(0, index).every((other) => Math.abs(y(other) - y(tempC)) >= ROW_PX - 2),
     })),
-    ticks: ticksOf(lastMs, x),
+    ticks: ticksOf(lastMs, x, Math.max(2, Math.floor((plot.right - plot.left) / TICK_PX))),
   };
 }
 
@@ -112,7 +113,7 @@ function partsOf({ curve, marks }: PlannedDay): Parts {
 function partAt({ topMs, chillMs }: Parts, { atMs, kind }: { atMs: number; kind?: string }): Part {
   if (kind === 'transfer' && chillMs !== Infinity) return 'fall';
   if (atMs < topMs) return 'climb';
-  return atMs < chillMs || kind === 'chill' ? 'hold' : 'fall';
+  return atMs <= chillMs ? 'hold' : 'fall';
 }
 
 const doingOf = { climb: 'climbing', hold: 'holding', fall: 'falling' } as const;
@@ -206,10 +207,9 @@ function label(
   return { key, at, text, textAt, anchor, leader };
 }
 
-function ticksOf(lastMs: number, x: (atMs: number) => number): LineFrame['ticks'] {
+function ticksOf(lastMs: number, x: (atMs: number) => number, most: number): LineFrame['ticks'] {
   const lastMin = lastMs / 60_000;
-  const step =
-    TICK_STEPS_MIN.find((each) => lastMin / each <= MOST_TICKS) ?? Math.ceil(lastMin / MOST_TICKS / 1440) * 1440;
+  const step = TICK_STEPS_MIN.find((each) => lastMin / each <= most) ?? Math.ceil(lastMin / most / 1440) * 1440;
   return Array.from({ length: Math.floor(lastMin / step) + 1 }, (_, index) => ({
     atMin: index * step,
     x: x(index * step * 60_000),

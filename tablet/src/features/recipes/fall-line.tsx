@@ -15,12 +15,10 @@ const FIRST_WIDTH = 640;
 interface FallLineProps {
   day: PlannedDay;
   document: RecipeDocument;
-  /** What is shown is as of before. */
-  isOld?: boolean;
 }
 
 /** The planned day as weather: it climbs, holds, falls, and at each level stands what happens there. */
-export function FallLine({ day, document, isOld = false }: FallLineProps) {
+export function FallLine({ day, document }: FallLineProps) {
   const units = useUnits();
   const { ref, width } = useWidth();
   const frame = useMemo(() => fallLineFrame(day, document, { width, height: HEIGHT }), [day, document, width]);
@@ -28,7 +26,7 @@ export function FallLine({ day, document, isOld = false }: FallLineProps) {
   const lastS = (day.curve.at(-1)?.atMs ?? 0) / 1000;
   const happenings = dayEvents(day, document).length;
   return (
-    <figure className={isOld ? 'grid gap-2 opacity-60' : 'grid gap-2'}>
+    <figure className="grid gap-2">
       <div ref={ref} className="min-w-0">
         <svg
           viewBox={`0 0 ${width} ${HEIGHT}`}
@@ -40,15 +38,16 @@ export function FallLine({ day, document, isOld = false }: FallLineProps) {
           fontFamily="inherit"
           className="overflow-visible"
         >
-          {frame.levels.map(({ tempC, y, isNamed }) => (
-            <g key={tempC}>
-              <path
-                d={`M${plot.left} ${y}H${plot.right}`}
-                stroke="var(--edge)"
-                strokeWidth="1.25"
-                strokeDasharray="3 8"
-              />
-              {isNamed ? (
+          {frame.levels
+            .filter(({ isNamed }) => isNamed)
+            .map(({ tempC, y }) => (
+              <g key={tempC}>
+                <path
+                  d={`M${plot.left} ${y}H${plot.right}`}
+                  stroke="var(--edge)"
+                  strokeWidth="1.25"
+                  strokeDasharray="3 8"
+                />
                 <text
                   x={plot.left - 10}
                   y={y + 5}
@@ -60,9 +59,8 @@ export function FallLine({ day, document, isOld = false }: FallLineProps) {
                 >
                   {formatLevel(tempC, units, false)}
                 </text>
-              ) : null}
-            </g>
-          ))}
+              </g>
+            ))}
           <path d={`M${plot.left} ${plot.bottom}H${plot.right}`} stroke="var(--hair)" strokeWidth="2" />
           {frame.ticks.map(({ atMin, x }) => (
             <g key={atMin}>

@@ -2,7 +2,7 @@ import { useMemo } from 'react';
 import type { FigureGroup, FigureRow } from '@steepfall/shared/desk';
 import { Disclosure, DisclosureButton, DisclosurePanel } from '@headlessui/react';
 import { LevelRule } from '#components/level-rule.tsx';
-import { Chevron } from './addition-row.tsx';
+import { Chevron } from './chevron.tsx';
 import { FigureLine } from './figure-line.tsx';
 import { groupWords } from './figure-words.ts';
 import type { Desk, Figures } from './use-desk.ts';
@@ -31,9 +31,9 @@ export function FiguresColumn({ desk, saved = null, isEditable = false }: Figure
     />
   );
   return (
-    <div className={desk.isOld ? 'grid gap-7 opacity-60' : 'grid gap-7'}>
+    <div className={desk.isOld ? 'grid gap-7 text-soft' : 'grid gap-7'}>
       {groups.map(({ group, leads, others }) => (
-        <section key={group} aria-label={groupWords[group]} className="grid">
+        <div key={group} className="grid">
           <LevelRule level={3}>{groupWords[group]}</LevelRule>
           <ul>{leads.map(line)}</ul>
           {others.length > 0 ? (
@@ -47,7 +47,7 @@ export function FiguresColumn({ desk, saved = null, isEditable = false }: Figure
               <DisclosurePanel as="ul">{others.map(line)}</DisclosurePanel>
             </Disclosure>
           ) : null}
-        </section>
+        </div>
       ))}
     </div>
   );

@@ -1,5 +1,4 @@
 import { useState, type ReactNode } from 'react';
-import type { FigureGroup } from '@steepfall/shared/desk';
 import { classNames } from '#components/class-names.ts';
 import { Dialog } from '#components/dialog.tsx';
 import { Button } from '#components/button.tsx';
@@ -7,8 +6,13 @@ import { useUnits } from '#lib/units.ts';
 import { figureText } from './figure-words.ts';
 import type { Desk } from './use-desk.ts';
 
-/** What a brewer looks at first, one of a group, in this order. */
-const first: readonly FigureGroup[] = ['acid', 'tea', 'hops', 'yield'];
+/** What a brewer looks at first, in few letters; a phone has room for three. */
+const first = [
+  { id: 'acid.ph-still', word: 'pH' },
+  { id: 'tea.caffeine', word: 'Caffeine' },
+  { id: 'hops.bitterness', word: 'Bitterness' },
+  { id: 'yield.keg', word: 'In the keg' },
+] as const;
 
 interface LeadsStripProps {
   desk: Desk;
@@ -21,22 +25,25 @@ export function LeadsStrip({ desk, children }: LeadsStripProps) {
   const units = useUnits();
   const [isOpen, setIsOpen] = useState(false);
   const { figures, moved, isOld } = desk;
-  const leads = first.flatMap((group) => figures?.rows.find((row) => row.group === group && row.isLead) ?? []);
+  const leads = first.flatMap(({ id, word }) => {
+    const row = figures?.rows.find((each) => each.id === id);
+    return row ? [{ row, word }] : [];
+  });
   const warned = figures?.warnings.length ?? 0;
   const close = () => setIsOpen(false);
   return (
     <>
-      <div className="fixed inset-x-0 bottom-18 z-20 border-t-2 border-text bg-ground pb-[env(safe-area-inset-bottom)] md:bottom-0 md:left-28 lg:hidden">
+      <div className="fixed inset-x-0 bottom-18 z-20 border-t-2 border-text bg-ground pb-[env(safe-area-inset-bottom)] md:bottom-0 md:left-28 xl:hidden">
         <button
           type="button"
           aria-haspopup="dialog"
           onClick={() => setIsOpen(true)}
           className="flex min-h-16 w-full cursor-pointer items-center justify-between gap-4 px-5 text-left"
         >
-          <span className={classNames('flex min-w-0 gap-x-6 overflow-hidden', isOld && 'opacity-60')}>
-            {leads.map((row, index) => (
+          <span className={classNames('flex min-w-0 gap-x-6 overflow-hidden', isOld && 'text-soft')}>
+            {leads.map(({ row, word }, index) => (
               <span key={row.id} className={classNames('grid min-w-0', index > 2 && 'max-sm:hidden')}>
-                <span className="truncate text-note text-soft">{row.label}</span>
+                <span className="truncate text-note text-soft">{word}</span>
                 <span
                   className={classNames(
                     'truncate text-body font-semibold tabular-nums',

@@ -77,7 +77,7 @@ function Desk({ recipe, base, saved, draftKey, start }: RecipeEditorProps) {
   const values = useWatch({ control }) as RecipeForm;
   const desk = useDesk(values.document, kit, units);
   const savedFigures = useMemo(() => {
-    const result = base ? deskFigures(base.document, kit, units) : null;
+    const result = base && kit ? deskFigures(base.document, kit, units) : null;
     return result?.kind === 'figures' ? result : null;
   }, [base, kit, units]);
   const { isKept, drop } = useDraft(draftKey, values, saved ?? start, base?.id ?? null);
@@ -103,7 +103,7 @@ function Desk({ recipe, base, saved, draftKey, start }: RecipeEditorProps) {
       }
     },
   });
-  const isChanged = !saved || !isSameJson(values, saved);
+  const isChanged = !isSameJson(values, saved ?? start) || (!saved && start.name !== '');
 
   const refuse = (errors: FieldErrors<RecipeForm>) => {
     const paths = wrongPaths(errors);
@@ -123,14 +123,12 @@ function Desk({ recipe, base, saved, draftKey, start }: RecipeEditorProps) {
   const warnings = (go: (path: string) => void) => (
     <WarningList warnings={desk.figures?.warnings ?? []} impossible={desk.impossible} onGo={go} />
   );
-  const line = desk.figures && desk.document && (
-    <FallLine day={desk.figures.day} document={desk.document} isOld={desk.isOld} />
-  );
+  const line = desk.figures && desk.document && <FallLine day={desk.figures.day} document={desk.document} />;
   return (
-    <div className="pb-32 lg:pb-16">
+    <div className="pb-32 xl:pb-16">
       <header className="sticky top-0 z-20 border-b-2 border-edge bg-ground">
-        <div className="mx-auto flex w-full max-w-[104rem] flex-wrap items-center gap-x-6 gap-y-1 px-5 py-2 sm:px-8 xl:px-10">
-          <div className="min-w-0 flex-1 basis-40">
+        <div className="mx-auto flex w-full max-w-[104rem] items-center gap-x-4 px-5 py-2 sm:px-8 xl:px-10">
+          <div className="min-w-0 flex-1">
             <h1 className="truncate text-lead font-semibold" tabIndex={-1}>
               {title}
             </h1>
@@ -155,13 +153,14 @@ function Desk({ recipe, base, saved, draftKey, start }: RecipeEditorProps) {
         </div>
       </header>
 
-      <div className="mx-auto grid w-full max-w-[104rem] gap-x-10 gap-y-12 px-5 pt-6 sm:px-8 lg:grid-cols-[minmax(0,1fr)_minmax(0,25rem)] xl:px-10 min-[87rem]:grid-cols-[minmax(0,24rem)_minmax(0,1fr)_minmax(0,24rem)] min-[87rem]:gap-x-12">
+      <div className="mx-auto grid w-full max-w-[104rem] gap-x-10 gap-y-12 px-5 pt-6 sm:px-8 lg:grid-cols-[minmax(0,1fr)_minmax(0,25rem)] xl:px-10 xl:grid-cols-[minmax(0,20rem)_minmax(0,1fr)_minmax(0,20rem)] min-[87rem]:grid-cols-[minmax(0,23rem)_minmax(0,1fr)_minmax(0,22.5rem)] min-[87rem]:gap-x-12">
         <RecipeFields />
-        <div className="hidden lg:sticky lg:top-20 lg:block lg:max-h-[calc(100dvh-5rem)] lg:self-start lg:overflow-y-auto lg:pb-8 lg:pr-2 min-[87rem]:contents">
+        <div className="hidden lg:sticky lg:top-20 lg:block lg:max-h-[calc(100dvh-5rem)] lg:self-start lg:overflow-y-auto lg:pb-8 lg:pr-2 xl:contents">
           <section
             aria-label="The planned line"
-            className="min-[87rem]:sticky min-[87rem]:top-20 min-[87rem]:max-h-[calc(100dvh-5rem)] min-[87rem]:self-start min-[87rem]:overflow-y-auto min-[87rem]:pb-8"
+            className="xl:sticky xl:top-20 xl:max-h-[calc(100dvh-5rem)] xl:self-start xl:overflow-y-auto xl:pb-8"
           >
+            <h2 className="sr-only">The planned day</h2>
             <OldWords isOld={desk.isOld && desk.figures !== null} />
             {line}
             <div className="mt-6 grid gap-6">
@@ -171,9 +170,10 @@ function Desk({ recipe, base, saved, draftKey, start }: RecipeEditorProps) {
           </section>
           <section
             aria-label="Figures"
-            className="mt-10 min-[87rem]:sticky min-[87rem]:top-20 min-[87rem]:mt-0 min-[87rem]:max-h-[calc(100dvh-5rem)] min-[87rem]:self-start min-[87rem]:overflow-y-auto min-[87rem]:pb-8 min-[87rem]:pr-2"
+            className="mt-10 xl:sticky xl:top-20 xl:mt-0 xl:max-h-[calc(100dvh-5rem)] xl:self-start xl:overflow-y-auto xl:pb-8 xl:pr-2"
           >
-            <div className="mb-6">
+            <h2 className="sr-only">Figures</h2>
+            <div className="mb-4">
               <KitChooser />
             </div>
             {figures}
@@ -256,7 +256,7 @@ function stateWords({ isChanged, isKept, revision, wrongCount }: StateFacts): st
       ? 'Not saved: one field needs another look'
       : `Not saved: ${wrongCount} fields need another look`;
   }
-  if (!isChanged) return revision === null ? 'Nothing to save' : `As saved, revision ${revision}`;
+  if (!isChanged) return revision === null ? 'Nothing to save yet' : `As saved, revision ${revision}`;
   return isKept
     ? 'Not saved yet, kept on this device'
     : 'Not saved, and this browser keeps nothing: save before you leave';
@@ -286,11 +286,13 @@ function RecipeFields() {
   const units = useUnits();
   const { register, formState } = useFormContext<RecipeForm>();
   const volume = usePart('volumeL');
+  const water = usePart('waterL');
+  const litres = quantityOf('volume', units);
   const { data: stores = [] } = useQuery(storesQuery);
   return (
     <form noValidate onSubmit={(event) => event.preventDefault()} className="grid min-w-0 content-start gap-10">
       <section aria-label="The recipe" className="grid gap-4">
-        <LevelRule level={3}>The recipe</LevelRule>
+        <LevelRule>The recipe</LevelRule>
         <TextField
           label={<SmallLabel>Name</SmallLabel>}
           autoComplete="off"
@@ -304,14 +306,24 @@ function RecipeFields() {
           error={formState.errors.summary?.message}
           {...register('summary')}
         />
-        <NumberField
-          label="Drink wanted in the keg"
-          path="volumeL"
-          scale={quantityOf('volume', units)}
-          value={volume.value}
-          error={volume.errorAt()}
-          onChange={(volumeL = Number.NaN) => volume.change(volumeL)}
-        />
+        <div className="grid grid-cols-2 items-end gap-3">
+          <NumberField
+            label="Drink in the keg"
+            path="volumeL"
+            scale={litres}
+            value={volume.value}
+            error={volume.errorAt()}
+            onChange={(volumeL = Number.NaN) => volume.change(volumeL)}
+          />
+          <NumberField
+            label="Water in the kettle"
+            path="waterL"
+            scale={litres}
+            value={water.value}
+            error={water.errorAt()}
+            onChange={(waterL = Number.NaN) => water.change(waterL)}
+          />
+        </div>
       </section>
       <WaterSection />
       <AdditionsPart

@@ -1,6 +1,6 @@
 import { createRecipeSchema } from '@steepfall/shared/contracts';
 import type { Addition, IngredientKind, RecipeDocument, WaterPart } from '@steepfall/shared/sheets';
-import { get, type FieldErrors } from 'react-hook-form';
+import type { FieldErrors } from 'react-hook-form';
 import type { z } from 'zod';
 import { newId } from '#lib/ids.ts';
 
@@ -102,11 +102,11 @@ export function isSameJson(a: unknown, b: unknown): boolean {
   return [...new Set([...Object.keys(one), ...Object.keys(other)])].every((key) => isSameJson(one[key], other[key]));
 }
 
-/** The message at a place of an error tree as the form keeps it. */
+/** The message at a place of an error tree as the form keeps it; the tree has lists where the document has them. */
 export function messageAt(errors: unknown, path: string): string | undefined {
-  const found: unknown = path === '' ? errors : get(errors, path);
-  if (typeof found !== 'object' || found === null) return undefined;
-  const message = (found as { message?: unknown }).message;
+  let found = errors;
+  for (const key of path === '' ? [] : path.split('.')) found = (found as Record<string, unknown> | undefined)?.[key];
+  const message = (found as { message?: unknown } | undefined)?.message;
   return typeof message === 'string' ? message : undefined;
 }
 

@@ -20,9 +20,10 @@ export interface Desk {
 }
 
 /** The figures of a document that is being typed: each key press is taken, and never waited for. */
-export function useDesk(typed: RecipeDocument, kit: DeskKit, units: UnitPreferences): Desk {
+export function useDesk(typed: RecipeDocument, kit: DeskKit | null, units: UnitPreferences): Desk {
   const deferred = useDeferredValue(typed);
   const now = useMemo(() => {
+    if (!kit) return null;
     const parsed = recipeDocumentSchema.safeParse(deferred);
     return parsed.success ? { document: parsed.data, result: deskFigures(parsed.data, kit, units) } : null;
   }, [deferred, kit, units]);

@@ -5,8 +5,7 @@ import { TextField } from '#components/field.tsx';
 import { LevelRule } from '#components/level-rule.tsx';
 import { Segmented } from '#components/segmented.tsx';
 import { offerUndo } from '#lib/undo.ts';
-import { quantityOf, useUnits } from '#lib/units.ts';
-import { Chevron } from './addition-row.tsx';
+import { Chevron } from './chevron.tsx';
 import { NumberField, plainScale, SmallLabel } from './number-field.tsx';
 import { newWater } from './recipe-form.ts';
 import { usePart } from './use-part.ts';
@@ -24,8 +23,6 @@ const percentScale = plainScale('%');
 
 /** How much water, and which: several are poured together by their share. */
 export function WaterSection() {
-  const units = useUnits();
-  const water = usePart('waterL');
   const { value: waters, change, errorAt } = usePart('waters');
   const sum = waters.reduce((total, { percent }) => total + percent, 0);
   const remove = (index: number) => {
@@ -38,15 +35,7 @@ export function WaterSection() {
   };
   return (
     <section aria-label="Water" className="grid gap-4">
-      <LevelRule level={3}>Water</LevelRule>
-      <NumberField
-        label="Into the kettle"
-        path="waterL"
-        scale={quantityOf('volume', units)}
-        value={water.value}
-        error={water.errorAt()}
-        onChange={(waterL = Number.NaN) => water.change(waterL)}
-      />
+      <LevelRule>Water</LevelRule>
       <ul className="grid">
         {waters.map((part, index) => (
           <WaterRow
