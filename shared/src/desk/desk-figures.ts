@@ -22,7 +22,7 @@ export function deskFigures(document: RecipeDocument, kit: DeskKit, units: UnitP
     const day = plannedDay(document, kit);
     plan = drinkPlanOf(document, kit, day);
     const figures = drinkFigures(plan);
-    const impossible = impossibleFigures(document, figures);
+    const impossible = impossibleFigures(document, plan, figures);
     if (impossible) return impossible;
     const context = { document, kit, day, plan, figures, units };
     return { kind: 'figures', day, figures, rows: figureRows(context), warnings: deskWarnings(context) };

@@ -15,7 +15,7 @@ import {
 import { formatMass, formatTemp } from '../units/index.js';
 import { acidityOf, gramsForPh, leadingAcid } from './acid-advice.js';
 import { hopsOf, row, targetOf, within, type RowContext } from './figure-row.js';
-import { phBandOf, plainPhBand } from './still-ph.js';
+import { coldAcid, phBandOf, plainPhBand, treatedWaterPh } from './still-ph.js';
 import type { FigureRow } from './types.js';
 
 /** What people aim for. */
@@ -33,6 +33,7 @@ export function acidRows(context: RowContext): FigureRow[] {
   const { document, units } = context;
   const { waterPh, drinkPh: wanted } = document.targets;
   const still = phBandOf(document, acid.phStill);
+  const treated = treatedWaterPh(context, acid);
   const temp = (tempC: number) => formatTemp(tempC, { unit: units.temperature, digits: 0 });
   const volumes = document.gas.volumes;
   return [
@@ -48,9 +49,9 @@ export function acidRows(context: RowContext): FigureRow[] {
       id: 'acid.ph-after-acid',
       label: 'pH of water, salts and acid',
       quantity: 'pH',
-      band: plainPhBand(acid.phAfterAcid),
+      band: plainPhBand(treated),
       isLead: true,
-      target: targetOf(acid.phAfterAcid, waterPh.min, waterPh.max),
+      target: targetOf(treated, waterPh.min, waterPh.max),
     }),
     ...complexedRows(context, acid),
     ...amountRows(context),
@@ -97,8 +98,8 @@ export function acidRows(context: RowContext): FigureRow[] {
 
 /** Where calcium and magnesium hold citric acid the pH lies a little lower: a line beside the plain one. */
 function complexedRows({ document, plan }: RowContext, acid: AcidFigures): FigureRow[] {
-  const before = complexedDrinkPh(acidityOf(plan, 0)).ph;
-  if (acid.phStill.value - acid.phStillComplexed < SHOWN_PH && acid.phAfterAcid - before < SHOWN_PH) return [];
+  const before = complexedDrinkPh(acidityOf(coldAcid({ document, plan }), 0)).ph;
+  if (acid.phStill.value - acid.phStillComplexed < SHOWN_PH) return [];
   const { low, value, high } = acid.phStill;
   const off = acid.phStillComplexed - value;
   const still = { low: low + off, value: value + off, high: high + off };

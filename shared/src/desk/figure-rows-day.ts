@@ -2,7 +2,7 @@ import { boilingPointAtAltitudeC, plusMinus, sure, withinFactor } from '../figur
 import { formatTemp } from '../units/index.js';
 import { contactMs } from './drink-plan.js';
 import { row, type RowContext } from './figure-row.js';
-import { altitudeOf, BOIL_SLACK_K } from './planned-day.js';
+import { altitudeOf, BOIL_SLACK_K, isChilled } from './planned-day.js';
 import type { FigureRow } from './types.js';
 
 /** A planned time before the kettle and the chiller were learned; a judgement. */
@@ -41,7 +41,7 @@ export function dayRows({ document, kit, day, units }: RowContext): FigureRow[] 
           }),
         ]
       : []),
-    ...(chill ? fallRows({ document, day }, chill.atMs, temp) : []),
+    ...(chill ? fallRows({ document, kit, day }, chill.atMs, temp) : []),
     ...document.additions.flatMap((addition) => {
       if (!('out' in addition)) return [];
       const { inAtMs, outAtMs } = contactMs(day, addition.id);
@@ -61,17 +61,18 @@ export function dayRows({ document, kit, day, units }: RowContext): FigureRow[] 
 }
 
 function fallRows(
-  { document, day }: Pick<RowContext, 'document' | 'day'>,
+  { document, kit, day }: Pick<RowContext, 'document' | 'kit' | 'day'>,
   fromMs: number,
   temp: (tempC: number) => string,
 ): FigureRow[] {
+  const from = isChilled(document, kit) ? 'Chiller on' : 'Heat off';
   const caught = document.additions.flatMap((addition) => {
     if (addition.in.at !== 'falling') return [];
     return [
       row({
         id: 'day.fall',
         of: addition.id,
-        label: `Chiller on to ${addition.name} in, ${temp(addition.in.tempC)}`,
+        label: `${from} to ${addition.name} in, ${temp(addition.in.tempC)}`,
         quantity: 'durationS',
         band: seconds(contactMs(day, addition.id).inAtMs - fromMs),
       }),
@@ -82,7 +83,7 @@ function fallRows(
     ...caught,
     row({
       id: 'day.fall-to-keg',
-      label: `Chiller on to keg, ${temp(document.transferC)}`,
+      label: `${from} to keg, ${temp(document.transferC)}`,
       quantity: 'durationS',
       band: seconds(endMs - fromMs),
     }),

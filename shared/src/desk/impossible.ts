@@ -17,9 +17,10 @@ const MOST_LEAF_G_PER_L = 400;
 const MOST_ACID_G_PER_L = 150;
 
 /** Why there are no figures although they were summed; null when they are good. */
-export function impossibleFigures(document: RecipeDocument, figures: DrinkFigures): Impossible | null {
+export function impossibleFigures(document: RecipeDocument, plan: DrinkPlan, figures: DrinkFigures): Impossible | null {
   if (figures.water.salinity === 'salt') return saltWater(document);
-  if (!figures.acid) return refusedWater(document);
+  // Salts that are weighed balance themselves, and would hide how wrong the report is.
+  if (!figures.acid || chargeBalance(plan.source).verdict === 'refused') return refusedWater(document);
   if (figures.gas.gaugeKPa === null) {
     return impossible(
       `No pressure that a keg bears gives ${document.gas.volumes} volumes at this temperature.`,

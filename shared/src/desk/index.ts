@@ -1,5 +1,6 @@
 export * from './combine.js';
 export * from './cost.js';
+export { assumedValues, type AssumedValues } from './assumed.js';
 export * from './desk-figures.js';
 export * from './differences.js';
 export * from './reservation.js';

@@ -97,7 +97,7 @@ export function plannedDay(document: RecipeDocument, kit: DeskKit): PlannedDay {
   mark(pot, 'heat');
   for (const addition of document.additions) if (addition.in.at === 'fill') mark(pot, 'in', addition);
   heat(pot, document, boilingPointAtAltitudeC(altitudeOf(kit)));
-  pot.chills = chillOf(document, day, pot.heatCapacityJPerK);
+  pot.chills = chillOfDay(document, kit);
   const { byClock, byFall } = dayOrder(document);
   steep(pot, byClock);
   fall(pot, byFall, document.transferC);
@@ -158,16 +158,16 @@ function heat(pot: Pot, { steepC }: RecipeDocument, boilC: number): void {
   };
   if (chiller) {
     to(Math.max(pot.line.tempC, toC - COIL_BEFORE_K));
-    coilIn(pot, chiller);
+    mixIn(pot, coilJPerK(chiller));
   }
   to(toC);
 }
 
-function coilIn(pot: Pot, chiller: ChillerFacts): void {
+/** Metal of the coil and the water inside it, J/K. */
+function coilJPerK(chiller: ChillerFacts): number {
   const metalKg = chiller.lengthM * usual.coilKgPerM[chiller.metal];
   const waterKg = tubeVolumeL(chiller.lengthM, usual.coilBoreMm);
-  const coilJPerK = metalKg * specificHeatJPerKgK[metalOf[chiller.metal]] + waterKg * specificHeatJPerKgK.water;
-  mixIn(pot, coilJPerK);
+  return metalKg * specificHeatJPerKgK[metalOf[chiller.metal]] + waterKg * specificHeatJPerKgK.water;
 }
 
 /** Puts in something that stood in the room. */
@@ -248,9 +248,10 @@ export function isChilled({ assume }: RecipeDocument, { chiller }: Pick<DeskKit,
 }
 
 /** Toward the coolant, by a told, a learned or a computed constant; null when there is no chiller. */
-function chillOf({ assume }: RecipeDocument, { chiller }: DayKit, heatCapacityJPerK: number): ChillLaw | null {
+export function chillOfDay(document: RecipeDocument, kit: DeskKit): ChillLaw | null {
+  const { chiller } = kit;
   const surroundC = chiller?.coolantC ?? usual.coolantC;
-  const known = assume.chillerConstantPerS ?? chiller?.coolingConstantPerS;
+  const known = document.assume.chillerConstantPerS ?? chiller?.coolingConstantPerS;
   if (known !== undefined) return { surroundC, kPerS: known };
   if (!chiller) return null;
   const kPerS = chillerConstantPerS({
@@ -262,7 +263,7 @@ function chillOf({ assume }: RecipeDocument, { chiller }: DayKit, heatCapacityJP
     }).value,
     coolantKgPerS: usual.coolantKgPerS,
     coolantInC: surroundC,
-    heatCapacityJPerK,
+    heatCapacityJPerK: capacityJPerK(document, dayKit(document, kit).kettle) + coilJPerK(chiller),
   });
   return { surroundC, kPerS };
 }

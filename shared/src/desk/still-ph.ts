@@ -1,6 +1,7 @@
-import { band, type AcidFigures, type Band } from '../figures/index.js';
+import { band, drinkPh, type AcidFigures, type Band, type DrinkPlan } from '../figures/index.js';
 import type { RecipeDocument } from '../sheets/index.js';
-import { graded, hopsOf, teasOf } from './figure-row.js';
+import { acidityOf } from './acid-advice.js';
+import { graded, hopsOf, teasOf, type RowContext } from './figure-row.js';
 
 /** With a base ratio from a measured pH the next one is good to about this; a judgement. */
 const LEARNED_PH = 0.1;
@@ -24,4 +25,16 @@ export function phBandOf(document: RecipeDocument, ph: AcidFigures['phStill']): 
 
 export function plainPhBand(ph: number): Band {
   return band(ph - SOLVER_PH, ph, ph + SOLVER_PH, 'solid');
+}
+
+/** The plan with the acid alone that goes into the cold water. */
+export function coldAcid({ document, plan }: Pick<RowContext, 'document' | 'plan'>): DrinkPlan {
+  const lines = document.additions.filter(({ kind }) => kind === 'acid');
+  return { ...plan, acids: plan.acids.filter((_, index) => lines[index]?.in.at === 'fill') };
+}
+
+/** What the sheet asks to measure before the heat: acid that goes in later is not in it yet. */
+export function treatedWaterPh(context: Pick<RowContext, 'document' | 'plan'>, acid: AcidFigures): number {
+  const cold = coldAcid(context);
+  return cold.acids.length === context.plan.acids.length ? acid.phAfterAcid : drinkPh(acidityOf(cold, 0)).ph;
 }

@@ -2,7 +2,7 @@ import { phBand, tooAcidForCopper, type Band, type PhBand } from '../figures/ind
 import { leadingAcid, gramsForPh, wantedPh } from './acid-advice.js';
 import { contactMs } from './drink-plan.js';
 import type { RowContext } from './figure-row.js';
-import { phBandOf } from './still-ph.js';
+import { phBandOf, treatedWaterPh } from './still-ph.js';
 import type { DeskWarning } from './types.js';
 import { CODES_FIRST, pathOf, warning, wordsIn } from './warning.js';
 
@@ -18,7 +18,7 @@ export function acidWarnings(context: RowContext): DeskWarning[] {
   return [
     ...lineWarnings(context, still),
     ...targetWarnings(context, still),
-    ...waterPhWarnings(context, acid.phAfterAcid),
+    ...waterPhWarnings(context, treatedWaterPh(context, acid)),
     ...copperWarnings(context, Math.min(acid.phAfterAcid, still.low)),
     ...sourWarnings(context, acid.titratableGPerL),
     ...noAcidWarnings(context),

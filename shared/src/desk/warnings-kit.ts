@@ -15,7 +15,7 @@ import type { RowContext } from './figure-row.js';
 import { altitudeOf, isChilled } from './planned-day.js';
 import { phBandOf } from './still-ph.js';
 import { usual } from './usual-kit.js';
-import type { DeskWarning } from './types.js';
+import type { DeskWarning, PlannedDay } from './types.js';
 import { CODES_FIRST, warning, wordsIn } from './warning.js';
 
 /** Free under the rim for waves and a lifted bag, share of the kettle (common practice, no source). */
@@ -119,7 +119,7 @@ function coolingWarnings(context: RowContext): DeskWarning[] {
   const mustRule = asks === 'assessment' || asks === 'low-acid';
   const grade = mustRule ? 'danger' : 'note';
   const why = `The US Food Code asks for ${temp(57)} to ${temp(WARM_DRINK_C)} within 2 hours where a drink needs time and temperature control${mustRule ? ', and this one may' : '; for others it is a good guide'}.`;
-  const { startsAtMs, toWarmS, outcome } = coolingRule(day.curve);
+  const { startsAtMs, toWarmS, outcome } = coolingRule(fallOf(day));
   const endC = day.curve.at(-1)?.tempC ?? 0;
   if (startsAtMs === null || (outcome !== 'fail' && toWarmS === null && endC <= WARM_DRINK_C)) return [];
   if (outcome === 'fail') {
@@ -141,6 +141,12 @@ function coolingWarnings(context: RowContext): DeskWarning[] {
       act: `Chill further before the transfer, or put the keg into ice water. ${CODES_FIRST}`,
     }),
   ];
+}
+
+/** From the hottest of the day on: how long it heats is not how long it cools. */
+function fallOf({ curve }: PlannedDay): PlannedDay['curve'] {
+  const hottestC = Math.max(...curve.map(({ tempC }) => tempC));
+  return curve.slice(curve.findLastIndex(({ tempC }) => tempC === hottestC));
 }
 
 function chillerWarnings({ document, kit, day, units }: RowContext): DeskWarning[] {

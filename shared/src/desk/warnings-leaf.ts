@@ -76,12 +76,14 @@ function caffeineWarnings({ document, figures, units }: RowContext): DeskWarning
   const { caffeineMgPerL: caffeine, caffeineLine } = figures.tea;
   const { mgPerL } = wordsIn(units);
   const most = document.targets.caffeineMostMgPerL;
+  const mostLeaf = [...teas].sort((a, b) => b.massG - a.massG)[0] ?? null;
+  const mostLeafPath = pathOf(document, mostLeaf, 'massG');
   const isGuessed = teas.some(({ tea, caffeineMgPerG }) => tea === 'herbal' && caffeineMgPerG === undefined);
   return [
     ...(caffeineLine === 'below'
       ? []
       : [
-          warning('caffeine-label', 'care', null, {
+          warning('caffeine-label', 'care', mostLeafPath, {
             what: `Caffeine is planned at ${showBand(caffeine)} mg/L: ${caffeineLine === 'above' ? 'above' : 'perhaps above'} the line of ${EU_CAFFEINE_LABEL_MG_PER_L} mg/L.`,
             why: 'Above it the EU asks for "high caffeine content" on the label, unless the drink is made from tea and its name says tea.',
             act: 'Take less leaf or a shorter steep, have it measured, or look at the name with your local food authority.',

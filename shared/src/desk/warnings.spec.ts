@@ -94,7 +94,7 @@ describe('warnings', () => {
     ['steep-long.sencha', 'note', 'additions.1.out', tea({ tea: 'black', out: { at: 'timer', durationS: 660 } })],
     ['steep-amber.sencha', 'care', 'additions.1.out', tea({ out: { at: 'timer', durationS: 900 } })],
     ['steep-red.sencha', 'care', 'additions.1.out', tea({ out: { at: 'timer', durationS: 3000 } })],
-    ['caffeine-label', 'care', null, tea({ massG: 250 })],
+    ['caffeine-label', 'care', 'additions.1.massG', tea({ massG: 250 })],
     [
       'caffeine-above-target',
       'care',

@@ -112,7 +112,10 @@ export const waterAcidWorkings = {
     model: solver,
     source: solverSource,
     band: '0.03, from constants and activities. With calcium complexes it would be 0.01 to 0.02 lower.',
-    assumptions: ['All acid of the recipe is in, also what goes in later.', 'At 25 °C: cool the sample.'],
+    assumptions: [
+      'Acid that goes into the cold water; what goes in later is not in it yet.',
+      'At 25 °C: cool the sample.',
+    ],
     defaults: [],
   },
   'acid.ph-still-complexed': {
@@ -129,7 +132,7 @@ export const waterAcidWorkings = {
     model: `${solver} Three complexes of each metal with citrate are counted too.`,
     source: 'USGS minteq.v4 for the complexes; R. N. Goldberg et al. 2002; C. W. Davies 1962.',
     band: '0.03, from constants and activities.',
-    assumptions: ['All acid of the recipe is in, also what goes in later.'],
+    assumptions: ['Acid that goes into the cold water; what goes in later is not in it yet.'],
     defaults: [],
   },
   'acid.dose': {
