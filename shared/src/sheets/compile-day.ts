@@ -1,6 +1,6 @@
 import { inStep, outStep, standStep } from './compile-event.js';
 import { isInBag, type Namer } from './compile-words.js';
-import { dayOrder, isColdSteep, timedFromFill, type ClockEvent, type FallEvent } from './day-order.js';
+import { dayOrder, isColdSteep, type ClockEvent, type FallEvent } from './day-order.js';
 import type { RecipeDocument } from './recipe.js';
 import type { StepDraft } from './step-order.js';
 import type { VesselAct } from './step.js';
@@ -8,27 +8,9 @@ import type { VesselAct } from './step.js';
 /** From the steep temperature to the keg: what goes in and comes out, by clock first, then by the falling temperature. */
 export function theDay(document: RecipeDocument, name: Namer): StepDraft[] {
   const { byClock, byFall } = dayOrder(document);
-  if (isColdSteep(document)) {
-    return [
-      ...steeping(document, withFillOuts(document, byClock), name),
-      ...byFall.flatMap((event) => fallSteps(event, name)),
-    ];
-  }
-  return [
-    ...steeping(document, byClock, name),
-    chill(byClock.length === 0),
-    ...byFall.flatMap((event) => caughtSteps(event, name)),
-  ];
-}
-
-/** Cold leaf that went in with the water comes out by the same clock as the rest. */
-function withFillOuts(document: RecipeDocument, byClock: readonly ClockEvent[]): ClockEvent[] {
-  const outs = timedFromFill(document).map(({ afterS, additions }): ClockEvent => ({
-    kind: 'out',
-    atS: afterS,
-    additions,
-  }));
-  return [...byClock, ...outs].sort((a, b) => a.atS - b.atS);
+  const steeps = steeping(document, byClock, name);
+  if (isColdSteep(document)) return [...steeps, ...byFall.flatMap((event) => fallSteps(event, name))];
+  return [...steeps, chill(byClock.length === 0), ...byFall.flatMap((event) => caughtSteps(event, name))];
 }
 
 function steeping(document: RecipeDocument, events: readonly ClockEvent[], name: Namer): StepDraft[] {

@@ -1,6 +1,9 @@
+import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { buildDocument } from '../testing/index.js';
+import { buildDocument, buildHops, buildTea } from '../testing/index.js';
+import { recipeDocuments } from '../testing/recipe-arbitraries.js';
 import { compileSheet } from './compile.js';
+import type { RecipeDocument } from './recipe.js';
 import { runSheetSchema } from './step.js';
 
 const document = buildDocument({
@@ -76,5 +79,119 @@ describe(compileSheet, () => {
 
   it('makes a sheet that a run can start with', () => {
     expect(runSheetSchema.safeParse(compileSheet(document, kit)).success).toBe(true);
+  });
+
+  const linesOf = (additions: RecipeDocument['additions'], rest: Partial<RecipeDocument> = {}) =>
+    compileSheet(buildDocument({ additions, ...rest }), kit)
+      .steps.filter(({ kind }) => ['add', 'catch', 'dose', 'steep', 'remove', 'chill', 'heat'].includes(kind))
+      .map(({ id, start, done }) => {
+        if (start.by === 'temperature') return `${id} at ${start.tempC}`;
+        return done.by === 'timer' ? `${id} ${done.durationS}` : id;
+      });
+
+  it('steeps the teas of a blend each for its own time', () => {
+    const lines = linesOf([
+      buildTea(),
+      buildTea({ id: 'oolong', name: 'oolong', out: { at: 'timer', durationS: 300 } }),
+      buildTea({ id: 'mint', name: 'mint', in: { at: 'steep', afterS: 240 }, out: { at: 'timer', durationS: 60 } }),
+    ]);
+    expect(lines).toEqual([
+      ...['light-heat', 'heat', 'tea-in', 'steep 180', 'tea-out', 'steep-2 60', 'tea-in-2', 'steep-3 60', 'tea-out-2'],
+      'chill',
+    ]);
+  });
+
+  it('catches hops in charges, with times and levels of their own', () => {
+    const lines = linesOf([
+      buildHops({ in: { at: 'falling', tempC: 62 }, out: { at: 'timer', durationS: 600 } }),
+      buildHops({ id: 'two', in: { at: 'falling', tempC: 50 } }),
+      buildHops({ id: 'three', in: { at: 'falling', tempC: 50 }, out: { at: 'transfer' } }),
+    ]);
+    expect(lines.slice(2)).toEqual([
+      ...['chill', 'hops-in at 62', 'contact 600', 'hops-out', 'hops-in-2 at 50', 'hops-out-2 at 30'],
+      'hops-out-3 at 20',
+    ]);
+  });
+
+  it('holds the temperature until the first thing goes in, and only then turns the heat off', () => {
+    const late = buildDocument({ additions: [buildTea({ in: { at: 'steep', afterS: 120 } })] });
+    expect(linesOf(late.additions)).toEqual([
+      'light-heat',
+      'heat',
+      'hold 120',
+      'tea-in',
+      'steep 180',
+      'tea-out',
+      'chill',
+    ]);
+    expect(stepOf('tea-in', late)?.acts).toEqual(['heat-off', 'tea-in']);
+    expect(stepOf('chill', buildDocument({ additions: [buildHops()] }))?.acts).toContain('heat-off');
+  });
+
+  it('never lights the heat for a cold steep', () => {
+    const lines = linesOf(
+      [
+        buildTea({ in: { at: 'fill' }, out: { at: 'timer', durationS: 8 * 3600 } }),
+        buildHops({ in: { at: 'steep', afterS: 7 * 3600 }, out: { at: 'timer', durationS: 3600 } }),
+      ],
+      { steepC: 8 },
+    );
+    expect(lines).toEqual(['tea-cold', 'steep 25200', 'hops-in', 'steep-2 3600', 'tea-out']);
+  });
+
+  it('takes out what went in cold, and never before it went in', () => {
+    expect(linesOf([buildTea({ in: { at: 'fill' }, out: { at: 'timer', durationS: 300 } })])).toEqual([
+      ...['light-heat', 'tea-cold', 'cold-stand 300', 'tea-out', 'heat', 'chill'],
+    ]);
+    expect(linesOf([buildHops({ in: { at: 'falling', tempC: 40 }, out: { at: 'falling', tempC: 60 } })])).toEqual([
+      ...['light-heat', 'heat', 'chill', 'hops-in at 40', 'hops-out'],
+    ]);
+  });
+
+  it('hangs hops into the keg, and takes them out after their time', () => {
+    const keg = buildDocument({
+      additions: [buildHops({ in: { at: 'transfer' }, out: { at: 'timer', durationS: 24 * 3600 } })],
+    });
+    expect(stepOf('keg-in', keg)?.amounts).toEqual([{ name: 'Cascade', massG: 60, bag: 'bag 2' }]);
+    expect(stepOf('keg-out', keg)).toMatchObject({
+      detail: 'Shut the gas and vent first. Cascade after 24 h.',
+      cautions: ['pressure', 'co2', 'dogs'],
+    });
+  });
+
+  it('makes a sheet of every recipe, or says that no pressure gives its gas', () => {
+    const check = (any: RecipeDocument, altitudeM: number) => {
+      try {
+        const compiled = compileSheet(any, { altitudeM, reachS: 12 });
+        expect(runSheetSchema.safeParse(compiled).error).toBeUndefined();
+        const ids = compiled.steps.map(({ id }) => id);
+        for (const addition of any.additions) {
+          expect(compiled.steps.some(({ amounts }) => amounts.some(({ massG }) => massG === addition.massG))).toBe(
+            true,
+          );
+        }
+        expect(ids).toEqual(expect.arrayContaining(['check-kit', 'fill', 'ph', 'transfer', 'purge', 'gas']));
+        expect(compiled.steps.length - any.steps.own.length).toBe(
+          compileSheet({ ...any, steps: { own: [] } }, { altitudeM, reachS: 12 }).steps.length,
+        );
+      } catch (error) {
+        expect(error).toBeInstanceOf(RangeError);
+        expect(String(error)).toContain('plan less gas');
+      }
+    };
+    fc.assert(fc.property(recipeDocuments, fc.double({ min: -400, max: 6000, noNaN: true }), check));
+    // As long and as many as the schema takes.
+    const many = Array.from({ length: 40 }, (_, index) =>
+      buildHops({
+        ...{ id: `hops-${index}`, name: `${index} ${'x'.repeat(77)}`, in: { at: 'falling', tempC: 90 - index } },
+        out: { at: 'timer', durationS: 60 + index },
+      }),
+    );
+    check(buildDocument({ additions: many }), 0);
+    check(buildDocument({ additions: many.map((hops) => ({ ...hops, in: { at: 'transfer' } })) }), 0);
+    check(
+      buildDocument({ additions: many.map((hops) => ({ ...hops, in: { at: 'fill' }, out: { at: 'transfer' } })) }),
+      0,
+    );
   });
 });

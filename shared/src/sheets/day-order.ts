@@ -51,11 +51,13 @@ export function dayOrder(document: RecipeDocument): DayOrder {
   return { byClock: clockEvents(document), byFall: fallEvents(document) };
 }
 
-function clockEvents({ additions }: RecipeDocument): ClockEvent[] {
-  const ins = additions.flatMap((addition) =>
+function clockEvents(document: RecipeDocument): ClockEvent[] {
+  const ins = document.additions.flatMap((addition) =>
     addition.in.at === 'steep' ? [{ key: addition.in.afterS, addition }] : [],
   );
-  const outs = ins.flatMap(({ key, addition }) =>
+  // Where nothing is heated, the steep begins with the water, and what went in with it comes out by the same clock.
+  const cold = isColdSteep(document) ? document.additions.filter(({ in: { at } }) => at === 'fill') : [];
+  const outs = [...cold.map((addition) => ({ key: 0, addition })), ...ins].flatMap(({ key, addition }) =>
     'out' in addition && addition.out.at === 'timer' ? [{ key: key + addition.out.durationS, addition }] : [],
   );
   const events = (kind: 'in' | 'out', items: typeof ins): ClockEvent[] =>
