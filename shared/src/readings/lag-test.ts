@@ -37,7 +37,7 @@ export const LEAST_STEP_K = 15;
 const STEADY_BEFORE_S = 8;
 /** What a probe at rest in a stirred bath may move, K, and as a share of the whole step afterwards. */
 const REST_K = 0.4;
-const REST_SHARE = 0.015;
+const REST_SHARE = 0.008;
 const LONGEST_S = 600;
 /** A hand presses and plunges within about this much of each other. Our choice. */
 const HAND_S = 0.4;
@@ -85,7 +85,8 @@ export function lagTest(
 
   const farC = after.reduce((far, { tempC }) => (Math.abs(tempC - fromC) > Math.abs(far - fromC) ? tempC : far), fromC);
   const end = steadiness(readings, newestMs, {
-    spanS: Math.max(10, 6 * samplePeriodS),
+    // The slower it is, the longer it must be watched to see that it has come to rest.
+    spanS: Math.max(10, 6 * samplePeriodS, elapsedS / 4),
     withinK: Math.max(REST_SHARE * Math.abs(farC - fromC), 2 * resolutionC),
   });
   const hasMoved = Math.abs(farC - fromC) > REST_K + 4 * resolutionC;

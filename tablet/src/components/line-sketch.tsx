@@ -21,6 +21,8 @@ interface LineSketchProps {
   levels?: readonly number[];
   /** Kept free above and below, as a share of the range. */
   padding?: number;
+  /** A smaller range is drawn as if it were this: the steps of a probe at rest are no weather. */
+  leastSpan?: number;
   strokeWidth?: number;
   /** Marks the end of the line: where it stands now. */
   hasEnd?: boolean;
@@ -36,6 +38,7 @@ export function LineSketch({
   stretches = [],
   levels = [],
   padding = 0.12,
+  leastSpan = 0,
   strokeWidth = 6,
   hasEnd,
   className,
@@ -45,8 +48,9 @@ export function LineSketch({
   const last = points.at(-1);
   if (!first || !last || last.x <= first.x) return null;
   const heights = [...points.map(({ y }) => y), ...levels];
-  const low = Math.min(...heights);
-  const span = Math.max(...heights) - low || 1;
+  const range = Math.max(...heights) - Math.min(...heights);
+  const span = Math.max(range, leastSpan) || 1;
+  const low = Math.min(...heights) - (span - range) / 2;
   const toX = (x: number) => ((x - first.x) / (last.x - first.x)) * WIDTH;
   const toY = (y: number) => HEIGHT * (1 - padding - ((y - low) / span) * (1 - 2 * padding));
   const path = points.map(({ x, y }, i) => `${i === 0 ? 'M' : 'L'}${toX(x).toFixed(1)} ${toY(y).toFixed(1)}`).join('');

@@ -99,11 +99,11 @@ export function CalibrationDialog({ probe, onClose }: { probe: Probe; onClose: (
           below={
             <>
               <CautionMark mark={cautionWords.scald.mark}>{cautionWords.scald.text}</CautionMark>
-              <div className="max-w-80">
+              <div className="max-w-96">
                 <QuantityField
                   kind={hectopascal}
                   label="Barometer here, if there is one"
-                  hint={`The pressure in this room, not reduced to the sea. Empty: from ${house.altitudeM} m above the sea, and the weather is not in it.`}
+                  hint="In this room, not reduced to the sea. Empty: by altitude, so the weather is not in it."
                   value={pressureKPa}
                   onChange={setPressureKPa}
                   error={isPressureRight ? undefined : `A number from ${LOWEST_KPA * 10} to ${HIGHEST_KPA * 10}.`}

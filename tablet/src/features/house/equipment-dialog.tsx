@@ -17,6 +17,7 @@ import {
 import { CautionMark } from '#components/caution-mark.tsx';
 import { Dialog } from '#components/dialog.tsx';
 import { SelectField, TextField } from '#components/field.tsx';
+import { LevelRule } from '#components/level-rule.tsx';
 import { QuantityField } from '#components/quantity-field.tsx';
 import { Segmented } from '#components/segmented.tsx';
 import { callHubFor } from '#lib/api-client.ts';
@@ -131,7 +132,7 @@ function KettleFacts({
   return (
     <>
       <SelectField label="Metal" {...register('facts.metal', { setValueAs: asChosen })}>
-        <option value="">not told</option>
+        <option value="">not said</option>
         {Object.entries(metalWords).map(([metal, words]) => (
           <option key={metal} value={metal}>
             {words}
@@ -153,6 +154,9 @@ function KettleFacts({
           />
         )}
       />
+      <div className="sm:col-span-2">
+        <LevelRule level={3}>The heat</LevelRule>
+      </div>
       <SelectField
         label="What heats it"
         {...register('facts.heatSource', {
@@ -165,7 +169,7 @@ function KettleFacts({
           },
         })}
       >
-        <option value="">not told</option>
+        <option value="">not said</option>
         {Object.entries(heatSourceWords).map(([value, words]) => (
           <option key={value} value={value}>
             {words}

@@ -103,7 +103,7 @@ export const factFields: Record<Kind, FactField[]> = {
 };
 
 export const heatFields: FactField[] = [
-  { name: 'heaterPowerW', label: 'Power', kind: plainQuantity('W'), hint: 'Of all elements together.' },
+  { name: 'heaterPowerW', label: 'Power', kind: plainQuantity('W') },
   {
     name: 'heaterEfficiency',
     label: 'Share that reaches the water',

@@ -47,10 +47,13 @@ export function EquipmentSection() {
         </EmptyState>
       ) : null}
       <ul>
-        {(equipment.data ?? []).map((item) => (
-          <li key={item.id} className="flex flex-wrap items-center gap-x-8 gap-y-1 border-b border-hair py-3">
-            <span className="w-20 text-body text-soft">{kindWords[item.kind].toLowerCase()}</span>
-            <div className="min-w-60 flex-1">
+        {(equipment.data ?? []).toSorted(byKind).map((item) => (
+          <li
+            key={item.id}
+            className="grid grid-cols-[1fr_auto] items-center gap-x-6 border-b border-hair py-3 sm:grid-cols-[5rem_1fr_auto]"
+          >
+            <span className="col-span-2 text-body text-soft sm:col-span-1">{kindWords[item.kind].toLowerCase()}</span>
+            <div className="min-w-0">
               <p className="text-lead font-medium">{item.name}</p>
               <p className="text-body tabular-nums text-soft">{factWords(item, units)}</p>
               {learnedWords(item) ? <p className="text-body tabular-nums text-soft">{learnedWords(item)}</p> : null}
@@ -74,6 +77,13 @@ export function EquipmentSection() {
       {open ? <EquipmentDialog item={open === 'new' ? null : open} onClose={() => setOpen(null)} /> : null}
     </section>
   );
+}
+
+const kinds = Object.keys(kindWords);
+
+/** The order in which the day meets them; within a kind by name, as the hub has them. */
+function byKind(a: Equipment, b: Equipment): number {
+  return kinds.indexOf(a.kind) - kinds.indexOf(b.kind);
 }
 
 function useRemove() {

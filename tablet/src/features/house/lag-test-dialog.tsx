@@ -17,8 +17,8 @@ import { useSaveProbe } from './use-save-probe.ts';
 type Way = 'into-warm' | 'into-ice';
 
 const ways: { value: Way; label: string }[] = [
-  { value: 'into-warm', label: 'Ice water to warm' },
-  { value: 'into-ice', label: 'Warm to ice water' },
+  { value: 'into-warm', label: 'Ice to warm' },
+  { value: 'into-ice', label: 'Warm to ice' },
 ];
 
 function refusalWords(reason: LagRefusal, unit: UnitPreferences['temperature']): string {
@@ -70,8 +70,7 @@ export function LagTestDialog({ probe, onClose }: { probe: Probe; onClose: () =>
     >
       <div className="grid gap-6">
         <p className="max-w-prose text-soft">
-          Every probe shows the past. Moved from one water into another, its curve tells by how much, and the run sheet
-          takes that out of the large figure.
+          Every probe shows the past. Moved from one water into another, its curve tells by how much.
         </p>
         {plungedAtMs === null ? (
           <>
@@ -89,7 +88,7 @@ export function LagTestDialog({ probe, onClose }: { probe: Probe; onClose: () =>
           </Banner>
         ) : null}
         <TestSteps>
-          <TestStep number={1} state={plungedAtMs === null ? 'now' : 'done'}>
+          <TestStep number={1} state={plungedAtMs === null && !live.steady.isSteady ? 'now' : 'done'}>
             Stand the probe in {first}, and stir until it says steady.
           </TestStep>
           <TestStep number={2} state={plungedAtMs === null ? (live.steady.isSteady ? 'now' : 'later') : 'done'}>

@@ -5,6 +5,7 @@ import { useUnits } from '#lib/units.ts';
 import type { ProbeLive } from './probe-readings.ts';
 
 const DRAWN_MS = 90_000;
+const LEAST_SPAN_K = 2;
 
 /** What the probe shows now, large, with the last minute and a half as a line. */
 export function ProbeLiveView({ live, fromMs }: { live: ProbeLive; fromMs?: number | undefined }) {
@@ -16,12 +17,12 @@ export function ProbeLiveView({ live, fromMs }: { live: ProbeLive; fromMs?: numb
     atMs >= since && tempC !== null ? [{ x: atMs, y: tempC }] : [],
   );
   return (
-    <div className="grid items-center gap-x-8 gap-y-3 bg-sunken px-5 py-5 sm:grid-cols-[auto_1fr]">
+    <div className="grid items-center gap-x-8 gap-y-3 bg-sunken px-5 py-4 sm:grid-cols-[auto_1fr]">
       <div className="min-w-40">
         <p className="text-note text-soft">it shows</p>
-        <p className="text-figure whitespace-nowrap tabular-nums">
+        <p className="text-display whitespace-nowrap tabular-nums">
           {formatTemp(shownC, { unit, digits: 2, showUnit: false })}
-          <span className="text-[0.45em] text-soft"> °{unit}</span>
+          <span className="text-[0.6em] text-soft"> °{unit}</span>
         </p>
         <p className="mt-2 text-body" role="status">
           {isSilent || shownC === null ? (
@@ -37,7 +38,9 @@ export function ProbeLiveView({ live, fromMs }: { live: ProbeLive; fromMs?: numb
           )}
         </p>
       </div>
-      {points.length > 2 ? <LineSketch points={points} hasEnd className="mr-3 h-24 min-w-0 sm:h-32" /> : null}
+      {points.length > 2 ? (
+        <LineSketch points={points} leastSpan={LEAST_SPAN_K} hasEnd className="mr-3 h-20 min-w-0 sm:h-24" />
+      ) : null}
       {isSilent ? (
         <p className="text-body text-soft sm:col-span-2">
           Switch the probe on and see that it reaches the hub: it needs its token and this network. Its readings appear

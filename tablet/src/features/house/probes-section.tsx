@@ -3,7 +3,13 @@ import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { probeWithTokenSchema, type Probe, type ProbeWithToken } from '@steepfall/shared/contracts';
 import { correctedTempC } from '@steepfall/shared/figures';
 import { calibrationOf } from '@steepfall/shared/readings';
-import { kelvinToFahrenheitDegrees, MINUS, type UnitPreferences } from '@steepfall/shared/units';
+import {
+  formatTemp,
+  kelvinToFahrenheitDegrees,
+  MINUS,
+  NO_BREAK_SPACE,
+  type UnitPreferences,
+} from '@steepfall/shared/units';
 import { format } from 'date-fns';
 import { Banner } from '#components/banner.tsx';
 import { Button } from '#components/button.tsx';
@@ -64,36 +70,43 @@ export function ProbesSection() {
       ) : null}
       <ul>
         {(probes.data ?? []).map((probe) => (
-          <li key={probe.id} className="flex flex-wrap items-center gap-x-8 gap-y-1 border-b border-hair py-3">
-            <div className="min-w-60 flex-1">
+          <li
+            key={probe.id}
+            className="grid grid-cols-[1fr_auto] items-center gap-x-6 border-b border-hair py-3 xl:grid-cols-[1fr_auto_auto]"
+          >
+            <div className="min-w-0">
               <p className="text-lead font-medium">{probe.name}</p>
               <p className="text-body tabular-nums text-soft">{probeWords(probe, units)}</p>
               <p className="text-body tabular-nums text-soft">{calibrationWords(probe, units.temperature)}</p>
             </div>
-            <ProbeState probe={probe} />
+            <div className="col-start-1 pt-1 xl:col-start-2 xl:pt-0">
+              <ProbeState probe={probe} />
+            </div>
             {mayManage ? (
-              <Menu
-                label={
-                  <>
-                    Change<span className="sr-only"> {probe.name}</span>
-                  </>
-                }
-                choices={[
-                  { label: 'Edit', onChoose: () => setOpened({ dialog: 'edit', probe }) },
-                  { label: 'Test the lag', onChoose: () => setOpened({ dialog: 'lag', probe }) },
-                  { label: 'Calibrate', onChoose: () => setOpened({ dialog: 'calibration', probe }) },
-                  ...(probe.calibration
-                    ? [{ label: 'Forget the calibration', onChoose: () => clear.mutate(probe) }]
-                    : []),
-                  { label: 'Make a new token', onChoose: () => setAsked({ act: 'rotate', probe }) },
-                  {
-                    label: 'Take the token away',
-                    isDanger: true,
-                    isDisabled: probe.isRevoked,
-                    onChoose: () => setAsked({ act: 'revoke', probe }),
-                  },
-                ]}
-              />
+              <div className="col-start-2 row-start-1 row-span-2 xl:col-start-3 xl:row-span-1">
+                <Menu
+                  label={
+                    <>
+                      Change<span className="sr-only"> {probe.name}</span>
+                    </>
+                  }
+                  choices={[
+                    { label: 'Edit', onChoose: () => setOpened({ dialog: 'edit', probe }) },
+                    { label: 'Test the lag', onChoose: () => setOpened({ dialog: 'lag', probe }) },
+                    { label: 'Calibrate', onChoose: () => setOpened({ dialog: 'calibration', probe }) },
+                    ...(probe.calibration
+                      ? [{ label: 'Forget the calibration', onChoose: () => clear.mutate(probe) }]
+                      : []),
+                    { label: 'Make a new token', onChoose: () => setAsked({ act: 'rotate', probe }) },
+                    {
+                      label: 'Take the token away',
+                      isDanger: true,
+                      isDisabled: probe.isRevoked,
+                      onChoose: () => setAsked({ act: 'revoke', probe }),
+                    },
+                  ]}
+                />
+              </div>
             ) : null}
           </li>
         ))}
@@ -146,7 +159,7 @@ function useClearCalibration() {
 
 function probeWords({ lagS, samplePeriodS, resolutionC }: Probe, units: UnitPreferences): string {
   const step = quantityOf('kelvin', units);
-  return `lag ${lagS} s · a reading every ${samplePeriodS} s · steps of ${quantityText(resolutionC, step)} ${step.symbol}`;
+  return `lag ${lagS} s · a reading every ${samplePeriodS} s · steps of ${quantityText(resolutionC, step)}${NO_BREAK_SPACE}${step.symbol}`;
 }
 
 const LOOKED_AT_C = 80;
@@ -157,8 +170,8 @@ function calibrationWords({ calibration, calibratedAtMs }: Probe, unit: UnitPref
   if (verdict?.kind !== 'accepted' || calibratedAtMs === null) return 'not calibrated';
   const offK = correctedTempC(LOOKED_AT_C, verdict.correction) - LOOKED_AT_C;
   const off = (unit === 'F' ? kelvinToFahrenheitDegrees(offK) : offK).toFixed(1);
-  const at = unit === 'F' ? '176 °F' : '80 °C';
-  return `calibrated ${format(calibratedAtMs, 'd MMM yyyy')} · ${Number(off) < 0 ? off.replace('-', MINUS) : `+${off}`} °${unit} at ${at}`;
+  const at = formatTemp(LOOKED_AT_C, { unit, digits: 0 });
+  return `calibrated ${format(calibratedAtMs, 'd MMM yyyy')} · ${Number(off) < 0 ? off.replace('-', MINUS) : `+${off}`}${NO_BREAK_SPACE}°${unit} at ${at}`;
 }
 
 function ProbeState({ probe: { isRevoked, lastReadingAtMs } }: { probe: Probe }) {
