@@ -12,16 +12,25 @@ export function drinkPh(drink: DrinkAcidity): PhResult {
   return solvePh(drinkSolution(drink));
 }
 
+/** The base of the leaf at the ends of what is believed, meq/L. */
+export interface LeafBaseEnds {
+  lowMeqPerL: number;
+  highMeqPerL: number;
+}
+
 /**
- * The same with the leaf's base at the low, middle and high end of what is believed (0.6, 1.0, 1.7 times). With a lot
- * multiplier from a measured pH, put it into `leafBaseMeqPerL` and take plus or minus 0.1 pH.
+ * The same with the leaf's base at the low, middle and high end of what is believed: 0.6 to 1.7 times, unless `ends` are told.
+ * With a lot multiplier from a measured pH, put it into `leafBaseMeqPerL` and take plus or minus 0.1 pH.
  *
  * @throws RangeError as above.
  */
-export function drinkPhBand(drink: DrinkAcidity): { low: number; value: number; high: number } {
-  const at = (factor: number) => drinkPh({ ...drink, leafBaseMeqPerL: factor * drink.leafBaseMeqPerL }).ph;
-  const value = at(leafBaseBand.middle);
-  const ends = [at(leafBaseBand.low), at(leafBaseBand.high)];
+export function drinkPhBand(drink: DrinkAcidity, ends?: LeafBaseEnds): { low: number; value: number; high: number } {
+  const at = (leafBaseMeqPerL: number) => drinkPh({ ...drink, leafBaseMeqPerL }).ph;
+  const value = at(drink.leafBaseMeqPerL);
+  const reach = [
+    at(ends?.lowMeqPerL ?? leafBaseBand.low * drink.leafBaseMeqPerL),
+    at(ends?.highMeqPerL ?? leafBaseBand.high * drink.leafBaseMeqPerL),
+  ];
   // In alkaline water more leaf brings the pH down instead of up.
-  return { low: Math.min(value, ...ends), value, high: Math.max(value, ...ends) };
+  return { low: Math.min(value, ...reach), value, high: Math.max(value, ...reach) };
 }

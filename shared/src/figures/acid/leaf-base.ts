@@ -14,6 +14,8 @@ export const leafBaseMeqPerG = { tea: 0.22, hops: 0.64 } as const;
 
 /** Multipliers of the band: low, middle, high. */
 export const leafBaseBand = { low: 0.6, middle: 1, high: 1.7 } as const;
+/** The same for rooibos and herbs, which nobody measured: a factor of three. */
+export const herbBaseBand = { low: 1 / 3, middle: 1, high: 3 } as const;
 
 /** Set so that 4 min at 82 °C (4.28 min at 80 °C) bring out 0.85 of the base; a judgement. */
 const BASE_PER_STEEP_MIN = -Math.log(1 - 0.85) / 4.28;

@@ -48,7 +48,12 @@ describe('temperature curve', () => {
     expect(() => curveFromReadings([{ atMs: 0, tempC: Number.NaN }])).toThrow(RangeError);
   });
 
-  it('refuses holes and disorder', () => {
+  it('refuses holes and disorder, and two clocks in one', () => {
+    const clocks = [
+      { atMs: 0, tempC: 60 },
+      { atMs: 1.8e12, tempC: 20 },
+    ];
+    expect(() => checkedCurve(clocks)).toThrow(/by one clock/);
     expect(checkedCurve(curve)).toBe(curve);
     expect(() => checkedCurve([{ atMs: 0, tempC: Number.NaN }])).toThrow(RangeError);
     expect(() => checkedCurve([{ atMs: 9, tempC: 1 }, ...curve])).toThrow(/Sort its points/);

@@ -9,7 +9,10 @@ export interface CurvePoint {
 /** Points in order of time; between two points the temperature is a straight line. */
 export type TemperatureCurve = readonly CurvePoint[];
 
-/** @throws RangeError when a point is not finite, or an earlier one comes after a later one. */
+/** A clock that was set in between, or two clocks in one curve: no drink takes so long, and sums over it would never end. */
+const LONGEST_MS = 366 * 86_400_000;
+
+/** @throws RangeError when a point is not finite, an earlier one comes after a later one, or it takes more than a year. */
 export function checkedCurve(curve: TemperatureCurve): TemperatureCurve {
   let last = -Infinity;
   for (const { atMs, tempC } of curve) {
@@ -18,6 +21,10 @@ export function checkedCurve(curve: TemperatureCurve): TemperatureCurve {
       throw new RangeError(`A curve must be in order of time, got ${atMs} after ${last}. Sort its points.`);
     }
     last = atMs;
+  }
+  const spanMs = last - (curve[0]?.atMs ?? last);
+  if (spanMs > LONGEST_MS) {
+    throw new RangeError(`A curve must be of a year at most, got ${spanMs} ms. Give all its times by one clock.`);
   }
   return curve;
 }

@@ -147,6 +147,24 @@ describe('the worked example, whole chain', () => {
     expect(wrong.tea.caffeineMgPerL.value).toBeGreaterThan(100);
   });
 
+  it('judgement: a measured pH leaves 0.1 of band, herbs have three times', () => {
+    const learned = drinkFigures({
+      ...plan,
+      teas: plan.teas.map((tea) => ({ ...tea, isBaseMeasured: true })),
+      hops: plan.hops.map((hops) => ({ ...hops, isBaseMeasured: true })),
+    }).acid!.phStill;
+    near(learned.value, figures.acid!.phStill.value, 1e-12);
+    near(learned.low, learned.value - 0.1, 1e-12);
+    near(learned.high, learned.value + 0.1, 1e-12);
+    const half = drinkFigures({ ...plan, teas: plan.teas.map((tea) => ({ ...tea, isBaseMeasured: true })) }).acid!
+      .phStill;
+    expect(half.high).toBeLessThan(figures.acid!.phStill.high);
+    expect(half.high).toBeGreaterThan(learned.high);
+    const herbs = drinkFigures({ ...plan, teas: plan.teas.map((tea) => ({ ...tea, kind: 'herbal' as const })) });
+    expect(herbs.acid!.phAfterTea.value).toBe(figures.acid!.phAfterTea.value);
+    expect(herbs.acid!.phAfterTea.high).toBeGreaterThan(figures.acid!.phAfterTea.high + 0.1);
+  });
+
   it('takes a night in the fridge for a cold steep, and leaf without caffeine for what it is', () => {
     const night = [
       { atMs: 0, tempC: 5 },

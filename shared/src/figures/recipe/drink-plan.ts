@@ -11,8 +11,10 @@ interface InLiquid {
   massG: number;
   inAtMs: number;
   outAtMs: number;
-  /** Learned base of this lot over the default; 1 unless a measured pH told better (lotMultiplier). */
+  /** Base of this lot over the default; 1 unless a measured pH told better (lotMultiplier). */
   baseMultiplier?: number;
+  /** True when that multiplier comes from a measured pH: the band of the pH then shrinks to 0.1 either way. */
+  isBaseMeasured?: boolean;
 }
 
 export interface TeaAddition extends InLiquid {
