@@ -4,15 +4,16 @@ import {
   acidMolPerL,
   acidFigures,
   band,
-  leafBaseBand,
   lotMultiplier,
   saltedWater,
   type AcidKind,
+  type Band,
   type DrinkAcidity,
   type DrinkPlan,
 } from '../figures/index.js';
 import type { RecipeDocument } from '../sheets/index.js';
 import { drinkPlanOf } from './drink-plan.js';
+import { leafBasesOf } from './leaf-bases.js';
 import { plannedDay } from './planned-day.js';
 import type { AcidAdvice, DeskKit } from './types.js';
 
@@ -71,10 +72,31 @@ function orNull<Value>(work: () => Value): Value | null {
   }
 }
 
-function basesOf(document: RecipeDocument, kit: DeskKit): { plan: DrinkPlan; baseMeqPerL: number } {
+function basesOf(document: RecipeDocument, kit: DeskKit): { plan: DrinkPlan; base: Band } {
   const plan = drinkPlanOf(document, kit, plannedDay(document, kit));
-  const { teaBaseMeqPerL, hopBaseMeqPerL } = acidFigures(plan, saltedWater(plan.waterL, plan.salts, plan.source));
-  return { plan, baseMeqPerL: teaBaseMeqPerL + hopBaseMeqPerL };
+  const acid = acidFigures(plan, saltedWater(plan.waterL, plan.salts, plan.source));
+  return { plan, base: leafBasesOf(document, acid).all };
+}
+
+/** Grams of an acid for a pH, over what is believed of the leaf's base. */
+export function gramsBand(
+  plan: DrinkPlan,
+  line: AcidLine,
+  base: Band,
+  ph: number,
+): { kind: 'dose'; massG: Band } | { kind: 'none-needed'; ph: number } | { kind: 'never' } {
+  const at = (meqPerL: number) => gramsForPh(plan, line, meqPerL, ph);
+  const middle = at(base.value);
+  if (middle.kind !== 'dose') return middle;
+  const low = at(base.low);
+  const high = at(base.high);
+  const massG = band(
+    low.kind === 'dose' ? Math.min(low.massG, middle.massG) : 0,
+    middle.massG,
+    high.kind === 'dose' ? Math.max(high.massG, middle.massG) : middle.massG,
+    base.grade,
+  );
+  return { kind: 'dose', massG };
 }
 
 /**
@@ -82,7 +104,7 @@ function basesOf(document: RecipeDocument, kit: DeskKit): { plan: DrinkPlan; bas
  * can be worked out. Other acids stay as they are.
  *
  * @param document a valid recipe document.
- * @see acid-dose.ts; the band is that of the leaf's base, 0.6 to 1.7 times.
+ * @see acid-dose.ts; the band is that of the leaf's base, 0.6 to 1.7 times unless it was learned.
  */
 export function acidAdvice(document: RecipeDocument, kit: DeskKit): AcidAdvice | null {
   const line = leadingAcid(document);
@@ -90,21 +112,9 @@ export function acidAdvice(document: RecipeDocument, kit: DeskKit): AcidAdvice |
 }
 
 function adviceOn(document: RecipeDocument, kit: DeskKit, line: AcidLine): AcidAdvice {
-  const { plan, baseMeqPerL } = basesOf(document, kit);
+  const { plan, base } = basesOf(document, kit);
   const ph = wantedPh(document);
-  const at = (factor: number) => gramsForPh(plan, line, baseMeqPerL * factor, ph);
-  const about = { additionId: line.id, name: line.name, wantedPh: ph };
-  const middle = at(leafBaseBand.middle);
-  if (middle.kind !== 'dose') return { ...about, ...middle };
-  const low = at(leafBaseBand.low);
-  const high = at(leafBaseBand.high);
-  const massG = band(
-    low.kind === 'dose' ? Math.min(low.massG, middle.massG) : 0,
-    middle.massG,
-    high.kind === 'dose' ? Math.max(high.massG, middle.massG) : middle.massG,
-    'judged',
-  );
-  return { ...about, kind: 'dose', massG };
+  return { additionId: line.id, name: line.name, wantedPh: ph, ...gramsBand(plan, line, base, ph) };
 }
 
 /**
@@ -117,7 +127,7 @@ function adviceOn(document: RecipeDocument, kit: DeskKit, line: AcidLine): AcidA
 export function baseRatioFromPh(document: RecipeDocument, kit: DeskKit, measuredPh: number): number | null {
   const usualLeaf = { ...document, assume: { ...document.assume, teaBaseRatio: 1, hopBaseRatio: 1 } };
   return orNull(() => {
-    const { plan, baseMeqPerL } = basesOf(usualLeaf, kit);
-    return baseMeqPerL > 0 ? lotMultiplier(acidityOf(plan, baseMeqPerL), measuredPh) : null;
+    const { plan, base } = basesOf(usualLeaf, kit);
+    return base.value > 0 ? lotMultiplier(acidityOf(plan, base.value), measuredPh) : null;
   });
 }

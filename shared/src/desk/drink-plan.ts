@@ -7,9 +7,8 @@ import {
   type TeaAddition,
 } from '../figures/index.js';
 import type { RecipeDocument } from '../sheets/index.js';
-import { altitudeOf } from './planned-day.js';
 import type { DeskKit, PlannedDay } from './types.js';
-import { usual } from './usual-kit.js';
+import { altitudeOf, usual } from './usual-kit.js';
 
 /** When an addition is in the liquid, ms from the first flame; an end that comes before its start is no time at all. */
 export function contactMs(day: PlannedDay, additionId: string): { inAtMs: number; outAtMs: number } {
@@ -19,6 +18,11 @@ export function contactMs(day: PlannedDay, additionId: string): { inAtMs: number
   return { inAtMs, outAtMs: Math.max(inAtMs, atMs('out') ?? inAtMs) };
 }
 
+/** A ratio in the recipe comes from a measured pH. */
+function baseOf(ratio: number | undefined): Pick<TeaAddition, 'baseMultiplier' | 'isBaseMeasured'> {
+  return ratio === undefined ? {} : { baseMultiplier: ratio, isBaseMeasured: true };
+}
+
 /** What the figures need to know of a recipe on its planned day. */
 export function drinkPlanOf(document: RecipeDocument, kit: DeskKit, day: PlannedDay): DrinkPlan {
   const { additions, assume, waterL, waters, gas } = document;
@@ -26,13 +30,13 @@ export function drinkPlanOf(document: RecipeDocument, kit: DeskKit, day: Planned
     if (one.kind !== 'tea') return [];
     const { massG, tea, form, caffeineMgPerG } = one;
     const told = caffeineMgPerG === undefined ? {} : { caffeineMgPerG };
-    return [{ massG, kind: tea, form, ...told, baseMultiplier: assume.teaBaseRatio ?? 1, ...contactMs(day, one.id) }];
+    return [{ massG, kind: tea, form, ...told, ...baseOf(assume.teaBaseRatio), ...contactMs(day, one.id) }];
   });
   const hops = additions.flatMap((one): HopAddition[] => {
     if (one.kind !== 'hops') return [];
     const { massG, alphaPercent, storageIndex } = one;
     const told = storageIndex === undefined ? {} : { storageIndex };
-    return [{ massG, alphaPercent, ...told, baseMultiplier: assume.hopBaseRatio ?? 1, ...contactMs(day, one.id) }];
+    return [{ massG, alphaPercent, ...told, ...baseOf(assume.hopBaseRatio), ...contactMs(day, one.id) }];
   });
   const acids = additions.flatMap((one) => (one.kind === 'acid' ? [one] : []));
   const firstHopsMs = Math.min(...hops.map(({ inAtMs }) => inAtMs));

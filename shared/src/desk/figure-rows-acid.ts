@@ -10,11 +10,11 @@ import {
   sure,
   withinFactor,
   type AcidFigures,
-  type Band,
 } from '../figures/index.js';
 import { formatMass, formatTemp } from '../units/index.js';
-import { acidityOf, gramsForPh, leadingAcid } from './acid-advice.js';
+import { acidityOf, gramsBand, gramsForPh, leadingAcid } from './acid-advice.js';
 import { hopsOf, row, targetOf, within, type RowContext } from './figure-row.js';
+import { leafBasesOf } from './leaf-bases.js';
 import { coldAcid, phBandOf, plainPhBand, treatedWaterPh } from './still-ph.js';
 import type { FigureRow } from './types.js';
 
@@ -34,6 +34,7 @@ export function acidRows(context: RowContext): FigureRow[] {
   const { waterPh, drinkPh: wanted } = document.targets;
   const still = phBandOf(document, acid.phStill);
   const treated = treatedWaterPh(context, acid);
+  const bases = leafBasesOf(document, acid);
   const temp = (tempC: number) => formatTemp(tempC, { unit: units.temperature, digits: 0 });
   const volumes = document.gas.volumes;
   return [
@@ -55,14 +56,14 @@ export function acidRows(context: RowContext): FigureRow[] {
     }),
     ...complexedRows(context, acid),
     ...amountRows(context),
-    row({ id: 'acid.tea-base', label: 'Base from the tea', quantity: 'meqPerL', band: baseBand(acid.teaBaseMeqPerL) }),
+    row({ id: 'acid.tea-base', label: 'Base from the tea', quantity: 'meqPerL', band: bases.tea }),
     row({
       id: 'acid.ph-after-tea',
       label: 'pH after the tea',
       quantity: 'pH',
       band: phBandOf(document, acid.phAfterTea),
     }),
-    row({ id: 'acid.hop-base', label: 'Base from the hops', quantity: 'meqPerL', band: baseBand(acid.hopBaseMeqPerL) }),
+    row({ id: 'acid.hop-base', label: 'Base from the hops', quantity: 'meqPerL', band: bases.hops }),
     row({
       id: 'acid.ph-carbonated',
       label: `pH at ${volumes} volumes, ${temp(25)}`,
@@ -119,10 +120,6 @@ function complexedRows({ document, plan }: RowContext, acid: AcidFigures): Figur
   ];
 }
 
-function baseBand(meqPerL: number): Band {
-  return band(leafBaseBand.low * meqPerL, meqPerL, leafBaseBand.high * meqPerL, 'judged');
-}
-
 function amountRows({ plan, figures }: RowContext): FigureRow[] {
   const gPerL = plan.acids.reduce((sum, { massG }) => sum + massG, 0) / plan.waterL;
   if (gPerL === 0) return [];
@@ -157,25 +154,20 @@ function bufferMeqPerL({ plan }: RowContext, acid: AcidFigures): number {
 function doseRows({ document, plan, units }: RowContext, acid: AcidFigures): FigureRow[] {
   const line = leadingAcid(document);
   if (!line) return [];
-  const base = acid.teaBaseMeqPerL + acid.hopBaseMeqPerL;
-  const isLeafy = base > 0;
+  const base = leafBasesOf(document, acid).all;
   return ASKED_PHS.flatMap((ph) => {
-    const massG = (factor: number) => {
-      const dose = gramsForPh(plan, line, base * factor, ph);
-      return dose.kind === 'dose' ? dose.massG : dose.kind === 'none-needed' ? 0 : null;
-    };
-    const value = massG(leafBaseBand.middle);
-    if (value === null) return [];
-    const high = massG(leafBaseBand.high);
-    const bare = massG(0);
+    const dose = gramsBand(plan, line, base, ph);
+    if (dose.kind === 'never') return [];
+    const bare = base.value > 0 ? gramsForPh(plan, line, 0, ph) : null;
+    const bareG = bare?.kind === 'dose' ? bare.massG : bare?.kind === 'none-needed' ? 0 : null;
     return [
       row({
         id: 'acid.for-ph',
         of: ph.toFixed(1),
         label: `${acidWord(line.acid)} for pH ${ph.toFixed(1)}`,
         quantity: 'massG',
-        band: band(Math.min(value, massG(leafBaseBand.low) ?? value), value, Math.max(value, high ?? value), 'judged'),
-        word: isLeafy && bare !== null ? `${formatMass(bare, { unit: units.mass })} without leaf and hops` : null,
+        band: dose.kind === 'dose' ? dose.massG : sure(0),
+        word: bareG === null ? null : `${formatMass(bareG, { unit: units.mass })} without leaf and hops`,
       }),
     ];
   });

@@ -2,8 +2,9 @@ import { boilingPointAtAltitudeC, plusMinus, sure, withinFactor } from '../figur
 import { formatTemp } from '../units/index.js';
 import { contactMs } from './drink-plan.js';
 import { row, type RowContext } from './figure-row.js';
-import { altitudeOf, BOIL_SLACK_K, isChilled } from './planned-day.js';
+import { BOIL_SLACK_K, isChilled } from './planned-day.js';
 import type { FigureRow } from './types.js';
+import { altitudeOf } from './usual-kit.js';
 
 /** A planned time before the kettle and the chiller were learned; a judgement. */
 const TIME_FACTOR = 1.3;

@@ -74,7 +74,7 @@ function leafRows({ plan, figures, day }: RowContext, leaf: Leaf, tea: TeaAdditi
       quantity: 'steepMin',
       band: plusMinus(steep.steepDoseMin, DOSE_SHARE * steep.steepDoseMin, 'measured'),
       isLead: true,
-      word: verdictWord(leaf, steep.verdict),
+      word: verdictWord(leaf, steep.verdict, steep.linesHold),
     }),
     row({ id: 'tea.dose', of, label: `Dose, ${leaf.name}`, quantity: 'gPerL', band: sure(tea.massG / plan.waterL) }),
     row({
@@ -107,7 +107,7 @@ function leafRows({ plan, figures, day }: RowContext, leaf: Leaf, tea: TeaAdditi
             label: `Steep if it stays in to the keg, ${leaf.name}`,
             quantity: 'steepMin',
             band: plusMinus(leftInMin, DOSE_SHARE * leftInMin, 'measured'),
-            word: verdictWord(leaf, steepVerdict(leaf.tea, leftInMin)),
+            word: verdictWord(leaf, steepVerdict(leaf.tea, leftInMin), steep.linesHold),
           }),
           row({
             id: 'tea.left-in-polyphenols',
@@ -120,7 +120,8 @@ function leafRows({ plan, figures, day }: RowContext, leaf: Leaf, tea: TeaAdditi
   ];
 }
 
-function verdictWord({ tea }: Leaf, verdict: SteepVerdict): string {
+function verdictWord({ tea }: Leaf, verdict: SteepVerdict, linesHold: boolean): string | null {
+  if (!linesHold) return null;
   return tea === 'herbal' ? 'herbs have no window' : words[verdict];
 }
 

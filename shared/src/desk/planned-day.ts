@@ -26,7 +26,7 @@ import {
 } from '../sheets/index.js';
 import { DayLine } from './day-line.js';
 import type { DayMark, DeskKit, PlannedDay } from './types.js';
-import { dayKit, usual, type DayKit } from './usual-kit.js';
+import { altitudeOf, dayKit, usual, type DayKit } from './usual-kit.js';
 
 const metalOf: Record<NonNullable<KettleFacts['metal']> | ChillerFacts['metal'], HeatedMaterial> = {
   stainless: 'stainlessSteel',
@@ -46,15 +46,9 @@ const OPEN_STEPS_C = [75, 60] as const;
 const LOSS_FROM_C = 7;
 const LOSS_TO_C = 95;
 const HUMIDITY = 0.5;
+const LEAST_AIR_KPA = 50;
 /** More than this share of the water cannot be boiled off and still leave a drink to compute. */
 const MOST_EVAPORATED = 0.9;
-
-/** Highest altitude that the sums hold for, and lowest, m. */
-export const altitudeRangeM = { from: -430, to: 6000 } as const;
-
-export function altitudeOf({ altitudeM }: Pick<DeskKit, 'altitudeM'>): number {
-  return Math.min(altitudeRangeM.to, Math.max(altitudeRangeM.from, altitudeM));
-}
 
 /** Everything that the stages of one day share. */
 interface Pot {
@@ -337,7 +331,14 @@ function finished(pot: Pot, document: RecipeDocument): PlannedDay {
   const openM2 = (Math.PI * kit.kettle.diameterM ** 2) / 4;
   const evaporated = line.open.reduce(
     (sum, { fromMs, toMs }) =>
-      sum + evaporatedL(curveBetween(line.curve, fromMs, toMs), { openM2, roomC: kit.roomC, humidityRatio: HUMIDITY }),
+      sum +
+      evaporatedL(curveBetween(line.curve, fromMs, toMs), {
+        openM2,
+        roomC: kit.roomC,
+        humidityRatio: HUMIDITY,
+        // The formula ends there.
+        stationKPa: Math.max(LEAST_AIR_KPA, kit.stationKPa),
+      }),
     0,
   );
   return {

@@ -3,24 +3,14 @@ import type { RecipeDocument } from '../sheets/index.js';
 import { acidityOf } from './acid-advice.js';
 import { graded, hopsOf, teasOf, type RowContext } from './figure-row.js';
 
-/** With a base ratio from a measured pH the next one is good to about this; a judgement. */
-const LEARNED_PH = 0.1;
 /** What constants and activities leave open. */
 const SOLVER_PH = 0.03;
 
-/** Whether the base of all leaf and hops in it was learned from a measured pH. */
-export function isBaseLearned(document: RecipeDocument): boolean {
-  const { teaBaseRatio, hopBaseRatio } = document.assume;
-  const isTeaKnown = teasOf(document).length === 0 || teaBaseRatio !== undefined;
-  const areHopsKnown = hopsOf(document).length === 0 || hopBaseRatio !== undefined;
-  return isTeaKnown && areHopsKnown;
-}
-
-/** A pH with leaf in it: the band of the leaf's base, or a tenth either way once that was measured. */
+/** A pH with leaf in it carries the band of the leaf's base; without leaf that of the solver alone. */
 export function phBandOf(document: RecipeDocument, ph: AcidFigures['phStill']): Band {
   if (teasOf(document).length + hopsOf(document).length === 0) return plainPhBand(ph.value);
-  if (isBaseLearned(document)) return band(ph.value - LEARNED_PH, ph.value, ph.value + LEARNED_PH, 'measured');
-  return graded(ph, 'judged');
+  const { teaBaseRatio, hopBaseRatio } = document.assume;
+  return graded(ph, teaBaseRatio !== undefined && hopBaseRatio !== undefined ? 'measured' : 'judged');
 }
 
 export function plainPhBand(ph: number): Band {

@@ -1,4 +1,6 @@
+import { atmosphericPressureKPa } from '../figures/index.js';
 import type { ChillerFacts, KettleFacts, RecipeDocument } from '../sheets/index.js';
+import type { DeskKit } from './types.js';
 
 /** What the desk takes when nobody said better. Common practice, no source, unless a line says where it is from. */
 export const usual = {
@@ -34,19 +36,25 @@ function usualKettle(waterL: number): KettleFacts {
   };
 }
 
+/** Highest altitude that the sums hold for, and lowest, m. */
+const altitudeRangeM = { from: -430, to: 6000 } as const;
+
+export function altitudeOf({ altitudeM }: Pick<DeskKit, 'altitudeM'>): number {
+  return Math.min(altitudeRangeM.to, Math.max(altitudeRangeM.from, altitudeM));
+}
+
 export interface DayKit {
   kettle: KettleFacts;
   chiller: ChillerFacts | null;
   isLidOn: boolean;
   fillC: number;
   roomC: number;
+  /** Air pressure here. */
+  stationKPa: number;
 }
 
 /** The kit of the day with what is usual where nothing is known. */
-export function dayKit(
-  { waterL, assume }: RecipeDocument,
-  kit: { kettle: KettleFacts | null; chiller: ChillerFacts | null },
-): DayKit {
+export function dayKit({ waterL, assume }: RecipeDocument, kit: DeskKit): DayKit {
   const kettle = kit.kettle ?? usualKettle(waterL);
   return {
     kettle,
@@ -54,5 +62,6 @@ export function dayKit(
     isLidOn: assume.lidOn ?? kettle.hasLid ?? true,
     fillC: assume.fillC ?? usual.fillC,
     roomC: assume.roomC ?? usual.roomC,
+    stationKPa: atmosphericPressureKPa(altitudeOf(kit)),
   };
 }

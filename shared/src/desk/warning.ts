@@ -35,7 +35,9 @@ export function warning(
   path: string | null,
   words: Pick<DeskWarning, 'what' | 'why' | 'act'>,
 ): DeskWarning {
-  return { id, grade, path, ...words };
+  // A sentence may begin with a name as it was typed.
+  const what = words.what.charAt(0).toUpperCase() + words.what.slice(1);
+  return { id, grade, path, ...words, what };
 }
 
 /** Path of a member of an addition, as the form names it. */

@@ -39,12 +39,12 @@ function doseWords(context: RowContext): string {
   const base = figures.acid.teaBaseMeqPerL + figures.acid.hopBaseMeqPerL;
   const ph = wantedPh(document);
   const dose = gramsForPh(plan, line, base, ph);
-  const { mass } = wordsIn(context.units);
+  const words = wordsIn(context.units);
   if (dose.kind === 'dose')
-    return `About ${mass(dose.massG)} of ${line.name} in all would bring it to pH ${ph.toFixed(1)}.`;
+    return `About ${words.mass(dose.massG)} of ${line.name} in all would bring it to pH ${words.ph(ph)}.`;
   return dose.kind === 'none-needed'
     ? `Without any ${line.name} it would be at pH ${dose.ph.toFixed(1)}.`
-    : `${line.name} cannot bring it to pH ${ph.toFixed(1)}: take a stronger acid.`;
+    : `${line.name} cannot bring it to pH ${words.ph(ph)}: take a stronger acid.`;
 }
 
 function clampPh(ph: number): number {
@@ -68,7 +68,7 @@ function lineWarnings(context: RowContext, still: Band): DeskWarning[] {
   if (value === 'assessment') {
     return [
       warning('ph-assessment', 'danger', path, {
-        what: `The planned pH is ${ph(still.value)}, still and degassed: from 4.2 to 4.6.`,
+        what: `The planned pH is ${ph(still.value)}, still and degassed: between 4.2 and 4.6.`,
         why: 'This is the band where the US Food Code asks for a product assessment when a drink is not sealed after heating.',
         act: `${doseWords(context)} As it is: treat it as needing time and temperature control. ${CODES_FIRST}`,
       }),
@@ -131,7 +131,7 @@ function copperWarnings({ kit }: RowContext, lowestPh: number): DeskWarning[] {
     warning('copper', 'danger', null, {
       what: `The ${parts.join(' and the ')} ${parts.length > 1 ? 'are' : 'is'} of copper, and the liquid is below pH 6.`,
       why: 'Acid takes copper into the drink. The US Food Code bars copper from food below pH 6; its exception names beer, which this is not. Copper also eats hop aroma.',
-      act: 'Use stainless steel, or put the acid in after the copper is out.',
+      act: 'Use stainless steel.',
     }),
   ];
 }

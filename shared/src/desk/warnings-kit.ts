@@ -12,9 +12,9 @@ import {
 import { isColdSteep, type RecipeDocument } from '../sheets/index.js';
 import { YIELD_SHARE } from './figure-rows.js';
 import type { RowContext } from './figure-row.js';
-import { altitudeOf, isChilled } from './planned-day.js';
+import { chillOfDay, isChilled } from './planned-day.js';
 import { phBandOf } from './still-ph.js';
-import { usual } from './usual-kit.js';
+import { altitudeOf, dayKit, usual } from './usual-kit.js';
 import type { DeskWarning, PlannedDay } from './types.js';
 import { CODES_FIRST, warning, wordsIn } from './warning.js';
 
@@ -40,24 +40,16 @@ export function kitWarnings(context: RowContext): DeskWarning[] {
   ];
 }
 
-function neverWarnings({ document, day, kit, units }: RowContext): DeskWarning[] {
+function neverWarnings(context: RowContext): DeskWarning[] {
+  return [...notHotWarnings(context), ...notColdWarnings(context)];
+}
+
+function notHotWarnings({ day, kit, units }: RowContext): DeskWarning[] {
   const { never } = day;
-  if (!never) return [];
+  if (never?.stage !== 'heat') return [];
   const { temp } = wordsIn(units);
   const limit = temp(never.limitC);
   const wanted = temp(never.wantedC);
-  if (never.stage === 'chill') {
-    const isChiller = isChilled(document, kit);
-    return [
-      warning(isChiller ? 'coolant-too-warm' : 'room-too-warm', 'care', fallPath(document, never.wantedC), {
-        what: `The pot never falls to ${wanted}: ${isChiller ? 'its coolant' : 'the room'} leaves it at ${limit}.`,
-        why: 'A pot comes no colder than what cools it. The figures are planned until near there.',
-        act: isChiller
-          ? 'Plan a warmer temperature, colder coolant, or ice around the pot.'
-          : 'Plan a warmer temperature, or choose a chiller.',
-      }),
-    ];
-  }
   if (never.limitC === boilingPointAtAltitudeC(altitudeOf(kit))) {
     return [
       warning('boils-below-steep', 'care', 'steepC', {
@@ -74,6 +66,34 @@ function neverWarnings({ document, day, kit, units }: RowContext): DeskWarning[]
       act: 'Put the lid on, take less water, or a stronger burner.',
     }),
   ];
+}
+
+function notColdWarnings(context: RowContext): DeskWarning[] {
+  const missed = missedOnTheFall(context);
+  if (!missed) return [];
+  const { document, kit, units } = context;
+  const { temp } = wordsIn(units);
+  const isChiller = isChilled(document, kit);
+  return [
+    warning(isChiller ? 'coolant-too-warm' : 'room-too-warm', 'care', fallPath(document, missed.wantedC), {
+      what: `The pot never falls to ${temp(missed.wantedC)}: ${isChiller ? 'its coolant' : 'the room'} leaves it at ${temp(missed.limitC)}.`,
+      why: 'A pot comes no colder than what cools it. The figures are planned until near there.',
+      act: isChiller
+        ? 'Plan a warmer temperature, colder coolant, or ice around the pot.'
+        : 'Plan a warmer temperature, or choose a chiller.',
+    }),
+  ];
+}
+
+/** What the day says, or what it could not say any more because it was never hot enough either. */
+function missedOnTheFall({ document, kit, day }: RowContext): { limitC: number; wantedC: number } | null {
+  if (!day.never || isColdSteep(document)) return null;
+  if (day.never.stage === 'chill') return day.never;
+  const limitC = chillOfDay(document, kit)?.surroundC ?? dayKit(document, kit).roomC;
+  const asked = document.additions.flatMap((one) => [one.in, ...('out' in one ? [one.out] : [])]);
+  const wanted = [document.transferC, ...asked.flatMap((each) => (each.at === 'falling' ? [each.tempC] : []))];
+  const missed = wanted.filter((tempC) => tempC <= limitC);
+  return missed.length > 0 ? { limitC, wantedC: Math.max(...missed) } : null;
 }
 
 /** The field that asks for a temperature on the fall. */

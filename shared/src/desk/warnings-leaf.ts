@@ -37,7 +37,7 @@ function steepWarnings({ document, figures, day, units }: RowContext, leaf: Leaf
       }),
     ];
   }
-  if (!window || steep.verdict === 'good') return [];
+  if (!window || !steep.linesHold || steep.verdict === 'good') return [];
   const steeped = `${leaf.name} steeps for as much as ${steep.steepDoseMin.toFixed(1)} minutes at ${wordsIn(units).temp(80)}`;
   const range = `${window.from} to ${window.to}`;
   const name = (id: string) => `${id}.${leaf.id}`;

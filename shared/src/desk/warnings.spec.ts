@@ -118,6 +118,7 @@ describe('warnings', () => {
       'additions.2.out.tempC',
       { ...hops({ out: { at: 'falling', tempC: 8 } }), transferC: 6 },
     ],
+    ['coolant-too-warm', 'care', 'transferC', { ...calm, steepC: 99, transferC: 10 }, { ...kit, altitudeM: 2500 }],
     ['room-too-warm', 'care', 'transferC', { ...calm, transferC: 15 }, { ...kit, chiller: null }],
     ['no-chiller', 'care', null, { ...calm, transferC: 40 }, { ...kit, chiller: null }],
     ['kettle-too-full', 'danger', 'waterL', calm, { ...kit, kettle: { ...kettle, volumeL: 22.5 } }],

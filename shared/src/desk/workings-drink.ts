@@ -50,7 +50,7 @@ export const drinkWorkings = {
     source:
       'Windows: S. Saklar et al., J. Food Sci. Technol. 52, 6639, 2015 (green); S. Pérez-Burillo et al., Food Chem. 248, 111, 2018 (white); C. D. Fernando and P. Soysa, Nutr. J. 14, 74, 2015 (black). Oolong and all amber and red lines are a judgement.',
     band: 'About a tenth from the temperature; the lines themselves are good to 40 %.',
-    assumptions: ['Herbs and rooibos have no line.'],
+    assumptions: ['Herbs and rooibos have no line, and no line holds for a cold steep: go by taste there.'],
     defaults: curveDefaults,
   },
   'tea.dose': {
