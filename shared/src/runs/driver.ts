@@ -169,7 +169,7 @@ function tellActs(driver: RunDriver, state: RunState, nowMs: number): RunDriver 
 
 /**
  * What alerts are due for. Steps that only wait for a hand are looked through: somebody who forgot to tap "chiller on"
- * still hears of the hops.
+ * still hears of the hops. So is a timer that runs while the chiller does.
  */
 export function armedIn(state: RunState): Armed[] {
   const armed: Armed[] = state.timers
@@ -187,10 +187,19 @@ export function armedIn(state: RunState): Armed[] {
     const progress = state.steps[index];
     if (!progress || progress.status === 'done') continue;
     const found = armedBy(state, progress, state.steps[index + 1]);
-    if (found.length > 0) return [...armed, ...found];
+    armed.push(...found);
+    // The liquid does not wait for hops that stand for their time: the next level is armed beside their timer.
+    const isTimer = found.some(({ by }) => by === 'timer');
+    if (isTimer && isChilling(state)) continue;
+    if (found.length > 0) return armed;
     if (progress.step.done.by !== 'hand' && progress.step.done.by !== 'measurement') break;
   }
   return armed;
+}
+
+function isChilling({ steps }: RunState): boolean {
+  const acts = steps.filter(({ status }) => status === 'done').flatMap(({ step }) => step.acts);
+  return acts.findLast((act) => act === 'chiller-on' || act === 'chiller-off') === 'chiller-on';
 }
 
 function armedBy(state: RunState, progress: StepProgress, following: StepProgress | undefined): Armed[] {

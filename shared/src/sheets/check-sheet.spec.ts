@@ -42,7 +42,7 @@ describe(checkSheet, () => {
       }),
       { numRuns: 50 },
     );
-  });
+  }, 30_000);
 
   it('says at the step what would go wrong on the day', () => {
     expect(checkSheet(moved('tea-out', 'tea-in'))[0]).toEqual({

@@ -193,5 +193,5 @@ describe(compileSheet, () => {
       buildDocument({ additions: many.map((hops) => ({ ...hops, in: { at: 'fill' }, out: { at: 'transfer' } })) }),
       0,
     );
-  });
+  }, 30_000);
 });

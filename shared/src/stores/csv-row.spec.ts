@@ -99,7 +99,7 @@ describe(readStoresRow, () => {
         });
       }),
     );
-  });
+  }, 30_000);
 });
 
 describe(storesRowOf, () => {
