@@ -32,7 +32,7 @@ export function CostLine({ cost: { total, perL, perServing, unknown } }: { cost:
         )}
       </dl>
       {unknown.length > 0 ? (
-        <p className="text-note text-soft">Without {listWords(unknown)}: no price is known for all of it.</p>
+        <p className="text-note text-soft">Without {listWords(unknown)}: not all of it comes from a lot with a price.</p>
       ) : null}
     </div>
   );

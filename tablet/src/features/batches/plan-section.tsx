@@ -44,7 +44,11 @@ export function PlanSection({ batch }: { batch: Batch }) {
           <LevelRule
             id="sheet"
             aside={
-              mayChange && !isEditing ? <Button onClick={() => setIsEditing(true)}>Change the sheet</Button> : null
+              mayChange && !isEditing ? (
+                <Button onClick={() => setIsEditing(true)}>
+                  Change<span className="sr-only"> the run sheet</span>
+                </Button>
+              ) : null
             }
           >
             The run sheet
@@ -79,23 +83,23 @@ function CancelBatch({ batch: { id, batchNumber } }: { batch: Batch }) {
     mutationFn: () => callHub(`batches/${id}`, { method: 'DELETE' }),
     onSuccess: async () => {
       setIsAsking(false);
-      offerUndo(`Batch ${batchNumber} called off.`, () => restoreBatch(id).then(again));
+      offerUndo(`Batch ${batchNumber} cancelled.`, () => restoreBatch(id).then(again));
       await again();
     },
   });
   return (
     <div className="print:hidden">
       <Button look="danger" onClick={() => setIsAsking(true)}>
-        Call the batch off
+        Cancel the batch
       </Button>
       <Dialog
         isOpen={isAsking}
         onClose={() => setIsAsking(false)}
-        title="Call the batch off?"
+        title="Cancel the batch?"
         actions={
           <>
-            <Button look="danger" onClick={() => cancel.mutate()} isBusy={cancel.isPending} busyLabel="Calling it off">
-              Call it off
+            <Button look="danger" onClick={() => cancel.mutate()} isBusy={cancel.isPending} busyLabel="Cancelling it">
+              Cancel the batch
             </Button>
             <Button onClick={() => setIsAsking(false)}>Leave it</Button>
           </>
@@ -117,7 +121,7 @@ function CancelBatch({ batch: { id, batchNumber } }: { batch: Batch }) {
   );
 }
 
-/** A batch that was called off is not gone: it keeps its number, and can come back. */
+/** A batch that was cancelled is not gone: it keeps its number, and can come back. */
 export function CancelledBatch({ batch: { id } }: { batch: Batch }) {
   const may = useMay();
   const client = useQueryClient();
@@ -140,10 +144,10 @@ export function CancelledBatch({ batch: { id } }: { batch: Batch }) {
           ) : null
         }
       >
-        This batch was called off. What it had set aside is free again; brought back, it sets aside what is still there.
+        This batch was cancelled. What it had set aside is free again; brought back, it sets aside what is still there.
       </EmptyState>
       {restore.error ? (
-        <Banner tone="act" title="The batch stays called off">
+        <Banner tone="act" title="The batch stays cancelled">
           {failureWords(restore.error)}
         </Banner>
       ) : null}

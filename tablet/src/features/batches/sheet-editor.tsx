@@ -74,34 +74,36 @@ export function SheetEditor({ plan, onClose }: SheetEditorProps) {
       <p role="status" className="sr-only">
         {said}
       </p>
-      {isConflict ? (
-        <Conflict plan={plan} sheet={sheet} save={save} onClose={onClose} />
-      ) : save.error ? (
-        <Banner tone="act" title="The sheet was not kept">
-          {failureWords(save.error)}
-        </Banner>
-      ) : null}
-      <div className="sticky bottom-20 z-20 flex flex-wrap items-center gap-3 border-t-2 border-text bg-ground py-4 md:bottom-0">
-        <Button
-          look="primary"
-          disabled={!isChanged || problems.length > 0}
-          isBusy={save.isPending}
-          busyLabel="Keeping it"
-          onClick={() => save.mutate({ sheet, sheetVersion: plan.sheetVersion })}
-        >
-          Keep the sheet
-        </Button>
-        <Button disabled={!isChanged} onClick={() => change({ act: 'undo' })}>
-          Undo
-        </Button>
-        <Button look="quiet" onClick={onClose}>
-          {isChanged ? 'Drop the changes' : 'Close'}
-        </Button>
-        {problems.length > 0 ? (
-          <p role="status" className="min-w-48 flex-1 font-medium text-ember">
-            {problems.length === 1 ? 'One step does' : `${problems.length} steps do`} not fit yet; it says there why.
-          </p>
+      <div className="sticky bottom-[calc(4.6rem+env(safe-area-inset-bottom))] z-20 grid gap-4 border-t-2 border-text bg-ground py-4 md:bottom-0">
+        {isConflict ? (
+          <Conflict plan={plan} sheet={sheet} save={save} onClose={onClose} />
+        ) : save.error ? (
+          <Banner tone="act" title="The sheet was not kept">
+            {failureWords(save.error)}
+          </Banner>
         ) : null}
+        <div className="flex flex-wrap items-center gap-3">
+          <Button
+            look="primary"
+            disabled={!isChanged || problems.length > 0}
+            isBusy={save.isPending}
+            busyLabel="Keeping it"
+            onClick={() => save.mutate({ sheet, sheetVersion: plan.sheetVersion })}
+          >
+            Keep the sheet
+          </Button>
+          <Button disabled={!isChanged} onClick={() => change({ act: 'undo' })}>
+            Undo
+          </Button>
+          <Button look="quiet" onClick={onClose}>
+            {isChanged ? 'Drop the changes' : 'Close'}
+          </Button>
+          {problems.length > 0 ? (
+            <p role="status" className="min-w-48 flex-1 font-medium text-ember">
+              {problems.length === 1 ? 'One step does' : `${problems.length} steps do`} not fit yet; it says there why.
+            </p>
+          ) : null}
+        </div>
       </div>
       {leaving}
       {opened ? (

@@ -14,6 +14,7 @@ import { useUnits } from '#lib/units.ts';
 import { calendarDay } from '#lib/words.ts';
 import { bagsOf, roundedG } from './weigh-out-bags.ts';
 import { useTicks } from './weigh-out-ticks.ts';
+import './weigh-out.css';
 
 interface WeighOutProps {
   batch: Batch;
@@ -103,7 +104,7 @@ function WeighLine({ line, resolutionG, isTicked, onTick }: WeighLineProps) {
       {onTick ? (
         <TickBox label={`${grams(massG)} ${name} weighed`} isLabelHidden isTicked={isTicked} onTick={onTick} />
       ) : null}
-      <div className="grid min-w-0 flex-1 grid-cols-[6.5rem_1fr] items-baseline gap-x-5 py-2">
+      <div className="grid min-w-0 flex-1 grid-cols-[4.75rem_1fr] items-baseline gap-x-4 sm:grid-cols-[6.5rem_1fr] sm:gap-x-5 py-2">
         <span className={classNames('text-right text-lead font-semibold tabular-nums', isTicked && 'text-soft')}>
           {grams(massG)}
         </span>
@@ -118,7 +119,7 @@ function WeighLine({ line, resolutionG, isTicked, onTick }: WeighLineProps) {
           ))}
           {missingG > 0.0005 ? (
             <StatusChip shape="ring" className="text-body">
-              {lots.length === 0 ? 'from no lot of the stores' : `${grams(missingG)} from no lot of the stores`}
+              {lots.length === 0 ? 'no lot set aside' : `${grams(missingG)} from no lot`}
             </StatusChip>
           ) : null}
         </span>

@@ -200,8 +200,8 @@ function PlanFoot({ revision, stores, control, isBusy, onClose, refusal }: PlanF
     <div className="grid gap-6">
       <CostLine cost={cost} />
       {short.length > 0 ? (
-        <Banner title={`The stores are short of ${listWords(short)}`}>
-          <p>Buy the rest before the day and plan it all the same, or make the batch as large as the stores allow.</p>
+        <Banner title={`Not enough set aside: ${listWords(short)}`}>
+          <p>Plan it all the same and bring the rest before the day, or make the batch as large as the stores allow.</p>
         </Banner>
       ) : null}
       {refusal}

@@ -70,7 +70,8 @@ function AdditionLots({ addition, stores, control, lines, missing, onAdd, onRemo
         <p className="text-body tabular-nums text-soft">{formatMass(addition.massG, { unit })}</p>
         {missing > 0 ? (
           <StatusChip shape="diamond" tone="ember" className="tabular-nums">
-            {formatMass(missing, { unit })} {lines.length === 0 ? 'not in the stores' : 'short'}
+            {formatMass(missing, { unit })}{' '}
+            {lines.length > 0 ? 'short' : groups.length > 0 ? 'not set aside' : 'not in the stores'}
           </StatusChip>
         ) : null}
       </div>
@@ -123,7 +124,7 @@ function LotLine({ name, index, control, groups, onRemove }: LotLineProps) {
   const { mass: unit } = useUnits();
   const { register } = useFormContext<PlanDraft>();
   return (
-    <div className="grid grid-cols-[1fr_auto] items-start gap-x-4 sm:grid-cols-[1fr_10rem_auto]">
+    <div className="grid grid-cols-[1fr_auto] items-start gap-x-4 gap-y-2 sm:grid-cols-[1fr_8.5rem_auto]">
       <div className="max-sm:col-span-2">
         <SelectField label={<span className="sr-only">Lot for {name}</span>} {...register(`reserve.${index}.lotId`)}>
           {groups.map((group) => (
@@ -133,7 +134,7 @@ function LotLine({ name, index, control, groups, onRemove }: LotLineProps) {
                   {[
                     lot.code,
                     `${formatMass(freeG(lot), { unit })} free`,
-                    ...(lot.bestBefore ? [`before ${format(localDate(lot.bestBefore), 'd MMM yyyy')}`] : []),
+                    ...(lot.bestBefore ? [`before ${format(localDate(lot.bestBefore), 'MMM yyyy')}`] : []),
                   ].join(' · ')}
                 </option>
               ))}
