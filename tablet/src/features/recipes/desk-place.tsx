@@ -23,11 +23,12 @@ export function useDeskPlace(): DeskPlace {
 
 /** The field itself, or the nearest one that holds it: a warning may name "gas" where "gas.volumes" is typed. */
 function fieldAt(path: string): HTMLElement | null {
-  const byName = (name: string) =>
-    document.querySelector<HTMLElement>(`[name="${CSS.escape(name)}"], [data-path="${CSS.escape(name)}"]`);
-  const inside = () => document.querySelector<HTMLElement>(`[name^="${CSS.escape(path)}."]`);
+  const named = [...document.querySelectorAll<HTMLElement>('[name]')];
+  const nameOf = (field: HTMLElement) => field.getAttribute('name') ?? '';
+  const found =
+    named.find((field) => nameOf(field) === path) ?? named.find((field) => nameOf(field).startsWith(`${path}.`));
   const parent = path.replace(/\.[^.]+$/, '');
-  return byName(path) ?? inside() ?? (parent === path ? null : fieldAt(parent));
+  return found ?? (parent === path ? null : fieldAt(parent));
 }
 
 export function DeskPlaceProvider({ children }: { children: ReactNode }) {

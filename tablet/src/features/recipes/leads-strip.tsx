@@ -63,14 +63,11 @@ export function LeadsStrip({ desk, children }: LeadsStripProps) {
         </button>
       </div>
       {isOpen ? (
-        <Dialog
-          isOpen
-          onClose={close}
-          title="Line and figures"
-          size="wide"
-          actions={<Button onClick={close}>Back to the recipe</Button>}
-        >
+        <Dialog isOpen onClose={close} title="Line and figures" size="wide">
           {children(close)}
+          <div className="sticky bottom-0 -mx-6 -mb-6 mt-8 border-t-2 border-hair bg-ground px-6 py-3 sm:-mx-8 sm:-mb-8 sm:rounded-b-2xl sm:px-8">
+            <Button onClick={close}>Back to the recipe</Button>
+          </div>
         </Dialog>
       ) : null}
     </>

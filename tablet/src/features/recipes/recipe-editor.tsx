@@ -18,6 +18,7 @@ import { fieldProblems } from '#lib/words.ts';
 import { AcidProposal } from './acid-proposal.tsx';
 import { AdditionsPart } from './additions-part.tsx';
 import { ConflictDialog } from './conflict-dialog.tsx';
+import { CostLines } from './cost-lines.tsx';
 import { DaySection, TargetsSection } from './day-part.tsx';
 import { KitChooser, useDeskKit } from './desk-kit.tsx';
 import { DeskPlaceProvider, useDeskPlace } from './desk-place.tsx';
@@ -119,10 +120,21 @@ function Desk({ recipe, base, saved, draftKey, start }: RecipeEditorProps) {
     setValue('document', document, { shouldDirty: true, shouldValidate: true });
     setIsScaling(false);
   };
-  const figures = <FiguresColumn desk={desk} saved={savedFigures} isEditable />;
-  const warnings = (go: (path: string) => void) => (
-    <WarningList warnings={desk.figures?.warnings ?? []} impossible={desk.impossible} onGo={go} />
+  const figures = (
+    <div className="grid gap-7">
+      <FiguresColumn desk={desk} saved={savedFigures} isEditable />
+      {desk.document ? <CostLines document={desk.document} /> : null}
+    </div>
   );
+  const warnings = (go: (path: string) => void) =>
+    values.document.additions.length === 0 ? (
+      <p className="text-lead text-soft">
+        Nothing goes in yet. Add a tea, hops and an acid: the line, the figures and what to look out for follow as you
+        type.
+      </p>
+    ) : (
+      <WarningList warnings={desk.figures?.warnings ?? []} impossible={desk.impossible} onGo={go} />
+    );
   const line = desk.figures && desk.document && <FallLine day={desk.figures.day} document={desk.document} />;
   return (
     <div className="pb-32 xl:pb-16">
@@ -155,7 +167,7 @@ function Desk({ recipe, base, saved, draftKey, start }: RecipeEditorProps) {
 
       <div className="mx-auto grid w-full max-w-[104rem] gap-x-10 gap-y-12 px-5 pt-6 sm:px-8 lg:grid-cols-[minmax(0,1fr)_minmax(0,25rem)] xl:px-10 xl:grid-cols-[minmax(0,20rem)_minmax(0,1fr)_minmax(0,20rem)] min-[87rem]:grid-cols-[minmax(0,23rem)_minmax(0,1fr)_minmax(0,22.5rem)] min-[87rem]:gap-x-12">
         <RecipeFields />
-        <div className="hidden lg:sticky lg:top-20 lg:block lg:max-h-[calc(100dvh-5rem)] lg:self-start lg:overflow-y-auto lg:pb-8 lg:pr-2 xl:contents">
+        <div className="hidden lg:sticky lg:top-20 lg:block lg:max-h-[calc(100dvh-9.5rem)] lg:self-start lg:overflow-y-auto lg:pb-8 lg:pr-2 xl:contents">
           <section
             aria-label="The planned line"
             className="xl:sticky xl:top-20 xl:max-h-[calc(100dvh-5rem)] xl:self-start xl:overflow-y-auto xl:pb-8"
@@ -189,13 +201,15 @@ function Desk({ recipe, base, saved, draftKey, start }: RecipeEditorProps) {
           <div className="grid gap-8">
             <OldWords isOld={desk.isOld && desk.figures !== null} />
             {line}
+            <div className="grid gap-4">
+              <KitChooser />
+              {figures}
+            </div>
             <AcidProposal desk={desk} kit={kit} />
             {warnings((path) => {
               close();
               openPath(path);
             })}
-            <KitChooser />
-            {figures}
           </div>
         )}
       </LeadsStrip>

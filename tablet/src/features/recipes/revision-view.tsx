@@ -39,9 +39,12 @@ export function RevisionView({ revision }: { revision: Revision }) {
           <section aria-labelledby="line" className="grid min-w-0 content-start gap-4">
             <LevelRule id="line">The planned day</LevelRule>
             {desk.figures ? <FallLine day={desk.figures.day} document={document} /> : null}
-            <WarningList warnings={desk.figures?.warnings ?? []} impossible={desk.impossible} />
           </section>
           <WhatGoesIn document={document} />
+          <section aria-labelledby="look-out" className="grid min-w-0 content-start gap-4">
+            <LevelRule id="look-out">To look out for</LevelRule>
+            <WarningList warnings={desk.figures?.warnings ?? []} impossible={desk.impossible} />
+          </section>
         </div>
         <section aria-labelledby="figures" className="grid min-w-0 content-start gap-7">
           <LevelRule id="figures">Figures</LevelRule>

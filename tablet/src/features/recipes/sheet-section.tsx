@@ -161,8 +161,8 @@ function useMoveFocus() {
   useEffect(() => {
     if (!move || done.current === move) return;
     done.current = move;
-    const button = (by: number) =>
-      document.querySelector<HTMLButtonElement>(`[data-move="${CSS.escape(`${move.id}:${by}`)}"]:not(:disabled)`);
+    const buttons = [...document.querySelectorAll<HTMLButtonElement>('[data-move]:not(:disabled)')];
+    const button = (by: number) => buttons.find(({ dataset }) => dataset['move'] === `${move.id}:${by}`);
     (button(move.by) ?? button(-move.by))?.focus();
   }, [move]);
   return { moved: move?.words ?? '', noteMove: setMove };

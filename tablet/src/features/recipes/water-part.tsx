@@ -122,7 +122,7 @@ function WaterRow({ part, path, isOnly, errorAt, onChange, onRemove }: WaterRowP
           aria-expanded={open}
           aria-controls={detailsId}
           onClick={() => setIsOpen(!open)}
-          className="flex min-h-12 cursor-pointer items-center gap-2 text-note text-soft underline decoration-hair underline-offset-4 hover:decoration-text"
+          className="flex min-h-12 cursor-pointer items-center gap-2 text-left text-note text-soft underline decoration-hair underline-offset-4 hover:decoration-text"
         >
           {reportWords(part)} <Chevron isOpen={open} />
         </button>
