@@ -20,6 +20,8 @@ import type { AcidAdvice, DeskKit } from './types.js';
 /** The usual aim of a hop tea: tart, and under the lines of food codes (common practice, no source). */
 export const USUAL_DRINK_PH = 3.8;
 const TEMP_C = 25;
+/** Nobody doses an acid for more. */
+const MOST_PH = 8;
 /** More acid than any drink bears, of the jar, g/L (common practice, no source). */
 const MOST_G_PER_L = 50;
 
@@ -31,7 +33,7 @@ export function leadingAcid({ additions }: RecipeDocument): AcidLine | null {
 }
 
 export function wantedPh({ targets: { drinkPh } }: RecipeDocument): number {
-  return drinkPh ? (drinkPh.min + drinkPh.max) / 2 : USUAL_DRINK_PH;
+  return drinkPh ? Math.min(MOST_PH, (drinkPh.min + drinkPh.max) / 2) : USUAL_DRINK_PH;
 }
 
 /** The drink as the pH sees it, without the additions that are left out; with a base of leaf. */

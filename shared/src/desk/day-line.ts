@@ -5,6 +5,9 @@ type Stage = PlannedStage extends infer One ? (One extends { id: string } ? Omit
 /** Nobody waits longer for a temperature, ms. */
 const MOST_WAIT_MS = 48 * 3_600_000;
 
+/** Coolant can be colder than water ever gets, °C. */
+const ICE_C = 0;
+
 /** A planned temperature that grows stage by stage, since what comes next depends on where it stands. */
 export class DayLine {
   readonly curve: CurvePoint[];
@@ -34,7 +37,9 @@ export class DayLine {
     if (planned.kind === 'never') return { limitC: planned.limitC };
     const after = curveTempC(planned.curve, MOST_WAIT_MS);
     if (after !== null && 'toC' in stage) return { limitC: after };
-    for (const { atMs, tempC } of planned.curve.slice(1)) this.curve.push({ atMs: fromMs + atMs, tempC });
+    for (const { atMs, tempC } of planned.curve.slice(1)) {
+      this.curve.push({ atMs: fromMs + atMs, tempC: Math.max(ICE_C, tempC) });
+    }
     if (isOpen && this.atMs > fromMs) this.open.push({ fromMs, toMs: this.atMs });
     return null;
   }

@@ -234,6 +234,15 @@ describe('deskFigures', () => {
       'additions.0.massG',
       /sea/,
     ],
+    [
+      'a base ratio that no leaf has',
+      buildDocument({
+        additions: [buildHops({ massG: 8000 })],
+        assume: { hopBaseRatio: 20 },
+      }),
+      'assume.hopBaseRatio',
+      /base ratio/,
+    ],
     ['leaf without water', buildDocument({ waterL: 0.05 }), 'additions.1.massG', /more leaf/],
     [
       'acid without end',

@@ -13,6 +13,8 @@ type Impossible = Extract<DeskResult, { kind: 'impossible' }>;
 
 /** More dry leaf than this in a litre of water is no drink, g/L. */
 const MOST_LEAF_G_PER_L = 400;
+/** More salt than this in a litre is brine, g/L. */
+const MOST_SALT_G_PER_L = 40;
 /** More acid than this in a litre, g/L. */
 const MOST_ACID_G_PER_L = 150;
 
@@ -48,7 +50,16 @@ export function refusedFigures(document: RecipeDocument, plan: DrinkPlan | null,
       largestPath(document, (one) => one.kind === 'acid') ?? 'waterL',
     );
   }
+  if (gPerLOf(document, (one) => one.kind === 'salt') > MOST_SALT_G_PER_L) return saltWater(document);
   if (plan && chargeBalance(plan.source).verdict === 'refused') return refusedWater(document);
+  const { teaBaseRatio = 1, hopBaseRatio = 1 } = document.assume;
+  if (Math.max(teaBaseRatio, hopBaseRatio) > 1) {
+    return impossible(
+      'With this base ratio the leaf brings more base than any drink bears.',
+      'Measure the pH again, degassed and cool, and let the ratio be worked out from it; or clear it.',
+      teaBaseRatio > hopBaseRatio ? 'assume.teaBaseRatio' : 'assume.hopBaseRatio',
+    );
+  }
   return impossible(error.message, 'Look at the amounts and at the volume of water.', null);
 }
 

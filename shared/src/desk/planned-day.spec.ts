@@ -110,6 +110,14 @@ describe('plannedDay', () => {
     expect(markOf(day, 'transfer').atMs).toBe(markOf(day, 'out', 'late').atMs);
   });
 
+  it('never freezes: colder coolant holds the pot at 0 °C', () => {
+    const additions = [buildHops({ in: { at: 'falling', tempC: 5 }, out: { at: 'timer', durationS: 20_000 } })];
+    const icy = { ...kit, chiller: { ...chiller, coolantC: -4 } };
+    const day = plannedDay(buildDocument({ transferC: 2, additions }), icy);
+    expect(Math.min(...day.curve.map(({ tempC }) => tempC))).toBe(0);
+    expect(minutes(markOf(day, 'in', 'cascade'), markOf(day, 'transfer'))).toBeCloseTo(20_000 / 60, 6);
+  });
+
   it('says that water boils before it is hot enough, and plans at the boil', () => {
     const day = plannedDay(buildDocument({ steepC: 95 }), { ...kit, altitudeM: 3000 });
     expect(day.never).toEqual({ stage: 'heat', limitC: expect.closeTo(89.97, 1), wantedC: 95 });

@@ -13,6 +13,7 @@ import {
   tubeVolumeL,
   waterDensityKgPerM3,
   type HeatedMaterial,
+  type TemperatureCurve,
 } from '../figures/index.js';
 import {
   dayOrder,
@@ -328,25 +329,30 @@ function timedFromFill(pot: Pot, { additions }: RecipeDocument): void {
 function finished(pot: Pot, document: RecipeDocument): PlannedDay {
   intoKeg(pot, document);
   const { line, marks, never, kit } = pot;
-  const openM2 = (Math.PI * kit.kettle.diameterM ** 2) / 4;
-  const evaporated = line.open.reduce(
-    (sum, { fromMs, toMs }) =>
-      sum +
-      evaporatedL(curveBetween(line.curve, fromMs, toMs), {
-        openM2,
-        roomC: kit.roomC,
-        humidityRatio: HUMIDITY,
-        // The formula ends there.
-        stationKPa: Math.max(LEAST_AIR_KPA, kit.stationKPa),
-      }),
-    0,
-  );
   return {
     curve: line.curve,
     marks: marks.sort((a, b) => a.atMs - b.atMs),
     never,
-    evaporatedL: Math.min(MOST_EVAPORATED * document.waterL, evaporated),
+    evaporatedL: openEvaporatedL(line.curve, line.open, document.waterL, kit),
   };
+}
+
+/** What the pot gives to the room over the spans of a curve in which it stands open, L; never nearly all of its water. */
+export function openEvaporatedL(
+  curve: TemperatureCurve,
+  open: readonly { fromMs: number; toMs: number }[],
+  waterL: number,
+  kit: Pick<DayKit, 'kettle' | 'roomC' | 'stationKPa'>,
+): number {
+  const surface = {
+    openM2: (Math.PI * kit.kettle.diameterM ** 2) / 4,
+    roomC: kit.roomC,
+    humidityRatio: HUMIDITY,
+    // The formula ends there.
+    stationKPa: Math.max(LEAST_AIR_KPA, kit.stationKPa),
+  };
+  const gone = open.reduce((sum, { fromMs, toMs }) => sum + evaporatedL(curveBetween(curve, fromMs, toMs), surface), 0);
+  return Math.min(MOST_EVAPORATED * waterL, gone);
 }
 
 /** What goes into the keg, and what the order of the day could not take out. */
