@@ -57,7 +57,6 @@ const LEAF_SPACE_L_PER_G = 0.001;
 /**
  * How far the kettle fills at its hottest, L: the water as it stands at the steep temperature, and the leaf and hops in it.
  *
- * @throws RangeError never on a document that the schema takes.
  * @see volumeAtTemperatureL; leaf 1 mL a gram is a judgement.
  */
 export function hotVolumeL({ waterL, steepC, additions }: RecipeDocument): number {

@@ -1,5 +1,6 @@
 import { acidKinds, alphaNowPercent, saltKinds } from '../figures/index.js';
 import type { Addition } from '../sheets/index.js';
+import { weighableG } from './rounding.js';
 import { firstToUse, freeG, ingredientFreeG, isSameStuff, type StockedIngredient } from './stocked.js';
 
 /** An ingredient that can stand in for the part of an addition that the stores are short of. */
@@ -67,9 +68,6 @@ function rateOf(addition: Addition, candidate: StockedIngredient): Rate {
   return addition.kind === facts.kind ? gramForGram : null;
 }
 
-const roundedG = (massG: number, resolutionG: number) =>
-  Number((Math.max(1, Math.round(massG / resolutionG)) * resolutionG).toPrecision(12));
-
 /**
  * What can stand in for the part of an addition that is short, the most alike first: the same kind and cut of tea or form of hops, then
  * what there is enough of. Salts and acids only by another jar of the same substance.
@@ -92,7 +90,7 @@ export function swapsFor(
       const rate = rateOf(addition, candidate);
       const free = ingredientFreeG(candidate);
       if (!rate || free <= 0) return [];
-      const takeG = roundedG((neededG - keepG) * rate.gPerG, resolutionG);
+      const takeG = weighableG(neededG - keepG, 1, rate.gPerG, resolutionG);
       return [
         {
           additionId: addition.id,

@@ -91,26 +91,24 @@ function heatProblems(steps: readonly Step[]): SheetProblem[] {
 
 /** Steps that must not be lost, said at the step that they belong to. */
 function lostSteps(steps: readonly Step[]): SheetProblem[] {
+  const measuresPh = ({ asks, done }: Step) => asks === 'pH' || (done.by === 'measurement' && done.quantity === 'pH');
   const fill = steps.find(({ kind }) => kind === 'fill') ?? steps[0];
-  const keg = steps.findLast(({ kind }) => kind === 'transfer') ?? steps.at(-1);
-  const asksPh = ({ asks, done }: Step) => asks === 'pH' || (done.by === 'measurement' && done.quantity === 'pH');
-  const isForKeg = ({ kind }: Step) => kind === 'charge';
-  const checksKit = ({ cautions }: Step) => cautions.includes('pressure');
-  const charge = steps.find(isForKeg);
-  return [
-    ...(fill && !steps.some(asksPh)
-      ? [
-          {
-            stepId: fill.id,
-            detail: 'No step measures the pH: what keeps in the keg hangs on it. Put one on the sheet.',
-          },
-        ]
-      : []),
-    ...(keg && !steps.some(({ cautions }) => cautions.includes('cold'))
-      ? [{ stepId: keg.id, detail: 'No step puts the keg into the cold: put one behind the transfer.' }]
-      : []),
-    ...(charge && !steps.slice(0, steps.indexOf(charge)).some(checksKit)
-      ? [{ stepId: charge.id, detail: 'No step before this looks at the keg: check it before it is under pressure.' }]
-      : []),
+  const transfer = steps.findLast(({ kind }) => kind === 'transfer') ?? steps.at(-1);
+  const charge = steps.find(({ kind }) => kind === 'charge');
+  const beforeCharge = charge ? steps.slice(0, steps.indexOf(charge)) : [];
+  const lost = [
+    {
+      at: steps.some(measuresPh) ? undefined : fill,
+      detail: 'No step measures the pH, and what keeps in the keg hangs on it: put one on the sheet.',
+    },
+    {
+      at: steps.some(({ cautions }) => cautions.includes('cold')) ? undefined : transfer,
+      detail: 'No step puts the keg into the cold: put one behind the transfer.',
+    },
+    {
+      at: beforeCharge.some(({ cautions }) => cautions.includes('pressure')) ? undefined : charge,
+      detail: 'No step before this looks at the keg: check it before it is under pressure.',
+    },
   ];
+  return lost.flatMap(({ at, detail }) => (at ? [{ stepId: at.id, detail }] : []));
 }

@@ -9,8 +9,13 @@ import type { VesselAct } from './step.js';
 export function theDay(document: RecipeDocument, name: Namer): StepDraft[] {
   const { byClock, byFall } = dayOrder(document);
   const steeps = steeping(document, byClock, name);
-  if (isColdSteep(document)) return [...steeps, ...byFall.flatMap((event) => fallSteps(event, name))];
+  if (isColdSteep(document)) return [...steeps, ...byFall.flatMap((event) => fallSteps(event, name))].map(cold);
   return [...steeps, chill(byClock.length === 0), ...byFall.flatMap((event) => caughtSteps(event, name))];
+}
+
+/** What is not hot does not scald. */
+function cold(step: StepDraft): StepDraft {
+  return { ...step, cautions: step.cautions?.filter((caution) => caution !== 'scald') };
 }
 
 function steeping(document: RecipeDocument, events: readonly ClockEvent[], name: Namer): StepDraft[] {
@@ -43,16 +48,16 @@ function holdStep(name: Namer, durationS: number): StepDraft {
   return { id: name('hold'), kind: 'heat', title: 'Hold the temperature', done: { by: 'timer', durationS } };
 }
 
-function steepStep({ additions }: RecipeDocument, name: Namer, durationS: number): StepDraft {
+function steepStep(document: RecipeDocument, name: Namer, durationS: number): StepDraft {
   const id = name('steep');
   const step: StepDraft = { id, kind: 'steep', title: 'Steep', done: { by: 'timer', durationS } };
   if (id !== 'steep') return step;
-  const hasHops = additions.some(({ kind, in: { at } }) => kind === 'hops' && at === 'falling');
+  const hasHops = document.additions.some(({ kind, in: { at } }) => kind === 'hops' && at === 'falling');
   return {
     ...step,
     meanwhile: [
       ...(hasHops ? [{ id: 'weigh-hops', text: 'weigh the hops into their bag' }] : []),
-      { id: 'hoses', text: 'check the hoses of the chiller' },
+      ...(isColdSteep(document) ? [] : [{ id: 'hoses', text: 'check the hoses of the chiller' }]),
     ],
   };
 }

@@ -128,7 +128,9 @@ describe(compileSheet, () => {
     expect(stepOf('chill', buildDocument({ additions: [buildHops()] }))?.acts).toContain('heat-off');
   });
 
-  it('never lights the heat for a cold steep', () => {
+  it('never lights the heat for a cold steep, and warns of no scald', () => {
+    const cold = compileSheet(buildDocument({ steepC: 8 }), kit);
+    expect(cold.steps.flatMap(({ cautions }) => cautions)).not.toContain('scald');
     const lines = linesOf(
       [
         buildTea({ in: { at: 'fill' }, out: { at: 'timer', durationS: 8 * 3600 } }),

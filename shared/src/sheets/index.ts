@@ -1,3 +1,4 @@
+export * from './addition-steps.js';
 export * from './cautions.js';
 export * from './check-sheet.js';
 export * from './compile.js';

@@ -69,6 +69,7 @@ describe(readStoresRow, () => {
     ['name', '', 'Give it a name.'],
     ['lot', '', 'Type the lot number.'],
     ['alpha %', '6', 'Only for hops: empty this cell.'],
+    ['storage index', '0.3', 'Only for hops: empty this cell.'],
     ['kind', 'coffee', '"coffee" is not known: write one of salt, acid, tea, hops, other.'],
   ])('says what to do about %s "%s"', (column, text, detail) => {
     expect(detailAt(column, text)).toContain(detail);

@@ -161,8 +161,8 @@ function readReceivedG(text: string): Cell<number> {
   return cell.value > MOST_MASS_G ? { detail: 'At most 1000 kg.' } : cell;
 }
 
-function readLot(row: RowReader): { facts: LotFacts; massG: number } | null {
-  if (row.isEmpty([...lotColumns, ...hopColumns])) return null;
+function readLot(row: RowReader, kind: IngredientKind): { facts: LotFacts; massG: number } | null {
+  if (row.isEmpty(kind === 'hops' ? [...lotColumns, ...hopColumns] : lotColumns)) return null;
   const massG = row.read('mass', readReceivedG);
   const facts = row.check(lotFactsSchema, {
     code: row.text('lot'),
@@ -170,7 +170,7 @@ function readLot(row: RowReader): { facts: LotFacts; massG: number } | null {
     bestBefore: date(row, 'best before'),
     pricePerKg: row.readOptional('price per kg', (text) => readNumber(text)),
     note: row.text('note'),
-    hops: readHops(row),
+    hops: kind === 'hops' ? readHops(row) : null,
   });
   return facts && massG !== undefined ? { facts, massG } : null;
 }
@@ -184,7 +184,7 @@ export function readStoresRow(record: StoresRecord): StoresRow {
   const kind = row.read('kind', (text) => readChoice(text, ingredientKindSchema.options));
   if (kind === undefined) return { kind: 'bad', problems: row.problems };
   const facts = readFacts(row, kind);
-  const lot = readLot(row);
+  const lot = readLot(row, kind);
   refuseForeignColumns(row, kind);
   return facts && row.problems.length === 0 ? { kind: 'good', facts, lot } : { kind: 'bad', problems: row.problems };
 }
