@@ -42,7 +42,7 @@ const areasOfShared = {
   readings: ['units', 'figures'],
   timers: ['units', 'figures'],
   watch: ['units', 'figures', 'readings', 'timers', 'sheets'],
-  runs: ['units', 'figures', 'sheets', 'readings', 'timers', 'watch', 'problems'],
+  runs: ['units', 'figures', 'sheets', 'stores', 'desk', 'readings', 'timers', 'watch', 'problems'],
   contracts: ['units', 'figures', 'sheets', 'stores', 'desk', 'readings', 'timers', 'watch', 'runs', 'problems'],
   testing: [
     'units',

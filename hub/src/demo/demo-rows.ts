@@ -230,7 +230,10 @@ function finishedRun(
       atMs: startedAtMs,
       by: memberId,
       station: 'hub',
-      payload: { title, batchId, batchNumber, revisionId: revision.id, isRehearsal: false, sheet, clock },
+      payload: {
+        ...{ title, batchId, batchNumber, revisionId: revision.id, isRehearsal: false, sheet, clock, document },
+        kit: { altitudeM, kettle: demoEquipment.kettle.facts, chiller: demoEquipment.coil.facts },
+      },
     },
     kettle: kettleSetupOf({
       kettle: demoEquipment.kettle,

@@ -83,7 +83,10 @@ export class RehearsalsService implements OnApplicationBootstrap, OnModuleDestro
     const [revision, house] = await Promise.all([this.revisionFor(houseId, revisionId), this.houses.get(houseId)]);
     const sheet = this.recipes.sheetOf(revision, house.altitudeM);
     const source = probeId === undefined ? null : await this.sourceProbe(houseId, probeId);
-    const kettleSetup = source ? null : await this.kettleFor(houseId, revision, house.altitudeM, seed ?? randomSeed());
+    const { altitudeM } = house;
+    const { kettle, chiller } = await this.kitFor(houseId, revision);
+    const setup = { kettle, chiller, document: revision.document, altitudeM, seed: seed ?? randomSeed() };
+    const kettleSetup = source ? null : simulatedKettle(setup);
     const facts = source ? probeLike(source) : simulatedProbe(kettleSetup as KettleSetup);
     return this.runs.start(actor, async (transaction: Transaction): Promise<RunStart> => {
       const nowMs = this.clock.nowMs();
@@ -92,6 +95,8 @@ export class RehearsalsService implements OnApplicationBootstrap, OnModuleDestro
         batch: null,
         revisionId: revision.id,
         sheet,
+        document: revision.document,
+        kit: { altitudeM, kettle: kettle.facts, chiller: chiller?.facts ?? null },
         clock: { anchorWallMs: nowMs, anchorRunMs: nowMs, rate },
         probe: await this.probes.createSimulated(houseId, facts, transaction),
         roomC: kettleSetup?.roomC ?? null,
@@ -225,32 +230,32 @@ export class RehearsalsService implements OnApplicationBootstrap, OnModuleDestro
     return probe;
   }
 
-  private async kettleFor(
-    houseId: string,
-    { document }: NamedRevision,
-    altitudeM: number,
-    seed: number,
-  ): Promise<KettleSetup> {
+  /** The smallest kettle of the house that holds the water, and its chiller. */
+  private async kitFor(houseId: string, { document }: NamedRevision) {
     const equipment = await this.equipment.list(houseId);
     const bySize = equipment
       .filter((piece): piece is KettleOfHouse => piece.kind === 'kettle')
       .sort((a, b) => a.facts.volumeL - b.facts.volumeL);
     const kettle = bySize.find(({ facts }) => facts.volumeL >= document.waterL) ?? bySize.at(-1) ?? USUAL_KETTLE;
-    const chiller = equipment.find((piece) => piece.kind === 'chiller') ?? null;
-    const setup = kettleSetupOf({ kettle, chiller, document, altitudeM, seed });
-    setup.pressureKPa = Math.max(LEAST_PRESSURE_KPA, setup.pressureKPa);
-    try {
-      startKettle(setup);
-    } catch (error) {
-      if (error instanceof RangeError) throw new ProblemError('not-valid', error.message);
-      throw error;
-    }
-    return setup;
+    return { kettle, chiller: equipment.find((piece) => piece.kind === 'chiller') ?? null };
   }
 
   private complain({ id }: RunLog, error: unknown): void {
     this.logger.error('rehearsal.failed', error instanceof Error ? error.stack : String(error), { runId: id });
   }
+}
+
+/** The kettle that does what the sheet says. @throws ProblemError when no such kettle can be simulated. */
+function simulatedKettle(kit: Parameters<typeof kettleSetupOf>[0]): KettleSetup {
+  const setup = kettleSetupOf(kit);
+  setup.pressureKPa = Math.max(LEAST_PRESSURE_KPA, setup.pressureKPa);
+  try {
+    startKettle(setup);
+  } catch (error) {
+    if (error instanceof RangeError) throw new ProblemError('not-valid', error.message);
+    throw error;
+  }
+  return setup;
 }
 
 function simulatedProbe({ probe }: KettleSetup): Omit<ProbeFacts, 'id'> {

@@ -2,8 +2,8 @@ import { Injectable } from '@nestjs/common';
 import { InjectConnection } from '@nestjs/sequelize';
 import type { RunSummary } from '@steepfall/shared/contracts';
 import { ProblemError } from '@steepfall/shared/problems';
-import type { RunEventOf } from '@steepfall/shared/runs';
-import type { RunSheet } from '@steepfall/shared/sheets';
+import type { RunEventOf, RunKit } from '@steepfall/shared/runs';
+import type { RecipeDocument, RunSheet } from '@steepfall/shared/sheets';
 import { wallClock, type RunClock } from '@steepfall/shared/timers';
 import { UniqueConstraintError, type Transaction } from 'sequelize';
 import { Sequelize } from 'sequelize-typescript';
@@ -26,6 +26,9 @@ export interface RunStart {
   batch: { id: string; batchNumber: string } | null;
   revisionId: string;
   sheet: RunSheet;
+  /** For the figures while it runs: they need no hub. */
+  document: RecipeDocument;
+  kit: RunKit;
   clock: RunClock;
   probe: { id: string; lagS: number; resolutionC: number; samplePeriodS: number } | null;
   roomC: number | null;
@@ -51,7 +54,7 @@ export class RunsService {
     const { houseId } = actor;
     const batch = await this.batches.getForRun(houseId, batchId);
     const probe = batch.probeId === null ? null : await this.probes.find(houseId, batch.probeId);
-    const { revision, chiller } = batch;
+    const { revision, altitudeM, kettle, chiller } = batch;
     const prepare = async (transaction: Transaction): Promise<RunStart> => {
       const sheet = await this.batches.takeForRun(actor, batch, transaction);
       this.refuseHeldProbe(batch.probeId);
@@ -60,6 +63,8 @@ export class RunsService {
         batch: { id: batch.id, batchNumber: batch.batchNumber },
         revisionId: revision.id,
         sheet,
+        document: revision.document,
+        kit: { altitudeM, kettle: kettle.facts, chiller: chiller?.facts ?? null },
         clock: wallClock(this.clock.nowMs()),
         probe,
         roomC: null,
@@ -95,7 +100,7 @@ export class RunsService {
   }
 
   private write({ houseId, memberId }: Actor, start: RunStart, transaction: Transaction): Promise<RunLog> {
-    const { title, batch, revisionId, sheet, clock, probe, roomC, coolantC, rehearsal } = start;
+    const { title, batch, revisionId, sheet, document, kit, clock, probe, roomC, coolantC, rehearsal } = start;
     const isRehearsal = rehearsal !== null;
     const runId = newId();
     const { lagS, resolutionC, samplePeriodS } = probe ?? NO_PROBE;
@@ -115,6 +120,8 @@ export class RunsService {
         isRehearsal,
         sheet,
         clock,
+        document,
+        kit,
       },
     };
     const run: NewRun = {
