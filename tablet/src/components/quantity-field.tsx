@@ -10,8 +10,8 @@ interface QuantityFieldProps {
   error?: string | undefined;
   /** °C, g, L, kPa (K, kg). */
   value: number | null | undefined;
-  /** `undefined` when it was emptied, NaN when it is no number: the schema of the form says what to do. */
-  onChange: (inside: number | undefined) => void;
+  /** `null` when it was emptied, NaN when it is no number: the schema of the form says what to do. */
+  onChange: (inside: number | null) => void;
   onBlur?: () => void;
   name?: string;
   ref?: React.Ref<HTMLInputElement>;

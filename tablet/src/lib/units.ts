@@ -97,12 +97,13 @@ export function quantityInside(text: string, { toInside }: Quantity): number | u
 
 /**
  * A field that holds a number of the inside and shows it in the person's unit. What is being typed stays as it is typed, and a number
- * that nobody touches is not rounded by having been shown. For `QuantityField`, or a field of your own.
+ * that nobody touches is not rounded by having been shown. Emptied, it gives `null`: for `undefined` a form would bring its first value
+ * back. For `QuantityField`, or a field of your own.
  */
 export function useQuantity(
   kind: QuantityKind | Quantity,
   value: number | null | undefined,
-  onChange: (inside: number | undefined) => void,
+  onChange: (inside: number | null) => void,
 ): { symbol: string; text: string; onText: (text: string) => void } {
   const units = useUnits();
   const quantity = typeof kind === 'string' ? quantityOf(kind, units) : kind;
@@ -114,7 +115,7 @@ export function useQuantity(
     text: isStillTyped ? typed.text : quantityText(value, quantity),
     onText: (text) => {
       setTyped({ text, symbol: quantity.symbol });
-      onChange(quantityInside(text, quantity));
+      onChange(quantityInside(text, quantity) ?? null);
     },
   };
 }

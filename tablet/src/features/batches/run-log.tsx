@@ -4,7 +4,7 @@ import type { UnitPreferences } from '@steepfall/shared/units';
 import { format } from 'date-fns';
 import { classNames } from '#components/class-names.ts';
 import type { StoredEntry } from '#lib/hub-queries.ts';
-import { useUnits } from '#lib/units.ts';
+import { inPersonsWords, useUnits } from '#lib/units.ts';
 import { clockTime } from '#lib/words.ts';
 import type { Flag } from './flag-layout.ts';
 
@@ -20,21 +20,22 @@ function nameOf(members: readonly Member[], memberId: string | null): string | n
   return members.find(({ id }) => id === memberId)?.displayName ?? 'a former member';
 }
 
-function wordsOf(
-  entry: StoredEntry,
-  log: readonly StoredEntry[],
-  state: RunState,
-  unit: UnitPreferences['temperature'],
-): string {
+function wordsOf(entry: StoredEntry, log: readonly StoredEntry[], state: RunState, units: UnitPreferences): string {
   const event = entry as unknown as RunEvent;
-  if (event.type !== 'event.undone') return describeEvent(entry, state, unit);
+  if (event.type !== 'event.undone') return eventWords(entry, state, units);
   const target = log.find(({ id }) => id === event.payload.eventId);
-  return target ? `Taken back: ${describeEvent(target, state, unit)}` : 'Taken back';
+  return target ? `Taken back: ${eventWords(target, state, units)}` : 'Taken back';
+}
+
+/** Only what was measured is turned into the person's units: a note stays as it was written. */
+function eventWords(entry: StoredEntry, state: RunState, units: UnitPreferences): string {
+  const words = describeEvent(entry, state, units.temperature);
+  return entry.type === 'measurement.recorded' ? inPersonsWords(words, units) : words;
 }
 
 /** Everything that happened, in words, in the hub's order. What was taken back stays, struck through. */
 export function RunLog({ log, state, flags, members }: RunLogProps) {
-  const { temperature } = useUnits();
+  const units = useUnits();
   const undone = new Set(state.undoneEventIds);
   return (
     <ol className="border-l-2 border-edge">
@@ -78,7 +79,7 @@ export function RunLog({ log, state, flags, members }: RunLogProps) {
                     {flag.number}
                   </span>
                 ) : null}
-                {wordsOf(entry, log, state, temperature)}
+                {wordsOf(entry, log, state, units)}
                 {isUndone ? <span className="sr-only"> (taken back later)</span> : null}
               </p>
               <p className="col-start-2 text-note text-soft sm:col-start-auto sm:text-right">

@@ -46,9 +46,9 @@ export function CalibrationDialog({ probe, onClose }: { probe: Probe; onClose: (
   const live = useProbeLive(probe);
   const save = useSaveProbe(probe);
   const [taken, setTaken] = useState<Partial<Record<Point, number>>>({});
-  const [pressureKPa, setPressureKPa] = useState<number | undefined>(undefined);
-  const isPressureRight = pressureKPa === undefined || (pressureKPa >= LOWEST_KPA && pressureKPa <= HIGHEST_KPA);
-  const hasPressure = pressureKPa !== undefined && isPressureRight;
+  const [pressureKPa, setPressureKPa] = useState<number | null>(null);
+  const isPressureRight = pressureKPa === null || (pressureKPa >= LOWEST_KPA && pressureKPa <= HIGHEST_KPA);
+  const hasPressure = pressureKPa !== null && isPressureRight;
   const boilC = hasPressure ? boilingPointC(pressureKPa) : boilingPointAtAltitudeC(house.altitudeM);
   const temp = (tempC: number, digits = 1) => formatTemp(tempC, { unit, digits });
 

@@ -46,6 +46,13 @@ interface Draft {
   facts: Record<string, unknown>;
 }
 
+const checked = zodResolver(createEquipmentSchema) as unknown as Resolver<Draft>;
+
+/** A field that was emptied is a fact that nobody tells. */
+function withoutEmpty(draft: Draft): Draft {
+  return { ...draft, facts: Object.fromEntries(Object.entries(draft.facts).filter(([, value]) => value !== null)) };
+}
+
 const kinds = (Object.keys(kindWords) as Kind[]).map((value) => ({ value, label: kindWords[value] }));
 
 /** Adds a piece, or changes one that is there. */
@@ -65,7 +72,7 @@ function EquipmentForm({ kind, item, onClose }: { kind: Kind; item: Equipment | 
   const client = useQueryClient();
   const { version, meet } = useVersion(item?.version ?? 1);
   const { register, control, setValue, handleSubmit, setError, formState } = useForm<Draft>({
-    resolver: zodResolver(createEquipmentSchema) as unknown as Resolver<Draft>,
+    resolver: (draft, context, options) => checked(withoutEmpty(draft), context, options),
     defaultValues: { kind, name: item?.name ?? '', facts: item?.facts ?? usualFacts[kind] },
   });
   const save = useMutation({
@@ -103,7 +110,7 @@ function EquipmentForm({ kind, item, onClose }: { kind: Kind; item: Equipment | 
         error={formState.errors.name?.message}
         {...register('name')}
       />
-      <div className="grid items-end gap-x-6 gap-y-5 sm:grid-cols-2">
+      <div className="grid items-start gap-x-6 gap-y-5 sm:grid-cols-2">
         {kind === 'chiller' ? (
           <SelectField label="Metal of the coil" {...register('facts.metal')}>
             <option value="stainless">stainless steel</option>

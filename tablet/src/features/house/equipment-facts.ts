@@ -1,7 +1,14 @@
 import type { Equipment } from '@steepfall/shared/contracts';
 import { heaterEfficiency, type HeatSource } from '@steepfall/shared/figures';
-import { formatMass, formatPressure, formatTemp, formatVolume, type UnitPreferences } from '@steepfall/shared/units';
-import { plainQuantity, type Quantity, type QuantityKind } from '#lib/units.ts';
+import {
+  formatMass,
+  formatPressure,
+  formatTemp,
+  formatVolume,
+  NO_BREAK_SPACE,
+  type UnitPreferences,
+} from '@steepfall/shared/units';
+import { plainQuantity, quantityOf, quantityText, type Quantity, type QuantityKind } from '#lib/units.ts';
 import { spanWords } from '#lib/words.ts';
 
 export type Kind = Equipment['kind'];
@@ -72,18 +79,23 @@ export const factFields: Record<Kind, FactField[]> = {
   ],
   chiller: [
     { name: 'lengthM', label: 'Length of the coil', kind: plainQuantity('m') },
-    { name: 'coolantC', label: 'Temperature of the water through it', kind: 'temperature' },
+    {
+      name: 'coolantC',
+      label: 'Water through it',
+      kind: 'temperature',
+      hint: 'As it comes from the tap or the ice bath.',
+    },
     {
       name: 'coolingConstantPerS',
       label: 'Halfway to that water in',
       kind: halfwayMin,
-      hint: 'Stirred, in your usual kettle. A finished run teaches it; leave it empty until then.',
+      hint: 'Stirred. Empty until a run has taught it.',
       errorWords: 'A time above a quarter of a minute, or nothing.',
     },
   ],
   keg: [
     { name: 'volumeL', label: 'Volume', kind: 'volume' },
-    { name: 'tareG', label: 'Mass when empty', kind: 'mass', hint: 'With its lid and posts, dry.' },
+    { name: 'tareG', label: 'Mass when empty', kind: 'mass' },
     {
       name: 'ratedKPa',
       label: 'Pressure stamped on it',
@@ -98,7 +110,7 @@ export const factFields: Record<Kind, FactField[]> = {
       kind: 'mass',
       hint: 'Amounts on the weigh-out list are rounded to it.',
     },
-    { name: 'capacityG', label: 'Heaviest it takes', kind: 'mass' },
+    { name: 'capacityG', label: 'Heaviest it takes', kind: 'mass', hint: 'Larger amounts are weighed in parts.' },
   ],
 };
 
@@ -116,7 +128,7 @@ export const learnedField: FactField = {
   name: 'coolingConstantPerS',
   label: 'Halfway to the room in',
   kind: halfwayMin,
-  hint: 'With the lid on, heat off. A finished run teaches it; leave it empty until then.',
+  hint: 'Lid on, heat off. Empty until a finished run has taught it.',
   errorWords: 'A time above a quarter of a minute, or nothing.',
 };
 
@@ -138,6 +150,12 @@ export const usualFacts: Record<Kind, Record<string, unknown>> = {
   keg: { volumeL: 19, tareG: 4200 },
   scale: { resolutionG: 0.1, capacityG: 5000 },
 };
+
+/** The step of a scale is smaller than a mass is written elsewhere. */
+function fineMass(massG: number, units: UnitPreferences): string {
+  const mass = quantityOf('mass', units);
+  return `${quantityText(massG, mass)}${NO_BREAK_SPACE}${mass.symbol}`;
+}
 
 /** What is known of a piece in one line. */
 export function factWords(item: Equipment, units: UnitPreferences): string {
@@ -168,7 +186,7 @@ export function factWords(item: Equipment, units: UnitPreferences): string {
         `stamped ${formatPressure(item.facts.ratedKPa, { unit: units.pressure })}`,
       ].join(' · ');
     case 'scale':
-      return `steps of ${mass(item.facts.resolutionG)} · up to ${mass(item.facts.capacityG)}`;
+      return `steps of ${fineMass(item.facts.resolutionG, units)} · up to ${mass(item.facts.capacityG)}`;
   }
 }
 

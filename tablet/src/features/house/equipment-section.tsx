@@ -52,25 +52,29 @@ export function EquipmentSection() {
             key={item.id}
             className="grid grid-cols-[1fr_auto] items-center gap-x-6 border-b border-hair py-3 sm:grid-cols-[5rem_1fr_auto]"
           >
-            <span className="col-span-2 text-body text-soft sm:col-span-1">{kindWords[item.kind].toLowerCase()}</span>
-            <div className="min-w-0">
-              <p className="text-lead font-medium">{item.name}</p>
-              <p className="text-body tabular-nums text-soft">{factWords(item, units)}</p>
-              {learnedWords(item) ? <p className="text-body tabular-nums text-soft">{learnedWords(item)}</p> : null}
-            </div>
+            <span className="col-span-2 text-body text-soft sm:col-span-1 sm:row-span-2">
+              {kindWords[item.kind].toLowerCase()}
+            </span>
+            <p className="text-lead font-medium sm:col-start-2">{item.name}</p>
             {mayManage ? (
-              <Menu
-                label={
-                  <>
-                    Change<span className="sr-only"> {item.name}</span>
-                  </>
-                }
-                choices={[
-                  { label: 'Edit', onChoose: () => setOpen(item) },
-                  { label: 'Remove', isDanger: true, onChoose: () => remove.mutate(item) },
-                ]}
-              />
+              <div className="col-start-2 row-start-2 sm:col-start-3 sm:row-span-2 sm:row-start-1">
+                <Menu
+                  label={
+                    <>
+                      Change<span className="sr-only"> {item.name}</span>
+                    </>
+                  }
+                  choices={[
+                    { label: 'Edit', onChoose: () => setOpen(item) },
+                    { label: 'Remove', isDanger: true, onChoose: () => remove.mutate(item) },
+                  ]}
+                />
+              </div>
             ) : null}
+            <div className="col-span-2 text-body tabular-nums text-soft sm:col-span-1 sm:col-start-2">
+              <p>{factWords(item, units)}</p>
+              {learnedWords(item) ? <p>{learnedWords(item)}</p> : null}
+            </div>
           </li>
         ))}
       </ul>

@@ -74,16 +74,16 @@ export function ProbesSection() {
             key={probe.id}
             className="grid grid-cols-[1fr_auto] items-center gap-x-6 border-b border-hair py-3 xl:grid-cols-[1fr_auto_auto]"
           >
-            <div className="min-w-0">
-              <p className="text-lead font-medium">{probe.name}</p>
-              <p className="text-body tabular-nums text-soft">{probeWords(probe, units)}</p>
-              <p className="text-body tabular-nums text-soft">{calibrationWords(probe, units.temperature)}</p>
+            <p className="text-lead font-medium">{probe.name}</p>
+            <div className="col-span-2 text-body tabular-nums text-soft xl:col-span-1 xl:col-start-1">
+              <p>{probeWords(probe, units)}</p>
+              <p>{calibrationWords(probe, units.temperature)}</p>
             </div>
-            <div className="col-start-1 pt-1 xl:col-start-2 xl:pt-0">
+            <div className="col-span-2 pt-1 xl:col-span-1 xl:col-start-2 xl:row-span-2 xl:row-start-1 xl:pt-0">
               <ProbeState probe={probe} />
             </div>
             {mayManage ? (
-              <div className="col-start-2 row-start-1 row-span-2 xl:col-start-3 xl:row-span-1">
+              <div className="col-start-2 row-start-1 xl:col-start-3 xl:row-span-2">
                 <Menu
                   label={
                     <>
