@@ -1,7 +1,7 @@
 import { useQuery } from '@tanstack/react-query';
 import type { Batch, WeighOutLine } from '@steepfall/shared/contracts';
 import { costOf } from '@steepfall/shared/desk';
-import { formatMass } from '@steepfall/shared/units';
+import { formatMass, GRAMS_PER_OUNCE } from '@steepfall/shared/units';
 import { Button } from '#components/button.tsx';
 import { classNames } from '#components/class-names.ts';
 import { CostLine } from '#components/cost-line.tsx';
@@ -86,6 +86,7 @@ interface WeighLineProps {
   onTick: ((isTicked: boolean) => void) | null;
 }
 
+/** Below an ounce the grams stand there too: hundredths of an ounce are too coarse for a salt. */
 function WeighLine({ line, resolutionG, isTicked, onTick }: WeighLineProps) {
   const { mass: unit } = useUnits();
   const { name, massG, lots } = line;
@@ -107,6 +108,11 @@ function WeighLine({ line, resolutionG, isTicked, onTick }: WeighLineProps) {
       <div className="grid min-w-0 flex-1 grid-cols-[4.75rem_1fr] items-baseline gap-x-4 sm:grid-cols-[6.5rem_1fr] sm:gap-x-5 py-2">
         <span className={classNames('text-right text-lead font-semibold tabular-nums', isTicked && 'text-soft')}>
           {grams(massG)}
+          {unit === 'oz' && massG < GRAMS_PER_OUNCE ? (
+            <span className="block text-note font-normal text-soft">
+              {formatMass(roundedG(massG, resolutionG), { unit: 'g' })}
+            </span>
+          ) : null}
         </span>
         <span className="min-w-0">
           <span className={classNames('block text-lead break-words', isTicked && 'text-soft line-through')}>

@@ -26,7 +26,6 @@ export function LabelPhoto({ lot, mayManage }: { lot: Lot; mayManage: boolean })
   const [isOpen, setIsOpen] = useState(false);
   const photo = useQuery({ ...lotPhotoQuery(lot), enabled: lot.hasPhoto });
   const url = useObjectUrl(lot.hasPhoto ? photo.data : null);
-  if (!lot.hasPhoto && !mayManage) return null;
   return (
     <>
       <button

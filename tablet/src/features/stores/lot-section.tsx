@@ -5,6 +5,7 @@ import { formatMass } from '@steepfall/shared/units';
 import { format } from 'date-fns';
 import { Banner } from '#components/banner.tsx';
 import { Button, buttonClass } from '#components/button.tsx';
+import { classNames } from '#components/class-names.ts';
 import { Menu } from '#components/menu.tsx';
 import { StatusChip } from '#components/status-chip.tsx';
 import { priceMass, useMoney } from '#lib/money.ts';
@@ -36,11 +37,19 @@ export function LotSection({ ingredient, lot, isFirst, mayManage }: LotSectionPr
   const today = format(new Date(), 'yyyy-MM-dd');
   const close = () => setAsked(null);
   const freeG = lot.stockG - lot.reservedG;
+  const hasPhotoPlace = lot.hasPhoto || mayManage;
   return (
-    <li className="grid gap-x-8 gap-y-4 border-t-2 border-hair py-6 md:grid-cols-[13rem_1fr]">
-      <div className="order-last md:order-first">
-        <LabelPhoto lot={lot} mayManage={mayManage} />
-      </div>
+    <li
+      className={classNames(
+        'grid gap-x-8 gap-y-4 border-t-2 border-hair py-6',
+        hasPhotoPlace && 'md:grid-cols-[13rem_1fr]',
+      )}
+    >
+      {hasPhotoPlace ? (
+        <div className="order-last md:order-first">
+          <LabelPhoto lot={lot} mayManage={mayManage} />
+        </div>
+      ) : null}
       <div className="grid min-w-0 content-start gap-4">
         <div className="flex flex-wrap items-baseline gap-x-6 gap-y-1">
           <h3 className="text-title break-all">{lot.code}</h3>
