@@ -35,7 +35,7 @@ const probeFields: {
     name: 'resolutionC',
     label: 'Smallest step it shows',
     kind: 'kelvin',
-    errorWords: 'A step above 0 and no larger than a degree.',
+    errorWords: 'A step above 0, about a degree at most.',
   },
   {
     name: 'samplePeriodS',

@@ -83,7 +83,7 @@ export function ProbesSection() {
               <ProbeState probe={probe} />
             </div>
             {mayManage ? (
-              <div className="col-start-2 row-start-1 xl:col-start-3 xl:row-span-2">
+              <div className="col-start-2 row-start-1 xl:col-start-3 xl:row-span-2 xl:row-start-1">
                 <Menu
                   label={
                     <>
