@@ -7,6 +7,7 @@ import { ConfigModule } from './config/config.module.js';
 import type { HubConfig } from './config/environment.js';
 import { DatabaseModule } from './database/database.module.js';
 import { EquipmentModule } from './equipment/equipment.module.js';
+import { FollowModule } from './follow/follow.module.js';
 import { HealthModule } from './health/health.module.js';
 import { HousesModule } from './houses/houses.module.js';
 import { MembersModule } from './members/members.module.js';
@@ -39,6 +40,7 @@ export class AppModule {
         RunsModule,
         ReadingsModule,
         AlertsModule,
+        FollowModule,
         RehearsalsModule,
         RealtimeModule,
       ],

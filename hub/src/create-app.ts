@@ -26,7 +26,7 @@ export async function createApp(config: HubConfig): Promise<NestExpressApplicati
       json: true,
       logLevels: config.logLevels,
       flattenParams: true,
-      redact: ['password', 'accessToken', 'deviceToken', 'refreshToken', 'authorization', 'cookie'],
+      redact: ['password', 'accessToken', 'deviceToken', 'refreshToken', 'followToken', 'authorization', 'cookie'],
     }),
   });
   app.enableShutdownHooks();

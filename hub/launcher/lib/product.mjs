@@ -4,7 +4,7 @@ import { explainDiskError, LauncherError } from './launcher-error.mjs';
 import { takeLock } from './lock.mjs';
 import { startMariadb } from './mariadb.mjs';
 import { dataDir, root } from './paths.mjs';
-import { keepSecret } from './secrets.mjs';
+import { keepKeyPair, keepSecret } from './secrets.mjs';
 
 /**
  * What `npm start` and `npm run dev` share: the data folder with its lock, its secret and its database.
@@ -44,13 +44,24 @@ export async function startDatabaseOfProduct(session) {
       `The database ended by itself (${how}), so Steepfall stops; what was confirmed is on disk. Start again, and when it ends again, read ${join(dataDir, 'mariadb.log')}.`,
     ),
   );
-  return { DATABASE_URL: mariadb.url('steepfall'), JWT_SECRET: secret() };
+  const { publicKey, privateKey } = kept('push-keys.json', keepKeyPair);
+  return {
+    DATABASE_URL: mariadb.url('steepfall'),
+    JWT_SECRET: kept('jwt-secret', keepSecret),
+    VAPID_PUBLIC_KEY: publicKey,
+    VAPID_PRIVATE_KEY: privateKey,
+  };
 }
 
-function secret() {
-  const path = join(dataDir, 'jwt-secret');
+/**
+ * @template T
+ * @param {string} name
+ * @param {(path: string) => T} keep
+ */
+function kept(name, keep) {
+  const path = join(dataDir, name);
   try {
-    return keepSecret(path);
+    return keep(path);
   } catch (error) {
     throw explainDiskError(error, path);
   }

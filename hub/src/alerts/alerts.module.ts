@@ -3,5 +3,5 @@ import { ReadingsModule } from '../readings/readings.module.js';
 import { RunsModule } from '../runs/runs.module.js';
 import { RunSupervisor } from './run-supervisor.service.js';
 
-@Module({ imports: [RunsModule, ReadingsModule], providers: [RunSupervisor] })
+@Module({ imports: [RunsModule, ReadingsModule], providers: [RunSupervisor], exports: [RunSupervisor] })
 export class AlertsModule {}

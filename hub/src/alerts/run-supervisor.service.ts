@@ -1,6 +1,14 @@
 import { Injectable, Logger, type BeforeApplicationShutdown, type OnApplicationBootstrap } from '@nestjs/common';
 import type { Reading } from '@steepfall/shared/readings';
-import { bootDriver, driveRun, type DriverConfig, type RunDriver, type RunEvent } from '@steepfall/shared/runs';
+import {
+  bootDriver,
+  driveRun,
+  liveView,
+  type DriverConfig,
+  type LiveView,
+  type RunDriver,
+  type RunEvent,
+} from '@steepfall/shared/runs';
 import { runTimeAt } from '@steepfall/shared/timers';
 import type { Subscription } from 'rxjs';
 import { Clock } from '../common/clock.js';
@@ -68,6 +76,12 @@ export class RunSupervisor implements OnApplicationBootstrap, BeforeApplicationS
     this.subscription?.unsubscribe();
     if (this.timer) clearInterval(this.timer);
     await Promise.all([...this.watched.values()].flatMap(({ writing }) => writing ?? []));
+  }
+
+  /** What the watch makes of a run at this moment; `null` when it is over, or not yet brought up to date. */
+  viewOf(log: RunLog): LiveView | null {
+    const driver = this.watched.get(log.id)?.driver;
+    return driver ? liveView(driver, log.state, runTimeAt(log.clock, this.clock.nowMs())) : null;
   }
 
   private tick(): void {

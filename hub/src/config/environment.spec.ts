@@ -22,4 +22,16 @@ describe(readEnvironment, () => {
     for (const name of ['DATABASE_URL', 'PORT', 'DEMO', 'JWT_SECRET']) expect(read).toThrow(name);
     expect(read).not.toThrow('short;');
   });
+
+  it('takes a contact for push services that they take as well', () => {
+    const read = (PUSH_CONTACT: string) => readEnvironment({ ...least, PUSH_CONTACT }).pushContact;
+    expect(read('mailto:kitchen@brewers.org')).toBe('mailto:kitchen@brewers.org');
+    for (const odd of ['kitchen@brewers.org', 'mailto:me@localhost', 'https://hub.local', 'http://brewers.org'])
+      expect(() => read(odd)).toThrow('PUSH_CONTACT');
+  });
+
+  it('sends no notifications without both keys', () => {
+    expect(readEnvironment(least).vapidKeys).toBeNull();
+    expect(readEnvironment({ ...least, VAPID_PUBLIC_KEY: 'B'.repeat(87) }).vapidKeys).toBeNull();
+  });
 });

@@ -2,6 +2,14 @@ import { z } from 'zod';
 
 const logLevels = ['fatal', 'error', 'warn', 'log', 'debug', 'verbose'] as const;
 
+const contactWords = 'Give a real mailto: or https: address on a public domain.';
+
+/** Names that are kept for other uses are refused by some push services. */
+function isContact(contact: string): boolean {
+  const host = /^(?:mailto:[^@\s]+@|https:\/\/)([^/\s:]+)/.exec(contact)?.[1] ?? '';
+  return /\.[a-z]{2,}$/i.test(host) && !/\.(local|localhost|invalid|test|example)$/i.test(host);
+}
+
 /** Everything the hub reads from its environment. A wrong value stops the start, with every mistake named. */
 export const environmentSchema = z.object({
   NODE_ENV: z.enum(['production', 'development', 'test']).default('production'),
@@ -16,6 +24,17 @@ export const environmentSchema = z.object({
   /** Folder of the built tablet; left out, the hub serves the API only. */
   TABLET_DIST: z.string().min(1).optional(),
   DEMO: z.enum(['on', 'off']).default('off'),
+  /** Keys of this hub for notifications to phones; left out, it sends none. */
+  VAPID_PUBLIC_KEY: z
+    .string()
+    .regex(/^[\w-]{87}$/, 'This is not a public key for web push.')
+    .optional(),
+  VAPID_PRIVATE_KEY: z
+    .string()
+    .regex(/^[\w-]{43}$/, 'This is not a private key for web push.')
+    .optional(),
+  /** Whom a push service can turn to; left out, it is told the address of the page. */
+  PUSH_CONTACT: z.string().max(250).refine(isContact, contactWords).optional(),
   LOG_LEVEL: z.enum(logLevels).default('log'),
 });
 export type Environment = z.infer<typeof environmentSchema>;
@@ -29,6 +48,8 @@ export class HubConfig {
   readonly jwtSecret: string;
   readonly tabletDist: string | null;
   readonly isDemo: boolean;
+  readonly vapidKeys: { publicKey: string; privateKey: string } | null;
+  readonly pushContact: string | null;
   /** The chosen level and everything graver. */
   readonly logLevels: (typeof logLevels)[number][];
 
@@ -40,6 +61,9 @@ export class HubConfig {
     this.jwtSecret = environment.JWT_SECRET;
     this.tabletDist = environment.TABLET_DIST ?? null;
     this.isDemo = environment.DEMO === 'on';
+    const { VAPID_PUBLIC_KEY: publicKey, VAPID_PRIVATE_KEY: privateKey } = environment;
+    this.vapidKeys = publicKey && privateKey ? { publicKey, privateKey } : null;
+    this.pushContact = environment.PUSH_CONTACT ?? null;
     this.logLevels = logLevels.slice(0, logLevels.indexOf(environment.LOG_LEVEL) + 1);
   }
 }

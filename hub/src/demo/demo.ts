@@ -95,6 +95,7 @@ const removals = [
   // Lines that take another one back come before it.
   'DELETE FROM lot_moves WHERE house_id = :houseId AND undoes_id IS NOT NULL',
   ...[
+    'follow_links',
     'runs',
     'lot_reservations',
     'lot_moves',

@@ -1,3 +1,4 @@
 export * from './api.js';
+export * from './follow.js';
 export * from './roles.js';
 export * from './sockets.js';

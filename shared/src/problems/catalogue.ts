@@ -1,6 +1,6 @@
 /**
  * Every problem a person or a device can be told of. Clients switch on the type, never on the text.
- * 400 unreadable, 401 not signed in, 403 not allowed, 404 not there, 409 conflict, 413 too large, 422 readable but wrong,
+ * 400 unreadable, 401 not signed in, 403 not allowed, 404 not there, 409 conflict, 410 over, 413 too large, 422 readable but wrong,
  * 429 too often, 500 ours, 503 not now.
  */
 export const problemCatalogue = {
@@ -9,6 +9,7 @@ export const problemCatalogue = {
   'wrong-credentials': { status: 401, title: 'E-mail or password is wrong' },
   'session-expired': { status: 401, title: 'The session has ended' },
   'device-token-unknown': { status: 401, title: 'The device token is not known' },
+  'follow-link-unknown': { status: 401, title: 'This link opens nothing' },
   'not-allowed': { status: 403, title: 'Your role does not allow this' },
   'not-found': { status: 404, title: 'Not found' },
   'run-not-found': { status: 404, title: 'There is no such run' },
@@ -26,6 +27,7 @@ export const problemCatalogue = {
   'step-not-current': { status: 409, title: 'Another step comes first' },
   'nothing-to-undo': { status: 409, title: 'There is nothing to undo' },
   'event-id-taken': { status: 409, title: 'Another event has this id' },
+  'follow-link-over': { status: 410, title: 'This link is over' },
   'too-large': { status: 413, title: 'Too much at once' },
   'not-valid': { status: 422, title: 'Some of this does not fit' },
   'too-many-tries': { status: 429, title: 'Too many tries' },

@@ -5,7 +5,11 @@ export const ACCESS = 'steepfall:access';
 
 /** Who may call a handler. A handler without a rule is refused. */
 export type AccessRule =
-  { kind: 'public' } | { kind: 'signed-in' } | { kind: 'permission'; permission: Permission } | { kind: 'device' };
+  | { kind: 'public' }
+  | { kind: 'signed-in' }
+  | { kind: 'permission'; permission: Permission }
+  | { kind: 'device' }
+  | { kind: 'follower' };
 
 /** Anybody, signed in or not. */
 export const Public = () => SetMetadata<string, AccessRule>(ACCESS, { kind: 'public' });
@@ -16,3 +20,5 @@ export const Requires = (permission: Permission) =>
   SetMetadata<string, AccessRule>(ACCESS, { kind: 'permission', permission });
 /** A probe with its token; no member. */
 export const DeviceOnly = () => SetMetadata<string, AccessRule>(ACCESS, { kind: 'device' });
+/** A phone with the token of a follow link; no member, no probe. */
+export const FollowerOnly = () => SetMetadata<string, AccessRule>(ACCESS, { kind: 'follower' });

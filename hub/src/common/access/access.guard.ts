@@ -5,8 +5,9 @@ import { may } from '@steepfall/shared/contracts';
 import { ProblemError } from '@steepfall/shared/problems';
 import type { Request } from 'express';
 import { ACCESS, type AccessRule } from './access.decorators.js';
-import { identityOf, type Actor, type DeviceActor } from './actor.js';
+import { identityOf, type Actor, type DeviceActor, type FollowerActor } from './actor.js';
 import { DeviceAuthenticator } from './device-authenticator.js';
+import { FollowerAuthenticator } from './follower-authenticator.js';
 
 /**
  * The one guard of the hub, over HTTP and over sockets: finds out who is asking and holds that against the rule of the handler and the
@@ -30,6 +31,10 @@ export class AccessGuard extends AuthGuard('jwt') {
     if (rule.kind === 'public') return true;
     if (rule.kind === 'device') {
       await this.admitDevice(context);
+      return true;
+    }
+    if (rule.kind === 'follower') {
+      await this.admitFollower(context);
       return true;
     }
     if (context.getType() === 'http') await super.canActivate(context);
@@ -59,5 +64,16 @@ export class AccessGuard extends AuthGuard('jwt') {
     if (!device)
       throw new ProblemError('device-token-unknown', 'Send the token of a probe as "Authorization: Bearer …".');
     request.device = device;
+  }
+
+  private async admitFollower(context: ExecutionContext): Promise<void> {
+    if (context.getType() !== 'http') throw new ProblemError('not-allowed', 'Only a follower may ask for this.');
+    const request = context.switchToHttp().getRequest<Request & { follower?: FollowerActor }>();
+    const token = /^Follow ([\w-]{20,100})$/.exec(request.headers.authorization ?? '')?.[1];
+    const authenticator = this.moduleRef.get(FollowerAuthenticator, { strict: false });
+    const follower = token ? await authenticator.authenticate(token) : null;
+    if (!follower)
+      throw new ProblemError('follow-link-unknown', 'Open the link again, or ask the house for a new one.');
+    request.follower = follower;
   }
 }

@@ -2,7 +2,7 @@ import { may, roleSchema } from '@steepfall/shared/contracts';
 import request from 'supertest';
 import { v7 } from 'uuid';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
-import { signInAs } from '../../../test/builders.js';
+import { buildProbe, signInAs } from '../../../test/builders.js';
 import { createTestApp, type TestApp } from '../../../test/create-test-app.js';
 import { everyHandler, type Handler } from '../../../test/every-handler.js';
 import { expectProblem } from '../../../test/problem-matcher.js';
@@ -37,7 +37,7 @@ describe('every handler', () => {
 
   it('that needs a member refuses strangers', async () => {
     for (const handler of handlers.filter(
-      ({ rule, route }) => route && rule?.kind !== 'public' && rule?.kind !== 'device',
+      ({ rule, route }) => route && (rule?.kind === 'signed-in' || rule?.kind === 'permission'),
     ))
       expectProblem(await ask(handler), 'not-signed-in');
   });
@@ -48,6 +48,16 @@ describe('every handler', () => {
       expectProblem(await ask(handler), 'device-token-unknown');
       expectProblem(await ask(handler, bearer), 'device-token-unknown');
     }
+  });
+
+  it('that is a door for followers refuses strangers, members and probes', async () => {
+    const { bearer, accessToken, house } = await signInAs(testApp, 'owner');
+    const { bearer: probe } = await buildProbe(testApp, house);
+    const doors = handlers.filter(({ rule, route }) => route && rule?.kind === 'follower');
+    expect(doors.length).toBeGreaterThan(0);
+    for (const handler of doors)
+      for (const shown of [undefined, bearer, probe, `Follow ${accessToken}`, `Follow ${'A'.repeat(43)}`])
+        expectProblem(await ask(handler, shown), 'follow-link-unknown');
   });
 });
 

@@ -19,6 +19,13 @@ export interface DeviceActor {
   houseId: string;
 }
 
+/** A phone that showed the token of a follow link: it may see one run. */
+export interface FollowerActor {
+  linkId: string;
+  houseId: string;
+  runId: string;
+}
+
 /** What the handshake of a socket leaves in `socket.data`: one of the two. */
 export interface SocketIdentity {
   actor?: Actor;
@@ -44,4 +51,11 @@ export const Device = createParamDecorator((_: unknown, context: ExecutionContex
   const { device } = identityOf(context);
   if (!device) throw new ProblemError('device-token-unknown', 'Send the token of a probe.');
   return device;
+});
+
+/** The phone at the follow door: `see(@Follower() follower: FollowerActor)`. */
+export const Follower = createParamDecorator((_: unknown, context: ExecutionContext): FollowerActor => {
+  const { follower } = context.switchToHttp().getRequest<{ follower?: FollowerActor }>();
+  if (!follower) throw new ProblemError('follow-link-unknown', 'Open the link again, or ask the house for a new one.');
+  return follower;
 });

@@ -4,6 +4,7 @@ import { runsAndProbes } from './0002-runs-and-probes.js';
 import { recipeDesk } from './0003-recipe-desk.js';
 import { stores } from './0004-stores.js';
 import { kitAndUnits } from './0005-kit-and-units.js';
+import { follow } from './0006-follow.js';
 
 export interface Migration {
   name: string;
@@ -11,4 +12,4 @@ export interface Migration {
 }
 
 /** One line, forwards only: a new migration goes to the end. */
-export const migrations: Migration[] = [foundation, runsAndProbes, recipeDesk, stores, kitAndUnits];
+export const migrations: Migration[] = [foundation, runsAndProbes, recipeDesk, stores, kitAndUnits, follow];
