@@ -111,7 +111,7 @@ function KindFacts({ addition, path, errorAt, onChange }: Omit<AdditionFactsProp
     case 'tea':
       return (
         <>
-          <div className="grid grid-cols-2 gap-3">
+          <div className="grid gap-4 @md:grid-cols-2 @md:gap-3">
             <Choice
               label="Kind"
               path={`${path}.tea`}

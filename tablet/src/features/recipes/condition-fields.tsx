@@ -11,6 +11,7 @@ interface ConditionFieldsProps {
   onChange: (next: Addition) => void;
 }
 
+const twoFields = 'grid grid-cols-[1.25fr_1fr] items-end gap-3';
 const USUAL_IN_C = 62;
 const USUAL_OUT_C = 30;
 const USUAL_STAY_S = 180;
@@ -29,9 +30,10 @@ export function ConditionFields({ addition, path, errorAt, onChange }: Condition
     onChange({ ...addition, in: next[at] });
   };
   const degrees = quantityOf('temperature', units);
+  const hasField = addition.in.at === 'steep' || addition.in.at === 'falling';
   return (
     <>
-      <div className="grid grid-cols-2 items-end gap-3">
+      <div className={hasField ? twoFields : 'grid'}>
         <SelectField
           label={<SmallLabel>Goes in</SmallLabel>}
           name={`${path}.in.at`}
@@ -40,12 +42,12 @@ export function ConditionFields({ addition, path, errorAt, onChange }: Condition
         >
           <option value="fill">cold, with the water</option>
           <option value="steep">at the steep</option>
-          <option value="falling">on the fall, at</option>
+          <option value="falling">on the fall</option>
           <option value="transfer">into the keg</option>
         </SelectField>
         {addition.in.at === 'steep' ? (
           <NumberField
-            label="so long into the steep"
+            label="into the steep"
             path={`${path}.in.afterS`}
             scale={minutesScale}
             value={addition.in.afterS}
@@ -54,7 +56,7 @@ export function ConditionFields({ addition, path, errorAt, onChange }: Condition
           />
         ) : addition.in.at === 'falling' ? (
           <NumberField
-            label="when it falls through"
+            label="at"
             path={`${path}.in.tempC`}
             scale={degrees}
             value={addition.in.tempC}
@@ -95,20 +97,20 @@ function OutFields({ out, path, errorAt, lowestC, onChange }: OutFieldsProps) {
     onChange(next[at]);
   };
   return (
-    <div className="grid grid-cols-2 items-end gap-3">
+    <div className={out.at === 'transfer' ? 'grid' : twoFields}>
       <SelectField
         label={<SmallLabel>Comes out</SmallLabel>}
         name={`${path}.out.at`}
         value={out.at}
         onChange={({ target }) => changeOut(target.value as AdditionOut['at'])}
       >
-        <option value="timer">by the clock, after</option>
-        <option value="falling">on the fall, at</option>
+        <option value="timer">by the clock</option>
+        <option value="falling">on the fall</option>
         <option value="transfer">at the transfer</option>
       </SelectField>
       {out.at === 'timer' ? (
         <NumberField
-          label="so long after it went in"
+          label="after"
           path={`${path}.out.durationS`}
           scale={minutesScale}
           value={out.durationS}
@@ -117,7 +119,7 @@ function OutFields({ out, path, errorAt, lowestC, onChange }: OutFieldsProps) {
         />
       ) : out.at === 'falling' ? (
         <NumberField
-          label="when it has fallen to"
+          label="at"
           path={`${path}.out.tempC`}
           scale={quantityOf('temperature', units)}
           value={out.tempC}

@@ -1,4 +1,5 @@
 import type { Assumptions } from '@steepfall/shared/sheets';
+import { litersToUsFluidOunces, usFluidOuncesToLiters } from '@steepfall/shared/units';
 import { Segmented } from '#components/segmented.tsx';
 import { quantityOf, useUnits } from '#lib/units.ts';
 import { NumberField, plainScale, type Scale } from './number-field.tsx';
@@ -15,6 +16,12 @@ const labels: Record<NumberName, string> = {
   hopBaseRatio: 'Base of these hops, against the usual',
 };
 
+const fluidOunces: Scale = {
+  symbol: 'fl oz',
+  fromInside: (ml) => litersToUsFluidOunces(ml / 1000),
+  toInside: (ounces) => usFluidOuncesToLiters(ounces) * 1000,
+};
+
 interface DefaultFieldsProps {
   /** Members of `assume`. */
   names: readonly string[];
@@ -29,7 +36,7 @@ export function DefaultFields({ names, rowId }: DefaultFieldsProps) {
   const scales: Record<NumberName, Scale> = {
     fillC: quantityOf('temperature', units),
     roomC: quantityOf('temperature', units),
-    servingMl: plainScale('mL'),
+    servingMl: units.volume === 'L' ? plainScale('mL') : fluidOunces,
     chillerConstantPerS: plainScale('1/s'),
     teaBaseRatio: plainScale('times'),
     hopBaseRatio: plainScale('times'),

@@ -41,6 +41,8 @@ export function DeskPlaceProvider({ children }: { children: ReactNode }) {
     if (!wanted) return;
     const field = fieldAt(wanted.path);
     field?.focus({ preventScroll: true });
+    // What is typed next is meant in place of what stands there.
+    if (field instanceof HTMLInputElement) field.select();
     field?.scrollIntoView({ block: 'center' });
   }, [wanted]);
 

@@ -38,7 +38,7 @@ const BOTTOM_PX = 34;
 const ROW_PX = 21;
 const GAP_PX = 14;
 /** Of the type that the words are set in, on average. */
-const LETTER_PX = 8.2;
+const LETTER_PX = 8;
 const TICK_STEPS_MIN = [2, 5, 10, 15, 20, 30, 60, 120, 180, 240, 360, 720, 1440];
 /** Room for "1 h 30 min" and some air. */
 const TICK_PX = 84;
@@ -176,7 +176,7 @@ function flagLabels(events: readonly DayEvent[], { at, plot }: Place): LineLabel
     const mark = at(event);
     const text = eventWords(event);
     const textY = mark.y - 12 - (events.length - 1 - index) * ROW_PX;
-    const textX = Math.max(4, Math.min(mark.x + 8, plot.right - widthOf(text)));
+    const textX = Math.max(4, Math.min(mark.x + 8, plot.right + RIGHT_PX - widthOf(text)));
     return label(`hold${index}`, mark, text, { x: textX, y: textY }, 'start', `M${mark.x} ${mark.y}V${textY - 11}`);
   });
 }

@@ -1,7 +1,18 @@
-import { Combobox, ComboboxInput, ComboboxOption, ComboboxOptions, Description, Field, Label } from '@headlessui/react';
+import { useState } from 'react';
+import {
+  ComboboxButton,
+  Combobox,
+  ComboboxInput,
+  ComboboxOption,
+  ComboboxOptions,
+  Description,
+  Field,
+  Label,
+} from '@headlessui/react';
 import type { Ingredient } from '@steepfall/shared/contracts';
 import { classNames } from '#components/class-names.ts';
 import { useUnits } from '#lib/units.ts';
+import { Chevron } from './chevron.tsx';
 import { stockWords } from './from-stores.ts';
 import { SmallLabel } from './number-field.tsx';
 
@@ -18,33 +29,49 @@ interface NameFieldProps {
 /** A name to type freely, or one from the stores, which brings what is known of it along. */
 export function NameField({ value, path, error, stores, onType, onTake }: NameFieldProps) {
   const units = useUnits();
+  const [isTyping, setIsTyping] = useState(false);
   const wanted = value.trim().toLowerCase();
-  const fitting = stores.filter(({ facts }) => facts.name.toLowerCase().includes(wanted));
-  const offered = fitting.length > 0 ? fitting : stores;
+  // Before anything is typed the whole shelf; then only what fits, so that Enter never takes what nobody meant.
+  const offered = isTyping ? stores.filter(({ facts }) => facts.name.toLowerCase().includes(wanted)) : stores;
   return (
     <Field className="grid gap-1.5">
       <Label>
         <SmallLabel>Name</SmallLabel>
       </Label>
       <Combobox<Ingredient | null>
-        immediate={stores.length > 0}
+        immediate
         value={null}
         onChange={(ingredient) => {
           if (ingredient) onTake(ingredient);
         }}
+        onClose={() => setIsTyping(false)}
       >
-        <ComboboxInput
-          name={path}
-          autoComplete="off"
-          displayValue={() => value}
-          value={value}
-          aria-invalid={error ? true : undefined}
-          onChange={({ target }) => onType(target.value)}
-          className={classNames(
-            'min-h-12 w-full rounded-lg border-2 bg-raised px-4 text-body text-text',
-            error ? 'border-ember' : 'border-edge',
-          )}
-        />
+        <span className="relative block">
+          <ComboboxInput
+            name={path}
+            autoComplete="off"
+            displayValue={() => value}
+            value={value}
+            aria-invalid={error ? true : undefined}
+            onChange={({ target }) => {
+              setIsTyping(true);
+              onType(target.value);
+            }}
+            className={classNames(
+              'min-h-12 w-full rounded-lg border-2 bg-raised px-4 text-body text-text',
+              stores.length > 0 && 'pr-14',
+              error ? 'border-ember' : 'border-edge',
+            )}
+          />
+          {stores.length > 0 ? (
+            <ComboboxButton
+              aria-label="Choose from the stores"
+              className="absolute inset-y-0 right-0 grid w-12 cursor-pointer place-items-center rounded-lg"
+            >
+              <Chevron isOpen={false} />
+            </ComboboxButton>
+          ) : null}
+        </span>
         {offered.length > 0 ? (
           <ComboboxOptions
             anchor={{ to: 'bottom start', gap: 4 }}

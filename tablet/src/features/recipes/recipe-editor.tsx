@@ -1,4 +1,4 @@
-import { useEffect, useMemo, useRef, useState } from 'react';
+import { memo, useEffect, useMemo, useRef, useState } from 'react';
 import { zodResolver } from '@hookform/resolvers/zod';
 import { useQuery } from '@tanstack/react-query';
 import type { Recipe, Revision } from '@steepfall/shared/contracts';
@@ -31,7 +31,7 @@ import { isSameJson, recipeFormSchema, wrongPaths, type RecipeForm } from './rec
 import { SaveDialog } from './save-dialog.tsx';
 import { ScaleDialog } from './scale-dialog.tsx';
 import { SheetSection } from './sheet-section.tsx';
-import { useDesk } from './use-desk.ts';
+import { useDesk, type Desk as DeskState } from './use-desk.ts';
 import { usePart } from './use-part.ts';
 import { useSave } from './use-save.ts';
 import { WarningList } from './warning-list.tsx';
@@ -127,7 +127,7 @@ function Desk({ recipe, base, saved, draftKey, start }: RecipeEditorProps) {
     </div>
   );
   const warnings = (go: (path: string) => void) =>
-    values.document.additions.length === 0 ? (
+    values.document.additions.length === 0 && !desk.impossible ? (
       <p className="text-lead text-soft">
         Nothing goes in yet. Add a tea, hops and an acid: the line, the figures and what to look out for follow as you
         type.
@@ -173,7 +173,7 @@ function Desk({ recipe, base, saved, draftKey, start }: RecipeEditorProps) {
             className="xl:sticky xl:top-20 xl:max-h-[calc(100dvh-5rem)] xl:self-start xl:overflow-y-auto xl:pb-8"
           >
             <h2 className="sr-only">The planned day</h2>
-            <OldWords isOld={desk.isOld && desk.figures !== null} />
+            <OldWords desk={desk} />
             {line}
             <div className="mt-6 grid gap-6">
               <AcidProposal desk={desk} kit={kit} />
@@ -199,7 +199,7 @@ function Desk({ recipe, base, saved, draftKey, start }: RecipeEditorProps) {
       <LeadsStrip desk={desk}>
         {(close) => (
           <div className="grid gap-8">
-            <OldWords isOld={desk.isOld && desk.figures !== null} />
+            <OldWords desk={desk} />
             {line}
             <div className="grid gap-4">
               <KitChooser />
@@ -249,10 +249,14 @@ function Desk({ recipe, base, saved, draftKey, start }: RecipeEditorProps) {
   );
 }
 
-function OldWords({ isOld }: { isOld: boolean }) {
+function OldWords({ desk: { isOld, figures, impossible } }: { desk: DeskState }) {
+  const isShown = isOld && figures !== null;
+  const why = impossible
+    ? 'what is typed now cannot be worked out'
+    : 'one field holds something that cannot be reckoned with';
   return (
-    <p role="status" className={isOld ? 'mb-3 text-note font-medium' : 'sr-only'}>
-      {isOld ? 'As of before: one field holds something that cannot be reckoned with.' : ''}
+    <p role="status" className={isShown ? 'mb-3 text-note font-medium' : 'sr-only'}>
+      {isShown ? `As of before: ${why}.` : ''}
     </p>
   );
 }
@@ -295,8 +299,8 @@ function useDraft(draftKey: string, values: RecipeForm, unchanged: RecipeForm, b
   };
 }
 
-/** Everything that is typed, in the order of the day. */
-function RecipeFields() {
+/** Everything that is typed, in the order of the day. Each part listens for itself, so that a key press draws one part again. */
+const RecipeFields = memo(function RecipeFields() {
   const units = useUnits();
   const { register, formState } = useFormContext<RecipeForm>();
   const volume = usePart('volumeL');
@@ -304,7 +308,11 @@ function RecipeFields() {
   const litres = quantityOf('volume', units);
   const { data: stores = [] } = useQuery(storesQuery);
   return (
-    <form noValidate onSubmit={(event) => event.preventDefault()} className="grid min-w-0 content-start gap-10">
+    <form
+      noValidate
+      onSubmit={(event) => event.preventDefault()}
+      className="@container grid min-w-0 content-start gap-10"
+    >
       <section aria-label="The recipe" className="grid gap-4">
         <LevelRule>The recipe</LevelRule>
         <TextField
@@ -358,4 +366,4 @@ function RecipeFields() {
       <TargetsSection />
     </form>
   );
-}
+});

@@ -203,7 +203,10 @@ function StoresAnswer({ fit, onSwap }: { fit: StoresFit; onSwap: (swap: Swap) =>
           {fit.swaps.length > 0 ? ', or swap part of it.' : '.'}
         </p>
       ) : (
-        <p className="text-lead">The stores have enough for {volume(fit.wantedL)}.</p>
+        <p className="text-lead">
+          {fit.notInStores.length > 0 ? 'What the stores know of it is' : 'The stores have'} enough for{' '}
+          {volume(fit.wantedL)}.
+        </p>
       )}
       {fit.swaps.length > 0 ? (
         <ul className="grid">

@@ -1,5 +1,6 @@
 import { useEffect, useMemo, useRef, useState } from 'react';
 import { checkSheet, type OwnStep, type RecipeDocument, type Step } from '@steepfall/shared/sheets';
+import { useFormContext } from 'react-hook-form';
 import { Button } from '#components/button.tsx';
 import { LevelRule } from '#components/level-rule.tsx';
 import { Menu } from '#components/menu.tsx';
@@ -8,6 +9,7 @@ import { offerUndo } from '#lib/undo.ts';
 import { inPersonsWords, useUnits } from '#lib/units.ts';
 import { compiledSheet } from './compiled-sheet.ts';
 import { OwnStepDialog } from './own-step-dialog.tsx';
+import type { RecipeForm } from './recipe-form.ts';
 import { SheetSteps } from './sheet-steps.tsx';
 import { usePart } from './use-part.ts';
 
@@ -15,6 +17,7 @@ import { usePart } from './use-part.ts';
 export function SheetSection({ document }: { document: RecipeDocument | null }) {
   const { house } = useKnown();
   const units = useUnits();
+  const { getValues } = useFormContext<RecipeForm>();
   const { value: steps, change } = usePart('steps');
   const [edited, setEdited] = useState<{ step: OwnStep | null } | null>(null);
   const { moved, noteMove } = useMoveFocus();
@@ -33,10 +36,11 @@ export function SheetSection({ document }: { document: RecipeDocument | null }) 
     noteMove({ id: step.id, by, words: `${step.title}, now ${index + by + 1} of ${ids.length}` });
   };
   const take = (step: OwnStep) => {
-    const before = steps;
     change({ ...steps, own: steps.own.filter(({ id }) => id !== step.id) });
     offerUndo(`${step.title} taken out.`, () => {
-      change(before);
+      // Into the steps as they are by then.
+      const now = getValues('document').steps;
+      change({ ...now, own: [...now.own, step] });
       return Promise.resolve();
     });
   };

@@ -1,5 +1,6 @@
 import { useId, useState } from 'react';
 import type { WaterPart } from '@steepfall/shared/sheets';
+import { useFormContext } from 'react-hook-form';
 import { Button } from '#components/button.tsx';
 import { TextField } from '#components/field.tsx';
 import { LevelRule } from '#components/level-rule.tsx';
@@ -7,7 +8,7 @@ import { Segmented } from '#components/segmented.tsx';
 import { offerUndo } from '#lib/undo.ts';
 import { Chevron } from './chevron.tsx';
 import { NumberField, plainScale, SmallLabel } from './number-field.tsx';
-import { newWater } from './recipe-form.ts';
+import { newWater, type RecipeForm } from './recipe-form.ts';
 import { usePart } from './use-part.ts';
 
 const ions = [
@@ -23,13 +24,17 @@ const percentScale = plainScale('%');
 
 /** How much water, and which: several are poured together by their share. */
 export function WaterSection() {
+  const { getValues } = useFormContext<RecipeForm>();
   const { value: waters, change, errorAt } = usePart('waters');
   const sum = waters.reduce((total, { percent }) => total + percent, 0);
   const remove = (index: number) => {
-    const before = waters;
+    const taken = waters[index];
+    if (!taken) return;
     change(shared(waters.toSpliced(index, 1)));
-    offerUndo(`${waters[index]?.name || 'The water'} taken out.`, () => {
-      change(before);
+    offerUndo(`${taken.name || 'The water'} taken out.`, () => {
+      // Into the waters as they are by then.
+      const now = getValues('document').waters;
+      if (!now.some(({ id }) => id === taken.id)) change(shared([...now, taken]));
       return Promise.resolve();
     });
   };
@@ -68,7 +73,7 @@ export function WaterSection() {
   );
 }
 
-/** What one water leaves when it goes, the first one takes. */
+/** What the others leave of the whole, the first one has. */
 function shared(waters: WaterPart[]): WaterPart[] {
   const [first, ...rest] = waters;
   if (!first) return waters;
