@@ -5,7 +5,11 @@
  */
 import { availableParallelism, loadavg } from 'node:os';
 import { performance } from 'node:perf_hooks';
+import * as desk from '../dist/desk/index.js';
 import * as figures from '../dist/figures/index.js';
+import * as runs from '../dist/runs/index.js';
+import { compileSheet } from '../dist/sheets/index.js';
+import { buildDocument, LogBuilder, START_MS } from '../dist/testing/index.js';
 
 const chiller = { kind: 'cool', surroundC: 15, kPerS: 0.08 / 60 };
 const heat = {
@@ -82,6 +86,23 @@ function spread(times) {
   return `p50 ${at(0.5)}, p99 ${at(0.99)}, slowest ${at(1)} ms`;
 }
 
+/** A run that has come to its keg, with a reading a second for two hours: what the run sheet works out every second. */
+function runOfTwoHours() {
+  const document = buildDocument();
+  const kit = { altitudeM: 0, kettle: null, chiller: { metal: 'copper', lengthM: 7.6, coolantC: 12 } };
+  const { curve } = desk.plannedDay(document, kit);
+  const log = new LogBuilder(compileSheet(document, { altitudeM: 0, reachS: 8 }), { document, kit });
+  log.done('light-heat', 'salts', 'acid').wait(3000).done('tea-in').wait(240).done('tea-out', 'chill').wait(600);
+  log.done('hops-in').wait(1200).done('hops-out');
+  const readings = Array.from({ length: 7200 }, (_, second) => ({
+    atMs: START_MS + second * 1000,
+    tempC: (figures.curveTempC(curve, second * 1000) ?? 20) + 0.05 * Math.sin(second),
+  }));
+  return { state: runs.foldRun(log.entries), readings };
+}
+const run = runOfTwoHours();
+const line = runs.liquidLine(run.readings, 6);
+
 function measure(name, limitMs, runs, warm, work) {
   for (let run = 0; run < warm; run += 1) work(run);
   const [clock, processor] = [[], []];
@@ -103,3 +124,7 @@ console.log(`all figures of a recipe, first time in a fresh process: ${(performa
 measure('all figures of a recipe', 16, 500, 20, recipe);
 measure(`all sums over a ${HOURS} h curve at 1 Hz`, 50, 60, 3, account);
 measure(`steep dose over a ${HOURS} h curve at 1 Hz`, 50, 60, 3, () => figures.steepDoseMin(recorded));
+measure('the line of two hours at 1 Hz, once', 200, 60, 3, () => runs.liquidLine(run.readings, 6));
+measure(`the account of a run while it runs (${line.points.length} points), every second`, 16, 500, 20, (second) =>
+  runs.accountSoFar(run.state, line, START_MS + 6_000_000 + second),
+);
