@@ -28,12 +28,5 @@ export function ControlledQuantity<Values extends FieldValues>({
   ...rest
 }: ControlledProps<Values> & { kind: QuantityKind }) {
   const { field, fieldState } = useController({ control, name });
-  return (
-    <QuantityField
-      {...rest}
-      {...field}
-      onChange={(inside) => field.onChange(inside ?? null)}
-      error={fieldState.error?.message}
-    />
-  );
+  return <QuantityField {...rest} {...field} error={fieldState.error?.message} />;
 }

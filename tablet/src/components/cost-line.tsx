@@ -32,7 +32,9 @@ export function CostLine({ cost: { total, perL, perServing, unknown } }: { cost:
         )}
       </dl>
       {unknown.length > 0 ? (
-        <p className="text-note text-soft">Without {listWords(unknown)}: not all of it comes from a lot with a price.</p>
+        <p className="text-note text-soft">
+          Without {listWords(unknown)}: not all of it comes from a lot with a price.
+        </p>
       ) : null}
     </div>
   );

@@ -37,7 +37,7 @@ import {
   type Kind,
 } from './equipment-facts.ts';
 import { useVersion } from './save-at-version.ts';
-import { SendForm } from './send-form.tsx';
+import { SendForm } from '#components/send-form.tsx';
 
 /** What the form holds; the contract decides what of it is right. */
 interface Draft {

@@ -13,7 +13,7 @@ import { callHubFor } from '#lib/api-client.ts';
 import { houseQuery } from '#lib/hub-queries.ts';
 import { noteHouse, useKnown, useMay } from '#lib/session.ts';
 import { useUnits } from '#lib/units.ts';
-import { SendForm } from './send-form.tsx';
+import { SendForm } from '#components/send-form.tsx';
 
 /** Name and altitude. The altitude sets the gas pressure and the boiling point. */
 export function HouseFacts() {

@@ -23,7 +23,7 @@ import { callHubFor } from '#lib/api-client.ts';
 import { membersQuery } from '#lib/hub-queries.ts';
 import { useKnown, useMay } from '#lib/session.ts';
 import { failureWords, fieldProblems } from '#lib/words.ts';
-import { SendForm } from './send-form.tsx';
+import { SendForm } from '#components/send-form.tsx';
 
 const roleTells: Record<Role, string> = {
   owner: 'may do everything',

@@ -14,7 +14,7 @@ import { QuantityField } from '#components/quantity-field.tsx';
 import { callHubFor } from '#lib/api-client.ts';
 import { plainQuantity, type Quantity, type QuantityKind } from '#lib/units.ts';
 import { fieldProblems } from '#lib/words.ts';
-import { SendForm } from './send-form.tsx';
+import { SendForm } from '#components/send-form.tsx';
 import { useSaveProbe } from './use-save-probe.ts';
 
 const probeFields: {
