@@ -93,7 +93,7 @@ export function SheetSteps({ sheet, acts, below, isOneColumn = false }: SheetSte
               ) : null}
               {below?.(step)}
             </div>
-            {acts ? <div className="flex items-start max-sm:col-start-2">{acts(step, index)}</div> : null}
+            {acts ? <div className="flex items-start max-sm:col-start-2 max-sm:-ml-3">{acts(step, index)}</div> : null}
           </li>
         );
       })}

@@ -1,4 +1,4 @@
-import { useMemo, useState } from 'react';
+import { useEffect, useMemo, useState } from 'react';
 import {
   createColumnHelper,
   getCoreRowModel,
@@ -187,6 +187,11 @@ export function StoresTable({ ingredients, onReceive }: StoresTableProps) {
     initialState: { pagination: { pageSize: 20 } },
     autoResetPageIndex: false,
   });
+  // What is asked for anew must not turn the page; only a page that is gone does.
+  const last = Math.max(0, table.getPageCount() - 1);
+  useEffect(() => {
+    if (table.getState().pagination.pageIndex > last) table.setPageIndex(last);
+  }, [table, last]);
   const startOver = () => table.setPageIndex(0);
   return (
     <div className="grid gap-6">
