@@ -4,6 +4,7 @@ import { clockAtRate } from '../timers/index.js';
 import { canShelve, LONGEST_SHELF_S } from './alert-priority.js';
 import type { MissedChoiceKind, RunEvent, RunEventOf, RunEventType } from './events.js';
 import { isUndoable } from './fold.js';
+import { HOLD_TIMER } from './missed-choices.js';
 import type { RunState } from './state.js';
 
 /** What a person asks for. `decide` turns it into facts, or says why not. */
@@ -97,7 +98,8 @@ export function decide(state: RunState, command: RunCommand, context: DecideCont
     case 'goBack': {
       const last = state.steps.find(({ step }) => step.id === state.doneOrder.at(-1));
       if (!last?.doneEventId) return refuse('nothing-to-undo', 'This is the first step.');
-      return facts(...[last.doneEventId, ...last.repeatEventIds].map((eventId) => fact('event.undone', { eventId })));
+      const undone = [last.doneEventId, ...last.repeatEventIds].map((eventId) => fact('event.undone', { eventId }));
+      return facts(...undone, ...takenBackWith(state, last.step.id).map(({ type, payload }) => fact(type, payload)));
     }
     case 'undoEvent': {
       if (!isUndoable(command.eventType)) return refuse('nothing-to-undo', 'This cannot be taken back.');
@@ -151,7 +153,10 @@ export function decide(state: RunState, command: RunCommand, context: DecideCont
       const made = fact('choice.made', choice);
       // Held by a timer of its own, which goes through the same ladder as every timer.
       if (choice.holdS === null) return facts(made);
-      return facts(made, fact('timer.started', { timerId: context.newId(), label: 'Hold', durationS: choice.holdS }));
+      return facts(
+        made,
+        fact('timer.started', { timerId: context.newId(), label: HOLD_TIMER, durationS: choice.holdS }),
+      );
     }
     case 'checkSound':
       return facts(fact('sound.checked', { isHeard: command.isHeard }));
@@ -165,6 +170,21 @@ export function decide(state: RunState, command: RunCommand, context: DecideCont
       return facts(fact('run.ended', { outcome: command.outcome, ...(reason ? { reason } : {}) }));
     }
   }
+}
+
+/** What was chosen about a missed step goes back with it: more in the bag, a hold that runs. */
+function takenBackWith(
+  state: RunState,
+  stepId: string,
+): (Pick<RunEventOf<'event.undone'>, 'type' | 'payload'> | Pick<RunEventOf<'timer.stopped'>, 'type' | 'payload'>)[] {
+  return state.choices
+    .filter((choice) => choice.stepId === stepId)
+    .flatMap(({ eventId, atMs, holdS }) => [
+      { type: 'event.undone' as const, payload: { eventId } },
+      ...state.timers
+        .filter(({ label, startedAtMs }) => holdS !== null && label === HOLD_TIMER && startedAtMs === atMs)
+        .map(({ id }) => ({ type: 'timer.stopped' as const, payload: { timerId: id } })),
+    ]);
 }
 
 function refuse(type: Parameters<typeof problem>[0], detail: string): Decision {

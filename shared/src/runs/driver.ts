@@ -1,4 +1,3 @@
-import { v5 as uuidV5 } from 'uuid';
 import type { Reading } from '../readings/index.js';
 import type { Step, VesselAct } from '../sheets/index.js';
 import {
@@ -19,16 +18,17 @@ import {
   type WatchEstimate,
   type WatchState,
 } from '../watch/index.js';
-import type { RunEvent, RunEventOf, RunEventType } from './events.js';
+import { derivedEvent } from './derived-event.js';
+import type { RunEvent } from './events.js';
+import { faultEvents } from './faults.js';
 import type { RunState, StepProgress } from './state.js';
-
-/** Names ids that several devices must come to alike. Any fixed UUID does; this one must never change. */
-const DERIVED_ID_NAMESPACE = '6e0f3a52-1d0c-4f0f-9a5e-7c1b2d94b3e8';
 
 /** Silence at the start counts from the first tick; the same 30 s that make a later silence an alert. */
 const FIRST_READING_DUE_MS = 30_000;
 /** On a fast clock a hiccup of the network is half a minute of run time: silence also has to last this long on the wall. */
 const SILENT_WALL_MS = 2_000;
+/** Readings have to come for this long before a silent probe counts as back. */
+const BACK_FOR_MS = 10_000;
 /** Older than this, nobody can say any more what the liquid was then. */
 const SAME_INSTANT_MS = 5_000;
 
@@ -50,6 +50,8 @@ export interface RunDriver {
   /** Acts told to the watch so far, as `event id/act`. */
   toldActs: Record<string, { act: VesselAct; atMs: number }>;
   firstTickMs: number | null;
+  /** Since when readings come without a break; null while they do not. */
+  liveSinceMs: number | null;
 }
 
 /** A level or a deadline that an alert will come for. */
@@ -84,7 +86,7 @@ export interface LiveView {
 
 export function startDriver(config: DriverConfig): RunDriver {
   const watch = startWatch(config.watch);
-  return { config, watch, ladders: {}, timerLadders: {}, toldActs: {}, firstTickMs: null };
+  return { config, watch, ladders: {}, timerLadders: {}, toldActs: {}, firstTickMs: null, liveSinceMs: null };
 }
 
 /**
@@ -114,6 +116,8 @@ export function driveRun(
     climb(reading.atMs);
   }
   climb(input.nowMs);
+  const isLive = estimateAt(next.watch, input.nowMs).status === 'live';
+  next = { ...next, liveSinceMs: isLive ? (next.liveSinceMs ?? input.nowMs) : null };
 
   events.push(...automaticDone(next, state, input), ...signalEvents(next, state, armed, input));
   return { driver: next, events };
@@ -262,17 +266,6 @@ function calledOff(
   return [derivedEvent(input, 'alert.cleared', `${key}/${crossing}`, input.nowMs, { key, crossing })];
 }
 
-function derivedEvent<Type extends RunEventType>(
-  { runId, station }: DriveInput,
-  type: Type,
-  name: string,
-  atMs: number,
-  payload: RunEventOf<Type>['payload'],
-): RunEvent {
-  const id = uuidV5(`${runId}/${type}/${name}`, DERIVED_ID_NAMESPACE);
-  return { id, runId, type, v: 1, atMs: Math.round(atMs), by: null, station, payload } as RunEvent;
-}
-
 function raisedEvent(input: DriveInput, item: Armed, alert: LadderAlert): RunEvent {
   const { key, crossing, stage, tempC } = alert;
   const dueAtMs = item.by === 'timer' ? item.endsAtMs : alert.crossingAtMs;
@@ -318,31 +311,18 @@ function signalEvents(driver: RunDriver, state: RunState, armed: readonly Armed[
   if (!driver.config.hasProbe) return [];
   const { status, lastGoodAtMs } = estimateAt(driver.watch, input.nowMs);
   const silentMs = input.nowMs - (lastGoodAtMs ?? driver.firstTickMs ?? input.nowMs);
-  const earlier = state.alerts.filter(({ rule }) => rule === 'signal');
-  const open = earlier.find(({ clearedAtMs }) => clearedAtMs === null);
   const level = armed.find((item) => item.by === 'temperature');
-
-  if (open) {
-    if (status !== 'live' && level) return [];
-    const { key, crossing } = open;
-    return [derivedEvent(input, 'alert.cleared', `${key}/${crossing}`, input.nowMs, { key, crossing })];
-  }
   const isSilent =
     status === 'stale' || status === 'lost' || (status === 'starting' && silentMs >= FIRST_READING_DUE_MS);
-  if (!isSilent || !level || silentMs < SILENT_WALL_MS * (state.clock?.rate ?? 1)) return [];
-  const crossing = earlier.length + 1;
-  return [
-    derivedEvent(input, 'alert.raised', `signal/${crossing}/now`, input.nowMs, {
-      key: 'signal',
-      crossing,
-      rule: 'signal',
-      stage: 'now',
-      stepId: level.stepId,
-      actStepId: null,
-      tempC: null,
-      targetC: null,
-      direction: null,
-      dueAtMs: null,
-    }),
-  ];
+  const sight = { rule: 'signal', key: 'signal', stepId: level?.stepId ?? null } as const;
+  // Nobody waits for a reading any more: it is over at once.
+  if (!level) return faultEvents(state, { ...sight, isTrue: false, heldMs: Infinity, ...signalDelays(state) }, input);
+  const isBack = driver.liveSinceMs !== null;
+  if (!isSilent && !isBack) return [];
+  const heldMs = isBack ? input.nowMs - (driver.liveSinceMs ?? input.nowMs) : silentMs;
+  return faultEvents(state, { ...sight, isTrue: !isBack, heldMs, ...signalDelays(state) }, input);
+}
+
+function signalDelays({ clock }: RunState): { onDelayMs: number; offDelayMs: number } {
+  return { onDelayMs: SILENT_WALL_MS * (clock?.rate ?? 1), offDelayMs: BACK_FOR_MS };
 }

@@ -335,11 +335,14 @@ function markStanding(state: RunState): void {
       alert.rule === 'timer' &&
       alert.stepId === null &&
       !state.timers.some((timer) => `timer:${timer.id}` === alert.key);
+    // To choose is to answer: a reheat leaves its step open, and calls again at the next crossing.
+    const isChosen = state.choices.some(({ key, crossing }) => key === alert.key && crossing === alert.crossing);
     alert.isStanding =
       state.status === 'running' &&
       alert.acknowledgedAtMs === null &&
       alert.clearedAtMs === null &&
       actStep?.status !== 'done' &&
+      !isChosen &&
       !isOutdated &&
       !isTimerGone;
   }

@@ -7,6 +7,7 @@ export * from './alert-priority.js';
 export * from './boot-driver.js';
 export * from './decide.js';
 export * from './driver.js';
+export * from './faults.js';
 export * from './events.js';
 export * from './missed-choices.js';
 export * from './fold.js';

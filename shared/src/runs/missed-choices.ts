@@ -15,8 +15,8 @@ import type { MissedChoiceKind } from './events.js';
 export interface MissedCatch {
   targetC: number;
   nowC: number;
-  /** Where what goes in comes out again. */
-  outC: number;
+  /** What ends the contact: a level on the fall, or the time that it stands. */
+  out: { tempC: number } | { standS: number };
   massG: number;
   /** What the liquid falls toward: the coolant, or the room. */
   surroundC: number;
@@ -37,15 +37,23 @@ export interface MissedChoice {
   isoRatio: number;
 }
 
+/** The name of the timer of a hold: its end asks for the chiller. */
+export const HOLD_TIMER = 'Hold';
+
 /** Rate constant to count with when the fall cannot be seen, 1/s: a chiller of the usual kind (judgement). */
 const USUAL_PER_S = 1.3e-3;
-const SLOWEST_PER_S = 1e-5;
 /** A reheat goes past the target, so that the liquid falls through it once more, K. */
 const PAST_K = 3;
 /** More than double the hops is another drink. */
 const MOST_EXTRA = 1;
-/** A hold longer than this is another day's work. */
-const LONGEST_HOLD_S = 2 * 3600;
+/** A hold or a reheat longer than this is another day's work. */
+const LONGEST_WAIT_S = 2 * 3600;
+/** What differs by less than this from the plan is the plan: nobody tastes it, and nobody weighs it. */
+const AS_PLANNED = 0.03;
+/** Slower than this (0.1 K/min) is no fall that anything can be told from. */
+const LEAST_FALL_C_PER_MIN = 0.1;
+/** What never gets there comes out by hand after an hour. */
+const BY_HAND_S = 3600;
 const STEP_K = 0.5;
 
 const metals: Record<NonNullable<KettleFacts['metal']>, HeatedMaterial> = {
@@ -56,20 +64,26 @@ const metals: Record<NonNullable<KettleFacts['metal']>, HeatedMaterial> = {
 };
 
 function fallPerS({ nowC, surroundC, rateCPerMin }: MissedCatch): number {
-  if (rateCPerMin === null || nowC - surroundC < 1) return USUAL_PER_S;
-  return Math.max(SLOWEST_PER_S, -rateCPerMin / 60 / (nowC - surroundC));
+  const fallCPerMin = rateCPerMin === null ? 0 : -rateCPerMin;
+  if (fallCPerMin < LEAST_FALL_C_PER_MIN || nowC - surroundC < 1) return USUAL_PER_S;
+  return fallCPerMin / 60 / (nowC - surroundC);
 }
 
-/** The fall by Newton's law from one temperature to another, as points; a single instant where there is nothing to fall. */
-function fall(fromC: number, toC: number, surroundC: number, perS: number): TemperatureCurve {
-  const durationS = fromC > toC ? newtonDurationS(fromC, toC, surroundC, perS) : 0;
-  // What never gets there comes out by hand after an hour.
-  const lengthS = durationS ?? 3600;
-  const steps = Math.max(1, Math.ceil((fromC - toC) / STEP_K));
+/** The fall by Newton's law over that time, as points; a single instant where there is nothing to fall. */
+function fall(fromC: number, lengthS: number, surroundC: number, perS: number): TemperatureCurve {
+  const toC = newtonTempC(fromC, surroundC, perS, lengthS);
+  const steps = Math.max(1, Math.ceil(Math.abs(fromC - toC) / STEP_K));
   return Array.from({ length: steps + 1 }, (_, step) => {
     const seconds = (lengthS * step) / steps;
-    return { atMs: seconds * 1000, tempC: newtonTempC(fromC, surroundC, perS, seconds) };
+    // Coolant may be colder than ice; what is brewed is not.
+    return { atMs: seconds * 1000, tempC: Math.max(0, newtonTempC(fromC, surroundC, perS, seconds)) };
   });
+}
+
+/** How long what goes in at this temperature stays in. */
+function contactS(fromC: number, { out, surroundC }: MissedCatch, perS: number): number {
+  if ('standS' in out) return out.standS;
+  return fromC > out.tempC ? (newtonDurationS(fromC, out.tempC, surroundC, perS) ?? BY_HAND_S) : 0;
 }
 
 function contactOf(curve: TemperatureCurve): { seconds: number; turns: number } {
@@ -85,43 +99,67 @@ function reheatSeconds({ targetC, nowC, heat }: MissedCatch): number | null {
       { massG: kettle.massKg * 1000, material: metals[kettle.metal ?? 'stainless'] },
     ]),
     fromC: nowC,
-    toC: targetC + PAST_K,
+    toC: reheatToC(targetC),
     powerW: kettle.heaterPowerW,
     efficiency: kettle.heaterEfficiency,
     roomC,
   });
-  return time.kind === 'reaches' && time.durationS > 0 ? time.durationS : null;
+  const isWayBack = time.kind === 'reaches' && time.durationS > 0 && time.durationS <= LONGEST_WAIT_S;
+  return isWayBack ? time.durationS : null;
+}
+
+/** Short spans to ten seconds, longer ones to half a minute: what a person can keep to. */
+function keepableS(seconds: number): number {
+  const step = seconds < 120 ? 10 : 30;
+  return Math.max(step, Math.round(seconds / step) * step);
+}
+
+/** Grams from ten up, tenths below: what a kitchen scale shows. */
+function weighableG(massG: number): number {
+  return massG >= 10 ? Math.round(massG) : Math.max(0.1, Math.round(massG * 10) / 10);
 }
 
 /**
  * What can still be done about hops that were not in at their temperature, and what each way does against the plan: hold them longer where
- * the liquid is now, weigh in more, heat up again, or take it as it is. Ways that lead nowhere are left out; `accept` is always there.
+ * the liquid is now, weigh in more, heat up again, or take it as it is. Ways that lead nowhere or change nothing are left out; `accept` is
+ * always there, and comes first when little is lost. Times and masses are rounded to what a person can keep to.
  *
- * @param missed temperatures 0 to 100 °C, mass of 0 g or more.
+ * @param missed temperatures 0 to 100 °C, mass of 0 g or more, a stand above 0 s.
  * @throws RangeError when a temperature is outside 0 to 130 °C.
  * @see Newton's law for the fall; contact time for aroma (common practice, no source); Malowicki and Shellhammer 2005 for iso-alpha acids.
  */
 export function missedChoices(missed: MissedCatch): MissedChoice[] {
-  const { targetC, nowC, outC, massG, surroundC } = missed;
+  const { targetC, nowC, massG, surroundC } = missed;
   const perS = fallPerS(missed);
-  const plan = contactOf(fall(targetC, outC, surroundC, perS));
-  const late = contactOf(fall(nowC, outC, surroundC, perS));
+  const plan = contactOf(fall(targetC, contactS(targetC, missed, perS), surroundC, perS));
+  const late = contactOf(fall(nowC, contactS(nowC, missed, perS), surroundC, perS));
   const aromaRatio = plan.seconds > 0 ? late.seconds / plan.seconds : 1;
   const isoRatio = plan.turns > 0 ? late.turns / plan.turns : 1;
   const none = { holdS: null, extraG: null, reheatS: null };
-  const choices: MissedChoice[] = [];
+  const accept: MissedChoice = { ...none, choice: 'accept', aromaRatio, isoRatio };
+  const isShort = aromaRatio < 1 - AS_PLANNED;
+  const choices: MissedChoice[] = isShort ? [] : [accept];
 
-  const holdS = plan.seconds - late.seconds;
-  if (holdS > 0 && holdS <= LONGEST_HOLD_S) {
-    const turns = late.turns + (isomerisationPerMin(nowC) * holdS) / 60;
+  const shortS = plan.seconds - late.seconds;
+  if (isShort && shortS <= LONGEST_WAIT_S) {
+    const holdS = keepableS(shortS);
+    const turns = late.turns + (isomerisationPerMin(nowC) * shortS) / 60;
     choices.push({ ...none, choice: 'hold', holdS, aromaRatio: 1, isoRatio: plan.turns > 0 ? turns / plan.turns : 1 });
   }
   const extra = aromaRatio > 0 ? 1 / aromaRatio - 1 : Infinity;
-  if (massG > 0 && extra > 0 && extra <= MOST_EXTRA) {
-    choices.push({ ...none, choice: 'more', extraG: massG * extra, aromaRatio: 1, isoRatio: isoRatio * (1 + extra) });
+  if (isShort && massG > 0 && extra <= MOST_EXTRA) {
+    const extraG = weighableG(massG * extra);
+    choices.push({ ...none, choice: 'more', extraG, aromaRatio: 1, isoRatio: isoRatio * (1 + extra) });
   }
-  const reheatS = reheatSeconds(missed);
-  if (reheatS !== null) choices.push({ ...none, choice: 'reheat', reheatS, aromaRatio: 1, isoRatio: 1 });
-  choices.push({ ...none, choice: 'accept', aromaRatio, isoRatio });
-  return choices;
+  const reheatS = nowC < targetC ? reheatSeconds(missed) : null;
+  if (reheatS !== null) {
+    const wholeMinutesS = Math.max(60, Math.round(reheatS / 60) * 60);
+    choices.push({ ...none, choice: 'reheat', reheatS: wholeMinutesS, aromaRatio: 1, isoRatio: 1 });
+  }
+  return isShort ? [...choices, accept] : choices;
+}
+
+/** How far past the target a reheat goes, so that the liquid falls through it once more, °C. */
+export function reheatToC(targetC: number): number {
+  return targetC + PAST_K;
 }
