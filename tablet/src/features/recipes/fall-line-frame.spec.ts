@@ -19,7 +19,7 @@ function frameOf(document: typeof blend, width: number) {
 
 describe(fallLineFrame, () => {
   it('has every addition on the line, in and out', () => {
-    const words = frameOf(blend, 640).labels.map(({ text }) => text);
+    const words = frameOf(blend, 1000).labels.map(({ text }) => text);
     expect(words).toEqual(
       expect.arrayContaining([
         'sencha, bancha in',
@@ -41,6 +41,16 @@ describe(fallLineFrame, () => {
         expect(Math.abs(one.textAt.y - other.textAt.y)).toBeGreaterThanOrEqual(20);
       }
     }
+  });
+
+  it('counts what goes in cold where there is no room for its names', () => {
+    const salts = ['calcium chloride', 'gypsum', 'magnesium chloride', 'table salt', 'baking soda'].map(
+      (name) =>
+        ({ id: name, name, kind: 'salt', salt: 'gypsum', massG: 1, keeps: 'mass', in: { at: 'fill' } }) as const,
+    );
+    const many = { ...blend, additions: [...salts, ...blend.additions] };
+    expect(frameOf(many, 1200).labels.map(({ text }) => text)).toContain('gypsum in');
+    expect(frameOf(many, 300).labels.map(({ text }) => text)).toContain('5 in, cold');
   });
 
   it('climbs, holds and falls', () => {

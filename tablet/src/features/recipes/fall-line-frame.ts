@@ -32,13 +32,15 @@ export interface LineFrame {
   plot: { left: number; top: number; right: number; bottom: number };
 }
 
-const LEFT_PX = 46;
+const LEFT_PX = 52;
 const RIGHT_PX = 14;
 const BOTTOM_PX = 34;
+/** A day that stays where it is still has some height. */
+const LEAST_SPAN_C = 12;
 const ROW_PX = 21;
 const GAP_PX = 14;
 /** Of the type that the words are set in, on average. */
-const LETTER_PX = 8;
+const LETTER_PX = 8.3;
 const TICK_STEPS_MIN = [2, 5, 10, 15, 20, 30, 60, 120, 180, 240, 360, 720, 1440];
 /** Room for "1 h 30 min" and some air. */
 const TICK_PX = 84;
@@ -55,36 +57,33 @@ export function fallLineFrame(
   const events = dayEvents(day, document).filter(({ kind }) => kind !== 'heat');
   const lastMs = Math.max(60_000, curve.at(-1)?.atMs ?? 0);
   const temps = [...curve.map(({ tempC }) => tempC), document.transferC, ...(day.never ? [day.never.wantedC] : [])];
-  const lowC = Math.min(...temps);
-  const spanC = Math.max(1, Math.max(...temps) - lowC);
+  const highC = Math.max(...temps);
+  const spanC = Math.max(LEAST_SPAN_C, highC - Math.min(...temps));
+  const lowC = highC - spanC;
 
   const parts = partsOf(day);
-  const flags = events.filter((event) => partAt(parts, event) === 'hold');
+  const within = (part: Part) => events.filter((event) => partAt(parts, event) === part);
+  const flags = within('hold');
+  const falls = within('fall');
+  const endMs = falls.at(-1)?.atMs;
+  const atTheEnd = falls.filter(({ atMs }) => atMs === endMs).length;
   const plot = {
     left: LEFT_PX,
     right: size.width - RIGHT_PX,
     top: 16 + flags.length * ROW_PX,
     bottom: size.height - BOTTOM_PX,
   };
+  const lowestY = plot.bottom - GAP_PX - Math.max(0, atTheEnd - 1) * ROW_PX;
   const x = (atMs: number) => plot.left + ((plot.right - plot.left) * atMs) / lastMs;
-  const y = (tempC: number) => plot.bottom - GAP_PX - ((plot.bottom - GAP_PX - plot.top) * (tempC - lowC)) / spanC;
+  const y = (tempC: number) => lowestY - ((lowestY - plot.top) * (tempC - lowC)) / spanC;
   const at = ({ atMs, tempC }: { atMs: number; tempC: number }): Point => ({ x: x(atMs), y: y(tempC) });
-  const place = { plot, at, curve: curve.map(at) };
+  const words = (event: DayEvent) => eventWords(shortened(event, size.width));
+  const place = { plot, at, words, curve: curve.map(at) };
 
   return {
     plot,
     stretches: stretchesOf(curve, parts, at),
-    labels: [
-      ...climbLabels(
-        events.filter((event) => partAt(parts, event) === 'climb'),
-        place,
-      ),
-      ...flagLabels(flags, place),
-      ...fallLabels(
-        events.filter((event) => partAt(parts, event) === 'fall'),
-        place,
-      ),
-    ],
+    labels: [...climbAndFallLabels(within('climb'), falls, place), ...flagLabels(flags, place)],
     levels: levelsOf(events, day).map((tempC, index, all) => ({
       tempC,
       y: y(tempC),
@@ -92,6 +91,13 @@ export function fallLineFrame(
     })),
     ticks: ticksOf(lastMs, x, Math.max(2, Math.floor((plot.right - plot.left) / TICK_PX))),
   };
+}
+
+/** Long names are cut on the drawing; the table has them whole. */
+function shortened(event: DayEvent, width: number): DayEvent {
+  const most = Math.max(10, Math.floor(width / LETTER_PX / 3 / Math.max(1, Math.min(2, event.names.length))));
+  const cut = (name: string) => (name.length > most ? `${name.slice(0, most - 1).trimEnd()}…` : name);
+  return { ...event, names: event.names.map(cut) };
 }
 
 interface Parts {
@@ -150,16 +156,38 @@ interface Place {
   plot: LineFrame['plot'];
   at: (point: { atMs: number; tempC: number }) => Point;
   curve: readonly Point[];
+  words: (event: DayEvent) => string;
 }
 
 const widthOf = (text: string) => text.length * LETTER_PX;
 
+/** Where the words of the climb would lie on those of the fall, they are counted in place of told. */
+function climbAndFallLabels(climbs: readonly DayEvent[], falls: readonly DayEvent[], place: Place): LineLabel[] {
+  const fallen = fallLabels(falls, place);
+  const told = climbLabels(climbs, place);
+  if (!told.some((one) => fallen.some((other) => isOnTop(one, other)))) return [...told, ...fallen];
+  const count = climbs.reduce((sum, { names }) => sum + names.length, 0);
+  const [first] = climbs;
+  if (!first) return fallen;
+  const mark = place.at(first);
+  return [label('climb', mark, `${count} in, cold`, { x: mark.x + GAP_PX, y: mark.y + 5 }, 'start'), ...fallen];
+}
+
+function isOnTop(one: LineLabel, other: LineLabel): boolean {
+  const edges = ({ text, textAt, anchor }: LineLabel) =>
+    anchor === 'start' ? [textAt.x, textAt.x + widthOf(text)] : [textAt.x - widthOf(text), textAt.x];
+  const [fromA = 0, toA = 0] = edges(one);
+  const [fromB = 0, toB = 0] = edges(other);
+  return Math.abs(one.textAt.y - other.textAt.y) < ROW_PX - 4 && fromA < toB && fromB < toA;
+}
+
 /** On the climb the words stand under the line, one row over the other along its slope. */
-function climbLabels(events: readonly DayEvent[], { at, curve, plot }: Place): LineLabel[] {
+function climbLabels(events: readonly DayEvent[], { at, curve, plot, words }: Place): LineLabel[] {
   let row = 0;
   return events.flatMap((event, index) => {
     const mark = at(event);
-    const lines = event.names.length > 1 ? event.names.map((name) => `${name} in`) : [eventWords(event)];
+    const lines =
+      event.names.length > 1 ? event.names.map((name) => words({ ...event, names: [name] })) : [words(event)];
     return lines.map((text, line) => {
       const textY = mark.y + 5 - row * ROW_PX;
       const onLine = curve.find(({ y, x }) => y <= textY - 6 && x >= mark.x) ?? mark;
@@ -171,10 +199,10 @@ function climbLabels(events: readonly DayEvent[], { at, curve, plot }: Place): L
 }
 
 /** While it holds the words fly above the line: the first one highest, so that no pole crosses them. */
-function flagLabels(events: readonly DayEvent[], { at, plot }: Place): LineLabel[] {
+function flagLabels(events: readonly DayEvent[], { at, plot, words }: Place): LineLabel[] {
   return events.map((event, index) => {
     const mark = at(event);
-    const text = eventWords(event);
+    const text = words(event);
     const textY = mark.y - 12 - (events.length - 1 - index) * ROW_PX;
     const textX = Math.max(4, Math.min(mark.x + 8, plot.right + RIGHT_PX - widthOf(text)));
     return label(`hold${index}`, mark, text, { x: textX, y: textY }, 'start', `M${mark.x} ${mark.y}V${textY - 11}`);
@@ -182,11 +210,11 @@ function flagLabels(events: readonly DayEvent[], { at, plot }: Place): LineLabel
 }
 
 /** On the fall the words stand at the right of the line where there is room, else under it. */
-function fallLabels(events: readonly DayEvent[], { at, plot }: Place): LineLabel[] {
+function fallLabels(events: readonly DayEvent[], { at, plot, words }: Place): LineLabel[] {
   const lastY = { start: -Infinity, end: -Infinity };
   return events.map((event, index) => {
     const mark = at(event);
-    const text = eventWords(event);
+    const text = words(event);
     const anchor = mark.x + GAP_PX + widthOf(text) <= plot.right + RIGHT_PX ? 'start' : 'end';
     const wantedY = anchor === 'start' ? mark.y + 1 : mark.y + 16;
     const textY = Math.max(wantedY, lastY[anchor] + ROW_PX);

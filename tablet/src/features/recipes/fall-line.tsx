@@ -24,6 +24,7 @@ export function FallLine({ day, document }: FallLineProps) {
   const frame = useMemo(() => fallLineFrame(day, document, { width, height: HEIGHT }), [day, document, width]);
   const { plot } = frame;
   const lastS = (day.curve.at(-1)?.atMs ?? 0) / 1000;
+  const isHeated = day.marks.some(({ kind }) => kind === 'heat');
   const happenings = dayEvents(day, document).length;
   return (
     <figure className="grid gap-2">
@@ -73,7 +74,7 @@ export function FallLine({ day, document }: FallLineProps) {
                 fill="var(--soft)"
                 className="tabular-nums"
               >
-                {atMin === 0 ? 'heat on' : spanWords(atMin * 60)}
+                {atMin === 0 ? (isHeated ? 'heat on' : 'start') : spanWords(atMin * 60)}
               </text>
             </g>
           ))}

@@ -4,7 +4,7 @@ import { classNames } from '#components/class-names.ts';
 import { ShapeGlyph } from '#components/shapes.tsx';
 import { inPersonsWords, useUnits } from '#lib/units.ts';
 import { DefaultFields } from './default-fields.tsx';
-import { figureText } from './figure-words.ts';
+import { figureText } from '#lib/figure-words.ts';
 
 const targetWords = { in: 'on target', below: 'below your target', above: 'above your target' } as const;
 

@@ -4,7 +4,7 @@ import { Disclosure, DisclosureButton, DisclosurePanel } from '@headlessui/react
 import { LevelRule } from '#components/level-rule.tsx';
 import { Chevron } from './chevron.tsx';
 import { FigureLine } from './figure-line.tsx';
-import { groupWords } from './figure-words.ts';
+import { groupWords } from '#lib/figure-words.ts';
 import type { Desk, Figures } from './use-desk.ts';
 
 interface FiguresColumnProps {

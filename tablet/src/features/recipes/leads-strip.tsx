@@ -3,7 +3,7 @@ import { classNames } from '#components/class-names.ts';
 import { Dialog } from '#components/dialog.tsx';
 import { Button } from '#components/button.tsx';
 import { useUnits } from '#lib/units.ts';
-import { figureText } from './figure-words.ts';
+import { figureText } from '#lib/figure-words.ts';
 import type { Desk } from './use-desk.ts';
 
 /** What a brewer looks at first, in few letters; a phone has room for three. */

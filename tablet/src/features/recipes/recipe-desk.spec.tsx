@@ -143,6 +143,12 @@ describe('a field of the desk', () => {
     expect(hub.revisions).toHaveLength(1);
   });
 
+  it.each(['NaN', '', 'lively', '99'])('says so where a number stands beside another: "%s"', async (typed) => {
+    openDesk();
+    await type('Gas', typed);
+    expect((await screen.findAllByText(typed === '99' ? 'At most 6.' : 'Type a number.')).length).toBeGreaterThan(0);
+  });
+
   it('shows grams and grams per litre of one addition, whichever is typed', async () => {
     openDesk();
     await type('For each litre of Cascade', '2');

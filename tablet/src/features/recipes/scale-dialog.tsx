@@ -26,9 +26,9 @@ type Kettle = Extract<Equipment, { kind: 'kettle' }>;
 type Way = 'volume' | 'kettle' | 'stores';
 
 const ways: { value: Way; label: string }[] = [
-  { value: 'volume', label: 'To a volume' },
-  { value: 'kettle', label: 'To a kettle' },
-  { value: 'stores', label: 'To the stores' },
+  { value: 'volume', label: 'a volume' },
+  { value: 'kettle', label: 'a kettle' },
+  { value: 'stores', label: 'the stores' },
 ];
 
 interface ScaleDialogProps {
@@ -98,7 +98,7 @@ export function ScaleDialog({ document: given, kettles, resolutionG, onTake, onC
     <Dialog
       isOpen
       onClose={onClose}
-      title="Scale"
+      title="Scale to"
       size="wide"
       actions={
         <>

@@ -54,7 +54,7 @@ export function SheetSteps({ sheet, acts }: SheetStepsProps) {
         return (
           <li
             key={step.id}
-            className="grid break-inside-avoid grid-cols-[2.5rem_1fr_auto] gap-x-3 border-b border-hair py-4"
+            className="grid break-inside-avoid grid-cols-[2.5rem_1fr] gap-x-3 sm:grid-cols-[2.5rem_1fr_auto] border-b border-hair py-4"
           >
             <span className="text-lead tabular-nums text-soft">{index + 1}</span>
             <div className="min-w-0">
@@ -88,7 +88,7 @@ export function SheetSteps({ sheet, acts }: SheetStepsProps) {
                 </p>
               ) : null}
             </div>
-            {acts ? <div className="flex items-start">{acts(step, index)}</div> : null}
+            {acts ? <div className="flex items-start max-sm:col-start-2 max-sm:-ml-3">{acts(step, index)}</div> : null}
           </li>
         );
       })}

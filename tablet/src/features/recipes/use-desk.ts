@@ -2,7 +2,7 @@ import { useDeferredValue, useMemo, useState } from 'react';
 import { deskFigures, type DeskKit, type DeskResult } from '@steepfall/shared/desk';
 import { recipeDocumentSchema, type RecipeDocument } from '@steepfall/shared/sheets';
 import type { UnitPreferences } from '@steepfall/shared/units';
-import { figureText } from './figure-words.ts';
+import { figureText } from '#lib/figure-words.ts';
 
 export type Figures = Extract<DeskResult, { kind: 'figures' }>;
 export type Impossible = Extract<DeskResult, { kind: 'impossible' }>;

@@ -11,12 +11,14 @@ interface Part<Value> {
 
 /** One member of the document: only what shows it is drawn again when it changes. */
 export function usePart<Key extends keyof RecipeDocument>(key: Key): Part<RecipeDocument[Key]> {
-  const { control } = useFormContext<RecipeForm>();
+  const { control, setValue } = useFormContext<RecipeForm>();
   // The paths of a union that deep are too much for the compiler; the member's own type is put back here.
-  const { field, fieldState } = useController({ control, name: `document.${key}` as 'document.volumeL' });
+  const name = `document.${key}` as 'document.volumeL';
+  const { field, fieldState } = useController({ control, name });
   return {
     value: field.value as RecipeDocument[Key],
-    change: field.onChange as (value: RecipeDocument[Key]) => void,
+    // Not the field's own onChange: it compares the value with itself, and drops the message of an object that holds NaN.
+    change: (value) => setValue(name, value as number, { shouldDirty: true, shouldValidate: true }),
     errorAt: (path = '') => messageAt(fieldState.error, path),
   };
 }
