@@ -3,6 +3,9 @@ import type { Alert } from './state.js';
 /** `prompt`: the sheet calls at its time, which is no fault. The others are faults, by what is lost when nobody acts. */
 export type AlertPriority = 'prompt' | 'medium' | 'low';
 
+/** A fault is quiet for this long without a word why, s. */
+export const QUIET_S = 120;
+export const QUIET_REASON = 'quiet for 2 min';
 /** s. */
 export const USUAL_SHELF_S = 600;
 export const LONGEST_SHELF_S = 3600;
@@ -18,9 +21,14 @@ export function alertPriority({ rule, stage }: Pick<Alert, 'rule' | 'stage'>): A
   return rule === 'battery' ? 'low' : 'medium';
 }
 
-/** What the sheet calls for is done or heard, never put aside; a fault of the kit can wait with a reason. */
-export function canShelve({ rule }: Pick<Alert, 'rule'>): boolean {
+/** Of what helps to watch. The rest is what the sheet calls for, which is no fault, and never in one list with them. */
+export function isFault({ rule }: Pick<Alert, 'rule'>): boolean {
   return rule !== 'temperature' && rule !== 'timer';
+}
+
+/** What the sheet calls for is done or heard, never put aside; a fault of the kit can wait with a reason. */
+export function canShelve(alert: Pick<Alert, 'rule'>): boolean {
+  return isFault(alert);
 }
 
 /** Put aside at this moment of the run. */
