@@ -1,5 +1,4 @@
 import { memo, useEffect, useMemo, useRef, useState } from 'react';
-import { zodResolver } from '@hookform/resolvers/zod';
 import { useQuery } from '@tanstack/react-query';
 import type { Recipe, Revision } from '@steepfall/shared/contracts';
 import { deskFigures, revisionDifferences } from '@steepfall/shared/desk';
@@ -27,7 +26,7 @@ import { FallLine } from './fall-line.tsx';
 import { FiguresColumn } from './figures-column.tsx';
 import { LeadsStrip } from './leads-strip.tsx';
 import { NumberField, SmallLabel } from './number-field.tsx';
-import { isSameJson, recipeFormSchema, wrongPaths, type RecipeForm } from './recipe-form.ts';
+import { isSameJson, recipeResolver, wrongPaths, type RecipeForm } from './recipe-form.ts';
 import { SaveDialog } from './save-dialog.tsx';
 import { ScaleDialog } from './scale-dialog.tsx';
 import { SheetSection } from './sheet-section.tsx';
@@ -50,7 +49,7 @@ interface RecipeEditorProps {
 /** The desk: what goes in at the left, the planned line in the middle, the figures at the right. */
 export function RecipeEditor(props: RecipeEditorProps) {
   const form = useForm<RecipeForm>({
-    resolver: zodResolver(recipeFormSchema),
+    resolver: recipeResolver,
     defaultValues: props.start,
     mode: 'onChange',
   });

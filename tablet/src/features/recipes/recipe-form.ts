@@ -1,12 +1,27 @@
+import { zodResolver } from '@hookform/resolvers/zod';
 import { createRecipeSchema } from '@steepfall/shared/contracts';
 import type { Addition, IngredientKind, RecipeDocument, WaterPart } from '@steepfall/shared/sheets';
-import type { FieldErrors } from 'react-hook-form';
+import type { FieldErrors, Resolver } from 'react-hook-form';
 import type { z } from 'zod';
 import { newId } from '#lib/ids.ts';
 
 /** What the desk edits; the note is asked for when it is saved. */
-export const recipeFormSchema = createRecipeSchema.omit({ note: true });
+const recipeFormSchema = createRecipeSchema.omit({ note: true });
 export type RecipeForm = z.infer<typeof recipeFormSchema>;
+
+const resolveForm = zodResolver(recipeFormSchema);
+
+/**
+ * The form's resolver. The form takes an error tree without a type of its own for no error at all, and so would drop what is wrong inside a
+ * member that is edited as one thing, such as the gas: each such member gets a type.
+ */
+export const recipeResolver: Resolver<RecipeForm> = async (...args) => {
+  const result = await resolveForm(...args);
+  for (const part of Object.values(result.errors.document ?? {}))
+    if (typeof part === 'object' && part !== null && !Array.isArray(part))
+      Object.assign(part, { type: 'part', ...part });
+  return result;
+};
 
 export const kindWords: Record<IngredientKind, string> = {
   salt: 'salt',
