@@ -53,6 +53,9 @@ export default defineConfig({
       workbox: {
         // Without it the first tab stays uncontrolled, and offline it loses its sounds and its lazy routes.
         clientsClaim: true,
+        // Answers pushes; the browser keeps it with the worker that it belongs to.
+        importScripts: ['/push-worker.js'],
+        globIgnores: ['push-worker.js'],
         globPatterns: ['**/*.{js,css,html,woff2,mp3,ogg,wav,svg,png}'],
         navigateFallback: '/index.html',
         navigateFallbackDenylist: [/^\/api/, /^\/socket\.io/, /^\/export/],

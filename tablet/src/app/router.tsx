@@ -10,6 +10,7 @@ import { Starting } from './starting.tsx';
 /** Every page that is fetched on its own. All are fetched soon after the first paint, so that none is missing later. */
 const pages = {
   signIn: () => import('./routes/sign-in.tsx').then(({ SignInRoute }) => SignInRoute),
+  follow: () => import('./routes/follow.tsx').then(({ FollowRoute }) => FollowRoute),
   home: () => import('./routes/home.tsx').then(({ HomeRoute }) => HomeRoute),
   recipes: () => import('./routes/recipes.tsx').then(({ RecipesRoute }) => RecipesRoute),
   recipe: () => import('./routes/recipe.tsx').then(({ RecipeRoute }) => RecipeRoute),
@@ -39,6 +40,7 @@ function needs(permission: Permission): Pick<RouteObject, 'element' | 'errorElem
 
 export const router = createBrowserRouter([
   { path: '/sign-in', ...page('signIn') },
+  { path: '/follow', ...page('follow') },
   {
     element: <SignedIn />,
     errorElement: <RouteError />,

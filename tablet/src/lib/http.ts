@@ -23,6 +23,8 @@ export interface HubRequest {
   body?: unknown;
   query?: Record<string, string | number | undefined>;
   accessToken?: string | null;
+  /** In place of a sign-in: the token of a follow link. */
+  followToken?: string;
   signal?: AbortSignal | undefined;
 }
 
@@ -47,9 +49,10 @@ async function readProblem(response: Response): Promise<Problem> {
 
 /** One request to the hub's API, as far as an answer that says yes. */
 async function askHub(path: string, request: HubRequest, accept: string, send: Fetch): Promise<Response> {
-  const { method = 'GET', body, query, accessToken, signal } = request;
+  const { method = 'GET', body, query, accessToken, followToken, signal } = request;
   const headers = new Headers({ Accept: `${accept}, application/problem+json` });
   if (accessToken) headers.set('Authorization', `Bearer ${accessToken}`);
+  if (followToken) headers.set('Authorization', `Follow ${followToken}`);
   if (body !== undefined) headers.set('Content-Type', 'application/json');
   let response: Response;
   try {

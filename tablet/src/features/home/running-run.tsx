@@ -3,10 +3,12 @@ import { useQuery } from '@tanstack/react-query';
 import type { RunSummary } from '@steepfall/shared/contracts';
 import { foldRun } from '@steepfall/shared/runs';
 import { formatRate, formatTemp } from '@steepfall/shared/units';
-import { ButtonLink } from '#components/button.tsx';
+import { Button, ButtonLink } from '#components/button.tsx';
 import { directionDress } from '#components/direction-dress.ts';
 import { StatusChip } from '#components/status-chip.tsx';
+import { followAsked } from '#lib/follow-ask.ts';
 import { runLogQuery } from '#lib/hub-queries.ts';
+import { useMay } from '#lib/session.ts';
 import { useUnits } from '#lib/units.ts';
 import { clockTime } from '#lib/words.ts';
 import { LiquidSketch } from './liquid-sketch.tsx';
@@ -23,6 +25,7 @@ function levelsOf(log: Parameters<typeof foldRun>[0]): number[] {
 /** One run that is on: what to do now, in letters that are read from the door. */
 export function RunningRun({ run }: { run: RunSummary }) {
   const liquid = useLiquid(run);
+  const may = useMay();
   const log = useQuery({ ...runLogQuery(run.id), staleTime: 60_000 });
   const levels = useMemo(() => levelsOf(log.data ?? []), [log.data]);
   return (
@@ -55,9 +58,16 @@ export function RunningRun({ run }: { run: RunSummary }) {
         <Temperature liquid={liquid} />
       </div>
       <div className="flex flex-col-reverse gap-6 md:flex-row md:items-center md:gap-10">
-        <ButtonLink look="primary" size="sheet" to={`/runs/${run.id}`} className="shrink-0">
-          Open the run sheet
-        </ButtonLink>
+        <div className="grid shrink-0 gap-3">
+          <ButtonLink look="primary" size="sheet" to={`/runs/${run.id}`}>
+            Open the run sheet
+          </ButtonLink>
+          {may('runs:act') ? (
+            <Button look="quiet" onClick={() => followAsked.set(run.id)}>
+              Follow on a phone
+            </Button>
+          ) : null}
+        </div>
         {liquid.line.length > 2 ? (
           <LiquidSketch line={liquid.line} levels={levels} hasEnd className="mr-3 h-32 min-w-0 md:h-36 md:flex-1" />
         ) : null}

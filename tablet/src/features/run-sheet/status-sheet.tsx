@@ -5,8 +5,9 @@ import { Button } from '#components/button.tsx';
 import { Segmented } from '#components/segmented.tsx';
 import { alarmSounds, type SoundState } from '#lib/audio/alarm-sounds.ts';
 import { hubClock } from '#lib/clock/hub-clock.ts';
+import { followAsked } from '#lib/follow-ask.ts';
 import { openOutbox } from '#lib/run-store/open-runs.ts';
-import { useLive, useRun } from '#lib/run-store/run-context.tsx';
+import { useLive, useRun, useRunStore } from '#lib/run-store/run-context.tsx';
 import { useSession } from '#lib/session.ts';
 import { chooseGround, useGroundChoice } from '#lib/theme.ts';
 import { useUnits } from '#lib/units.ts';
@@ -36,6 +37,7 @@ export function StatusSheet({ isOpen, onClose }: { isOpen: boolean; onClose: () 
   return (
     <SheetDialog isOpen={isOpen} onClose={onClose} title="How this tablet stands" isSide>
       <StatusFacts />
+      <FollowOnPhone onAsked={onClose} />
     </SheetDialog>
   );
 }
@@ -99,6 +101,25 @@ function StatusFacts() {
         />
       </Fact>
     </dl>
+  );
+}
+
+/** The second channel, for when the kitchen is louder than the tablet. */
+function FollowOnPhone({ onAsked }: { onAsked: () => void }) {
+  const { runId } = useRunStore();
+  const ask = () => {
+    onAsked();
+    followAsked.set(runId);
+  };
+  return (
+    <div className="grid justify-items-start gap-3 border-t-2 border-dashed border-hair pt-5">
+      <p className="text-body text-soft">
+        Louder here than the tablet, or somebody at the far end? A phone buzzes too.
+      </p>
+      <Button size="sheet" onClick={ask}>
+        Follow on a phone
+      </Button>
+    </div>
   );
 }
 
