@@ -1,4 +1,4 @@
-// Makes the three families of alarm tones as WAV files: `node tablet/scripts/make-sounds.mjs`.
+// Makes the four families of alarm tones as WAV files: `node tablet/scripts/make-sounds.mjs`.
 //
 // Rules they follow: fundamental between 440 and 800 Hz, so that five partials stay below 4 kHz; at least four harmonics
 // within 15 dB of the fundamental, since a bare beep is hard to locate; a rise of 10 to 40 % of a pulse; each lasts half a
@@ -36,6 +36,17 @@ const families = {
       hz: i % 5 < 3 ? 622 : 784,
       atMs,
       lengthMs: 120,
+      rise: 0.12,
+      loud: 1,
+    })),
+  },
+  // The same when nobody answered: it starts higher, falls instead of rising, and takes two thirds of the time.
+  urgent: {
+    lengthMs: 4200,
+    pulses: [0, 160, 320, 600, 760, 1160, 1320, 1480, 1760, 1920].map((atMs, i) => ({
+      hz: i % 5 < 3 ? 784 : 622,
+      atMs,
+      lengthMs: 100,
       rise: 0.12,
       loud: 1,
     })),
@@ -85,7 +96,7 @@ function wav(samples, peak) {
 }
 
 const rendered = Object.entries(families).map(([name, family]) => [name, render(family)]);
-// One scale for all three: what is soft stays soft beside what insists.
+// One scale for all: what is soft stays soft beside what insists.
 const peak = Math.max(
   ...rendered.flatMap(([, samples]) => samples.reduce((most, value) => Math.max(most, Math.abs(value)), 0)),
 );

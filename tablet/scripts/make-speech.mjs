@@ -30,6 +30,8 @@ for (const [id, text] of Object.entries({ ...phrases, ...numbers, ...tenths })) 
   const edge = ['silence', '1', '0.01', '0.5%'];
   run(
     'sox',
+    // The same dither each time, so that the files come out as they are committed.
+    '-R',
     raw,
     '-r',
     '22050',

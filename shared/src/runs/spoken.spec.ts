@@ -55,6 +55,17 @@ describe(spokenClips, () => {
     expect(saidFor(buildAlert({ stage }))).toEqual(clips);
   });
 
+  it.each([
+    ['now', 4.9, ['hops-in', 'n62', 'degrees']],
+    ['now', 40.7, ['hops-in', 'n40', 'seconds-late']],
+    ['missed', 200, ['hops-in', 'n3', 'minutes-late']],
+    ['missed', null, ['late', 'hops-in']],
+    ['now', 1e6, ['hops-in', 'n220', 'minutes-late']],
+  ] as const)('tells the truth about being late: %s, %d s past', (stage, lateS, clips) => {
+    const state = foldRun(new LogBuilder().add('alert.raised', buildAlert({ stage })).entries);
+    expect(spokenClips(state, standingAlerts(state)[0]!, 'C', lateS)).toEqual(clips);
+  });
+
   it('speaks the unit of the person', () => {
     expect(saidFor(buildAlert({ stage: 'now' }), 'F')).toEqual(['hops-in', 'n144', 'degrees']);
   });

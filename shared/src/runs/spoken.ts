@@ -55,6 +55,8 @@ const alertPhrases = [
   'stand-by',
   'now',
   'late',
+  'seconds-late',
+  'minutes-late',
   'timer-over',
   'no-reading',
   'hub-away',
@@ -69,12 +71,29 @@ const faultClips: Partial<Record<Alert['rule'], string>> = {
   station: 'next-step',
 };
 
-/** What is said aloud for an alert: verb, thing, number. */
-export function spokenClips(state: RunState, alert: Alert, unit: 'C' | 'F'): string[] {
+/** Less than this past its moment nobody calls late, s. */
+const LATE_FROM_S = 5;
+const MINUTES_FROM_S = 90;
+const LONGEST_LATE_MIN = 220;
+
+/** "Forty seconds late", as clips; nothing while it is in time. @param lateS s past the moment that was meant. */
+function latenessClips(lateS: number): string[] {
+  if (lateS < LATE_FROM_S) return [];
+  if (lateS < MINUTES_FROM_S) return [`n${Math.floor(lateS)}`, 'seconds-late'];
+  return [`n${Math.min(LONGEST_LATE_MIN, Math.floor(lateS / 60))}`, 'minutes-late'];
+}
+
+/**
+ * What is said aloud for an alert: verb, thing, number.
+ *
+ * @param lateS s past the moment that was meant, as when a tablet wakes from sleep; null when nobody knows.
+ */
+export function spokenClips(state: RunState, alert: Alert, unit: 'C' | 'F', lateS: number | null = null): string[] {
   const fault = faultClips[alert.rule];
   if (fault) return [fault];
   const act = state.steps.find(({ step }) => step.id === alert.actStepId)?.step;
-  if (!act) return alert.stage === 'now' || alert.stage === 'missed' ? ['timer-over'] : [];
+  const late = lateS === null ? [] : latenessClips(lateS);
+  if (!act) return alert.stage === 'now' || alert.stage === 'missed' ? ['timer-over', ...late] : [];
   const clip = actClip(act);
   const number = alert.targetC === null ? [] : temperatureClips(alert.targetC, unit);
   switch (alert.stage) {
@@ -83,9 +102,10 @@ export function spokenClips(state: RunState, alert: Alert, unit: 'C' | 'F'): str
     case 'stand-by':
       return ['stand-by', clip, ...number];
     case 'now':
+      if (late.length > 0) return [clip, ...late];
       return number.length > 0 ? [clip, ...number] : [clip, 'now'];
     case 'missed':
-      return ['late', clip];
+      return late.length > 0 ? [clip, ...late] : ['late', clip];
   }
 }
 

@@ -5,6 +5,7 @@ import { alarmSounds } from '#lib/audio/alarm-sounds.ts';
 import { useLive, useRunState, useRunStore } from '#lib/run-store/run-context.tsx';
 import { useUnits } from '#lib/units.ts';
 import { alertLevel, dueAtMs, dueText } from './alert-level.ts';
+import { SoundStrip } from './sound-strip.tsx';
 import { useSoundOff } from './use-sound-off.ts';
 
 const stageWords = { 'coming-up': 'Coming up', 'stand-by': 'Stand by', now: 'Now', missed: 'Late' } as const;
@@ -15,7 +16,7 @@ export function AlertStrips() {
   const isTaken = standingAlerts(state).some(({ stage }) => stage === 'now' || stage === 'missed');
   const next = standingAlerts(state)[0];
   if (next && !isTaken) return <Strip alert={next} />;
-  return isTaken ? null : <SoundOffStrip />;
+  return isTaken ? null : <SoundStrip />;
 }
 
 function Strip({ alert }: { alert: Alert }) {
@@ -47,18 +48,5 @@ function Strip({ alert }: { alert: Alert }) {
         Heard it
       </PressButton>
     </div>
-  );
-}
-
-/** A browser keeps a page silent until somebody taps, and again after calls and locks. Nobody would know. */
-function SoundOffStrip() {
-  if (!useSoundOff()) return null;
-  return (
-    <PressButton className="strip strip-button" onPress={() => void alarmSounds.unlock()}>
-      <ShapeGlyph shape="ring" className="size-7 shrink-0" />
-      <span className="strip-text">
-        <strong>Sound is off:</strong> tap to enable
-      </span>
-    </PressButton>
   );
 }

@@ -9,9 +9,12 @@ type Stage = 'ready' | 'asking' | 'not-heard' | 'no-sound';
 const words: Record<Stage, { title: string; text: string }> = {
   ready: {
     title: 'Sound check',
-    text: 'The way into every run. Stand where you will work, then tap: the tablet plays the alarm that says “now”.',
+    text: 'The way into every run. Stand where you will work, then tap: the tablet plays the alarm that says “now”, and speaks.',
   },
-  asking: { title: 'Did you hear it?', text: 'From the kettle, over the fan and the water.' },
+  asking: {
+    title: 'Did you hear it?',
+    text: 'The alarm, and then the words “This is how I call you”: from the kettle, over the fan and the water.',
+  },
   'not-heard': {
     title: 'Make it heard',
     text: 'Turn the volume up and the silent switch off. Is a speaker connected that stands in another room? Then play it again.',

@@ -1,12 +1,12 @@
 import { Howl, Howler } from 'howler';
 import { subscribeTick } from '../clock/ticker.ts';
 import { isShallowSame, ValueStore } from '../value-store.ts';
-import { composeRing } from './compose-ring.ts';
-import { SoundLibrary } from './sound-library.ts';
 import { nextRepair, soundHealth, type AudioSigns, type ContextState, type SoundHealth } from './audio-health.ts';
+import { composeRing, isLooped, type AlarmLevel } from './compose-ring.ts';
+import { passSilentSwitch } from './silent-switch.ts';
+import { SoundLibrary } from './sound-library.ts';
 
-/** The three families of tones: a soft double, a rising triple, the insistent five. */
-export type AlarmLevel = 'coming-up' | 'stand-by' | 'now';
+export type { AlarmLevel } from './compose-ring.ts';
 
 export interface Ring {
   level: AlarmLevel;
@@ -16,44 +16,83 @@ export interface Ring {
   say?: readonly string[];
 }
 
+/** A ring that is known to come: `inS` seconds from now, less than nothing when it should sound already. */
+export interface PlannedRing {
+  ring: Ring;
+  inS: number;
+}
+
 export interface SoundState {
   /** `untested`: nobody has tapped since the page was loaded, so the browser keeps it silent. */
   health: SoundHealth | 'untested';
   /** What sounds at this moment. */
   ringing: string | null;
+  /** Sound was taken away and came back, as after a call. Nobody has listened since whether it is still loud, and in this room. */
+  wasInterrupted: boolean;
 }
 
-const LEVELS: readonly AlarmLevel[] = ['coming-up', 'stand-by', 'now'];
-const STAND_BY_EVERY_MS = 10_000;
+/** A ring on the audio clock. */
+interface Voice {
+  ring: Ring;
+  source: AudioBufferSourceNode;
+  /** On the audio clock, s. */
+  startsAtS: number;
+  hasWords: boolean;
+}
+
+const LEVELS: readonly AlarmLevel[] = ['coming-up', 'stand-by', 'now', 'urgent'];
 const CLOCK_LOOK_MS = 240;
+const ASK_AGAIN_MS = 5_000;
+/** A glitch is over before anybody could miss an alarm; what lasts longer may have gone to another speaker. */
+const INTERRUPTED_MS = 2_000;
+/** A plan that moves by less stays as it is. */
+const PLAN_SLACK_S = 0.25;
+/** Further ahead a plan only waits: it will have changed by then. */
+const PLAN_AHEAD_S = 60;
 /** Loud enough to keep an output alive, far below what anybody hears. */
 const WARMTH = 1e-4;
-const BUZZ: Record<AlarmLevel, number[]> = {
-  'coming-up': [120],
-  'stand-by': [160, 120, 160],
-  now: [300, 120, 300, 120, 600],
+const BUZZ: Record<AlarmLevel, { pattern: number[]; everyMs: number }> = {
+  'coming-up': { pattern: [120], everyMs: Infinity },
+  'stand-by': { pattern: [160, 120, 160], everyMs: 10_000 },
+  now: { pattern: [300, 120, 300, 120, 600], everyMs: 8_000 },
+  urgent: { pattern: [600, 120, 600, 120, 600], everyMs: 4_000 },
 };
+const CHECK_WORDS = ['sound-check'];
 
 const tonePath = (level: AlarmLevel) => `/sounds/${level}.wav`;
 const clipPath = (clip: string) => `/speech/${clip}.mp3`;
+const tonePaths = LEVELS.map(tonePath);
+const isSameRing = (a: Ring | null, b: Ring | null) =>
+  a?.id === b?.id && a?.level === b?.level && (a?.say ?? []).join() === (b?.say ?? []).join();
 
-/** Alarms through howler on Web Audio: one sound at a time, never queued on a locked context. */
+/** Alarms on Web Audio: one at a time, never queued on a locked context. Howler carries the bare tone where nothing could be decoded. */
 class AlarmSounds {
-  readonly state = new ValueStore<SoundState>({ health: 'untested', ringing: null }, isShallowSame);
+  readonly state = new ValueStore<SoundState>(
+    { health: 'untested', ringing: null, wasInterrupted: false },
+    isShallowSame,
+  );
   private howls: Record<AlarmLevel, Howl> | null = null;
   private wanted: Ring | null = null;
   private playing: Ring | null = null;
-  private test: { level: AlarmLevel; soundId: number } | null = null;
-  private lastStartMs = 0;
+  private voice: Voice | null = null;
+  private wantedPlan: PlannedRing | null = null;
+  private planned: Voice | null = null;
+  /** What is said once and has been said: silence after it is no reason to say it again. */
+  private saidOnce: string | null = null;
+  private test: { stop: () => void } | null = null;
+  private buzzedAtMs = 0;
   private look: { contextS: number; atMs: number } | null = null;
   private isClockMoving = false;
+  private blockedSinceMs: number | null = null;
   private triedCount = 0;
   private isRepairing = false;
   private hasLoadFailed = false;
   private warm: AudioBufferSourceNode | null = null;
-  private spoken: AudioBufferSourceNode | null = null;
-  private readonly library = new SoundLibrary();
   private isWarmWanted = false;
+  private readonly library = new SoundLibrary();
+  private words: readonly string[] = [];
+  private askedAtMs = 0;
+  private composed: { key: string; buffer: AudioBuffer } | null = null;
 
   /** Loads the sounds and starts to watch over the output. Silent until a tap. */
   start(): void {
@@ -74,17 +113,16 @@ class AlarmSounds {
   /** To be called inside a tap: browsers let sound out only then. */
   async unlock(): Promise<boolean> {
     this.start();
-    const { audioSession } = navigator as { audioSession?: { type: string } };
-    // On an iPad this is what lets an alarm past the silent switch.
-    if (audioSession) audioSession.type = 'playback';
-    const context = this.context;
+    passSilentSwitch();
+    const { context } = this;
     if (!context) return false;
     const silence = context.createBufferSource();
     silence.buffer = context.createBuffer(1, 1, context.sampleRate);
     silence.connect(context.destination);
     silence.start();
     if (this.hasLoadFailed) this.reload();
-    const ready = Promise.all([context.resume(), this.loaded()]);
+    const decoded = this.library.load(context, [...tonePaths, ...CHECK_WORDS.map(clipPath)]);
+    const ready = Promise.all([context.resume(), this.loaded(), decoded]);
     await Promise.race([ready, new Promise((resolve) => setTimeout(resolve, 1_000))]);
     this.look = null;
     this.isClockMoving = context.state === 'running';
@@ -98,22 +136,38 @@ class AlarmSounds {
     this.apply();
   }
 
-  /** Makes the words of a run ready before they are needed; what is missing at its moment is left to the tone. */
-  async prepareSpeech(clips: readonly string[]): Promise<void> {
-    const { context } = this;
-    if (!context) return;
-    await this.library.load(context, [...LEVELS.map(tonePath), ...clips.map(clipPath)]);
+  /**
+   * A ring that is known to come, put on the audio clock as well: it sounds on time in a page whose timers are held back. `ring` with the
+   * same id takes it over as it is; a plan that changes or goes is cancelled.
+   */
+  plan(plan: PlannedRing | null): void {
+    this.wantedPlan = plan;
+    this.applyPlan();
   }
 
-  /** Plays an alarm for the ear alone, as for the sound check. Nothing that rings for the run is touched by it. */
+  /** Makes the words of a run ready before they are needed; what is missing at its moment is left to the tone. */
+  prepareSpeech(clips: readonly string[]): void {
+    this.words = clips.map(clipPath);
+    this.askForFiles();
+  }
+
+  /** Plays an alarm for the ear alone, as for the sound check: "This is how I call you." Nothing that rings for the run is touched by it. */
   playTest(level: AlarmLevel): void {
     this.stopTest();
-    const soundId = this.state.get().health === 'fine' ? this.howls?.[level].play() : undefined;
-    if (soundId !== undefined) this.test = { level, soundId };
+    if (this.state.get().health !== 'fine') return;
+    const buffer = this.turnOf({ level, id: 'test', say: CHECK_WORDS });
+    if (buffer) {
+      const source = this.startSource(buffer, isLooped(level), 0);
+      this.test = { stop: () => source.stop() };
+    } else {
+      const soundId = this.howls?.[level].play();
+      this.test = { stop: () => this.howls?.[level].stop(soundId) };
+    }
+    this.state.set({ ...this.state.get(), wasInterrupted: false });
   }
 
   stopTest(): void {
-    if (this.test) this.howls?.[this.test.level].stop(this.test.soundId);
+    this.test?.stop();
     this.test = null;
   }
 
@@ -140,12 +194,17 @@ class AlarmSounds {
         this.hasLoadFailed = true;
         this.judge();
       };
-      const howl = new Howl({ src: [tonePath(level)], loop: level === 'now', html5: false });
+      const howl = new Howl({ src: [tonePath(level)], loop: isLooped(level), html5: false });
       howl.once('load', onLoad);
       howl.once('loaderror', onFail);
       return howl;
     };
-    this.howls = { 'coming-up': load('coming-up'), 'stand-by': load('stand-by'), now: load('now') };
+    this.howls = {
+      'coming-up': load('coming-up'),
+      'stand-by': load('stand-by'),
+      now: load('now'),
+      urgent: load('urgent'),
+    };
     const { context } = this;
     if (context) context.onstatechange = () => void this.recover(false);
   }
@@ -157,8 +216,8 @@ class AlarmSounds {
 
   /** The files once more, after one of them did not come. */
   private reload(): void {
-    this.playing = null;
-    this.test = null;
+    this.dropVoices();
+    this.stopTest();
     for (const level of LEVELS) this.howls?.[level].unload();
     this.howls = null;
     this.load();
@@ -166,6 +225,19 @@ class AlarmSounds {
 
   private async loaded(): Promise<void> {
     while (!this.isLoaded && !this.hasLoadFailed) await new Promise((resolve) => setTimeout(resolve, 25));
+  }
+
+  /** Tones and words, decoded. What did not come is asked for again. */
+  private askForFiles(): void {
+    const { context } = this;
+    const paths = [...tonePaths, ...this.words, ...(this.playing?.say ?? []).map(clipPath)];
+    if (!context || context.state !== 'running' || this.library.take(paths)) return;
+    this.askedAtMs = performance.now();
+    void this.library.load(context, paths).then(() => {
+      const { voice, playing } = this;
+      if (playing && !voice?.hasWords && this.wordsOf(playing).length > 0) this.begin(playing);
+      this.applyPlan();
+    });
   }
 
   private signs(): AudioSigns {
@@ -184,65 +256,139 @@ class AlarmSounds {
       }
     }
     this.judge();
-    const { playing } = this;
-    if (playing?.level === 'stand-by' && !this.spoken && nowMs - this.lastStartMs >= STAND_BY_EVERY_MS)
-      this.begin(playing);
+    if (nowMs - this.askedAtMs >= ASK_AGAIN_MS) this.askForFiles();
+    if (this.playing && nowMs - this.buzzedAtMs >= BUZZ[this.playing.level].everyMs) this.buzz(this.playing.level);
   }
 
   private judge(): void {
     const before = this.state.get();
     const outputHealth = soundHealth(this.signs());
     if (outputHealth === 'fine') this.triedCount = 0;
-    const health = outputHealth === 'fine' && !this.isLoaded ? 'blocked' : outputHealth;
+    const known = outputHealth === 'fine' && !this.isLoaded ? 'blocked' : outputHealth;
     const hasBeenFine = before.health !== 'untested' || this.hasLoadFailed;
-    this.state.set({ ...before, health: health === 'blocked' && !hasBeenFine ? 'untested' : health });
-    if (health !== 'fine' && this.playing) this.halt();
+    const health = known === 'blocked' && !hasBeenFine ? 'untested' : known;
+    this.state.set({ ...before, health, wasInterrupted: before.wasInterrupted || this.isInterrupted(health) });
     if (health === 'fine') this.applyWarmth();
+    else this.dropVoices();
     this.apply();
+    this.applyPlan();
+  }
+
+  /** True from the moment at which sound has been away for longer than a glitch. */
+  private isInterrupted(health: SoundState['health']): boolean {
+    const nowMs = performance.now();
+    if (health === 'blocked') this.blockedSinceMs ??= nowMs;
+    else this.blockedSinceMs = null;
+    return this.blockedSinceMs !== null && nowMs - this.blockedSinceMs >= INTERRUPTED_MS;
   }
 
   private apply(): void {
     const { wanted, playing } = this;
-    if (wanted?.id === playing?.id && wanted?.level === playing?.level) return;
-    if (wanted && this.state.get().health === 'fine') this.begin(wanted);
+    if (isSameRing(wanted, playing)) return;
+    const isSaid = wanted !== null && this.saidOnce === wanted.id && playing?.id !== wanted.id;
+    if (wanted && !isSaid && this.state.get().health === 'fine') this.begin(wanted);
     else if (playing) this.halt();
   }
 
   /** Whatever sounded before stops without a word: listeners hear of the new one only. */
   private begin(ring: Ring): void {
-    this.stopAll();
+    const adopted = this.adopt(ring);
+    this.stopSounding();
     this.playing = ring;
-    this.lastStartMs = performance.now();
-    if (!this.speak(ring)) this.howls?.[ring.level].play();
-    (navigator as Partial<Navigator>).vibrate?.(BUZZ[ring.level]);
+    this.voice = adopted ?? this.speak(ring, 0);
+    if (!this.voice) this.howls?.[ring.level].play();
+    if (!isLooped(ring.level)) this.saidOnce = ring.id;
+    if (!this.voice?.hasWords) this.askForFiles();
+    this.buzz(ring.level);
     this.state.set({ ...this.state.get(), ringing: ring.id });
   }
 
-  /** Tone and words in one piece; false when there are no words, or not all of them have come. */
-  private speak({ level, say = [] }: Ring): boolean {
-    const { context } = this;
-    const [tone] = this.library.take([tonePath(level)]) ?? [];
-    const words = this.library.take(say.map(clipPath));
-    if (!context || !tone || !words || words.length === 0) return false;
-    const { buffer, isLooped } = composeRing(context, level, tone, words);
-    const source = context.createBufferSource();
-    source.buffer = buffer;
-    source.loop = isLooped;
-    source.connect(context.destination);
-    source.start();
-    this.spoken = source;
-    return true;
+  /** The planned ring for this alarm, when it sounds already. */
+  private adopt(ring: Ring): Voice | null {
+    const { planned, context } = this;
+    if (!planned || !context || planned.ring.id !== ring.id) return null;
+    const hasBegun = planned.startsAtS <= context.currentTime && planned.ring.level === ring.level;
+    if (hasBegun) this.planned = null;
+    else this.dropPlan();
+    return hasBegun ? planned : null;
   }
 
-  private stopAll(): void {
-    this.test = null;
-    this.spoken?.stop();
-    this.spoken = null;
+  private applyPlan(): void {
+    const { wantedPlan, planned, context } = this;
+    if (!context || this.state.get().health !== 'fine') return;
+    const isSame = isSameRing(wantedPlan?.ring ?? null, planned?.ring ?? null);
+    if (planned && isSame && wantedPlan) {
+      const hasBegun = planned.startsAtS <= context.currentTime;
+      const movedS = Math.abs(planned.startsAtS - context.currentTime - wantedPlan.inS);
+      if (hasBegun || movedS < PLAN_SLACK_S) return;
+    }
+    this.dropPlan();
+    if (!wantedPlan || wantedPlan.inS <= 0 || wantedPlan.inS > PLAN_AHEAD_S) return;
+    this.planned = this.speak(wantedPlan.ring, wantedPlan.inS);
+  }
+
+  private wordsOf({ say = [] }: Ring): AudioBuffer[] {
+    return this.library.take(say.map(clipPath)) ?? [];
+  }
+
+  /** One turn of this ring; null while its tone has not been decoded. */
+  private turnOf(ring: Ring): AudioBuffer | null {
+    const { context } = this;
+    const [tone] = this.library.take([tonePath(ring.level)]) ?? [];
+    if (!context || !tone) return null;
+    const words = this.wordsOf(ring);
+    const key = [context.sampleRate, ring.level, words.length, ...(ring.say ?? [])].join();
+    if (this.composed?.key !== key) this.composed = { key, buffer: composeRing(context, ring.level, tone, words) };
+    return this.composed.buffer;
+  }
+
+  /** Tone and words in one piece, on the audio clock. */
+  private speak(ring: Ring, inS: number): Voice | null {
+    const { context } = this;
+    const buffer = this.turnOf(ring);
+    if (!context || !buffer) return null;
+    const source = this.startSource(buffer, isLooped(ring.level), inS);
+    const voice = { ring, source, startsAtS: context.currentTime + inS, hasWords: this.wordsOf(ring).length > 0 };
+    source.onended = () => {
+      if (this.voice === voice) this.state.set({ ...this.state.get(), ringing: null });
+    };
+    return voice;
+  }
+
+  private startSource(buffer: AudioBuffer, loop: boolean, inS: number): AudioBufferSourceNode {
+    const context = this.context as AudioContext;
+    const source = context.createBufferSource();
+    source.buffer = buffer;
+    source.loop = loop;
+    source.connect(context.destination);
+    source.start(context.currentTime + inS);
+    return source;
+  }
+
+  private buzz(level: AlarmLevel): void {
+    this.buzzedAtMs = performance.now();
+    (navigator as Partial<Navigator>).vibrate?.(BUZZ[level].pattern);
+  }
+
+  private stopSounding(): void {
+    this.stopTest();
+    this.voice?.source.stop();
+    this.voice = null;
     for (const level of LEVELS) this.howls?.[level].stop();
   }
 
+  private dropPlan(): void {
+    this.planned?.source.stop();
+    this.planned = null;
+  }
+
+  private dropVoices(): void {
+    this.dropPlan();
+    if (this.playing) this.halt();
+  }
+
   private halt(): void {
-    this.stopAll();
+    this.stopSounding();
     this.playing = null;
     (navigator as Partial<Navigator>).vibrate?.(0);
     this.state.set({ ...this.state.get(), ringing: null });
@@ -268,9 +414,11 @@ class AlarmSounds {
     }
   }
 
+  /** A new context: what sounded on the old one is gone with it. */
   private rebuild(): void {
     this.warm = null;
-    this.spoken = null;
+    this.voice = null;
+    this.planned = null;
     this.playing = null;
     this.test = null;
     Howler.unload();
@@ -289,12 +437,7 @@ class AlarmSounds {
     const samples = buffer.getChannelData(0);
     for (let i = 0; i < samples.length; i += 1)
       samples[i] = WARMTH * Math.sin((2 * Math.PI * 40 * i) / context.sampleRate);
-    const source = context.createBufferSource();
-    source.buffer = buffer;
-    source.loop = true;
-    source.connect(context.destination);
-    source.start();
-    this.warm = source;
+    this.warm = this.startSource(buffer, true, 0);
   }
 }
 
