@@ -5,6 +5,7 @@ import {
   SubscribeMessage,
   WebSocketGateway,
   type OnGatewayConnection,
+  type OnGatewayDisconnect,
   type OnGatewayInit,
 } from '@nestjs/websockets';
 import {
@@ -33,6 +34,7 @@ import { ProbesService } from '../probes/probes.service.js';
 import { IngestionService, type AcceptedReadings } from '../readings/ingestion.service.js';
 import { RunReadingsService } from '../readings/run-readings.service.js';
 import { RunLogService } from '../runs/run-log.service.js';
+import { RunPresence } from '../runs/run-presence.service.js';
 import { RunSummariesService } from '../runs/run-summaries.service.js';
 import { sentToRunSchema, type SentToRun } from '../runs/sent-events.schema.js';
 import { SessionsService } from '../sessions/sessions.service.js';
@@ -74,7 +76,12 @@ interface LiveReadings {
 })
 @UseFilters(SocketProblemFilter)
 export class RealtimeGateway
-  implements OnGatewayInit<HubServer>, OnGatewayConnection<HubSocket>, OnModuleDestroy, BeforeApplicationShutdown
+  implements
+    OnGatewayInit<HubServer>,
+    OnGatewayConnection<HubSocket>,
+    OnGatewayDisconnect<HubSocket>,
+    OnModuleDestroy,
+    BeforeApplicationShutdown
 {
   private readonly logger = new Logger(RealtimeGateway.name);
   private readonly subscriptions: Subscription[] = [];
@@ -97,6 +104,7 @@ export class RealtimeGateway
     private readonly handshake: Handshake,
     private readonly auditor: SocketAuditor,
     private readonly logs: RunLogService,
+    private readonly presence: RunPresence,
     private readonly summaries: RunSummariesService,
     private readonly ingestion: IngestionService,
     private readonly readings: RunReadingsService,
@@ -137,6 +145,10 @@ export class RealtimeGateway
     if (may(actor.role, 'runs:read') || may(actor.role, 'batches:read')) void socket.join(houseRoom(actor.houseId));
   }
 
+  handleDisconnect(socket: HubSocket): void {
+    this.presence.cut(socket.id, this.clock.nowMs());
+  }
+
   onModuleDestroy(): void {
     for (const subscription of this.subscriptions) subscription.unsubscribe();
     if (this.auditTimer) clearInterval(this.auditTimer);
@@ -164,12 +176,13 @@ export class RealtimeGateway
   async join(
     @Actor() actor: Actor,
     @ConnectedSocket() socket: HubSocket,
-    @MessageBody({ schema: joinRunSchema }) { runId, afterSeq }: JoinRun,
+    @MessageBody({ schema: joinRunSchema }) { runId, afterSeq, station }: JoinRun,
   ): Promise<JoinedRun> {
     const log = await this.logs.get(actor.houseId, runId);
     // Into the room first: what comes from now on comes twice rather than never.
     await socket.join(runRoom(runId));
     const nowMs = this.clock.nowMs();
+    if (socket.connected) this.presence.join(runId, socket.id, station, nowMs);
     const [run, readings] = await Promise.all([
       this.summaries.get(actor.houseId, runId),
       this.readings.recent(log, nowMs),
@@ -184,6 +197,7 @@ export class RealtimeGateway
     @MessageBody({ schema: leaveRunSchema }) { runId }: LeaveRun,
   ): Promise<{ left: true }> {
     await socket.leave(runRoom(runId));
+    this.presence.leave(runId, socket.id);
     return { left: true };
   }
 

@@ -6,6 +6,7 @@ import { ProbesModule } from '../probes/probes.module.js';
 import { RunEventRow } from './models/run-event.model.js';
 import { Run } from './models/run.model.js';
 import { RunLogService } from './run-log.service.js';
+import { RunPresence } from './run-presence.service.js';
 import { RunSummariesModule } from './run-summaries.module.js';
 import { RunsController } from './runs.controller.js';
 import { RunsService } from './runs.service.js';
@@ -19,7 +20,7 @@ import { RunsService } from './runs.service.js';
     ProbesModule,
   ],
   controllers: [RunsController],
-  providers: [RunLogService, RunsService],
-  exports: [RunLogService, RunsService, RunSummariesModule],
+  providers: [RunLogService, RunPresence, RunsService],
+  exports: [RunLogService, RunPresence, RunsService, RunSummariesModule],
 })
 export class RunsModule {}

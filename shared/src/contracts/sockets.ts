@@ -18,6 +18,8 @@ export const joinRunSchema = z.strictObject({
   runId: z.uuid(),
   /** The last `seq` the tablet holds: only newer events come back. */
   afterSeq: z.int().nonnegative(),
+  /** The name under which this device writes: its silence is noticed then. */
+  station: z.string().min(1).max(60).optional(),
 });
 export type JoinRun = z.infer<typeof joinRunSchema>;
 
