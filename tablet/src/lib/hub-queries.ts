@@ -72,6 +72,12 @@ export const batchesQuery = queryOptions({
   queryFn: ({ signal }) => callHubFor(z.array(batchSchema), 'batches', { signal }),
 });
 
+/** Batches that were cancelled: they can come back. */
+export const cancelledBatchesQuery = queryOptions({
+  queryKey: ['batches', 'cancelled'],
+  queryFn: ({ signal }) => callHubFor(z.array(batchSchema), 'batches', { signal, query: { cancelled: 'true' } }),
+});
+
 export function batchQuery(batchId: string) {
   return queryOptions({
     queryKey: ['batches', batchId],

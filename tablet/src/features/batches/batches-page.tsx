@@ -20,7 +20,7 @@ import { TextField } from '#components/field.tsx';
 import { Page } from '#components/page.tsx';
 import { Failed, Waiting } from '#components/quiet-state.tsx';
 import { Segmented } from '#components/segmented.tsx';
-import { batchesQuery } from '#lib/hub-queries.ts';
+import { batchesQuery, cancelledBatchesQuery } from '#lib/hub-queries.ts';
 import { useKnown, useMay } from '#lib/session.ts';
 import { useUnits } from '#lib/units.ts';
 import { calendarDay, failureWords } from '#lib/words.ts';
@@ -33,6 +33,7 @@ const statusChoices: { value: StatusChoice; label: string }[] = [
   { value: 'running', label: 'Running' },
   { value: 'finished', label: 'Finished' },
   { value: 'abandoned', label: 'Given up' },
+  { value: 'cancelled', label: 'Cancelled' },
 ];
 
 const column = createColumnHelper<Batch>();
@@ -101,13 +102,15 @@ function Book({ batches }: { batches: Batch[] }) {
   const [sorting, setSorting] = useState<SortingState>([{ id: 'plannedOn', desc: true }]);
   const [text, setText] = useState('');
   const [status, setStatus] = useState<StatusChoice>('all');
+  const cancelled = useQuery({ ...cancelledBatchesQuery, enabled: status === 'cancelled' });
+  const shown = status === 'cancelled' ? cancelled.data : batches;
   const columnFilters = useMemo<ColumnFiltersState>(
     () => (status === 'all' ? [] : [{ id: 'status', value: status }]),
     [status],
   );
   // eslint-disable-next-line react-hooks/incompatible-library -- its functions are used in this render only
   const table = useReactTable({
-    data: batches.length > 0 ? batches : none,
+    data: shown ?? none,
     columns,
     state: { sorting, columnFilters, globalFilter: text },
     onSortingChange: setSorting,

@@ -26,7 +26,8 @@ export function WeighOut({ batch, lines }: WeighOutProps) {
   const { house } = useKnown();
   const resolutionG = useScaleStep();
   const [ticks, tick] = useTicks(batch.id);
-  const isPlanned = batch.status === 'planned';
+  // Hops are weighed while the tea steeps: the list is open until the run has ended.
+  const isOpen = batch.status === 'planned' || batch.status === 'running';
   const done = lines.filter(({ additionId }) => ticks.has(additionId)).length;
   return (
     <section aria-labelledby="weigh-out" className="weigh-out grid min-w-0 content-start gap-4">
@@ -37,7 +38,7 @@ export function WeighOut({ batch, lines }: WeighOutProps) {
         id="weigh-out"
         aside={
           <span className="flex items-center gap-5 print:hidden">
-            {isPlanned ? (
+            {isOpen ? (
               <span role="status" className="tabular-nums">
                 {done} of {lines.length}
               </span>
@@ -46,7 +47,7 @@ export function WeighOut({ batch, lines }: WeighOutProps) {
           </span>
         }
       >
-        {isPlanned ? 'Weigh out' : 'What went in'}
+        {isOpen ? 'Weigh out' : 'What went in'}
       </LevelRule>
       {bagsOf(lines).map(({ bag, lines: held }) => (
         <div key={bag ?? ''} className="break-inside-avoid">
@@ -58,7 +59,7 @@ export function WeighOut({ batch, lines }: WeighOutProps) {
                 line={line}
                 resolutionG={resolutionG}
                 isTicked={ticks.has(line.additionId)}
-                onTick={isPlanned ? (isTicked) => tick(line.additionId, isTicked) : null}
+                onTick={isOpen ? (isTicked) => tick(line.additionId, isTicked) : null}
               />
             ))}
           </ul>

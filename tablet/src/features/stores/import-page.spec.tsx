@@ -1,7 +1,7 @@
 import type { ImportPreview } from '@steepfall/shared/contracts';
 import { screen, within } from '@testing-library/react';
 import userEvent from '@testing-library/user-event';
-import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import { DeskHub, renderAt } from '../../testing/desk-hub.tsx';
 import { ImportPage } from './import-page.tsx';
 
@@ -17,6 +17,8 @@ const row = (number: number, problems: ImportPreview['rows'][number]['problems']
 const bad = row(3, [{ column: 'mass', detail: '"lots" is no number: write digits, such as 2.5.' }]);
 let rows = [row(2), bad, row(4)];
 let hub: DeskHub;
+// Dialogs in jsdom are slow on a machine that has other work.
+vi.setConfig({ testTimeout: 20_000 });
 
 beforeEach(async () => {
   rows = [row(2), bad, row(4)];

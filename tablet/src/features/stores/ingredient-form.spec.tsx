@@ -9,6 +9,8 @@ import { AddIngredientDialog, EditIngredientDialog } from './ingredient-form.tsx
 const sencha = buildIngredient(teaFacts);
 const patch = `PATCH stores/ingredients/${sencha.id}`;
 let hub: DeskHub;
+// Dialogs in jsdom are slow on a machine that has other work.
+vi.setConfig({ testTimeout: 20_000 });
 let isChangedMeanwhile = false;
 
 beforeEach(async () => {

@@ -98,7 +98,7 @@ function IngredientView({ ingredient }: { ingredient: Ingredient }) {
           {failureWords(remove.error)}
         </p>
       ) : null}
-      <StockFigures ingredient={ingredient} />
+      {lots.length > 0 ? <StockFigures ingredient={ingredient} /> : null}
       <section aria-labelledby="lots" className="grid gap-1">
         <LevelRule id="lots" aside={lots.length > 1 ? `${lots.length} lots` : null}>
           Lots

@@ -5,7 +5,9 @@ import { Button } from '#components/button.tsx';
 import { Dialog } from '#components/dialog.tsx';
 import { ShapeGlyph } from '#components/shapes.tsx';
 import { sendHubFile } from '#lib/api-client.ts';
+import type { Upload } from '#lib/http.ts';
 import { lotPhotoQuery, storesQuery } from '#lib/hub-queries.ts';
+import { offerUndo } from '#lib/undo.ts';
 import { failureWords, fieldProblems } from '#lib/words.ts';
 import { noteIngredient, useStoresAct } from './use-stores.ts';
 
@@ -49,6 +51,12 @@ export function LabelPhoto({ lot, mayManage }: { lot: Lot; mayManage: boolean })
   );
 }
 
+function sendPhoto(lotId: string, photo: Blob, upload: Pick<Upload, 'onProgress' | 'signal'> = {}) {
+  const form = new FormData();
+  form.append('photo', photo);
+  return sendHubFile(ingredientSchema, `stores/lots/${lotId}/photo`, { form, ...upload });
+}
+
 interface PhotoDialogProps {
   lot: Lot;
   shown: string | null;
@@ -64,11 +72,11 @@ function PhotoDialog({ lot, shown, mayManage, onClose }: PhotoDialogProps) {
   const [sentRatio, setSentRatio] = useState(0);
   const [isUnreadable, setIsUnreadable] = useState(false);
   const preview = useObjectUrl(file);
+  const sending = useRef<AbortController | null>(null);
   const send = useMutation({
     mutationFn: (photo: File) => {
-      const form = new FormData();
-      form.append('photo', photo);
-      return sendHubFile(ingredientSchema, `stores/lots/${lot.id}/photo`, { form, onProgress: setSentRatio });
+      sending.current = new AbortController();
+      return sendPhoto(lot.id, photo, { onProgress: setSentRatio, signal: sending.current.signal });
     },
     onSuccess: (ingredient) => {
       noteIngredient(client, ingredient);
@@ -77,6 +85,13 @@ function PhotoDialog({ lot, shown, mayManage, onClose }: PhotoDialogProps) {
     },
   });
   const remove = useStoresAct(() => [`stores/lots/${lot.id}/photo`, { method: 'DELETE' }]);
+  const kept = client.getQueryData(lotPhotoQuery(lot).queryKey);
+  const offerBack = () => {
+    if (kept) {
+      offerUndo(`Photo of lot ${lot.code} removed.`, async () => noteIngredient(client, await sendPhoto(lot.id, kept)));
+    }
+    onClose();
+  };
   const choose = (chosen: File | undefined) => {
     if (!chosen) return;
     send.reset();
@@ -84,7 +99,7 @@ function PhotoDialog({ lot, shown, mayManage, onClose }: PhotoDialogProps) {
     setIsUnreadable(false);
     setFile(chosen);
   };
-  const error = send.error ?? remove.error;
+  const error = isStopped(send.error) ? null : (send.error ?? remove.error);
   const seen = preview ?? shown;
   return (
     <Dialog isOpen onClose={onClose} title={`Label of lot ${lot.code}`} size="wide">
@@ -152,14 +167,20 @@ function PhotoDialog({ lot, shown, mayManage, onClose }: PhotoDialogProps) {
               look="danger"
               isBusy={remove.isPending}
               busyLabel="Removing"
-              onClick={() => remove.mutate(undefined, { onSuccess: onClose })}
+              onClick={() => remove.mutate(undefined, { onSuccess: offerBack })}
             >
               Remove the photo
             </Button>
           ) : null}
-          <Button onClick={onClose}>Close</Button>
+          {send.isPending ? (
+            <Button onClick={() => sending.current?.abort()}>Stop</Button>
+          ) : (
+            <Button onClick={onClose}>Close</Button>
+          )}
         </div>
       </div>
     </Dialog>
   );
 }
+
+const isStopped = (error: Error | null) => error instanceof DOMException && error.name === 'AbortError';

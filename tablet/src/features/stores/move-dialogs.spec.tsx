@@ -9,6 +9,8 @@ import { CountLotDialog, UseLotDialog } from './move-dialogs.tsx';
 const lot = buildLot({ code: 'C-24', stockG: 34, reservedG: 10 });
 const moves = `POST stores/lots/${lot.id}/moves`;
 let hub: DeskHub;
+// Dialogs in jsdom are slow on a machine that has other work.
+vi.setConfig({ testTimeout: 20_000 });
 
 beforeEach(async () => {
   hub = new DeskHub({

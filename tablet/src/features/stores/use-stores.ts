@@ -47,13 +47,9 @@ export function isProblem(error: unknown, type: ProblemType): boolean {
   return error instanceof HubProblemError && error.type === type;
 }
 
-/** Puts what the hub says of single fields at these fields. @returns what is left to be said of the whole. */
-export function spreadProblems<Values extends FieldValues>(
-  error: Error,
-  setError: UseFormSetError<Values>,
-  fieldOf: (field: string) => FieldPath<Values> = (field) => field as FieldPath<Values>,
-): void {
-  for (const { field, detail } of fieldProblems(error)) setError(fieldOf(field), { message: detail });
+/** Puts what the hub says of single fields at these fields. */
+export function spreadProblems<Values extends FieldValues>(error: Error, setError: UseFormSetError<Values>): void {
+  for (const { field, detail } of fieldProblems(error)) setError(field as FieldPath<Values>, { message: detail });
 }
 
 /** What no field says. */
