@@ -57,9 +57,9 @@ export function fallLineFrame(
   const events = dayEvents(day, document).filter(({ kind }) => kind !== 'heat');
   const lastMs = Math.max(60_000, curve.at(-1)?.atMs ?? 0);
   const temps = [...curve.map(({ tempC }) => tempC), document.transferC, ...(day.never ? [day.never.wantedC] : [])];
-  const highC = Math.max(...temps);
-  const spanC = Math.max(LEAST_SPAN_C, highC - Math.min(...temps));
-  const lowC = highC - spanC;
+  const [leastC, mostC] = [Math.min(...temps), Math.max(...temps)];
+  const spanC = Math.max(LEAST_SPAN_C, mostC - leastC);
+  const lowC = (leastC + mostC - spanC) / 2;
 
   const parts = partsOf(day);
   const within = (part: Part) => events.filter((event) => partAt(parts, event) === part);
@@ -204,8 +204,11 @@ function flagLabels(events: readonly DayEvent[], { at, plot, words }: Place): Li
     const mark = at(event);
     const text = words(event);
     const textY = mark.y - 12 - (events.length - 1 - index) * ROW_PX;
-    const textX = Math.max(4, Math.min(mark.x + 8, plot.right + RIGHT_PX - widthOf(text)));
-    return label(`hold${index}`, mark, text, { x: textX, y: textY }, 'start', `M${mark.x} ${mark.y}V${textY - 11}`);
+    const edge = plot.right + RIGHT_PX;
+    const fits = mark.x + 8 + widthOf(text) <= edge;
+    const textAt = { x: fits ? mark.x + 8 : Math.max(edge, widthOf(text)), y: textY };
+    const leader = `M${mark.x} ${mark.y}V${textY - 11}`;
+    return label(`hold${index}`, mark, text, textAt, fits ? 'start' : 'end', leader);
   });
 }
 

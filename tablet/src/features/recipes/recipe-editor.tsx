@@ -310,7 +310,7 @@ const RecipeFields = memo(function RecipeFields() {
     <form
       noValidate
       onSubmit={(event) => event.preventDefault()}
-      className="@container grid min-w-0 content-start gap-10"
+      className="@container grid min-w-0 content-start gap-10 [&_:is(input,button,select)]:scroll-mt-24 [&_:is(input,button,select)]:scroll-mb-40"
     >
       <section aria-label="The recipe" className="grid gap-4">
         <LevelRule>The recipe</LevelRule>
