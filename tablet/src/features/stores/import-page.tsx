@@ -185,10 +185,13 @@ function Columns() {
       </p>
       <dl className="grid gap-x-12 sm:grid-cols-2">
         {storesColumns.map(({ name, meaning, example }) => (
-          <div key={name} className="grid grid-cols-[8.5rem_1fr] items-baseline gap-x-4 border-b border-hair py-2.5">
+          <div
+            key={name}
+            className="grid grid-cols-[8.5rem_minmax(0,1fr)] items-baseline gap-x-4 border-b border-hair py-2.5"
+          >
             <dt className="font-medium">{name}</dt>
             <dd className="text-soft">
-              {meaning}, <span className="whitespace-nowrap text-text">such as {example}</span>
+              {meaning}, <span className="text-text">such as {example}</span>
             </dd>
           </div>
         ))}
