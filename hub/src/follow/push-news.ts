@@ -39,6 +39,6 @@ export function pushMessageOf(state: RunState, alert: Alert, units: UnitPreferen
   const bags = amounts.map(
     ({ name, massG, bag }) => `${formatMass(massG, { unit: units.mass })} ${name}${bag ? `, ${bag}` : ''}`,
   );
-  const what = state.isRehearsal ? `${state.title}, a rehearsal` : state.title;
-  return { tag: alertTag(alert), stage: alert.stage, title: sentence, body: [...bags, what].join(' · '), sentAtMs };
+  const body = [...bags, state.title].join(' · ');
+  return { tag: alertTag(alert), stage: alert.stage, title: sentence, body, sentAtMs };
 }

@@ -8,6 +8,7 @@ import { ShapeGlyph } from '#components/shapes.tsx';
 import { StatusChip } from '#components/status-chip.tsx';
 import { formatLevel } from '#lib/units.ts';
 import { keepAwake } from '#lib/wake-lock/wake-lock.ts';
+import { spanWords } from '#lib/words.ts';
 import { holdRunLock } from '#lib/wake-lock/run-lock.ts';
 import type { FollowStore } from './follow-store.ts';
 import { PhonePart } from './phone-part.tsx';
@@ -40,11 +41,8 @@ export function FollowedRunView({ store, token, run, isAway }: FollowedProps) {
   return (
     <main className="follow" data-alert={isCall || undefined}>
       <header className="flex flex-wrap items-baseline justify-between gap-x-4 gap-y-1 text-body">
-        <p className="min-w-0 font-medium">
-          {run.title}
-          {run.isRehearsal ? <span className="font-normal text-soft"> · rehearsal</span> : null}
-        </p>
-        <Contact store={store} isAway={isAway} />
+        <p className="min-w-0 font-medium">{run.title}</p>
+        {isEnded ? null : <Contact store={store} isAway={isAway} />}
       </header>
       {isEnded ? <Ended outcome={run.outcome} /> : <Live store={store} run={run} />}
       {isEnded ? null : alert ? (
@@ -68,10 +66,14 @@ function Contact({ store, isAway }: { store: FollowStore; isAway: boolean }) {
     isAway ? `no contact for ${formatDuration(Math.floor((store.silentMs() ?? 0) / 1000))}` : 'live',
   );
   return (
-    <StatusChip shape={isAway ? 'ring' : 'dot'} tone="text" className="tabular-nums">
-      <span role="status">{isAway ? <span className="sr-only">No contact with the hub. </span> : null}</span>
-      {text}
-    </StatusChip>
+    <div>
+      <p role="status" className="sr-only">
+        {isAway ? 'No contact with the hub.' : ''}
+      </p>
+      <StatusChip shape={isAway ? 'ring' : 'dot'} className="tabular-nums">
+        {text}
+      </StatusChip>
+    </div>
   );
 }
 
@@ -110,7 +112,7 @@ function Live({ store, run: { liquid, units } }: { store: FollowStore; run: Foll
         {formatTemp(liquid.tempC, { unit: units.temperature, showUnit: false })}
         <span className="follow-unit">°{units.temperature}</span>
       </p>
-      <p className="text-lead">
+      <p className="text-body">
         {liquid.status === 'starting' ? (
           <StatusChip shape="dash">settling</StatusChip>
         ) : (
@@ -128,9 +130,23 @@ function Live({ store, run: { liquid, units } }: { store: FollowStore; run: Foll
   );
 }
 
+/** Seconds of an estimate that is this far off would be false digits. */
+const ROUGH_ABOVE_S = 300;
+
+interface CountdownProps {
+  store: FollowStore;
+  atMs: number;
+  label: string;
+  past: string;
+  isEstimate?: boolean;
+}
+
 /** "0:42" to go, or how long it is past; never a minus. */
-function Countdown({ store, atMs, label, past }: { store: FollowStore; atMs: number; label: string; past: string }) {
-  const leftText = useTicked(() => formatDuration(Math.max(0, Math.ceil((atMs - store.nowMs()) / 1000))));
+function Countdown({ store, atMs, label, past, isEstimate = false }: CountdownProps) {
+  const leftText = useTicked(() => {
+    const leftS = Math.max(0, Math.ceil((atMs - store.nowMs()) / 1000));
+    return isEstimate && leftS > ROUGH_ABOVE_S ? spanWords(leftS) : formatDuration(leftS);
+  });
   const pastText = useTicked(() => {
     const agoS = Math.floor((store.nowMs() - atMs) / 1000);
     return agoS < 1 ? null : formatDuration(agoS);
@@ -206,7 +222,13 @@ function StepNow({ store, run }: { store: FollowStore; run: FollowedRun }) {
           past={`${timer.label}, over by`}
         />
       ) : crossing?.atMs != null ? (
-        <Countdown store={store} atMs={crossing.atMs} label={`${crossing.title}, in about`} past="reached" />
+        <Countdown
+          store={store}
+          atMs={crossing.atMs}
+          label={`${crossing.title}, in about`}
+          past={`${crossing.title}, past by`}
+          isEstimate
+        />
       ) : null}
     </section>
   );
