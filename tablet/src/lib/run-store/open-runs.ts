@@ -1,3 +1,4 @@
+import { followBattery } from '../battery/battery.ts';
 import { hubClock } from '../clock/hub-clock.ts';
 import { subscribeTick, tickNow } from '../clock/ticker.ts';
 import { openEventStore } from '../event-store/open-event-store.ts';
@@ -46,6 +47,7 @@ export async function sendLeftOvers(houseId: string): Promise<void> {
 function startHeartbeat(): void {
   if (isTicking) return;
   isTicking = true;
+  followBattery();
   const link = hubLink();
   hubClock.follow(link);
   link.state.subscribe(() => {

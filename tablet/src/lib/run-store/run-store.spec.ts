@@ -210,6 +210,27 @@ describe(RunStore, () => {
     expect(hub.log.at(-1)).toMatchObject({ type: 'alert.raised', payload: { rule: 'signal' } });
   });
 
+  it('keeps to itself that the hub is lost, and tells it together with its end', async () => {
+    vi.useFakeTimers({ toFake: ['performance'] });
+    const hub = new FakeHub(RUN_ID, new LogBuilder().stored);
+    const link = hub.connect();
+    const { run, time, state } = await tablet(link);
+    link.setConnected(false);
+    for (let s = 0; s <= 11; s += 1) {
+      vi.advanceTimersByTime(1_000);
+      time.nowMs += 1_000;
+      run.tick();
+      await settle();
+    }
+    expect(standingAlerts(state())).toMatchObject([{ rule: 'hub', key: 'hub:tablet' }]);
+    expect(hub.log).toHaveLength(1);
+    link.setConnected(true);
+    await settle();
+    vi.useRealTimers();
+    expect(standingAlerts(state())).toEqual([]);
+    expect(hub.log.map(({ type }) => type)).toEqual(['run.started', 'alert.raised', 'alert.cleared']);
+  });
+
   it('rings once for a deadline that passed while it slept', async () => {
     const hub = new FakeHub(RUN_ID, steeping().stored);
     const link = hub.connect();

@@ -19,10 +19,12 @@ import {
 } from '@steepfall/shared/runs';
 import { runTimeAt } from '@steepfall/shared/timers';
 import type { EventStore, OutboxItem } from '../event-store/event-store.ts';
+import { batteryState } from '../battery/battery.ts';
 import { HubProblemError } from '../http.ts';
 import type { HubLink } from '../socket/hub-link.ts';
 import { ValueStore } from '../value-store.ts';
 import { driverConfigOf } from './driver-config.ts';
+import { isOfThisTablet, KitFaults } from './kit-faults.ts';
 import type { Outbox } from './outbox.ts';
 import { ReadingRing } from './reading-ring.ts';
 
@@ -94,6 +96,7 @@ export class RunStore {
   private acting: Promise<unknown> = Promise.resolve();
   private rejoinTimer: ReturnType<typeof setTimeout> | undefined;
   private keptAtMs = 0;
+  private readonly kit = new KitFaults();
   private readonly stops: (() => void)[] = [];
 
   constructor(private readonly parts: RunStoreParts) {
@@ -173,6 +176,7 @@ export class RunStore {
   /** One heartbeat: time moves the watch, the timers and the alerts on. */
   tick(): void {
     this.drive([]);
+    this.lookAtKit();
     this.releaseHeld(HUB_ANSWER_MS);
     const nowMs = Date.now();
     if (nowMs - this.keptAtMs > KEEP_EVERY_MS) this.keep();
@@ -232,7 +236,11 @@ export class RunStore {
   private async joinOnce(): Promise<void> {
     const { link, outbox } = this.parts;
     try {
-      const joined = await link.ask('run.join', { runId: this.runId, afterSeq: this.contiguousSeq() });
+      const joined = await link.ask('run.join', {
+        runId: this.runId,
+        afterSeq: this.contiguousSeq(),
+        station: this.parts.station,
+      });
       if (this.isClosed) return;
       this.isJoined = link.state.get().status === 'connected';
       this.isMissing = false;
@@ -242,6 +250,7 @@ export class RunStore {
       this.confirm(joined.events);
       this.boot();
       this.keep();
+      this.lookAtKit();
       await outbox.send(this.runId);
     } catch (error) {
       if (this.isClosed) return;
@@ -374,6 +383,15 @@ export class RunStore {
     this.raise(events);
   }
 
+  /** What this tablet finds out about itself, on its own. */
+  private lookAtKit(): void {
+    const { state, phase } = this.snapshot.get();
+    if (phase !== 'open' || !this.parts.clock.isSettled.get()) return;
+    const { runId, isJoined } = this;
+    const place = { runId, station: this.parts.station, nowMs: this.nowMs(), steadyMs: performance.now() };
+    this.raise(this.kit.look(state, { isJoined, battery: batteryState.get() }, place));
+  }
+
   private show(nowMs: number): void {
     const { state } = this.snapshot.get();
     const view = this.driver ? liveView(this.driver, state, nowMs) : null;
@@ -411,8 +429,9 @@ export class RunStore {
   }
 }
 
-/** Facts that need a clock and no reading: every device comes to the same one. */
+/** Facts that need no reading, and nobody to find them as well. */
 function isFoundByTime(event: RunEvent): boolean {
+  if (isOfThisTablet(event)) return true;
   if (event.type === 'alert.raised') return event.payload.rule === 'timer';
   return event.type === 'step.done' && event.payload.cause === 'timer';
 }

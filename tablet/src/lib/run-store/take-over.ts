@@ -1,9 +1,23 @@
-import { standingAlerts, type Alert, type RunCommand, type RunState } from '@steepfall/shared/runs';
+import { burstsOf, callingAlerts, isFault, type Alert, type RunCommand, type RunState } from '@steepfall/shared/runs';
+import { stationName } from '../ids.ts';
 
-/** The alert that takes the screen: the most urgent one that says "now" or later. Lower stages stay at the edge. */
+/** What calls on this tablet. A fault that was put aside is raised anew at its end, so no clock is asked here. */
+export function callingHere(state: RunState): Alert[] {
+  return callingAlerts(state, 0, stationName());
+}
+
+/**
+ * The alert that takes the screen: what the sheet calls for with "now" or later, or else a silent probe while a level is waited for. Lower
+ * stages and other faults stay at the edge. Of faults that came together the first is shown: the others are likely to follow from it.
+ */
 export function takeOverAlert(state: RunState): Alert | null {
-  const worst = standingAlerts(state)[0];
-  return worst && (worst.stage === 'now' || worst.stage === 'missed') ? worst : null;
+  const calling = callingHere(state);
+  const prompt = calling.find((alert) => !isFault(alert) && (alert.stage === 'now' || alert.stage === 'missed'));
+  if (prompt) return prompt;
+  const burst = burstsOf(calling.filter(isFault)).find(({ first, rest }) =>
+    [first, ...rest].some(({ rule }) => rule === 'signal'),
+  );
+  return burst?.first ?? null;
 }
 
 /** "Heard it", in commands: a timer somebody set for themselves is over with it. */
