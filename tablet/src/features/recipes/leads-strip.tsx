@@ -29,7 +29,8 @@ export function LeadsStrip({ desk, children }: LeadsStripProps) {
     const row = figures?.rows.find((each) => each.id === id);
     return row ? [{ row, word }] : [];
   });
-  const warned = figures?.warnings.length ?? 0;
+  // Before anything goes in, there is nothing to look out for yet.
+  const warned = desk.document?.additions.length ? (figures?.warnings.length ?? 0) : 0;
   const close = () => setIsOpen(false);
   return (
     <>

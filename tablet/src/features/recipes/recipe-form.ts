@@ -23,14 +23,6 @@ export const recipeResolver: Resolver<RecipeForm> = async (...args) => {
   return result;
 };
 
-export const kindWords: Record<IngredientKind, string> = {
-  salt: 'salt',
-  acid: 'acid',
-  tea: 'tea',
-  hops: 'hops',
-  other: 'aromatic',
-};
-
 /** A first amount for each litre of water, so that a new line moves the figures at once; the brewer writes over it. */
 const firstGPerL: Record<IngredientKind, number> = { salt: 0.1, acid: 0.2, tea: 4, hops: 2, other: 1 };
 
