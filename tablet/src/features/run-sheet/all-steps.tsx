@@ -1,18 +1,47 @@
+import { useState } from 'react';
 import { Link } from 'react-router-dom';
 import type { LogEntry, RunCommand, RunEventOf, RunState, StepProgress } from '@steepfall/shared/runs';
 import { formatTemp } from '@steepfall/shared/units';
 import { HoldButton } from '#components/hold-button.tsx';
+import { Segmented } from '#components/segmented.tsx';
 import { ShapeGlyph } from '#components/shapes.tsx';
 import { PressButton } from '#components/press-button.tsx';
 import { useRun } from '#lib/run-store/run-context.tsx';
 import { useUnits } from '#lib/units.ts';
 import { clockTime } from '#lib/words.ts';
+import { BagsPanel } from './bags.tsx';
+import { FiguresPanel } from './live-figures-panel.tsx';
 import { measurementText } from './quantities.ts';
 import { amountText } from './step-area.tsx';
 import { conditionText, conflictText } from './sheet-words.ts';
 
-/** The whole sheet as a list, what contradicts itself, and the way out. */
+type Part = 'steps' | 'figures' | 'bags';
+
+/** The whole sheet: its steps, its figures so far, what is in which bag. */
 export function AllSteps({ onAct, onClose }: { onAct: (command: RunCommand) => void; onClose: () => void }) {
+  const [part, setPart] = useState<Part>('steps');
+  return (
+    <div className="grid gap-6">
+      <Segmented<Part>
+        label="Show"
+        isLabelHidden
+        value={part}
+        onChange={setPart}
+        segments={[
+          { value: 'steps', label: 'Steps' },
+          { value: 'figures', label: 'Figures' },
+          { value: 'bags', label: 'Bags' },
+        ]}
+      />
+      {part === 'steps' ? <StepList onAct={onAct} onClose={onClose} /> : null}
+      {part === 'figures' ? <FiguresPanel /> : null}
+      {part === 'bags' ? <BagsPanel /> : null}
+    </div>
+  );
+}
+
+/** The whole sheet as a list, what contradicts itself, and the way out. */
+function StepList({ onAct, onClose }: { onAct: (command: RunCommand) => void; onClose: () => void }) {
   const units = useUnits();
   const { state, entries } = useRun();
   const ticked = tickedTasks(state, entries);

@@ -4,6 +4,7 @@ import type { DoneCondition, MeasuredQuantity } from '@steepfall/shared/sheets';
 import { Button } from '#components/button.tsx';
 import { Segmented } from '#components/segmented.tsx';
 import { inPersonsWords, useUnits } from '#lib/units.ts';
+import { AcidDose, AcidHint } from './acid-dose.tsx';
 import { NumberPad, typed } from './number-pad.tsx';
 import { quantityNames, typedQuantity } from './quantities.ts';
 
@@ -20,7 +21,12 @@ interface MeasureSheetProps {
 const offered: readonly MeasuredQuantity[] = ['pH', 'tempC', 'volumeL'];
 
 /** One number, typed on keys that a wet finger hits. */
-export function MeasureSheet({ quantity: first, stepId, done, tempC, onRecord, onClose }: MeasureSheetProps) {
+export function MeasureSheet({ quantity: first, stepId: ofStep, done, tempC, onRecord, onClose }: MeasureSheetProps) {
+  const [asksForAcid, setAsksForAcid] = useState(false);
+  /** A pH that is written down, and asks for something. */
+  const [keptPh, setKeptPh] = useState<number | null>(null);
+  /** The step whose acid is typed in after it. */
+  const [acidStepId, setAcidStepId] = useState<string | null>(null);
   const [quantity, setQuantity] = useState(first);
   const [text, setText] = useState('');
   const [error, setError] = useState<string | null>(null);
@@ -29,7 +35,8 @@ export function MeasureSheet({ quantity: first, stepId, done, tempC, onRecord, o
   const { symbol, fromInside, toInside } = typedQuantity(quantity, units);
   const value = text === '' ? Number.NaN : toInside(Number(text));
   const shown = (inside: number | undefined) => (inside === undefined ? 'any' : Number(fromInside(inside).toFixed(2)));
-  const choices = offered.includes(first) ? offered : [first, ...offered];
+  const stepId = acidStepId ?? ofStep;
+  const choices = acidStepId !== null ? (['massG'] as const) : offered.includes(first) ? offered : [first, ...offered];
   const wanted = done?.by === 'measurement' && done.quantity === quantity ? done : null;
   const isWanted = wanted !== null && isInRange(wanted, quantity, value);
 
@@ -38,10 +45,19 @@ export function MeasureSheet({ quantity: first, stepId, done, tempC, onRecord, o
     const { min, max } = measurableRange[quantity];
     if (!Number.isFinite(value)) return setError(`Type a number from ${shown(min)} to ${shown(max)}.`);
     const decision = await onRecord({ type: 'recordMeasurement', quantity, value, stepId, tempC: tempC() });
-    if (decision.ok) onClose();
+    if (decision.ok && quantity === 'pH' && asksForAcid) setKeptPh(value);
+    else if (decision.ok) onClose();
     else setError(inPersonsWords(decision.problem.detail, units));
   };
 
+  if (keptPh !== null && acidStepId === null) {
+    const type = (acidStep: string) => {
+      setAcidStepId(acidStep);
+      setQuantity('massG');
+      setText('');
+    };
+    return <AcidDose ph={keptPh} onRecord={onRecord} onOther={type} onClose={onClose} />;
+  }
   return (
     <form className="measure" onSubmit={(event) => void record(event)}>
       <div className="measure-side">
@@ -82,6 +98,9 @@ export function MeasureSheet({ quantity: first, stepId, done, tempC, onRecord, o
                   : 'Out of range: it is kept, and the step waits.'
                 : ''}
             </span>
+          ) : null}
+          {!error && quantity === 'pH' ? (
+            <AcidHint ph={value} isShown={text.includes('.')} onAsks={setAsksForAcid} />
           ) : null}
         </p>
         <Button type="submit" look="primary" size="sheet" className="measure-save">

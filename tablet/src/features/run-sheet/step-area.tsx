@@ -5,7 +5,9 @@ import { formatMass, type UnitPreferences } from '@steepfall/shared/units';
 import { CautionMark } from '#components/caution-mark.tsx';
 import { useRunState } from '#lib/run-store/run-context.tsx';
 import { useUnits } from '#lib/units.ts';
+import { lotsOf, useWeighed } from './bags.tsx';
 import { Waiting } from './countdown.tsx';
+import { LiveFigures } from './live-figures.tsx';
 import { measurementText, quantityText } from './quantities.ts';
 
 export function amountText(
@@ -19,6 +21,7 @@ export function amountText(
 export function StepArea({ onStopTimer }: { onStopTimer: (timerId: string) => void }) {
   const state = useRunState();
   const units = useUnits();
+  const weighed = useWeighed();
   const progress = currentStep(state);
   const heading = useRef<HTMLHeadingElement>(null);
   const stepId = progress?.step.id ?? null;
@@ -53,10 +56,12 @@ export function StepArea({ onStopTimer }: { onStopTimer: (timerId: string) => vo
           <ul className="step-amounts" data-many={step.amounts.length > 2 || undefined}>
             {step.amounts.map((amount) => {
               const { what, where } = amountText(amount, units);
+              const lots = lotsOf(amount, step.id, state, weighed);
               return (
                 <li key={amount.name}>
                   {what}
                   {where ? <span className="step-bag">{where}</span> : null}
+                  {lots ? <span className="step-lot">{lots}</span> : null}
                 </li>
               );
             })}
@@ -74,6 +79,7 @@ export function StepArea({ onStopTimer }: { onStopTimer: (timerId: string) => vo
           <p className="step-detail">Measured: {measured.map((one) => measurementText(one, units)).join(', ')}</p>
         ) : null}
       </div>
+      <LiveFigures />
       <Waiting onStop={onStopTimer} />
       <Cautions cautions={step.cautions} />
     </section>
