@@ -1,4 +1,4 @@
-import { writeFile } from 'node:fs/promises';
+import { readFile, writeFile } from 'node:fs/promises';
 import { join } from 'node:path';
 import type { Batch, BatchPlan, Ingredient, Recipe, RunEvents } from '@steepfall/shared/contracts';
 import type { Browser, Locator, Page } from 'playwright-core';
@@ -233,21 +233,27 @@ describe('bad files', () => {
     await expect.poll(() => dialog.getByRole('alert').first().innerText()).toMatch(/12 MB|large/i);
   });
 
-  it('names the broken row of a list and brings in none until it is left out', async () => {
-    const count = (await api.get<Ingredient[]>('stores')).length;
+  it('names the broken row of a list, and brings in none until it is left out', async () => {
+    const lotCount = async () => (await stocked('sencha')).lots.length;
+    const before = await lotCount();
     await page.goto(`${product.url}/stores/import`);
     const [download] = await Promise.all([
       page.waitForEvent('download'),
-      page.getByRole('button', { name: /template/i }).click(),
+      page.getByRole('button', { name: 'Save a template' }).click(),
     ]);
-    const template = await (await import('node:fs/promises')).readFile((await download.path())!, 'utf8');
-    const [head, row = ''] = template.split(/\r?\n/);
-    const broken = row.replace(/(^|,)(\d+(\.\d+)?)(?=,)/, '$1many');
+    const [head = '', row = ''] = (await readFile(await download.path(), 'utf8')).split('\r\n');
+    const broken = row.replace('1.5 kg', 'a lot').replace('L-2203', 'L-2204');
     await writeFile(scratch('list.csv'), [head, row, broken].join('\n'));
     await page.locator('input[type=file]').setInputFiles(scratch('list.csv'));
-    await page.getByRole('table').waitFor();
-    expect(await page.getByRole('main').innerText()).toMatch(/row 3|3/);
-    expect((await api.get<Ingredient[]>('stores')).length).toBe(count);
+    const bad = page.getByRole('row').filter({ has: page.getByRole('checkbox', { name: 'Leave out row 3' }) });
+    expect(await bad.innerText()).toMatch(/mass/i);
+    const bringIn = page.getByRole('button', { name: /^Bring in/ });
+    expect(await bringIn.isDisabled()).toBe(true);
+    expect(await lotCount()).toBe(before);
+    await bad.getByRole('checkbox').click();
+    await bringIn.click();
+    await page.getByRole('heading', { name: 'It is on the shelf' }).waitFor();
+    expect(await lotCount()).toBe(before + 1);
   });
 });
 
