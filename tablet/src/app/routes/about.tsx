@@ -4,11 +4,10 @@ import { LevelRule } from '#components/level-rule.tsx';
 import { Page } from '#components/page.tsx';
 import { Segmented } from '#components/segmented.tsx';
 import { UnitsSection } from '#features/house/units-section.tsx';
+import { HandsSection } from '#features/station/hands-section.tsx';
+import { PedalSection } from '#features/station/pedal-section.tsx';
 import { stationName } from '#lib/ids.ts';
 import { signOut, useKnown } from '#lib/session.ts';
-import { useStored } from '#lib/value-store.ts';
-import { chooseWave, useIsWaveOn, waveTrouble } from '#lib/wave/use-wave.ts';
-import type { WaveTrouble } from '#lib/wave/wave-camera.ts';
 import { chooseGround, useGroundChoice, type GroundChoice } from '#lib/theme.ts';
 
 const grounds: { value: GroundChoice; label: string }[] = [
@@ -16,39 +15,6 @@ const grounds: { value: GroundChoice; label: string }[] = [
   { value: 'day', label: 'Day' },
   { value: 'night', label: 'Night' },
 ];
-
-const waves = [
-  { value: 'off', label: 'Off' },
-  { value: 'on', label: 'On' },
-] as const;
-
-const troubleWords: Record<WaveTrouble, string> = {
-  'no-camera': 'No camera answers on this device. A page-turner pedal does the same.',
-  'not-allowed':
-    'The camera is not allowed for this page. Allow it in the settings of the browser, then switch this on again.',
-};
-
-/** A hand that goes across the picture and back is "done". */
-function WaveChoice() {
-  const isOn = useIsWaveOn();
-  const trouble = useStored(waveTrouble);
-  return (
-    <>
-      <Segmented
-        label="Wave for done"
-        value={isOn ? 'on' : 'off'}
-        onChange={(next) => chooseWave(next === 'on')}
-        segments={[...waves]}
-      />
-      <p className="max-w-prose text-body text-soft">
-        With hands full, wave in front of the tablet, across and back: it does what a pedal does. The camera is on only
-        while a run sheet is open, its pictures are looked at on this device, and none is kept or sent. Steam and a
-        greasy lens get in its way; a pedal never minds them.
-      </p>
-      {isOn && trouble ? <p role="alert">{troubleWords[trouble]}</p> : null}
-    </>
-  );
-}
 
 export function AboutRoute() {
   const { member, house } = useKnown();
@@ -63,7 +29,6 @@ export function AboutRoute() {
           Day is easier to read in steam and by a window, night in a dark corner. The choice stays on this device. In
           the log this device is <span className="font-medium text-text">{stationName()}</span>.
         </p>
-        <WaveChoice />
         <div>
           <Button
             onClick={() => {
@@ -75,6 +40,8 @@ export function AboutRoute() {
           </Button>
         </div>
       </section>
+      <PedalSection />
+      <HandsSection />
       <UnitsSection />
       <section aria-labelledby="what-it-is-not" className="grid gap-6">
         <LevelRule id="what-it-is-not">What Steepfall does not do</LevelRule>

@@ -3,15 +3,18 @@ import { PressButton } from '#components/press-button.tsx';
 import { useRunState } from '#lib/run-store/run-context.tsx';
 import { useUnits } from '#lib/units.ts';
 import { conditionText } from './sheet-words.ts';
+import { WipeButton } from './wipe-lock.tsx';
 
 interface FootProps {
   onAct: (command: RunCommand) => void;
   onTimer: () => void;
   onAllSteps: () => void;
+  /** Held long enough: the glass can be wiped now. */
+  onWipe: () => void;
 }
 
 /** What can be done meanwhile, what comes next, and the way to the whole sheet. */
-export function Foot({ onAct, onTimer, onAllSteps }: FootProps) {
+export function Foot({ onAct, onTimer, onAllSteps, onWipe }: FootProps) {
   const units = useUnits();
   const state = useRunState();
   const current = currentStep(state);
@@ -57,9 +60,12 @@ export function Foot({ onAct, onTimer, onAllSteps }: FootProps) {
         <span className="foot-all">All steps</span>
       </PressButton>
       {isRunning ? (
-        <PressButton className="foot-button" onPress={onTimer}>
-          <span className="foot-all">Timer</span>
-        </PressButton>
+        <>
+          <PressButton className="foot-button" onPress={onTimer}>
+            <span className="foot-all">Timer</span>
+          </PressButton>
+          <WipeButton onHeld={onWipe} />
+        </>
       ) : null}
     </footer>
   );

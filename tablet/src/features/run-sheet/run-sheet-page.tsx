@@ -7,7 +7,10 @@ import { PressButton } from '#components/press-button.tsx';
 import { ShapeGlyph } from '#components/shapes.tsx';
 import { stationName } from '#lib/ids.ts';
 import { usePedal } from '#lib/press/use-pedal.ts';
+import { useVoice } from '#lib/voice/use-voice.ts';
+import { answerTo } from '#lib/voice/intents.ts';
 import { useWave } from '#lib/wave/use-wave.ts';
+import { alarmSounds } from '#lib/audio/alarm-sounds.ts';
 import { RunProvider, useOpenRun, useRun, useRunState, useRunStore } from '#lib/run-store/run-context.tsx';
 import type { RunSnapshot, RunStore } from '#lib/run-store/run-store.ts';
 import { takeOverAlert } from '#lib/run-store/take-over.ts';
@@ -30,6 +33,7 @@ import { conditionText, conflictText } from './sheet-words.ts';
 import { StatusLine } from './status-line.tsx';
 import { StepArea } from './step-area.tsx';
 import { TimerSheet } from './timer-sheet.tsx';
+import { WipeLock } from './wipe-lock.tsx';
 import './run-sheet.css';
 
 /** What other features put on the sheet. A route joins them, since features do not know each other. */
@@ -117,7 +121,9 @@ function Sheet({ rehearsal, soundCheck, strips, TakeOver, ringer }: RunSheetPage
   const snapshot = useRun();
   const { state } = snapshot;
   const [sheet, setSheet] = useState<OpenSheet>(null);
+  const [isWiping, setIsWiping] = useState(false);
   const [refusal, setRefusal] = useState<string | null>(null);
+  const { temperature } = useUnits();
   const alert = takeOverAlert(state);
   const isRunning = state.status === 'running';
   const mustCheckSound = isRunning && !hasCheckedSound(snapshot);
@@ -143,6 +149,7 @@ function Sheet({ rehearsal, soundCheck, strips, TakeOver, ringer }: RunSheetPage
     },
     [store],
   );
+  const stopWiping = useCallback(() => setIsWiping(false), []);
   const complete = useCallback(
     (stepId: string) => {
       act({ type: 'completeStep', stepId, tempC: liquidNow(store) });
@@ -177,7 +184,20 @@ function Sheet({ rehearsal, soundCheck, strips, TakeOver, ringer }: RunSheetPage
   );
   useWave(() => {
     if (sheet === null) goOn();
-  });
+  }, isRunning);
+  useVoice((intent) => {
+    if (mustCheckSound) return;
+    const { view } = store.live.get();
+    const { commands, say } = answerTo(intent, {
+      state: store.snapshot.get().state,
+      nowMs: store.nowMs(),
+      tempC: liquidNow(store),
+      meetingAtMs: view?.forecast?.kind === 'forecast' ? view.forecast.atMs : null,
+      unit: temperature,
+    });
+    for (const command of commands) act(command);
+    void alarmSounds.say(say);
+  }, isRunning);
 
   const body = alert ? (
     <TakeOver onComplete={(stepIds) => stepIds.forEach(complete)} onAct={act} refusal={refusal} />
@@ -217,7 +237,13 @@ function Sheet({ rehearsal, soundCheck, strips, TakeOver, ringer }: RunSheetPage
         </div>
       )}
       {body}
-      <Foot onAct={act} onTimer={() => setSheet({ kind: 'timer' })} onAllSteps={() => setSheet({ kind: 'steps' })} />
+      <Foot
+        onAct={act}
+        onTimer={() => setSheet({ kind: 'timer' })}
+        onAllSteps={() => setSheet({ kind: 'steps' })}
+        onWipe={() => setIsWiping(true)}
+      />
+      {isWiping && sheet === null ? <WipeLock onOver={stopWiping} /> : null}
 
       <SheetDialog isOpen={sheet?.kind === 'note'} onClose={close} title="Note">
         <NoteSheet stepId={current?.step.id ?? null} onRecord={record} onClose={close} />

@@ -131,7 +131,7 @@ describe('what can be done meanwhile', () => {
     const user = userEvent.setup();
     render(
       <Around run={run}>
-        <Foot onAct={onAct} onTimer={vi.fn()} onAllSteps={vi.fn()} />
+        <Foot onAct={onAct} onTimer={vi.fn()} onAllSteps={vi.fn()} onWipe={vi.fn()} />
       </Around>,
     );
     const task = screen.getByRole('checkbox', { name: 'weigh the hops' });

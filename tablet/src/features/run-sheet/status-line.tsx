@@ -7,7 +7,10 @@ import { useLive, useRun, useRunStore } from '#lib/run-store/run-context.tsx';
 import { useSession } from '#lib/session.ts';
 import { useStored, useStoredPart } from '#lib/value-store.ts';
 import { wakeState, type WakeState } from '#lib/wake-lock/wake-lock.ts';
+import { useIsVoiceOn, voiceEar } from '#lib/voice/use-voice.ts';
+import { useIsWaveOn, waveSight } from '#lib/wave/use-wave.ts';
 import { clockTime } from '#lib/words.ts';
+import { handsFreeWord, isHandsFreeBad } from './hands-free-words.ts';
 import { isProbeBad, probeText } from './probe-words.ts';
 import { StatusSheet } from './status-sheet.tsx';
 
@@ -72,6 +75,7 @@ export function StatusLine() {
         {isDurable ? null : <Chip name="records" shape="ring" word="not kept" isBad />}
         <Chip name="sound" {...heard} />
         <Chip name="screen" {...wakeLook[wake]} />
+        {state.status === 'running' ? <HandsFreeChips /> : null}
       </button>
       <span className="status-time">{time}</span>
       <StatusSheet isOpen={isOpen} onClose={() => setIsOpen(false)} />
@@ -83,6 +87,24 @@ function ProbeChip() {
   const word = useLive(probeText);
   const isBad = useLive(isProbeBad);
   return <Chip name="probe" shape={isBad ? 'ring' : 'dot'} word={word} isBad={isBad} />;
+}
+
+/** A camera or a microphone that is on is never kept quiet about. */
+function HandsFreeChips() {
+  const isWaveOn = useIsWaveOn();
+  const sight = useStored(waveSight);
+  const isVoiceOn = useIsVoiceOn();
+  const ear = useStored(voiceEar);
+  const look = (of: typeof sight | typeof ear) => {
+    const isBad = isHandsFreeBad(of);
+    return { shape: isBad ? ('ring' as const) : ('dot' as const), word: handsFreeWord[of], isBad };
+  };
+  return (
+    <>
+      {isWaveOn ? <Chip name="wave" {...look(sight)} /> : null}
+      {isVoiceOn ? <Chip name="voice" {...look(ear)} /> : null}
+    </>
+  );
 }
 
 function Chip({ name, shape, word, isBad }: { name: string } & ChipLook) {

@@ -1,4 +1,3 @@
-import type { ReactNode } from 'react';
 import { describeEvent } from '@steepfall/shared/runs';
 import { formatTemp } from '@steepfall/shared/units';
 import { Button } from '#components/button.tsx';
@@ -13,7 +12,12 @@ import { chooseGround, useGroundChoice } from '#lib/theme.ts';
 import { useUnits } from '#lib/units.ts';
 import { useStored, useStoredPart } from '#lib/value-store.ts';
 import { askToStayAwake, wakeState, type WakeState } from '#lib/wake-lock/wake-lock.ts';
+import { useIsVoiceOn, voiceEar } from '#lib/voice/use-voice.ts';
+import { useIsWaveOn, waveSight } from '#lib/wave/use-wave.ts';
+import { handsFreeWord, voiceText, waveText } from './hands-free-words.ts';
+import { Notices } from './notices.tsx';
 import { SheetDialog } from './sheet-dialog.tsx';
+import { Fact } from './status-fact.tsx';
 import { probeText } from './probe-words.ts';
 
 const soundText: Record<SoundState['health'], string> = {
@@ -48,6 +52,10 @@ function StatusFacts() {
   const wake = useStored(wakeState);
   const errorMs = useStored(hubClock.errorMs);
   const groundChoice = useGroundChoice();
+  const isWaveOn = useIsWaveOn();
+  const sight = useStored(waveSight);
+  const isVoiceOn = useIsVoiceOn();
+  const ear = useStored(voiceEar);
   const probe = useLive(probeText);
   const { temperature } = useUnits();
   const bare = useLive(({ newest }) =>
@@ -87,6 +95,17 @@ function StatusFacts() {
           </Button>
         ) : null}
       </Fact>
+      {isWaveOn ? (
+        <Fact name="wave" word={handsFreeWord[sight]}>
+          {waveText[sight]}
+        </Fact>
+      ) : null}
+      {isVoiceOn ? (
+        <Fact name="voice" word={handsFreeWord[ear]}>
+          {voiceText[ear]}
+        </Fact>
+      ) : null}
+      <Notices />
       <Fact name="ground" word={groundChoice}>
         <Segmented
           label="Ground"
@@ -119,17 +138,6 @@ function FollowOnPhone({ onAsked }: { onAsked: () => void }) {
       <Button size="sheet" onClick={ask}>
         Follow on a phone
       </Button>
-    </div>
-  );
-}
-
-function Fact({ name, word, children }: { name: string; word: string; children: ReactNode }) {
-  return (
-    <div className="grid gap-1">
-      <dt className="text-lead font-semibold">
-        {name}: <span className="tabular-nums">{word}</span>
-      </dt>
-      <dd className="text-body text-soft">{children}</dd>
     </div>
   );
 }

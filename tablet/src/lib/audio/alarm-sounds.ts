@@ -166,6 +166,20 @@ class AlarmSounds {
     this.state.set({ ...this.state.get(), wasInterrupted: false });
   }
 
+  /** Says something once, as an answer to a question. An alarm is never talked over. */
+  async say(clips: readonly string[]): Promise<void> {
+    const { context } = this;
+    const paths = clips.map(clipPath);
+    if (!context || paths.length === 0) return;
+    await this.library.load(context, paths);
+    if (this.state.get().health !== 'fine' || this.playing) return;
+    let atS = 0;
+    for (const word of this.library.take(paths) ?? []) {
+      this.startSource(word, false, atS);
+      atS += word.duration;
+    }
+  }
+
   stopTest(): void {
     this.test?.stop();
     this.test = null;

@@ -1,17 +1,4 @@
-import { ValueStore } from '../value-store.ts';
-
-const KEY = 'steepfall.silent-switch';
-
-function isKeptOff(): boolean {
-  try {
-    return localStorage.getItem(KEY) === 'obeyed';
-  } catch {
-    return false;
-  }
-}
-
-/** Whether alarms sound although the silent switch of an iPad is on. It may pause the music of the kitchen, so it is a choice. */
-export const isPastSilentSwitch = new ValueStore(!isKeptOff());
+import { stationSwitch } from '../station-switch.ts';
 
 interface AudioSession {
   type: string;
@@ -21,17 +8,16 @@ function session(): AudioSession | null {
   return (navigator as { audioSession?: AudioSession }).audioSession ?? null;
 }
 
+const choice = stationSwitch('steepfall.past-silent-switch', true);
+
+/** Whether alarms sound although the silent switch of an iPad is on. It may pause the music of the kitchen, so it is a choice. */
+export const isPastSilentSwitch = choice.store;
+
 /** Only some browsers can be told. */
 export const canPassSilentSwitch = (): boolean => session() !== null;
 
 export function choosePastSilentSwitch(next: boolean): void {
-  isPastSilentSwitch.set(next);
-  try {
-    if (next) localStorage.removeItem(KEY);
-    else localStorage.setItem(KEY, 'obeyed');
-  } catch {
-    // It holds until the page is closed.
-  }
+  choice.choose(next);
   passSilentSwitch();
 }
 

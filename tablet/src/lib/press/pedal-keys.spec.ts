@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { pedalActOf, type PedalKey } from './pedal-keys.ts';
+import { isLearnable, pedalActOf, withLearned, type PedalKey } from './pedal-keys.ts';
 
 const plain: Omit<PedalKey, 'key'> = {
   hasModifier: false,
@@ -64,6 +64,39 @@ describe(pedalActOf, () => {
       null,
       null,
       'next',
+    ]);
+  });
+});
+
+describe(withLearned, () => {
+  it('goes before what is usual, and leaves the other usual keys', () => {
+    const learned = withLearned(withLearned({}, 'next', 'PageUp'), 'back', 'b');
+    expect(['PageUp', 'b', 'PageDown'].map((key) => pedalActOf({ key, ...plain }, learned))).toEqual([
+      'next',
+      'back',
+      'next',
+    ]);
+  });
+
+  it('has one key for each act, and one act for a key', () => {
+    expect(withLearned({ a: 'next', b: 'back' }, 'next', 'c')).toEqual({ b: 'back', c: 'next' });
+    expect(withLearned({ a: 'next' }, 'back', 'a')).toEqual({ a: 'back' });
+  });
+
+  it('says "heard it" from within a field only with a key that writes nothing', () => {
+    const learned = withLearned(withLearned({}, 'next', 'MediaPlayPause'), 'back', 'b');
+    const typing = { ...plain, isTyping: true, isAlertStanding: true };
+    expect(['MediaPlayPause', 'b'].map((key) => pedalActOf({ key, ...typing }, learned))).toEqual(['next', null]);
+  });
+
+  it('is not taught what a keyboard needs for itself', () => {
+    expect(['Tab', 'Escape', 'Shift', 'Unidentified', 'AudioVolumeUp', 'b'].map(isLearnable)).toEqual([
+      false,
+      false,
+      false,
+      false,
+      true,
+      true,
     ]);
   });
 });

@@ -1,7 +1,10 @@
 export type PedalAct = 'next' | 'back';
 
+/** What the pedal of this station was seen to send, by its key. It goes before what is usual. */
+export type PedalBinding = Readonly<Record<string, PedalAct>>;
+
 /** Page-turn pedals and clickers are keyboards, and each maker sends other keys. */
-const acts: Record<string, PedalAct> = {
+const usual: PedalBinding = {
   PageDown: 'next',
   ArrowRight: 'next',
   ArrowDown: 'next',
@@ -11,6 +14,36 @@ const acts: Record<string, PedalAct> = {
   ArrowLeft: 'back',
   ArrowUp: 'back',
 };
+
+/** Keys that the browser or the keyboard itself needs, and that no press can be told from. */
+const unlearnable = new Set([
+  'Tab',
+  'Escape',
+  'Shift',
+  'Control',
+  'Alt',
+  'AltGraph',
+  'Meta',
+  'CapsLock',
+  'NumLock',
+  'Fn',
+  'Dead',
+  'Process',
+  'Unidentified',
+]);
+
+export function isLearnable(key: string): boolean {
+  return !unlearnable.has(key);
+}
+
+/** The binding once this key does that act: each act has one learned key, and a key one act. */
+export function withLearned(binding: PedalBinding, act: PedalAct, key: string): PedalBinding {
+  const others = Object.entries(binding).filter(([known, does]) => known !== key && does !== act);
+  return { ...Object.fromEntries(others), [key]: act };
+}
+
+/** Writes nothing and moves nothing in a field. */
+const harmlessInField = /^(PageDown|Media|Audio|Browser|Launch|F\d)/;
 
 export interface PedalKey {
   key: string;
@@ -28,12 +61,11 @@ export interface PedalKey {
 }
 
 /** What a key does on the run sheet; `null`: it is none of ours and goes where it goes. */
-export function pedalActOf(input: PedalKey): PedalAct | null {
-  const act = acts[input.key];
+export function pedalActOf(input: PedalKey, learned: PedalBinding = {}): PedalAct | null {
+  const act = learned[input.key] ?? usual[input.key];
   if (!act || input.hasModifier) return null;
   if (input.isDialogOpen && !(input.isAlertStanding && act === 'next')) return null;
-  // In a field, only a key that writes nothing and moves nothing can be a pedal.
-  if (input.isTyping && !(input.isAlertStanding && input.key === 'PageDown')) return null;
+  if (input.isTyping && !(input.isAlertStanding && harmlessInField.test(input.key))) return null;
   const isPressKey = input.key === ' ' || input.key === 'Enter';
   if (isPressKey && input.isOnTabbedControl) return null;
   if (input.key.startsWith('Arrow') && input.isOnTabbedChoice) return null;

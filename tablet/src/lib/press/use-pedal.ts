@@ -1,4 +1,5 @@
 import { useEffect, useRef } from 'react';
+import { pedalBinding } from './pedal-binding.ts';
 import { pedalActOf, type PedalAct } from './pedal-keys.ts';
 
 const DEBOUNCE_MS = 300;
@@ -18,7 +19,7 @@ export function usePedal(onAct: (act: PedalAct) => void, isAlertStanding: () => 
     let lastMs = Number.NEGATIVE_INFINITY;
     const actOf = (event: KeyboardEvent) => {
       const focused = document.activeElement;
-      return pedalActOf({
+      const input = {
         key: event.key,
         hasModifier: event.ctrlKey || event.altKey || event.metaKey || event.shiftKey,
         isTyping: focused?.matches(FIELDS) ?? false,
@@ -26,7 +27,8 @@ export function usePedal(onAct: (act: PedalAct) => void, isAlertStanding: () => 
         isAlertStanding: isAlerted.current(),
         isOnTabbedControl: hasTabbed && (focused?.matches(CONTROLS) ?? false),
         isOnTabbedChoice: hasTabbed && (focused?.matches('[role="radio"]') ?? false),
-      });
+      };
+      return pedalActOf(input, pedalBinding.get());
     };
     const onKeyDown = (event: KeyboardEvent) => {
       if (event.key === 'Tab') hasTabbed = true;

@@ -1,61 +1,41 @@
 import { useEffect, useRef } from 'react';
+import { stationSwitch } from '../station-switch.ts';
 import { useStored, ValueStore } from '../value-store.ts';
-import { watchForWaves, type WaveTrouble } from './wave-camera.ts';
-
-const KEY = 'steepfall.wave';
-
-function isKeptOn(): boolean {
-  try {
-    return localStorage.getItem(KEY) === 'on';
-  } catch {
-    return false;
-  }
-}
-
-const isOn = new ValueStore(isKeptOn());
-/** Why no wave is seen although it is switched on. */
-export const waveTrouble = new ValueStore<WaveTrouble | null>(null);
-
-export const useIsWaveOn = (): boolean => useStored(isOn);
+import { whileSeen } from '../while-seen.ts';
+import { watchForWaves, type WaveSight } from './wave-camera.ts';
 
 /** Off until somebody switches it on at this station. */
-export function chooseWave(next: boolean): void {
-  isOn.set(next);
-  waveTrouble.set(null);
-  try {
-    if (next) localStorage.setItem(KEY, 'on');
-    else localStorage.removeItem(KEY);
-  } catch {
-    // It holds until the page is closed.
-  }
-}
+const choice = stationSwitch('steepfall.wave', false);
 
-/** Calls on a wave while the page is in sight; the camera is off otherwise. */
-export function useWave(onWave: () => void): void {
-  const isWanted = useIsWaveOn();
+/** What the camera does now, or why it does nothing. */
+export const waveSight = new ValueStore<WaveSight | 'off'>('off');
+
+export const useIsWaveOn = (): boolean => useStored(choice.store);
+export const chooseWave = choice.choose;
+
+/** Calls on a wave while the page is in sight and the run goes on; the camera is off otherwise. */
+export function useWave(onWave: () => void, isRunning: boolean): void {
+  const isWanted = useIsWaveOn() && isRunning;
   const handler = useRef(onWave);
   useEffect(() => {
     handler.current = onWave;
   });
   useEffect(() => {
     if (!isWanted) return undefined;
-    let stop: Promise<() => void> | null = null;
-    const apply = () => {
-      if (document.visibilityState === 'visible')
-        stop ??= watchForWaves(
-          () => handler.current(),
-          (trouble) => waveTrouble.set(trouble),
-        );
-      else {
-        void stop?.then((end) => end());
-        stop = null;
-      }
+    const look = () => {
+      let isCurrent = true;
+      const watching = watchForWaves(
+        () => handler.current(),
+        (sight) => {
+          if (isCurrent) waveSight.set(sight);
+        },
+      );
+      return () => {
+        isCurrent = false;
+        waveSight.set('off');
+        void watching.then((end) => end());
+      };
     };
-    apply();
-    document.addEventListener('visibilitychange', apply);
-    return () => {
-      document.removeEventListener('visibilitychange', apply);
-      void stop?.then((end) => end());
-    };
+    return whileSeen(look);
   }, [isWanted]);
 }

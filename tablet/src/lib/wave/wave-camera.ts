@@ -4,24 +4,31 @@ const WIDTH = 32;
 const HEIGHT = 24;
 const FRAME_MS = 80;
 
-export type WaveTrouble = 'no-camera' | 'not-allowed';
+export type WaveTrouble = 'no-camera' | 'not-allowed' | 'https-needed';
+export type WaveSight = 'starting' | 'looking' | WaveTrouble;
+
+async function openCamera(): Promise<MediaStream | WaveTrouble> {
+  const devices = (navigator as Partial<Navigator>).mediaDevices;
+  if (!devices) return window.isSecureContext ? 'no-camera' : 'https-needed';
+  try {
+    return await devices.getUserMedia({
+      audio: false,
+      video: { facingMode: 'user', width: { ideal: 320 }, height: { ideal: 240 }, frameRate: { ideal: 15 } },
+    });
+  } catch (error) {
+    return error instanceof DOMException && error.name === 'NotAllowedError' ? 'not-allowed' : 'no-camera';
+  }
+}
 
 /**
  * Looks through the camera for a wave until the returned function is called. Each picture is shrunk to a few hundred brightnesses and
  * forgotten with the next one: nothing is kept and nothing is sent.
  */
-export async function watchForWaves(
-  onWave: () => void,
-  onTrouble: (trouble: WaveTrouble) => void,
-): Promise<() => void> {
-  let stream: MediaStream;
-  try {
-    stream = await navigator.mediaDevices.getUserMedia({
-      audio: false,
-      video: { facingMode: 'user', width: { ideal: 320 }, height: { ideal: 240 }, frameRate: { ideal: 15 } },
-    });
-  } catch (error) {
-    onTrouble(error instanceof DOMException && error.name === 'NotAllowedError' ? 'not-allowed' : 'no-camera');
+export async function watchForWaves(onWave: () => void, onSight: (sight: WaveSight) => void): Promise<() => void> {
+  onSight('starting');
+  const stream = await openCamera();
+  if (typeof stream === 'string') {
+    onSight(stream);
     return () => undefined;
   }
   const video = document.createElement('video');
@@ -32,7 +39,13 @@ export async function watchForWaves(
   canvas.width = WIDTH;
   canvas.height = HEIGHT;
   const pen = canvas.getContext('2d', { willReadFrequently: true });
-  await video.play().catch(() => onTrouble('no-camera'));
+  const [track] = stream.getVideoTracks();
+  // The plug was pulled, or another program took the camera.
+  track?.addEventListener('ended', () => onSight('no-camera'));
+  await video.play().then(
+    () => onSight('looking'),
+    () => onSight('no-camera'),
+  );
 
   let state = stillWave;
   const look = () => {
@@ -48,7 +61,7 @@ export async function watchForWaves(
   const timer = setInterval(look, FRAME_MS);
   return () => {
     clearInterval(timer);
-    for (const track of stream.getTracks()) track.stop();
+    for (const one of stream.getTracks()) one.stop();
     video.srcObject = null;
   };
 }
