@@ -36,7 +36,17 @@ export const demoEquipment = {
   kettle: {
     kind: 'kettle',
     name: 'Kettle 30 L',
-    facts: { volumeL: 30, diameterM: 0.36, massKg: 4.5, heaterPowerW: 3500, heaterEfficiency: 0.84 },
+    facts: {
+      volumeL: 30,
+      diameterM: 0.36,
+      massKg: 4.5,
+      heaterPowerW: 3500,
+      heaterEfficiency: 0.84,
+      heatSource: 'inductionHob',
+      metal: 'stainless',
+      hasLid: true,
+      deadSpaceL: 0.3,
+    },
   },
   coil: {
     kind: 'chiller',
@@ -44,6 +54,7 @@ export const demoEquipment = {
     facts: { metal: 'stainless', lengthM: 7.6, coolantC: 12 },
   },
   kegA: { kind: 'keg', name: 'Keg A, 23 L', facts: { volumeL: 23, tareG: 5200, ratedKPa: 900 } },
+  scale: { kind: 'scale', name: 'Counter scale', facts: { resolutionG: 0.1, capacityG: 3000 } },
   kegB: { kind: 'keg', name: 'Keg B, 23 L', facts: { volumeL: 23, tareG: 5180, ratedKPa: 900 } },
 } as const satisfies Record<string, CreateEquipment>;
 
