@@ -1,4 +1,5 @@
 import { useEffect, useState } from 'react';
+import { isToday } from 'date-fns';
 import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { followLinksSchema, newFollowLinkSchema, type FollowLink } from '@steepfall/shared/contracts';
 import { Button } from '#components/button.tsx';
@@ -11,6 +12,11 @@ import { useStored, useStoredPart } from '#lib/value-store.ts';
 import { clockTime, failureWords } from '#lib/words.ts';
 import { linkOrigins } from './link-origin.ts';
 import { QrCode } from './qr-code.tsx';
+
+/** "16:54 tomorrow": no link lasts longer than a day. */
+function untilWords(atMs: number): string {
+  return isToday(atMs) ? clockTime(atMs) : `${clockTime(atMs)} tomorrow`;
+}
 
 const close = () => followAsked.set(null);
 
@@ -156,7 +162,7 @@ function OpenLinks({
             <p className="min-w-56 flex-1 text-body">
               {id === newId ? 'This one' : `Made ${clockTime(createdAtMs)} by ${createdBy}`}
               <span className="block text-note text-soft">
-                {`until ${clockTime(expiresAtMs)} at the latest, or an hour after the end`}
+                {`open until ${untilWords(expiresAtMs)}, or an hour after the end`}
                 {phoneCount > 0 ? ` · notifies ${phoneCount === 1 ? 'one phone' : `${phoneCount} phones`}` : ''}
               </span>
             </p>
