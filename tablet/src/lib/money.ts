@@ -7,7 +7,7 @@ export function useMoney(): (amount: number) => string {
   return (amount) => formatMoney(amount, house.currency);
 }
 
-export function formatMoney(amount: number, currency: string): string {
+function formatMoney(amount: number, currency: string): string {
   try {
     return new Intl.NumberFormat(undefined, { style: 'currency', currency }).format(amount);
   } catch {

@@ -2,12 +2,12 @@ import type { RunSheet, Step } from '@steepfall/shared/sheets';
 import { newId } from '#lib/ids.ts';
 
 /** A sheet being changed, with the states before it. */
-export interface SheetDraft {
+interface SheetDraft {
   sheet: RunSheet;
   past: readonly RunSheet[];
 }
 
-export type SheetAct =
+type SheetAct =
   | { act: 'move'; stepId: string; by: -1 | 1 }
   | { act: 'replace'; step: Step }
   | { act: 'insert'; step: Step; afterStepId: string | null }

@@ -1,6 +1,6 @@
 import type { WeighOutLine } from '@steepfall/shared/contracts';
 
-export interface Bag {
+interface Bag {
   /** `null`: it goes straight in. */
   bag: string | null;
   lines: WeighOutLine[];

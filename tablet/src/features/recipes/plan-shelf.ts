@@ -2,7 +2,7 @@ import type { Ingredient, Lot } from '@steepfall/shared/contracts';
 import type { CostLine } from '@steepfall/shared/desk';
 import type { Addition } from '@steepfall/shared/sheets';
 
-export interface ReserveDraft {
+interface ReserveDraft {
   additionId: string;
   lotId: string;
   massG: number | null;

@@ -12,7 +12,7 @@ import { CostLines } from './cost-lines.tsx';
 import { KitChooser, useDeskKit } from './desk-kit.tsx';
 import { FallLine } from './fall-line.tsx';
 import { FiguresColumn } from './figures-column.tsx';
-import { SheetSteps } from './sheet-steps.tsx';
+import { SheetSteps } from '#components/sheet-steps.tsx';
 import { useDesk } from './use-desk.ts';
 import { WarningList } from './warning-list.tsx';
 

@@ -10,7 +10,7 @@ import { inPersonsWords, useUnits } from '#lib/units.ts';
 import { compiledSheet } from './compiled-sheet.ts';
 import { OwnStepDialog } from './own-step-dialog.tsx';
 import type { RecipeForm } from './recipe-form.ts';
-import { SheetSteps } from './sheet-steps.tsx';
+import { SheetSteps } from '#components/sheet-steps.tsx';
 import { usePart } from './use-part.ts';
 
 /** The steps that follow from the recipe, with the brewer's own among them, in the order that the brewer wants. */

@@ -52,7 +52,7 @@ export function ImportTable({ rows, skipRows, onSkip }: ImportTableProps) {
       column.accessor('ingredient', { header: 'Ingredient', cell: ({ row: { original } }) => <What row={original} /> }),
       column.accessor('lot', {
         header: 'Lot',
-        cell: ({ getValue }) => <span className="max-w-40 break-words sm:min-w-20">{getValue()}</span>,
+        cell: ({ getValue }) => <span className="inline-block max-w-40 break-words sm:min-w-20">{getValue()}</span>,
       }),
       column.accessor(({ massG }) => massG ?? '', {
         id: 'massG',

@@ -34,7 +34,7 @@ const usualFacts: Record<IngredientKind, IngredientFacts> = {
 };
 
 /** What the form holds; the contract decides what of it is right. */
-export interface IngredientDraft {
+interface IngredientDraft {
   facts: {
     kind: IngredientKind;
     name: string;

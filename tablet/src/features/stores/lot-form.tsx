@@ -14,7 +14,7 @@ import { isProblem, restOf, spreadProblems, useStoresAct } from './use-stores.ts
 
 type HopFacts = NonNullable<LotFacts['hops']>;
 /** What the form holds; the contract decides what of it is right. */
-export interface LotDraft {
+interface LotDraft {
   facts: Omit<LotFacts, 'hops'> & { hops: { [Key in keyof HopFacts]: HopFacts[Key] | null } | null };
   massG?: number | null;
   version?: number;

@@ -12,7 +12,7 @@ const pastDate: StockMark = { word: 'past its date', shape: 'diamond', tone: 'em
 const low: StockMark = { word: 'low', shape: 'dash', tone: 'text' };
 const none: StockMark = { word: 'none left', shape: 'ring', tone: 'soft' };
 
-export function isPast({ bestBefore, stockG }: Pick<Lot, 'bestBefore' | 'stockG'>, today: string): boolean {
+function isPast({ bestBefore, stockG }: Pick<Lot, 'bestBefore' | 'stockG'>, today: string): boolean {
   return bestBefore !== null && bestBefore < today && stockG > 0;
 }
 
