@@ -4,6 +4,7 @@ import type { RecipeDocument } from '@steepfall/shared/sheets';
 import { formatMass, formatVolume } from '@steepfall/shared/units';
 import { format } from 'date-fns';
 import { LevelRule } from '#components/level-rule.tsx';
+import { SheetSteps } from '#components/sheet-steps.tsx';
 import { useKnown } from '#lib/session.ts';
 import { formatLevel, inPersonsWords, useUnits } from '#lib/units.ts';
 import { compiledSheet } from './compiled-sheet.ts';
@@ -12,7 +13,6 @@ import { CostLines } from './cost-lines.tsx';
 import { KitChooser, useDeskKit } from './desk-kit.tsx';
 import { FallLine } from './fall-line.tsx';
 import { FiguresColumn } from './figures-column.tsx';
-import { SheetSteps } from '#components/sheet-steps.tsx';
 import { useDesk } from './use-desk.ts';
 import { WarningList } from './warning-list.tsx';
 

@@ -4,13 +4,13 @@ import { useFormContext } from 'react-hook-form';
 import { Button } from '#components/button.tsx';
 import { LevelRule } from '#components/level-rule.tsx';
 import { Menu } from '#components/menu.tsx';
+import { SheetSteps } from '#components/sheet-steps.tsx';
 import { useKnown } from '#lib/session.ts';
 import { offerUndo } from '#lib/undo.ts';
 import { inPersonsWords, useUnits } from '#lib/units.ts';
 import { compiledSheet } from './compiled-sheet.ts';
 import { OwnStepDialog } from './own-step-dialog.tsx';
 import type { RecipeForm } from './recipe-form.ts';
-import { SheetSteps } from '#components/sheet-steps.tsx';
 import { usePart } from './use-part.ts';
 
 /** The steps that follow from the recipe, with the brewer's own among them, in the order that the brewer wants. */
