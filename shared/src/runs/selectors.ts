@@ -93,8 +93,7 @@ export function missedCatch(state: RunState): { alert: Alert; progress: StepProg
     const isOnTheFall = alert.rule === 'temperature' && alert.direction === 'falling' && alert.stage === 'missed';
     const progress = isOnTheFall ? state.steps.find(({ step }) => step.id === alert.actStepId) : undefined;
     const isOpen = progress && progress.status !== 'done' && alert.clearedAtMs === null;
-    const goesIn = progress?.step.acts.some((act) => act.endsWith('-in')) ?? false;
-    return isOpen && goesIn ? [{ alert, progress }] : [];
+    return isOpen && progress.step.amounts.length > 0 ? [{ alert, progress }] : [];
   });
   return missed.at(-1) ?? null;
 }

@@ -31,11 +31,20 @@ describe(ringFor, () => {
     expect(ringFor(state)).toEqual({ level, id: `steep/1/${stage}` });
   });
 
-  it('rings one at a time, the most urgent', () => {
-    const log = steeping()
-      .add('alert.raised', { ...raised, stage: 'stand-by' })
-      .add('alert.raised', { ...raised, key: 'signal', rule: 'signal', actStepId: null, stage: 'now' });
-    expect(ringFor(foldRun(log.entries))?.id).toBe('signal/1/now');
+  it('rings one at a time, the most urgent: a fault comes after what the sheet is about to call for', () => {
+    const fault = { ...raised, key: 'signal', rule: 'signal', actStepId: null, stage: 'now' } as const;
+    const log = steeping().add('alert.raised', fault);
+    expect(ringFor(foldRun(log.entries))).toEqual({ level: 'stand-by', id: 'signal/1/now' });
+    log.add('alert.raised', { ...raised, stage: 'stand-by' });
+    expect(ringFor(foldRun(log.entries))?.id).toBe('steep/1/stand-by');
+  });
+
+  it('does not ring for what was put aside, nor for another tablet’s battery', () => {
+    const battery = { ...raised, key: 'battery:another', rule: 'battery', actStepId: null, stage: 'now' } as const;
+    const signal = { ...battery, key: 'signal', rule: 'signal' } as const;
+    const log = steeping().add('alert.raised', battery).add('alert.raised', signal);
+    log.add('alert.shelved', { key: 'signal', crossing: 1, untilMs: 600_000, reason: 'known' });
+    expect(ringFor(foldRun(log.entries))).toBeNull();
   });
 
   it('stops with the acknowledgement, wherever it came from', () => {

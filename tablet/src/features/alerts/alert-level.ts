@@ -1,6 +1,13 @@
-import { standingAlerts, type Alert, type AlertStage, type RunState } from '@steepfall/shared/runs';
+import {
+  alertPriority,
+  isFault,
+  type Alert,
+  type AlertPriority,
+  type AlertStage,
+  type RunState,
+} from '@steepfall/shared/runs';
 import type { AlarmLevel, Ring } from '#lib/audio/alarm-sounds.ts';
-import { alertStageId } from '#lib/run-store/take-over.ts';
+import { alertStageId, callingHere } from '#lib/run-store/take-over.ts';
 import type { LiveState } from '#lib/run-store/run-store.ts';
 import { formatLevel } from '#lib/units.ts';
 import { formatDuration, type UnitPreferences } from '@steepfall/shared/units';
@@ -12,10 +19,16 @@ const levelOf: Record<AlertStage, AlarmLevel> = {
   missed: 'now',
 };
 
+/** Faults never have the sound of "now": three tones for what matters soon, two for what can wait. The words tell them from the sheet. */
+const faultLevelOf: Record<Exclude<AlertPriority, 'prompt'>, AlarmLevel> = { medium: 'stand-by', low: 'coming-up' };
+
 /** What should sound for this state: the most urgent alert, one at a time. */
 export function ringFor(state: RunState): Ring | null {
-  const worst = standingAlerts(state)[0];
-  return worst ? { level: levelOf[worst.stage], id: alertStageId(worst) } : null;
+  const worst = callingHere(state)[0];
+  if (!worst) return null;
+  const priority = alertPriority(worst);
+  const level = isFault(worst) && priority !== 'prompt' ? faultLevelOf[priority] : levelOf[worst.stage];
+  return { level, id: alertStageId(worst) };
 }
 
 /** When it falls due as known now: the forecast goes on after the alert was raised, a deadline stays. */

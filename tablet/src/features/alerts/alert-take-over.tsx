@@ -1,22 +1,28 @@
 import { useEffect, useRef } from 'react';
 import {
+  alertPriority,
   alertWords,
   currentStep,
-  standingAlerts,
+  isFault,
+  missedCatch,
+  QUIET_REASON,
+  QUIET_S,
   type Alert,
   type RunCommand,
-  type RunState,
-  type StepProgress,
 } from '@steepfall/shared/runs';
 import { formatMass } from '@steepfall/shared/units';
 import { PressButton } from '#components/press-button.tsx';
 import { ShapeGlyph } from '#components/shapes.tsx';
 import { alarmSounds } from '#lib/audio/alarm-sounds.ts';
 import { useLive, useRun, useRunState } from '#lib/run-store/run-context.tsx';
-import { alertStageId, heardCommands, takeOverAlert } from '#lib/run-store/take-over.ts';
+import { alertStageId, callingHere, heardCommands, takeOverAlert } from '#lib/run-store/take-over.ts';
 import { useUnits } from '#lib/units.ts';
 import { alertLevel, dueAtMs, dueText } from './alert-level.ts';
+import { faultWords } from './fault-words.ts';
+import { stepsUpTo } from './missed-catch.ts';
+import { MissedChoices } from './missed-take-over.tsx';
 import { useSoundOff } from './use-sound-off.ts';
+import './alerts.css';
 
 interface AlertTakeOverProps {
   /** Marks steps done in this order, with the temperature of this instant. */
@@ -34,28 +40,29 @@ export function AlertTakeOver(props: AlertTakeOverProps) {
   return <TakeOver key={alertStageId(alert)} alert={alert} {...props} />;
 }
 
-/** The steps from the current one to this one; empty when it is not ahead. */
-function stepsUpTo(state: RunState, stepId: string | null): StepProgress[] {
-  const open = state.steps.filter(({ status }) => status !== 'done');
-  return open.slice(0, open.findIndex(({ step }) => step.id === stepId) + 1);
-}
-
 function TakeOver({ alert, onComplete, onAct, refusal }: AlertTakeOverProps & { alert: Alert }) {
-  const { state, isJoined } = useRun();
+  const { state } = useRun();
   const units = useUnits();
   const heading = useRef<HTMLHeadingElement>(null);
   const due = useLive((live) => dueText(dueAtMs(alert, live), live.nowMs));
-  const { verb, amounts, sentence } = alertWords(state, alert, units.temperature);
+  const { verb, amounts, why, sentence } = alertWords(state, alert, units.temperature);
   const number = alertLevel(alert, units);
   const current = currentStep(state);
   const path = stepsUpTo(state, alert.actStepId);
-  const forgotten = path.slice(0, -1).find(({ step }) => step.done.by === 'hand' || step.done.by === 'measurement');
+  const missed = missedCatch(state);
+  const toMakeUpFor = alert.stage === 'missed' && missed?.alert === alert ? missed : null;
+  const waiting = path.slice(0, -1).filter(({ step }) => step.done.by === 'hand' || step.done.by === 'measurement');
+  // What can be made up for is not held up by what was not ticked: it is ticked with it.
+  const forgotten = toMakeUpFor ? undefined : waiting[0];
   // What goes on by itself is done with the act: one tap, with the hands full.
   const toComplete = forgotten ? [forgotten] : path.length > 0 ? path : current ? [current] : [];
   const isAct = path.length > 0 && !forgotten;
-  const others = standingAlerts(state).filter((other) => alertStageId(other) !== alertStageId(alert));
+  const others = callingHere(state).filter(
+    (other) => alertStageId(other) !== alertStageId(alert) && other.actStepId !== (alert.actStepId ?? undefined),
+  );
   const isSoundOff = useSoundOff();
   const isOwnTimer = alert.rule === 'timer' && alert.stepId === null;
+  const isOfKit = isFault(alert);
 
   useEffect(() => {
     if (!document.querySelector('[role="dialog"]')) heading.current?.focus({ preventScroll: true });
@@ -65,15 +72,20 @@ function TakeOver({ alert, onComplete, onAct, refusal }: AlertTakeOverProps & { 
     if (isSoundOff) void alarmSounds.unlock();
     for (const command of heardCommands(alert)) onAct(command);
   };
+  const quiet = () => {
+    const { key, crossing } = alert;
+    onAct({ type: 'shelveAlert', key, crossing, forS: QUIET_S, reason: QUIET_REASON });
+  };
+  const tickedWith = waiting.map(({ step }) => step.title).join(', ');
 
   return (
     <>
       <div className="slot">
         <p className="take-over-stage">
           <span className="take-over-mark">
-            <ShapeGlyph shape="diamond" className="size-full" />
+            <ShapeGlyph shape={isOfKit ? 'broken' : 'diamond'} className="size-full" />
           </span>
-          {alert.stage === 'missed' ? 'Late' : 'Now'}
+          {isOfKit ? faultWords[alertPriority(alert)] : alert.stage === 'missed' ? 'Late' : 'Now'}
           {due ? <span className="tabular-nums"> · {due}</span> : null}
         </p>
         {refusal ? (
@@ -84,14 +96,19 @@ function TakeOver({ alert, onComplete, onAct, refusal }: AlertTakeOverProps & { 
         <p className="take-over-aside" hidden={refusal !== null}>
           {[
             isSoundOff ? 'sound is off' : null,
-            forgotten ? `not ticked yet: ${forgotten.step.title}` : null,
+            tickedWith ? `${toMakeUpFor ? 'ticked with it' : 'not ticked yet'}: ${tickedWith}` : null,
+            isOfKit ? moreText(others.filter(isFault).length) : null,
             others.length > 0 ? `also: ${others.map((other) => alertWords(state, other).verb).join(', ')}` : null,
           ]
             .filter(Boolean)
             .join(' · ')}
         </p>
       </div>
-      <section className="take-over" aria-label="Alert">
+      <section
+        className="take-over"
+        aria-label={isOfKit ? 'Fault' : 'Alert'}
+        data-kind={isOfKit ? 'fault' : toMakeUpFor ? 'missed' : undefined}
+      >
         <p role="alert" className="sr-only">
           {sentence}{' '}
           {amounts
@@ -102,7 +119,7 @@ function TakeOver({ alert, onComplete, onAct, refusal }: AlertTakeOverProps & { 
           <h1 ref={heading} tabIndex={-1} id="step-heading" className="take-over-verb">
             {verb}
           </h1>
-          {number ? <p className="take-over-number">{number}</p> : null}
+          {number ? <p className="take-over-number">{toMakeUpFor ? `was for ${number}` : number}</p> : null}
         </div>
         {amounts.length > 0 ? (
           <ul className="take-over-amounts" data-many={amounts.length > 2 || undefined}>
@@ -114,41 +131,56 @@ function TakeOver({ alert, onComplete, onAct, refusal }: AlertTakeOverProps & { 
             ))}
           </ul>
         ) : null}
-        {alert.rule === 'signal' ? (
-          <p className="step-detail">
-            {isJoined
-              ? 'No reading comes in. Look at the probe and its cable, and watch a thermometer by hand.'
-              : 'The hub is away, so no reading comes in. Watch a thermometer by hand until it is back.'}
-          </p>
-        ) : null}
+        {why ? <p className="step-detail">{why}</p> : null}
       </section>
-      <section className="act-bar" aria-label="Act">
-        <PressButton
-          className="act-side act-back"
-          onPress={() => onAct({ type: 'goBack' })}
-          isDisabled={state.doneOrder.length === 0}
-        >
-          Back one
-        </PressButton>
-        <div className="act-pair">
+      <section className="act-bar" aria-label="Act" data-kind={toMakeUpFor ? 'missed' : undefined}>
+        <div className="act-beside">
           <PressButton
-            className={isAct ? 'act-main act-quiet' : 'act-main'}
-            onPress={acknowledge}
-            note="stops the sound"
+            className="act-side act-back"
+            onPress={() => onAct({ type: 'goBack' })}
+            isDisabled={state.doneOrder.length === 0}
           >
-            {isOwnTimer ? 'Stop the timer' : 'Heard it'}
+            Back one
           </PressButton>
-          {toComplete.length > 0 && !isOwnTimer ? (
-            <PressButton
-              className={isAct ? 'act-main' : 'act-main act-quiet'}
-              onPress={() => onComplete(toComplete.map(({ step }) => step.id))}
-              note={toComplete.at(-1)?.step.title}
-            >
-              Done
+          {toMakeUpFor ? (
+            <PressButton className="act-side" onPress={acknowledge} note="stops the sound">
+              Heard it
+            </PressButton>
+          ) : null}
+          {isOfKit ? (
+            <PressButton className="act-side" onPress={quiet}>
+              Quiet for 2 min
             </PressButton>
           ) : null}
         </div>
+        {toMakeUpFor ? (
+          <MissedChoices missed={toMakeUpFor} onAct={onAct} onComplete={onComplete} isOnPedal />
+        ) : (
+          <div className="act-pair">
+            <PressButton
+              className={isAct ? 'act-main act-quiet' : 'act-main'}
+              onPress={acknowledge}
+              note="stops the sound"
+            >
+              {isOwnTimer ? 'Stop the timer' : 'Heard it'}
+            </PressButton>
+            {toComplete.length > 0 && !isOwnTimer ? (
+              <PressButton
+                className={isAct ? 'act-main' : 'act-main act-quiet'}
+                onPress={() => onComplete(toComplete.map(({ step }) => step.id))}
+                note={toComplete.at(-1)?.step.title}
+              >
+                Done
+              </PressButton>
+            ) : null}
+          </div>
+        )}
       </section>
     </>
   );
+}
+
+/** What folds under the first of a burst. */
+function moreText(count: number): string | null {
+  return count > 0 ? `and ${count} more` : null;
 }

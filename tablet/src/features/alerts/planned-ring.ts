@@ -1,7 +1,7 @@
-import { armedIn, spokenClips, standingAlerts, type Alert, type Armed, type RunState } from '@steepfall/shared/runs';
+import { armedIn, isFault, spokenClips, type Alert, type Armed, type RunState } from '@steepfall/shared/runs';
 import type { PlannedRing } from '#lib/audio/alarm-sounds.ts';
 import type { LiveState } from '#lib/run-store/run-store.ts';
-import { alertStageId } from '#lib/run-store/take-over.ts';
+import { alertStageId, callingHere } from '#lib/run-store/take-over.ts';
 
 /** A forecast whose ends lie further apart is not put on the audio clock. */
 const SURE_WITHIN_MS = 12_000;
@@ -46,7 +46,8 @@ const isCalled = (stage: Alert['stage']) => stage === 'now' || stage === 'missed
 
 /** The next "now" that time alone will bring, as it will be raised; null when there is none, or another one rings. */
 export function plannedRing(state: RunState, live: Known, unit: 'C' | 'F'): PlannedRing | null {
-  if (state.status !== 'running' || standingAlerts(state).some(({ stage }) => isCalled(stage))) return null;
+  const isTaken = callingHere(state).some((alert) => !isFault(alert) && isCalled(alert.stage));
+  if (state.status !== 'running' || isTaken) return null;
   const rate = state.clock?.rate ?? 1;
   const calls = armedIn(state).flatMap((item) => {
     const atMs = callAtMs(item, live);

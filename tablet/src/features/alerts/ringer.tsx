@@ -1,12 +1,12 @@
 import { useEffect } from 'react';
-import { alertWords, speechOf, spokenClips, standingAlerts, type Alert, type RunState } from '@steepfall/shared/runs';
+import { alertWords, speechOf, spokenClips, type Alert, type RunState } from '@steepfall/shared/runs';
 import { alarmSounds, type Ring } from '#lib/audio/alarm-sounds.ts';
 import { knock } from '#lib/audio/knock.ts';
 import { isRinger, wantToRing } from '#lib/audio/ringer-lock.ts';
 import { hubClock } from '#lib/clock/hub-clock.ts';
 import { useRunStore } from '#lib/run-store/run-context.tsx';
 import type { LiveState } from '#lib/run-store/run-store.ts';
-import { alertStageId } from '#lib/run-store/take-over.ts';
+import { alertStageId, callingHere } from '#lib/run-store/take-over.ts';
 import { useUnits } from '#lib/units.ts';
 import { dueAtMs, ringFor } from './alert-level.ts';
 import { plannedRing } from './planned-ring.ts';
@@ -21,7 +21,7 @@ const KNOCK_AFTER_MS = 40_000;
 /** What sounds for what stands, and what is said with it, as it is at this moment. */
 function spokenRing(state: RunState, live: LiveState, unit: 'C' | 'F'): { ring: Ring; alert: Alert } | null {
   const ring = ringFor(state);
-  const [alert] = standingAlerts(state);
+  const [alert] = callingHere(state);
   if (!ring || !alert) return null;
   const due = dueAtMs(alert, live);
   const lateS = due === null ? null : (live.nowMs - due) / 1000;
@@ -75,7 +75,7 @@ export function Ringer() {
       if (wanted.ring.id === rung?.id) return escalated(rung, wanted.alert);
       if (hubClock.isSettled.get()) return escalated(wanted.ring, wanted.alert);
       // While nobody knows why the clock jumped, what rings goes on until it is heard, and nothing new starts.
-      const isStanding = standingAlerts(state).some((alert) => alertStageId(alert) === rung?.id);
+      const isStanding = callingHere(state).some((alert) => alertStageId(alert) === rung?.id);
       return isStanding ? rung : null;
     };
     const escalated = (ring: Ring, alert: Alert): Ring => {

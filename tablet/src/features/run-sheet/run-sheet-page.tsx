@@ -13,7 +13,7 @@ import { useWave } from '#lib/wave/use-wave.ts';
 import { alarmSounds } from '#lib/audio/alarm-sounds.ts';
 import { RunProvider, useOpenRun, useRun, useRunState, useRunStore } from '#lib/run-store/run-context.tsx';
 import type { RunSnapshot, RunStore } from '#lib/run-store/run-store.ts';
-import { takeOverAlert } from '#lib/run-store/take-over.ts';
+import { takeOverAlert, takeOverPress } from '#lib/run-store/take-over.ts';
 import { useUnits } from '#lib/units.ts';
 import { useStored } from '#lib/value-store.ts';
 import { holdRunLock } from '#lib/wake-lock/run-lock.ts';
@@ -168,6 +168,7 @@ function Sheet({ rehearsal, soundCheck, strips, TakeOver, ringer }: RunSheetPage
     const next = pedalNext(store.snapshot.get().state);
     switch (next.kind) {
       case 'acknowledge':
+        if (takeOverPress.get()) return takeOverPress.get()?.();
         return act({ type: 'acknowledgeAlert', key: next.key, crossing: next.crossing });
       case 'complete':
         return complete(next.progress.step.id);

@@ -1,5 +1,6 @@
 import { burstsOf, callingAlerts, isFault, type Alert, type RunCommand, type RunState } from '@steepfall/shared/runs';
 import { stationName } from '../ids.ts';
+import { ValueStore } from '../value-store.ts';
 
 /** What calls on this tablet. A fault that was put aside is raised anew at its end, so no clock is asked here. */
 export function callingHere(state: RunState): Alert[] {
@@ -19,6 +20,9 @@ export function takeOverAlert(state: RunState): Alert | null {
   );
   return burst?.first ?? null;
 }
+
+/** What a pedal or a wave does while the screen is taken, where that is more than "heard it". */
+export const takeOverPress = new ValueStore<(() => void) | null>(null);
 
 /** "Heard it", in commands: a timer somebody set for themselves is over with it. */
 export function heardCommands({ key, crossing, rule, stepId }: Alert): RunCommand[] {
