@@ -88,6 +88,9 @@ function Ended({ outcome }: { outcome: FollowedRun['outcome'] }) {
   );
 }
 
+/** Wall time without a word of the hub; the liquid has moved on meanwhile. */
+const OLD_AFTER_MS = 15_000;
+
 /** The liquid and what it does. A number that is old is not shown as if it were now. */
 function Live({ store, run: { liquid, units } }: { store: FollowStore; run: FollowedRun }) {
   const silence = useTicked(() =>
@@ -95,8 +98,9 @@ function Live({ store, run: { liquid, units } }: { store: FollowStore; run: Foll
       ? 'no reading yet'
       : `no signal for ${formatDuration(Math.max(0, Math.floor((store.nowMs() - liquid.lastHeardAtMs) / 1000)))}`,
   );
+  const isOld = useTicked(() => ((store.silentMs() ?? 0) > OLD_AFTER_MS ? 'old' : null)) !== null;
   if (!liquid) return null;
-  const isShown = liquid.tempC !== null && (liquid.status === 'live' || liquid.status === 'starting');
+  const isShown = !isOld && liquid.tempC !== null && (liquid.status === 'live' || liquid.status === 'starting');
   if (!isShown)
     return (
       <p className="text-lead">
