@@ -1,7 +1,7 @@
 import type { Problem } from '@steepfall/shared/problems';
 import { metricPreferences, type UnitPreferences } from '@steepfall/shared/units';
 import { QueryClient, QueryClientProvider } from '@tanstack/react-query';
-import { act, render } from '@testing-library/react';
+import { act, cleanup, render } from '@testing-library/react';
 import type { ReactNode } from 'react';
 import { createMemoryRouter, RouterProvider } from 'react-router-dom';
 import { vi } from 'vitest';
@@ -40,6 +40,8 @@ export class DeskHub {
   }
 
   async signOut(): Promise<void> {
+    // What is still shown would miss its member.
+    cleanup();
     await act(() => signOut());
     vi.unstubAllGlobals();
   }

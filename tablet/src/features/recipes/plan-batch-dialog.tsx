@@ -1,4 +1,4 @@
-import { useMemo } from 'react';
+import { useMemo, type ReactNode } from 'react';
 import { zodResolver } from '@hookform/resolvers/zod';
 import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import {
@@ -30,6 +30,8 @@ interface PlanBatchProps {
   recipeName: string;
   isOpen: boolean;
   onClose: () => void;
+  /** Make the recipe as large as the stores allow; `null` for whoever may not change it. */
+  onScale: (() => void) | null;
 }
 
 /** A day, the kit, and what is set aside of the stores: then the batch is on the board. */
@@ -66,7 +68,7 @@ interface PlanFormProps extends PlanBatchProps {
   stores: Ingredient[];
 }
 
-function PlanForm({ revision, onClose, equipment, probes, stores }: PlanFormProps) {
+function PlanForm({ revision, onClose, onScale, equipment, probes, stores }: PlanFormProps) {
   const of = (kind: Equipment['kind']) => equipment.filter((item) => item.kind === kind);
   const kettles = of('kettle');
   const chillers = of('chiller');
@@ -130,6 +132,7 @@ function PlanForm({ revision, onClose, equipment, probes, stores }: PlanFormProp
           control={control}
           isBusy={plan.isPending}
           onClose={onClose}
+          onScale={onScale}
           refusal={
             isShort ? (
               <Banner
@@ -182,12 +185,13 @@ interface PlanFootProps {
   control: ReturnType<typeof useForm<PlanDraft>>['control'];
   isBusy: boolean;
   onClose: () => void;
-  refusal: React.ReactNode;
+  onScale: (() => void) | null;
+  refusal: ReactNode;
 }
 
 /** What it costs, what is short, and the ways on. */
-function PlanFoot({ revision, stores, control, isBusy, onClose, refusal }: PlanFootProps) {
-  const { document, recipeId } = revision;
+function PlanFoot({ revision, stores, control, isBusy, onClose, onScale, refusal }: PlanFootProps) {
+  const { document } = revision;
   const reserve = useWatch({ control, name: 'reserve' });
   const shelf = useMemo(() => shelfOf(stores), [stores]);
   const short = shortOf(document.additions, reserve);
@@ -209,11 +213,7 @@ function PlanFoot({ revision, stores, control, isBusy, onClose, refusal }: PlanF
         <Button look="primary" type="submit" isBusy={isBusy} busyLabel="Planning">
           {short.length > 0 ? 'Plan it all the same' : 'Plan it'}
         </Button>
-        {short.length > 0 ? (
-          <ButtonLink to={`/recipes/${recipeId}?scale=stores`} onClick={onClose}>
-            Scale the recipe
-          </ButtonLink>
-        ) : null}
+        {short.length > 0 && onScale ? <Button onClick={onScale}>Scale the recipe</Button> : null}
         <Button onClick={onClose}>Close</Button>
       </div>
     </div>

@@ -17,7 +17,7 @@ import { readDraft } from './drafts.ts';
 import { History } from './history.tsx';
 import { PlanBatchDialog } from './plan-batch-dialog.tsx';
 import { RevisionView } from './revision-view.tsx';
-import { ScaleDialog } from './scale-dialog.tsx';
+import { ScaleDialog, type ScaleWay } from './scale-dialog.tsx';
 import { sinceWords } from './since-words.ts';
 import { useArchive } from './use-archive.ts';
 
@@ -48,7 +48,7 @@ function RecipeView({ recipe }: { recipe: Recipe }) {
   const revisions = useMemo(() => recipe.revisions.toSorted((a, b) => b.number - a.number), [recipe]);
   const [search, setSearch] = useSearchParams();
   const [isPlanning, setIsPlanning] = useState(false);
-  const [isScaling, setIsScaling] = useState(false);
+  const [scaleTo, setScaleTo] = useState<ScaleWay | null>(null);
   const { kettles, resolutionG } = useDeskKit();
   const archive = useArchive();
   const revision = revisions.find(({ number }) => String(number) === search.get('revision')) ?? revisions[0];
@@ -95,7 +95,7 @@ function RecipeView({ recipe }: { recipe: Recipe }) {
               <Menu
                 label="More"
                 choices={[
-                  { label: 'Scale', onChoose: () => setIsScaling(true) },
+                  { label: 'Scale', onChoose: () => setScaleTo('volume') },
                   {
                     label: 'Copy',
                     onChoose: () => void navigate(`/recipes/new?copy=${recipe.id}&revision=${revision.id}`),
@@ -125,14 +125,23 @@ function RecipeView({ recipe }: { recipe: Recipe }) {
         recipeName={recipe.name}
         isOpen={isPlanning}
         onClose={() => setIsPlanning(false)}
+        onScale={
+          mayEdit
+            ? () => {
+                setIsPlanning(false);
+                setScaleTo('stores');
+              }
+            : null
+        }
       />
-      {isScaling ? (
+      {scaleTo ? (
         <ScaleDialog
+          firstWay={scaleTo}
           document={revision.document}
           kettles={kettles}
           resolutionG={resolutionG}
           onTake={(document) => void navigate(`/recipes/${recipe.id}/edit`, { state: { document, because: 'scaled' } })}
-          onClose={() => setIsScaling(false)}
+          onClose={() => setScaleTo(null)}
         />
       ) : null}
     </Page>

@@ -23,9 +23,9 @@ import { NumberField } from './number-field.tsx';
 import { withSwap } from './take-swap.ts';
 
 type Kettle = Extract<Equipment, { kind: 'kettle' }>;
-type Way = 'volume' | 'kettle' | 'stores';
+export type ScaleWay = 'volume' | 'kettle' | 'stores';
 
-const ways: { value: Way; label: string }[] = [
+const ways: { value: ScaleWay; label: string }[] = [
   { value: 'volume', label: 'a volume' },
   { value: 'kettle', label: 'a kettle' },
   { value: 'stores', label: 'the stores' },
@@ -34,6 +34,8 @@ const ways: { value: Way; label: string }[] = [
 interface ScaleDialogProps {
   document: RecipeDocument;
   kettles: readonly Kettle[];
+  /** What it is asked for first. */
+  firstWay?: ScaleWay;
   /** Finest step of the scale, g. */
   resolutionG: number | undefined;
   /** The scaled recipe, to be looked at and saved like any other change. */
@@ -55,11 +57,18 @@ function tried(work: () => { document: RecipeDocument; words: string }): Scaled 
 }
 
 /** More or less of the same drink. What it would become is shown before it is taken. */
-export function ScaleDialog({ document: given, kettles, resolutionG, onTake, onClose }: ScaleDialogProps) {
+export function ScaleDialog({
+  document: given,
+  kettles,
+  firstWay = 'volume',
+  resolutionG,
+  onTake,
+  onClose,
+}: ScaleDialogProps) {
   const units = useUnits();
   const stores = useQuery(storesQuery);
   const [document, setDocument] = useState(given);
-  const [way, setWay] = useState<Way>('volume');
+  const [way, setWay] = useState<ScaleWay>(firstWay);
   const [volumeL, setVolumeL] = useState(given.volumeL);
   const [kettleId, setKettleId] = useState(kettles[0]?.id ?? '');
   const options = useMemo(() => (resolutionG === undefined ? {} : { resolutionG }), [resolutionG]);
