@@ -70,7 +70,8 @@ export function alertAccount(entries: readonly LogEntry[], state: RunState): Ale
   };
 }
 
-function isSecondCall(state: RunState, { rule, key, crossing, raisedAtMs }: Alert): boolean {
+/** A fault that called once more while it was still true: no new one. */
+export function isSecondCall(state: RunState, { rule, key, crossing, raisedAtMs }: Alert): boolean {
   if (!isFault({ rule })) return false;
   const before = state.alerts.find((alert) => alert.key === key && alert.crossing === crossing - 1);
   return before !== undefined && (before.clearedAtMs === null || before.clearedAtMs > raisedAtMs);

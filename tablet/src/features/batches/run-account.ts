@@ -1,5 +1,4 @@
-import type { Alert, LogEntry, RunEventOf, RunState, StepProgress } from '@steepfall/shared/runs';
-import { alertWords } from '@steepfall/shared/runs';
+import type { RunState, StepProgress } from '@steepfall/shared/runs';
 import type { DoneCondition, MeasuredQuantity } from '@steepfall/shared/sheets';
 import {
   formatDuration,
@@ -99,47 +98,6 @@ export function measurementWords(quantity: MeasuredQuantity, value: number, unit
 /** Every step that was planned with a number, and the number that came of it. */
 export function accountOf(state: RunState, units: UnitPreferences): AccountRow[] {
   return state.steps.flatMap((progress) => rowOf(progress, state, units) ?? []);
-}
-
-export interface AlertRow {
-  id: string;
-  verb: string;
-  number: string | null;
-  /** Run clock of each stage that was raised. */
-  stages: { stage: Alert['stage']; atMs: number }[];
-  /** From "now" to the act, s; `null` when it never came to "now" or was not acted on. */
-  waitS: number | null;
-  outcome: string;
-}
-
-/** Every alert with its climb, and how long it waited for a person. */
-export function alertRowsOf(log: readonly LogEntry[], state: RunState, { temperature }: UnitPreferences): AlertRow[] {
-  const raised = log.filter((entry): entry is LogEntry & RunEventOf<'alert.raised'> => entry.type === 'alert.raised');
-  return state.alerts.map((alert) => {
-    const own = raised.filter(({ payload }) => payload.key === alert.key && payload.crossing === alert.crossing);
-    const stages = own.map(({ payload: { stage }, atMs }) => ({ stage, atMs })).sort((a, b) => a.atMs - b.atMs);
-    const nowAtMs = stages.find(({ stage }) => stage === 'now')?.atMs ?? null;
-    const actedAtMs = state.steps.find(({ step }) => step.id === alert.actStepId)?.doneAtMs ?? null;
-    const answers = [alert.acknowledgedAtMs, actedAtMs].filter((atMs) => atMs !== null);
-    const answeredAtMs = answers.length > 0 ? Math.min(...answers) : null;
-    const words = alertWords(state, alert, temperature);
-    const waitS = nowAtMs === null || answeredAtMs === null ? null : Math.max(0, (answeredAtMs - nowAtMs) / 1000);
-    return {
-      id: `${alert.key}/${alert.crossing}`,
-      verb: words.verb,
-      number: words.number,
-      stages,
-      waitS,
-      outcome:
-        alert.rule === 'signal' && alert.clearedAtMs !== null
-          ? `the probe came back after ${spanWords((alert.clearedAtMs - alert.raisedAtMs) / 1000)}`
-          : waitS !== null
-            ? `answered after ${formatDuration(waitS)}`
-            : answeredAtMs !== null
-              ? 'done before it was due'
-              : 'not answered',
-    };
-  });
 }
 
 /** What the drawing shows, in a breath: for those who do not see it, and for those in a hurry. */

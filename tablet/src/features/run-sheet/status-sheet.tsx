@@ -3,6 +3,7 @@ import { formatTemp } from '@steepfall/shared/units';
 import { Button } from '#components/button.tsx';
 import { Segmented } from '#components/segmented.tsx';
 import { alarmSounds, type SoundState } from '#lib/audio/alarm-sounds.ts';
+import { batteryState, batteryWords } from '#lib/battery/battery.ts';
 import { hubClock } from '#lib/clock/hub-clock.ts';
 import { followAsked } from '#lib/follow-ask.ts';
 import { openOutbox } from '#lib/run-store/open-runs.ts';
@@ -51,6 +52,7 @@ function StatusFacts() {
   const health = useStoredPart(alarmSounds.state, ({ health: now }) => now);
   const wake = useStored(wakeState);
   const errorMs = useStored(hubClock.errorMs);
+  const battery = batteryWords(useStored(batteryState));
   const groundChoice = useGroundChoice();
   const isWaveOn = useIsWaveOn();
   const sight = useStored(waveSight);
@@ -106,6 +108,9 @@ function StatusFacts() {
         </Fact>
       ) : null}
       <Notices />
+      <Fact name="battery" word={battery.word}>
+        {battery.text}
+      </Fact>
       <Fact name="ground" word={groundChoice}>
         <Segmented
           label="Ground"
