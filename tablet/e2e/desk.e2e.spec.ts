@@ -1,6 +1,7 @@
 import { readFile, writeFile } from 'node:fs/promises';
 import { join } from 'node:path';
 import type { Batch, BatchPlan, Ingredient, Recipe, RunEvents } from '@steepfall/shared/contracts';
+import { buildWorkedExample } from '@steepfall/shared/testing';
 import type { Browser, Locator, Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { openBrowser, picture, signedIn } from './browser.ts';
@@ -208,6 +209,38 @@ describe('a recipe, from nothing to its run', () => {
     const { events } = await api.get<RunEvents>(`runs/${runId}/events?afterSeq=0`);
     expect(events[0]).toMatchObject({ type: 'run.started', payload: { revisionId: revisions[0]?.id } });
     await expect.poll(async () => (await stocked('sencha')).stockG).toBeCloseTo(before.stockG - setAside, 3);
+  });
+});
+
+describe('the worked example', () => {
+  it('stands on its page as it was worked out by hand, each figure in its band', async () => {
+    const body = {
+      name: 'Worked example',
+      summary: '',
+      note: 'From the page to the figures.',
+      document: buildWorkedExample(),
+    };
+    const { id } = await api.post<Recipe>('recipes', body);
+    await page.goto(`${product.url}/recipes/${id}`);
+    const valueOf = async (label: string): Promise<number> => {
+      const words = await figure(label).innerText();
+      return Number(/-?\d+(\.\d+)?/.exec(words.replace(label, ''))?.[0]);
+    };
+    await figure('Calcium').waitFor();
+    // Stoichiometry; Goldberg 2002 with Davies; J. Tea Sci. Res. 2024; Maye 2015, with the bands of their judgements.
+    const printed: [label: string, low: number, high: number][] = [
+      ['Calcium', 109, 111],
+      ['pH of water, salts and acid', 3.07, 3.09],
+      ['pH of the drink, still', 3.53, 4.09],
+      ['Caffeine', 86, 192],
+      ['Bitterness index', 3.7, 9.4],
+      ['Into the keg', 18.4, 19.2],
+    ];
+    for (const [label, low, high] of printed) {
+      const value = await valueOf(label);
+      expect(value, label).toBeGreaterThanOrEqual(low);
+      expect(value, label).toBeLessThanOrEqual(high);
+    }
   });
 });
 
