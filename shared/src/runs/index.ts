@@ -3,6 +3,7 @@ export * from './account-acid.js';
 export * from './account-cooling.js';
 export { type RecordedDay, isBrewed, recordedDay } from './account-day.js';
 export * from './account-line.js';
+export * from './account-rows.js';
 export * from './alert-account.js';
 export * from './alert-priority.js';
 export * from './boot-driver.js';

@@ -13,6 +13,7 @@ import { useMay } from '#lib/session.ts';
 import { useUnits } from '#lib/units.ts';
 import { clockTime, failureWords } from '#lib/words.ts';
 import { Account } from './account.tsx';
+import { FiguresAccount } from './figures-account.tsx';
 import { LineTable } from './line-table.tsx';
 import { flagsOf, inOrder, levelsOf, windowsOf, type Span, type Window } from './record-view.ts';
 import { summaryOf } from './run-account.ts';
@@ -46,6 +47,7 @@ export function RunRecord({ run }: { run: RunSummary }) {
     <>
       <Conflicts conflicts={state.conflicts} state={state} />
       <Line run={run} state={state} refetchInterval={refetchInterval} />
+      <FiguresAccount run={run} state={state} />
       <Account state={state} members={members.data ?? noMembers} />
       <RunAlerts log={entries} state={state} />
       <Section id="log" title="The log">

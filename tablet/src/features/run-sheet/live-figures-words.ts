@@ -52,7 +52,7 @@ function isWaterIn({ steps }: RunState): boolean {
 
 export function teaFigure({ isLineKnown }: AccountSoFar, tea: TeaSoFar, nowMs: number): LiveFigure {
   const { additionId, name, doseMin, window } = tea;
-  const label = window ? `${name}, good at ${window.from} to ${window.to}` : name;
+  const label = `steep of ${name}`;
   const common = { id: `tea.${additionId}`, label };
   if (!isLineKnown) {
     const inS = (nowMs - tea.inAtMs) / 1000;
@@ -65,7 +65,12 @@ export function teaFigure({ isLineKnown }: AccountSoFar, tea: TeaSoFar, nowMs: n
       isDue: false,
     };
   }
-  return { ...common, number: doseText(doseMin), unit: 'min', ...pullWord(tea, nowMs) };
+  return {
+    ...common,
+    number: doseText(doseMin),
+    unit: window ? `of ${window.from}–${window.to}` : 'min',
+    ...pullWord(tea, nowMs),
+  };
 }
 
 export function doseText(doseMin: number): string {
