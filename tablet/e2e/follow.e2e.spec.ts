@@ -77,11 +77,11 @@ describe('a run that is followed on a phone', () => {
     const ring = phone.getByRole('button', { name: 'Make this phone ring' });
     if (await ring.isVisible()) await ring.click();
     await phone.getByText('rings', { exact: true }).waitFor();
-    await act(() => ({ type: 'startTimer', label: 'sample cools', durationS: 300 }));
+    // Nobody is at the kettle: the tea is called for, and then it is late.
     const alert = phone.getByRole('region', { name: 'Alert' });
-    await alert.getByRole('heading', { name: 'Timer: sample cools' }).waitFor({ timeout: 15_000 });
-    await alert.getByText('Late', { exact: true }).waitFor({ timeout: 15_000 });
-    expect(await alert.getByRole('alert').textContent()).toContain('Late. Timer: sample cools.');
+    await alert.getByRole('heading', { name: 'Tea in' }).waitFor({ timeout: 90_000 });
+    await alert.getByText('Late', { exact: true }).waitFor({ timeout: 30_000 });
+    expect(await alert.getByRole('alert').textContent()).toContain('Late. Tea in.');
     expect(await picture(phone, 'follow-alert')).toEqual([]);
   });
 
