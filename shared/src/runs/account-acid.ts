@@ -111,7 +111,8 @@ function inWater(run: Brewed, { plan }: AccountSoFar, measuredPh: number): AcidA
 
 function inDrink(run: Brewed, account: AccountSoFar, measuredPh: number): AcidAnswer {
   const { plan, day } = account;
-  const usual = basesOf(plan);
+  const planned = plannedBases(run);
+  const usual = basesSoFar(account, planned);
   const ratio = lotMultiplier(acidityOf(plan, usual.teaMeqPerL + usual.hopMeqPerL), measuredPh);
   const targetPh = wantedPh(run.document);
   const { min, max } = run.document.targets.drinkPh ?? {
@@ -131,7 +132,6 @@ function inDrink(run: Brewed, account: AccountSoFar, measuredPh: number): AcidAn
     const isLow = measuredPh < min;
     return { ...common, expectedPh: null, kind: isLow ? 'too-low' : 'measure-again' };
   }
-  const planned = plannedBases(run);
   const isComing = (kind: 'tea' | 'hops') =>
     run.document.additions.some(
       (one) =>
@@ -180,6 +180,12 @@ function basesOf(plan: DrinkPlan): { teaMeqPerL: number; hopMeqPerL: number } {
     saltedWater(plan.waterL, plan.salts, plan.source),
   );
   return { teaMeqPerL: figures.teaBaseMeqPerL, hopMeqPerL: figures.hopBaseMeqPerL };
+}
+
+/** Without a temperature nobody knows how much a steep brought out: then what was planned. */
+function basesSoFar({ plan, isLineKnown }: AccountSoFar, planned: ReturnType<typeof basesOf>) {
+  const soFar = basesOf(plan);
+  return isLineKnown || plan.teas.length === 0 ? soFar : { ...soFar, teaMeqPerL: planned.teaMeqPerL };
 }
 
 function plannedBases({ document, kit }: Brewed) {

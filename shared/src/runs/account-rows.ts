@@ -12,8 +12,11 @@ export interface FigurePair {
   happened: FigureRow | null;
 }
 
-/** Groups that a run without a temperature says nothing of. */
-const NEEDS_LINE: readonly FigureRow['group'][] = ['day', 'tea', 'hops'];
+/** Groups that a run without a temperature says nothing of; of the acid it knows the water. */
+const NEEDS_LINE: readonly FigureRow['group'][] = ['day', 'tea', 'hops', 'acid'];
+const OF_WATER = 'acid.ph-after-acid';
+/** Rows are made from some curve; what follows from this one is left out. */
+const NO_CURVE = [{ atMs: 0, tempC: 20 }];
 
 /**
  * Every figure of the desk twice: from the planned line, and from the recorded one by the same sums.
@@ -25,9 +28,12 @@ export function figurePairs({ document, kit }: RunState, account: AccountSoFar, 
   if (!document || !kit) return [];
   const desk = deskFigures(document, kit, units);
   const planned = desk.kind === 'figures' ? desk.rows : [];
-  const { day, plan, figures, isLineKnown } = account;
-  const happened = figureRows({ document: day.document, kit, day, plan, figures, units }).filter(
-    ({ group }) => isLineKnown || !NEEDS_LINE.includes(group),
+  const { figures, isLineKnown } = account;
+  const { document: weighed } = account.day;
+  const day = isLineKnown ? account.day : { ...account.day, curve: NO_CURVE };
+  const plan = isLineKnown ? account.plan : { ...account.plan, curve: NO_CURVE };
+  const happened = figureRows({ document: weighed, kit, day, plan, figures, units }).filter(
+    ({ id, group }) => isLineKnown || id === OF_WATER || !NEEDS_LINE.includes(group),
   );
   const own = new Map(happened.map((row) => [row.id, row]));
   const told = new Set(planned.map(({ id }) => id));

@@ -9,6 +9,7 @@ import { metricPreferences } from '../units/index.js';
 import { learnedBase, nextAcid, withLearnedBase } from './account-acid.js';
 import { coolingClock } from './account-cooling.js';
 import { isBrewed, recordedDay } from './account-day.js';
+import { figurePairs } from './account-rows.js';
 import { LINE_WITHIN_K, liquidLine, NO_LINE, thinnedLine } from './account-line.js';
 import { accountSoFar, type AccountSoFar } from './account.js';
 import { foldRun } from './fold.js';
@@ -236,6 +237,26 @@ describe('while it runs', () => {
   });
 });
 
+describe(figurePairs, () => {
+  it('puts each figure of the desk beside what came of it', () => {
+    const state = foldRun(actedDay(document).entries);
+    const pairs = figurePairs(state, account(actedDay(document), wholeLine), metricPreferences);
+    expect(pairs.filter(({ isLead }) => isLead).length).toBeGreaterThan(5);
+    for (const { id, planned: before, happened } of pairs) {
+      expect(happened, id).not.toBeNull();
+      expect(happened?.word, id).toBe(before?.word);
+    }
+  });
+
+  it('has no figure of a steep where no temperature is known', () => {
+    const log = actedDay(document);
+    const pairs = figurePairs(foldRun(log.entries), account(log), metricPreferences);
+    const happened = (id: string) => pairs.find((pair) => pair.id === id)?.happened;
+    expect(happened('tea.steep-dose.sencha')).toBeNull();
+    expect(happened('water.ca')).not.toBeNull();
+  });
+});
+
 describe(coolingClock, () => {
   const at = (...points: [number, number][]) => points.map(([min, tempC]) => ({ atMs: min * 60_000, tempC }));
 
@@ -303,6 +324,8 @@ describe(nextAcid, () => {
     expect(more.ratio).toBeGreaterThan(1.5);
     // The hops are still to come: the drink ends above what the meter shows.
     expect(more.expectedPh).toBeGreaterThan(usualPh + 0.3);
+    // Without a probe the steep is taken as planned.
+    expect(answer(log, usualPh, NO_LINE, nowMs)!.ratio).toBeCloseTo(1, 1);
   });
 
   it('offers what was learned for the next revision', () => {

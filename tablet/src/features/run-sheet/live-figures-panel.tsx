@@ -119,7 +119,7 @@ function rowsOf(account: AccountSoFar, units: UnitPreferences, nowMs: number): P
             value: figures.acid.phAfterAcid.toFixed(2),
             word: '',
           },
-          ...(teas.length + hops.length > 0
+          ...(teas.length + hops.length > 0 && isLineKnown
             ? [
                 {
                   id: 'ph-still',
