@@ -69,6 +69,8 @@ describe('POST /api/rehearsals', () => {
     await until(async () => (await get<RunReadings>(`/runs/${run.id}/readings`)).totalCount > 20);
     const { readings } = await get<RunReadings>(`/runs/${run.id}/readings`);
     expect(readings.map(({ atMs }) => atMs - run.startedAtMs)).toEqual(readings.map((_, index) => index * 1000));
+    const { events } = await get<{ events: { payload: object }[] }>(`/runs/${run.id}/events`);
+    expect(events[0]?.payload).toMatchObject({ document: { v: 2 }, kit: { altitudeM: expect.any(Number) } });
     // Its probe is nobody's to manage.
     expect(await get('/probes')).toEqual([]);
   });

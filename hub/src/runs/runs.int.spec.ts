@@ -69,6 +69,8 @@ describe('POST /api/batches/:id/runs', () => {
     expect(started).toMatchObject({ seq: 1, type: 'run.started', by: hand.member.id, sentBy: hand.member.id });
     const state = foldRun([started!]);
     expect(state.sheet?.volumeL).toBe(usualDocument.volumeL);
+    expect(state.document).toEqual(usualDocument);
+    expect(state.kit).toMatchObject({ kettle: { volumeL: expect.any(Number) }, chiller: { coolantC: 13 } });
     expect(state.steps.map(({ step }) => step.id)).toContain('hops-in');
     expect((await call('get', `/batches/${batch.id}`)).body).toMatchObject({ status: 'running', run: { id: run.id } });
     expect((await call('get', `/runs/${run.id}`)).body).toEqual(run);

@@ -117,7 +117,7 @@ function Frame({ aside, children }: { aside?: ReactNode; children: ReactNode }) 
   return (
     <section aria-labelledby="figures" className="grid min-w-0 content-start gap-4">
       <LevelRule id="figures" aside={aside}>
-        Figures, planned and as it happened
+        The figures
       </LevelRule>
       {children}
     </section>
