@@ -48,8 +48,8 @@ const PAST_K = 3;
 const MOST_EXTRA = 1;
 /** A hold or a reheat longer than this is another day's work. */
 const LONGEST_WAIT_S = 2 * 3600;
-/** What differs by less than this from the plan is the plan: nobody tastes it, and nobody weighs it. */
-const AS_PLANNED = 0.03;
+/** What differs by less than this from the plan is the plan: nobody tastes it, and nobody weighs it (judgement). */
+export const AS_PLANNED = 0.05;
 /** Slower than this (0.1 K/min) is no fall that anything can be told from. */
 const LEAST_FALL_C_PER_MIN = 0.1;
 /** What never gets there comes out by hand after an hour. */

@@ -1,5 +1,6 @@
 import type { Step } from '../sheets/index.js';
 import { inUnit } from '../units/index.js';
+import { HOLD_TIMER } from './missed-choices.js';
 import type { Alert, RunState } from './state.js';
 
 /** Names of clips that are recorded once; a sentence is a list of them. Numbers are `n0` to `n220`, tenths `point1` to `point9`. */
@@ -61,14 +62,16 @@ const alertPhrases = [
   'no-reading',
   'hub-away',
   'battery-low',
+  'tablet-silent',
   'next-step',
+  'chiller-on',
 ] as const;
 
 const faultClips: Partial<Record<Alert['rule'], string>> = {
   signal: 'no-reading',
   hub: 'hub-away',
   battery: 'battery-low',
-  station: 'next-step',
+  station: 'tablet-silent',
 };
 
 /** Less than this past its moment nobody calls late, s. */
@@ -92,8 +95,9 @@ export function spokenClips(state: RunState, alert: Alert, unit: 'C' | 'F', late
   const fault = faultClips[alert.rule];
   if (fault) return [fault];
   const act = state.steps.find(({ step }) => step.id === alert.actStepId)?.step;
+  const isHold = state.timers.some(({ id, label }) => alert.key === `timer:${id}` && label === HOLD_TIMER);
   const late = lateS === null ? [] : latenessClips(lateS);
-  if (!act) return alert.stage === 'now' || alert.stage === 'missed' ? ['timer-over', ...late] : [];
+  if (!act) return alert.stage === 'now' || alert.stage === 'missed' ? [isHold ? 'chiller-on' : 'timer-over', ...late] : [];
   const clip = actClip(act);
   const number = alert.targetC === null ? [] : temperatureClips(alert.targetC, unit);
   switch (alert.stage) {

@@ -3,6 +3,7 @@ import {
   alertPriority,
   alertWords,
   currentStep,
+  HOLD_TIMER,
   isFault,
   missedCatch,
   QUIET_REASON,
@@ -62,6 +63,8 @@ function TakeOver({ alert, onComplete, onAct, refusal }: AlertTakeOverProps & { 
   );
   const isSoundOff = useSoundOff();
   const isOwnTimer = alert.rule === 'timer' && alert.stepId === null;
+  const isHold =
+    isOwnTimer && state.timers.some(({ id, label }) => alert.key === `timer:${id}` && label === HOLD_TIMER);
   const isOfKit = isFault(alert);
 
   useEffect(() => {
@@ -162,7 +165,7 @@ function TakeOver({ alert, onComplete, onAct, refusal }: AlertTakeOverProps & { 
               onPress={acknowledge}
               note="stops the sound"
             >
-              {isOwnTimer ? 'Stop the timer' : 'Heard it'}
+              {isHold ? 'It is on' : isOwnTimer ? 'Stop the timer' : 'Heard it'}
             </PressButton>
             {toComplete.length > 0 && !isOwnTimer ? (
               <PressButton

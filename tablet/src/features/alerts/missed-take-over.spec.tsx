@@ -87,7 +87,7 @@ describe('the choices of a missed catch', () => {
       ),
       expect.stringMatching(/^Add \d+.g more\d+.g in all, now · contact as planned, bitterness 0\.\d of it$/),
       expect.stringMatching(
-        /^Reheat, about \d+ minchiller off, heat to 65.°C; gloves, lid away from you · contact and bitterness as planned$/,
+        /^Reheat, about \d+ minchiller off, heat to 65.°C with gloves, lid away from you · all as planned$/,
       ),
       expect.stringMatching(/^Add now and acceptcontact 0\.\d, bitterness 0\.\d of the plan$/),
     ]);

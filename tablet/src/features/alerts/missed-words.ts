@@ -1,11 +1,10 @@
-import { reheatToC, type MissedChoice, type MissedChoiceMade } from '@steepfall/shared/runs';
+import { AS_PLANNED, reheatToC, type MissedChoice, type MissedChoiceMade } from '@steepfall/shared/runs';
 import type { Step } from '@steepfall/shared/sheets';
 import { formatDuration, formatMass, type UnitPreferences } from '@steepfall/shared/units';
 import { formatLevel } from '#lib/units.ts';
 
 /** Hotter than this, hands need a word of caution: seconds are enough for a burn, °C. */
 const SCALD_ABOVE_C = 49;
-const AS_PLANNED = 0.05;
 
 export interface ChoiceWords {
   /** What to do, verb first. */
@@ -34,12 +33,11 @@ function effectText({ aromaRatio, isoRatio }: MissedChoice, hasHops: boolean): s
   const [contact, bitterness] = [share(aromaRatio), share(isoRatio)];
   const isNumber = (text: string) => /\d/.test(text);
   if (!hasHops) return `contact ${contact}${isNumber(contact) ? ' of the plan' : ''}`;
-  if (contact === 'as planned' && bitterness === 'as planned') return 'contact and bitterness as planned';
+  if (contact === 'as planned' && bitterness === 'as planned') return 'all as planned';
   const ofWhat = contact === 'as planned' ? ' of it' : ' of the plan';
   return `contact ${contact}, bitterness ${bitterness}${[contact, bitterness].some(isNumber) ? ofWhat : ''}`;
 }
 
-/** The nouns of a sheet: what one calls what was missed. */
 function totalG({ amounts }: Pick<Step, 'amounts'>): number {
   return amounts.reduce((sum, { massG }) => sum + massG, 0);
 }
@@ -83,7 +81,7 @@ export function choiceWords(
 
 function reheatFirst(targetC: number, units: UnitPreferences): string {
   const toC = reheatToC(targetC);
-  const caution = toC > SCALD_ABOVE_C ? '; gloves, lid away from you' : '';
+  const caution = toC > SCALD_ABOVE_C ? ' with gloves, lid away from you' : '';
   return `chiller off, heat to ${formatLevel(toC, units)}${caution}`;
 }
 
