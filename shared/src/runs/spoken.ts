@@ -97,7 +97,8 @@ export function spokenClips(state: RunState, alert: Alert, unit: 'C' | 'F', late
   const act = state.steps.find(({ step }) => step.id === alert.actStepId)?.step;
   const isHold = state.timers.some(({ id, label }) => alert.key === `timer:${id}` && label === HOLD_TIMER);
   const late = lateS === null ? [] : latenessClips(lateS);
-  if (!act) return alert.stage === 'now' || alert.stage === 'missed' ? [isHold ? 'chiller-on' : 'timer-over', ...late] : [];
+  if (!act)
+    return alert.stage === 'now' || alert.stage === 'missed' ? [isHold ? 'chiller-on' : 'timer-over', ...late] : [];
   const clip = actClip(act);
   const number = alert.targetC === null ? [] : temperatureClips(alert.targetC, unit);
   switch (alert.stage) {

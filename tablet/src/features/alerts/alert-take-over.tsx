@@ -100,8 +100,9 @@ function TakeOver({ alert, onComplete, onAct, refusal }: AlertTakeOverProps & { 
           {[
             isSoundOff ? 'sound is off' : null,
             tickedWith ? `${toMakeUpFor ? 'ticked with it' : 'not ticked yet'}: ${tickedWith}` : null,
-            isOfKit ? moreText(others.filter(isFault).length) : null,
-            others.length > 0 ? `also: ${others.map((other) => alertWords(state, other).verb).join(', ')}` : null,
+            others.length > 0
+              ? `${isOfKit ? `and ${others.length} more` : 'also'}: ${others.map((other) => alertWords(state, other).verb).join(', ')}`
+              : null,
           ]
             .filter(Boolean)
             .join(' · ')}
@@ -181,9 +182,4 @@ function TakeOver({ alert, onComplete, onAct, refusal }: AlertTakeOverProps & { 
       </section>
     </>
   );
-}
-
-/** What folds under the first of a burst. */
-function moreText(count: number): string | null {
-  return count > 0 ? `and ${count} more` : null;
 }

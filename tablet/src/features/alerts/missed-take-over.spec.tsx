@@ -83,11 +83,11 @@ describe('the choices of a missed catch', () => {
     const choices = [...screen.getByRole('group').querySelectorAll('button')].map(({ textContent }) => textContent);
     expect(choices).toEqual([
       expect.stringMatching(
-        /^Add now, hold 1 min 40 s at 48.°Cstop the chiller · contact as planned, bitterness 0\.\d of it$/,
+        /^Add now, hold 1.min.40.s at 48.°Cstop the chiller · contact as planned, bitterness 0\.\d of it$/,
       ),
       expect.stringMatching(/^Add \d+.g more\d+.g in all, now · contact as planned, bitterness 0\.\d of it$/),
       expect.stringMatching(
-        /^Reheat, about \d+ minchiller off, heat to 65.°C with gloves, lid away from you · all as planned$/,
+        /^Reheat, about \d+.minchiller off, heat to 65.°C · gloves, lid away from you · all as planned$/,
       ),
       expect.stringMatching(/^Add now and acceptcontact 0\.\d, bitterness 0\.\d of the plan$/),
     ]);

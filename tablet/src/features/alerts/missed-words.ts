@@ -1,6 +1,6 @@
 import { AS_PLANNED, reheatToC, type MissedChoice, type MissedChoiceMade } from '@steepfall/shared/runs';
 import type { Step } from '@steepfall/shared/sheets';
-import { formatDuration, formatMass, type UnitPreferences } from '@steepfall/shared/units';
+import { formatDuration, formatMass, NO_BREAK_SPACE, type UnitPreferences } from '@steepfall/shared/units';
 import { formatLevel } from '#lib/units.ts';
 
 /** Hotter than this, hands need a word of caution: seconds are enough for a burn, °C. */
@@ -19,8 +19,10 @@ export interface ChoiceWords {
 export function spanText(seconds: number): string {
   const minutes = Math.floor(seconds / 60);
   const rest = Math.round(seconds - minutes * 60);
-  if (minutes === 0) return `${rest} s`;
-  return rest === 0 || minutes >= 10 ? `${Math.round(seconds / 60)} min` : `${minutes} min ${rest} s`;
+  const [s, min] = [`${rest}${NO_BREAK_SPACE}s`, `${minutes}${NO_BREAK_SPACE}min`];
+  if (minutes === 0) return s;
+  if (minutes >= 10) return `${Math.round(seconds / 60)}${NO_BREAK_SPACE}min`;
+  return rest === 0 ? min : `${min}${NO_BREAK_SPACE}${s}`;
 }
 
 function share(ratio: number): string {
@@ -81,7 +83,7 @@ export function choiceWords(
 
 function reheatFirst(targetC: number, units: UnitPreferences): string {
   const toC = reheatToC(targetC);
-  const caution = toC > SCALD_ABOVE_C ? ' with gloves, lid away from you' : '';
+  const caution = toC > SCALD_ABOVE_C ? ' · gloves, lid away from you' : '';
   return `chiller off, heat to ${formatLevel(toC, units)}${caution}`;
 }
 
@@ -100,7 +102,7 @@ export function chosenWords(
     case 'more':
       return `${formatMass(totalG(step), { unit })} went in, ${formatMass(extraG ?? 0, { unit })} of it on top`;
     case 'reheat':
-      return `Reheating, about ${spanText(reheatS ?? 0)}: ${reheatFirst(targetC, units)}. It calls again at ${formatLevel(targetC, units)}`;
+      return `Reheating, about ${spanText(reheatS ?? 0)}: ${reheatFirst(targetC, units)} · calls again at ${formatLevel(targetC, units)}`;
     case 'accept':
       return 'Added late, and taken as it is';
   }

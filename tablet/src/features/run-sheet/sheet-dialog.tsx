@@ -1,6 +1,6 @@
 import { Dialog, DialogBackdrop, DialogPanel, DialogTitle } from '@headlessui/react';
 import { useEffect, useRef, type ReactNode } from 'react';
-import { alertWords } from '@steepfall/shared/runs';
+import { alertWords, isFault } from '@steepfall/shared/runs';
 import { PressButton } from '#components/press-button.tsx';
 import { ShapeGlyph } from '#components/shapes.tsx';
 import { useRunState, useRunStore } from '#lib/run-store/run-context.tsx';
@@ -63,9 +63,10 @@ function AlertRow() {
   if (!alert) return null;
   return (
     <div className="strip sticky top-0 z-10 mr-0! h-auto! min-h-18" data-stage={alert.stage}>
-      <ShapeGlyph shape="diamond" className="size-7 shrink-0" />
+      <ShapeGlyph shape={isFault(alert) ? 'broken' : 'diamond'} className="size-7 shrink-0" />
       <p className="strip-text" role="alert">
-        <strong>{alert.stage === 'missed' ? 'Late:' : 'Now:'}</strong> {alertWords(state, alert).verb}
+        <strong>{isFault(alert) ? 'Fault:' : alert.stage === 'missed' ? 'Late:' : 'Now:'}</strong>{' '}
+        {alertWords(state, alert).verb}
       </p>
       {/* Outside what is announced: it changes every second. */}
       <span className="shrink-0 text-lead font-semibold tabular-nums">
