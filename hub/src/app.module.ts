@@ -16,6 +16,7 @@ import { ReadingsModule } from './readings/readings.module.js';
 import { RealtimeModule } from './realtime/realtime.module.js';
 import { RecipesModule } from './recipes/recipes.module.js';
 import { RehearsalsModule } from './rehearsals/rehearsals.module.js';
+import { LearnedModule } from './runs/learned.module.js';
 import { RunsModule } from './runs/runs.module.js';
 import { StoresModule } from './stores/stores.module.js';
 
@@ -39,6 +40,7 @@ export class AppModule {
         ProbesModule,
         RunsModule,
         ReadingsModule,
+        LearnedModule,
         AlertsModule,
         FollowModule,
         RehearsalsModule,

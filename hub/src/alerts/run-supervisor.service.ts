@@ -1,21 +1,13 @@
 import { Injectable, Logger, type BeforeApplicationShutdown, type OnApplicationBootstrap } from '@nestjs/common';
 import type { Reading } from '@steepfall/shared/readings';
-import {
-  bootDriver,
-  driveRun,
-  liveView,
-  type DriverConfig,
-  type LiveView,
-  type RunDriver,
-  type RunEvent,
-} from '@steepfall/shared/runs';
+import { bootDriver, driveRun, liveView, type LiveView, type RunDriver, type RunEvent } from '@steepfall/shared/runs';
 import { runTimeAt } from '@steepfall/shared/timers';
 import type { Subscription } from 'rxjs';
 import { Clock } from '../common/clock.js';
 import { IngestionService, type AcceptedReadings } from '../readings/ingestion.service.js';
 import { RunReadingsService } from '../readings/run-readings.service.js';
 import { RunLogService } from '../runs/run-log.service.js';
-import type { RunFacts, RunLog } from '../runs/run-log.js';
+import type { RunLog } from '../runs/run-log.js';
 
 const STATION = 'hub';
 const TICK_MS = 250;
@@ -41,12 +33,6 @@ interface Watched {
   found: Map<string, RunEvent>;
   writing: Promise<void> | null;
   retryAtMs: number;
-}
-
-export function driverConfigOf(facts: RunFacts): DriverConfig {
-  const { probeId, probeLagS, probeResolutionC, probeSamplePeriodS, roomC, coolantC } = facts;
-  const probe = { lagS: probeLagS, resolutionC: probeResolutionC, samplePeriodS: probeSamplePeriodS };
-  return { hasProbe: probeId !== null, watch: { ...probe, roomC, coolantC } };
 }
 
 /**
@@ -120,7 +106,7 @@ export class RunSupervisor implements OnApplicationBootstrap, BeforeApplicationS
       const nowMs = runTimeAt(log.clock, wallMs);
       const readings = await this.readings.recent(log, wallMs);
       const booted = bootDriver({
-        config: driverConfigOf(log.facts),
+        config: log.driverConfig,
         entries: log.events,
         readings: readings.filter(({ atMs }) => atMs <= nowMs),
         nowMs,

@@ -1,6 +1,14 @@
 import { Body, Controller, Get, Patch } from '@nestjs/common';
 import { ApiBearerAuth, ApiTags } from '@nestjs/swagger';
-import { houseSchema, memberSchema, unitPreferencesSchema, type House, type Member } from '@steepfall/shared/contracts';
+import {
+  houseSchema,
+  memberSchema,
+  unitPreferencesSchema,
+  updateReachSchema,
+  type House,
+  type Member,
+  type UpdateReach,
+} from '@steepfall/shared/contracts';
 import type { UnitPreferences } from '@steepfall/shared/units';
 import { z } from 'zod';
 import { SignedIn } from '../common/access/access.decorators.js';
@@ -39,5 +47,12 @@ export class MeController {
     @Body({ schema: unitPreferencesSchema }) body: UnitPreferences,
   ): Promise<Member> {
     return presentMember(await this.members.setUnits(actor, body));
+  }
+
+  @Patch('reach')
+  @SignedIn()
+  @Answers(memberSchema)
+  async setReach(@Actor() actor: Actor, @Body({ schema: updateReachSchema }) { reachS }: UpdateReach): Promise<Member> {
+    return presentMember(await this.members.setReach(actor, reachS));
   }
 }

@@ -1,5 +1,5 @@
 import { foldRun } from '@steepfall/shared/runs';
-import { compileSheet, type RecipeDocument } from '@steepfall/shared/sheets';
+import { compileSheet, usualReachS, type RecipeDocument } from '@steepfall/shared/sheets';
 import { wallClock } from '@steepfall/shared/timers';
 import { formatBatchNumber } from '../batches/batch-number.js';
 import { hashPassword } from '../common/passwords.js';
@@ -15,8 +15,6 @@ export type Row = Record<string, string | number | boolean | null>;
 export type Tables = [table: string, rows: Row[]][];
 
 const DAY_MS = 24 * 3_600_000;
-/** A hand with its gloves on, from alert to act. */
-const REACH_S = 10;
 const ROOM_C = 21;
 const SEED = 7;
 const newestSencha = senchaRecipe.revisions[1];
@@ -220,7 +218,7 @@ function finishedRun(
     serial += 1;
     return demoId(`run/event/${serial}`);
   };
-  const sheet = compileSheet(document, { altitudeM, reachS: REACH_S });
+  const sheet = compileSheet(document, { altitudeM, reachS: usualReachS });
   const day = recordDay({
     started: {
       id: newId(),

@@ -18,8 +18,9 @@ import { User } from './models/user.model.js';
 /** A membership that was loaded together with its user. */
 type LoadedMembership = Membership & { user: User };
 
-export function presentMember({ id, displayName, role, isActive, units, user }: LoadedMembership): Member {
-  return { id, displayName, email: user.email, role, isActive, units: units ?? metricPreferences };
+export function presentMember({ id, displayName, role, isActive, units, reachS, user }: LoadedMembership): Member {
+  const own = { units: units ?? metricPreferences, reachS: reachS ?? null };
+  return { id, displayName, email: user.email, role, isActive, ...own };
 }
 
 @Injectable()
@@ -125,6 +126,12 @@ export class MembersService {
   /** What one person reads and types: their own affair, so nobody else's right and nothing for the audit log. */
   async setUnits({ houseId, memberId }: Actor, units: UnitPreferences): Promise<LoadedMembership> {
     await inHouse(this.memberships, houseId).update({ id: memberId }, { units });
+    return this.get(houseId, memberId);
+  }
+
+  /** How long this person takes from `now` to the act: from the next run they start, their calls come that much before. */
+  async setReach({ houseId, memberId }: Actor, reachS: number | null): Promise<LoadedMembership> {
+    await inHouse(this.memberships, houseId).update({ id: memberId }, { reachS });
     return this.get(houseId, memberId);
   }
 

@@ -32,6 +32,7 @@ export interface ProbeFacts {
   lagS: number;
   resolutionC: number;
   samplePeriodS: number;
+  lagErrorRatio?: number | null;
 }
 
 @Injectable()
@@ -92,8 +93,11 @@ export class ProbesService extends DeviceAuthenticator implements OnApplicationB
       if (probe.version !== version) throw new ProblemError('changed-meanwhile', 'Load it again, then change it.');
       const isCalibratedAnew = !isDeepStrictEqual(probe.calibration, values.calibration);
       const calibratedAtMs = values.calibration === null ? null : this.clock.nowMs();
+      // A lag that somebody typed is told again, and not learned.
+      const kept = values.lagS === probe.lagS ? probe.lagErrorRatio : null;
+      const lagErrorRatio = values.lagErrorRatio === undefined ? kept : values.lagErrorRatio;
       await probe.update(
-        { ...values, ...(isCalibratedAnew ? { calibratedAtMs } : {}), version: version + 1 },
+        { ...values, lagErrorRatio, ...(isCalibratedAnew ? { calibratedAtMs } : {}), version: version + 1 },
         { transaction },
       );
       await this.record(actor, 'probe.changed', id, transaction, values);
@@ -208,6 +212,7 @@ function presentProbe(row: Probe, lastReadingAtMs: number | null): ProbeAnswer {
     lastReadingAtMs,
     calibration: row.calibration ?? null,
     calibratedAtMs: row.calibratedAtMs ?? null,
+    lagErrorRatio: row.lagErrorRatio ?? null,
     version: row.version,
   };
 }

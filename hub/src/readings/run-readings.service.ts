@@ -13,6 +13,8 @@ const AFTER_PROBE_OUT_MS = 120_000;
 /** What a tablet needs to bring its watch up to date. */
 const RECENT_MS = 15 * 60_000;
 const CLOCK_SLACK_MS = 60_000;
+/** Longer in the kettle, a probe was forgotten there. */
+const BREW_DAY_MS = 8 * 3_600_000;
 
 /** The readings that belong to a run: those of its probe from the start until it came out of the kettle. */
 @Injectable()
@@ -41,6 +43,14 @@ export class RunReadingsService {
     const span = this.spanOf(log);
     const nowMs = runTimeAt(log.clock, wallMs);
     return this.store.range({ probeId, fromMs: Math.max(span.fromMs, nowMs - RECENT_MS), toMs: span.toMs });
+  }
+
+  /** Every reading of the brew day itself, for learning from it. */
+  async brewed(log: RunLog): Promise<Reading[]> {
+    const { probeId } = log.facts;
+    if (probeId === null) return [];
+    const { fromMs, toMs } = this.spanOf(log);
+    return this.store.range({ probeId, fromMs, toMs: Math.min(toMs, fromMs + BREW_DAY_MS) });
   }
 
   private spanOf({ state, projection, clock }: RunLog): { fromMs: number; toMs: number } {

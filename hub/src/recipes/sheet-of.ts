@@ -1,9 +1,6 @@
 import { ProblemError } from '@steepfall/shared/problems';
-import { compileSheet, type RecipeDocument, type RunSheet } from '@steepfall/shared/sheets';
+import { compileSheet, usualReachS, type RecipeDocument, type RunSheet } from '@steepfall/shared/sheets';
 import { ZodError } from 'zod';
-
-/** A hand with its gloves on, from alert to act. */
-const REACH_S = 10;
 
 /** What in the document keeps a step from having room for it. */
 function fieldOf({ path: [, , member] }: ZodError['issues'][number]): { pointer: string; detail: string } {
@@ -25,7 +22,7 @@ function fieldOf({ path: [, , member] }: ZodError['issues'][number]): { pointer:
  */
 export function sheetOf(document: RecipeDocument, altitudeM: number, at: string | null): RunSheet {
   try {
-    return compileSheet(document, { altitudeM, reachS: REACH_S });
+    return compileSheet(document, { altitudeM, reachS: usualReachS });
   } catch (error) {
     const field =
       error instanceof RangeError

@@ -101,6 +101,7 @@ export class RehearsalsService implements OnApplicationBootstrap, OnModuleDestro
         probe: await this.probes.createSimulated(houseId, facts, transaction),
         roomC: kettleSetup?.roomC ?? null,
         coolantC: kettleSetup?.coolantC ?? null,
+        chillerPerS: null,
         rehearsal: { seed: kettleSetup?.seed ?? null, kettleSetup, sourceProbeId: source?.id ?? null },
       };
     });

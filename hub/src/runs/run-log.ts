@@ -1,5 +1,12 @@
 import { isDeepStrictEqual } from 'node:util';
-import { foldRun, type LogEntry, type RunEvent, type RunState, type StoredRunEvent } from '@steepfall/shared/runs';
+import {
+  foldRun,
+  type DriverConfig,
+  type LogEntry,
+  type RunEvent,
+  type RunState,
+  type StoredRunEvent,
+} from '@steepfall/shared/runs';
 import type { RunClock } from '@steepfall/shared/timers';
 import type { RunEventRow } from './models/run-event.model.js';
 import type { Run } from './models/run.model.js';
@@ -15,10 +22,12 @@ export type RunFacts = Pick<
   | 'probeId'
   | 'sourceProbeId'
   | 'probeLagS'
+  | 'probeLagErrorRatio'
   | 'probeResolutionC'
   | 'probeSamplePeriodS'
   | 'roomC'
   | 'coolantC'
+  | 'chillerPerS'
   | 'kettleSetup'
   | 'createdAtMs'
 >;
@@ -64,6 +73,14 @@ export class RunLog {
 
   get clock(): RunClock {
     return this.folded.clock as RunClock;
+  }
+
+  /** What the watch of this run is told when it begins. */
+  get driverConfig(): DriverConfig {
+    const { probeId, probeLagS, probeResolutionC, probeSamplePeriodS, roomC, coolantC } = this.facts;
+    const probe = { lagS: probeLagS, resolutionC: probeResolutionC, samplePeriodS: probeSamplePeriodS };
+    const learned = { lagErrorRatio: this.facts.probeLagErrorRatio, chillerPerS: this.facts.chillerPerS };
+    return { hasProbe: probeId !== null, watch: { ...probe, ...learned, roomC, coolantC } };
   }
 
   find(eventId: string): StoredRunEvent | undefined {

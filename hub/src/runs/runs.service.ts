@@ -12,10 +12,12 @@ import type { Actor } from '../common/access/actor.js';
 import { Clock } from '../common/clock.js';
 import { newId } from '../common/ids.js';
 import { inTransaction } from '../database/retry-transaction.js';
+import { MembersService } from '../members/members.service.js';
 import { ProbesService } from '../probes/probes.service.js';
 import { RunLogService, type NewRun } from './run-log.service.js';
 import type { RunLog } from './run-log.js';
 import { RunSummariesService } from './run-summaries.service.js';
+import { withReach } from './with-reach.js';
 
 /** Written for a run without a probe; nothing is ever read through it. */
 const NO_PROBE = { lagS: 5, resolutionC: 0.1, samplePeriodS: 1 };
@@ -30,9 +32,11 @@ export interface RunStart {
   document: RecipeDocument;
   kit: RunKit;
   clock: RunClock;
-  probe: { id: string; lagS: number; resolutionC: number; samplePeriodS: number } | null;
+  probe: { id: string; lagS: number; resolutionC: number; samplePeriodS: number; lagErrorRatio?: number | null } | null;
   roomC: number | null;
   coolantC: number | null;
+  /** Of the chiller in its kettle, where earlier runs taught it. */
+  chillerPerS: number | null;
   /** `null`: a real run. */
   rehearsal: Pick<NewRun, 'seed' | 'kettleSetup' | 'sourceProbeId'> | null;
 }
@@ -46,6 +50,7 @@ export class RunsService {
     private readonly summaries: RunSummariesService,
     private readonly batches: BatchesService,
     private readonly probes: ProbesService,
+    private readonly members: MembersService,
     private readonly clock: Clock,
   ) {}
 
@@ -69,6 +74,7 @@ export class RunsService {
         probe,
         roomC: null,
         coolantC: chiller?.facts.coolantC ?? null,
+        chillerPerS: chiller?.facts.coolingConstantPerS ?? null,
         rehearsal: null,
       };
     };
@@ -83,9 +89,11 @@ export class RunsService {
 
   /** `prepare` runs in the transaction that writes the run: what it writes comes and goes with it. */
   async start(actor: Actor, prepare: (transaction: Transaction) => Promise<RunStart>): Promise<RunSummary> {
-    const log = await inTransaction(this.sequelize, async (transaction) =>
-      this.write(actor, await prepare(transaction), transaction),
-    );
+    const { reachS } = await this.members.get(actor.houseId, actor.memberId);
+    const log = await inTransaction(this.sequelize, async (transaction) => {
+      const start = await prepare(transaction);
+      return this.write(actor, { ...start, sheet: withReach(start.sheet, reachS ?? null) }, transaction);
+    });
     this.logs.announce(log);
     return this.summaries.get(actor.houseId, log.id);
   }
@@ -100,7 +108,8 @@ export class RunsService {
   }
 
   private write({ houseId, memberId }: Actor, start: RunStart, transaction: Transaction): Promise<RunLog> {
-    const { title, batch, revisionId, sheet, document, kit, clock, probe, roomC, coolantC, rehearsal } = start;
+    const { title, batch, revisionId, sheet, document, kit, clock, probe, roomC, coolantC, chillerPerS, rehearsal } =
+      start;
     const isRehearsal = rehearsal !== null;
     const runId = newId();
     const { lagS, resolutionC, samplePeriodS } = probe ?? NO_PROBE;
@@ -133,10 +142,12 @@ export class RunsService {
       isRehearsal,
       probeId: probe?.id ?? null,
       probeLagS: lagS,
+      probeLagErrorRatio: probe?.lagErrorRatio ?? null,
       probeResolutionC: resolutionC,
       probeSamplePeriodS: samplePeriodS,
       roomC,
       coolantC,
+      chillerPerS,
       startedAtMs: clock.anchorRunMs,
       startedBy: memberId,
       createdAtMs: this.clock.nowMs(),

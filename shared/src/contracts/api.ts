@@ -48,6 +48,8 @@ export const memberSchema = z
     role: roleSchema,
     isActive: z.boolean(),
     units: unitPreferencesSchema.default(metricPreferences),
+    /** Seconds from `now` to the act; null: never learned, the usual. */
+    reachS: z.int().nullable().default(null),
   })
   .meta({ id: 'Member' });
 export type Member = z.infer<typeof memberSchema>;
@@ -137,6 +139,8 @@ export const createProbeSchema = z
     lagS: z.number().min(0).max(120),
     resolutionC: z.number().min(0.001).max(1),
     samplePeriodS: z.number().min(0.1).max(60),
+    /** How far off `lagS` may be, as a share of it, where it was learned from a run; kept while `lagS` stays, when left out. */
+    lagErrorRatio: z.number().positive().max(0.5).nullable().optional(),
   })
   .meta({ id: 'CreateProbe' });
 export type CreateProbe = z.infer<typeof createProbeSchema>;
@@ -180,6 +184,7 @@ export const probeSchema = z
     lastReadingAtMs: atMs.nullable(),
     calibration: probeCalibrationSchema.nullable().default(null),
     calibratedAtMs: atMs.nullable().default(null),
+    lagErrorRatio: z.number().nullable().default(null),
     version: z.int().default(1),
   })
   .meta({ id: 'Probe' });
@@ -408,6 +413,9 @@ export const runSummarySchema = z
     probeLagS: z.number(),
     probeResolutionC: z.number(),
     probeSamplePeriodS: z.number(),
+    /** Learned from earlier runs. */
+    probeLagErrorRatio: z.number().nullable().default(null),
+    chillerPerS: z.number().nullable().default(null),
     roomC: z.number().nullable(),
     coolantC: z.number().nullable(),
     /** Run clock. */

@@ -100,7 +100,8 @@ export function plannedDay(document: RecipeDocument, kit: DeskKit): PlannedDay {
   return finished(pot, document);
 }
 
-function capacityJPerK({ waterL, additions }: RecipeDocument, kettle: KettleFacts): number {
+/** Heat that warms the filled kettle, with what lies in it from the start, by one kelvin, J/K. */
+export function capacityJPerK({ waterL, additions }: RecipeDocument, kettle: KettleFacts): number {
   const cold = additions.reduce((sum, one) => sum + (one.in.at === 'fill' ? leafJPerK(one) : 0), 0);
   return (
     waterL * (waterDensityKgPerM3(20) / 1000) * specificHeatJPerKgK.water +

@@ -22,6 +22,7 @@ export const problemCatalogue = {
   'batch-not-planned': { status: 409, title: 'The batch is not waiting any more' },
   'run-already-started': { status: 409, title: 'The run has already started' },
   'run-not-started': { status: 409, title: 'The run has not started' },
+  'run-not-ended': { status: 409, title: 'The run goes on' },
   'run-already-ended': { status: 409, title: 'The run has ended' },
   'step-already-done': { status: 409, title: 'The step is done already' },
   'step-not-current': { status: 409, title: 'Another step comes first' },

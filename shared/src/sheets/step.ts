@@ -1,5 +1,8 @@
 import { z } from 'zod';
 
+/** A hand with its gloves on, from alert to act, s. */
+export const usualReachS = 10;
+
 /** What kind of work a step is. The kind picks the shape and the words on the sheet, never the rules. */
 export const stepKindSchema = z.enum([
   'prepare',
@@ -128,7 +131,7 @@ export const stepSchema = z
     meanwhile: z.array(meanwhileTaskSchema).max(10).default([]),
     cautions: z.array(cautionSchema).max(6).default([]),
     /** Seconds this person needs from alert to act. */
-    reachS: z.number().min(0).max(120).default(10),
+    reachS: z.number().min(0).max(120).default(usualReachS),
     /** What is set or filled, with its number: "gauge pressure 96 kPa". */
     settings: z.array(stepSettingSchema).max(4).default([]),
     /** A measurement that the step asks for without waiting on its value. */

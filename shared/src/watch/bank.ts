@@ -210,19 +210,3 @@ export function resettleBank(bank: number[], readingC: number, stepC: number): v
     bank[o + SS]! += 0.05 ** 2;
   }
 }
-
-/** Mean and spread of the lag over the bank, in seconds. */
-export function lagBelief(bank: readonly number[], told: ToldLag): { lagS: number; sdS: number } {
-  let sum = 0;
-  let mean = 0;
-  let square = 0;
-  for (let i = 0; i < bank.length / STRIDE; i += 1) {
-    const w = Math.exp(bank[i * STRIDE + LOG_WEIGHT]!);
-    const lagS = lagOf(Math.floor(i / EDDIES_C.length), told);
-    sum += w;
-    mean += w * lagS;
-    square += w * lagS ** 2;
-  }
-  mean /= sum;
-  return { lagS: mean, sdS: Math.sqrt(Math.max(0, square / sum - mean * mean)) };
-}

@@ -1,3 +1,5 @@
+import { solve } from './solve.js';
+
 /**
  * The best that any unbiased estimator can do (Cramér-Rao) with white Gaussian noise; see S. M. Kay, "Fundamentals of
  * Statistical Signal Processing: Estimation Theory", ch. 3, 1993. A watch that claims less is fooling itself.
@@ -64,24 +66,4 @@ export function newtonCrossingSdS(input: NewtonBoundInput): number {
   const gradient = [1 / (perS * above), -crossingS / perS, 1 / (perS * (targetC - environmentC))].slice(0, size);
   const solved = solve(information, gradient);
   return Math.sqrt(gradient.reduce((sum, g, i) => sum + g * (solved[i] ?? 0), 0));
-}
-
-/** Gaussian elimination with scaling, for the small symmetric systems above. */
-function solve(matrix: number[][], right: number[]): number[] {
-  const n = right.length;
-  const scale = matrix.map((row, i) => 1 / Math.sqrt(row[i]!));
-  const rows = matrix.map((row, i) => [...row.map((v, j) => v * scale[i]! * scale[j]!), right[i]! * scale[i]!]);
-  for (let i = 0; i < n; i += 1) {
-    for (let j = i + 1; j < n; j += 1) {
-      const factor = rows[j]![i]! / rows[i]![i]!;
-      for (let k = i; k <= n; k += 1) rows[j]![k]! -= factor * rows[i]![k]!;
-    }
-  }
-  const out = new Array<number>(n).fill(0);
-  for (let i = n - 1; i >= 0; i -= 1) {
-    let value = rows[i]![n]!;
-    for (let k = i + 1; k < n; k += 1) value -= rows[i]![k]! * out[k]!;
-    out[i] = value / rows[i]![i]!;
-  }
-  return out.map((v, i) => v * scale[i]!);
 }

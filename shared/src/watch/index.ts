@@ -9,7 +9,16 @@ export {
 export { estimateAt } from './estimate.js';
 export { forecastCrossing, forecastCurve } from './forecast.js';
 export { startLadder, stepLadder, type LadderState } from './ladder.js';
-export { learnedFrom } from './learn.js';
+export { learnInTurns, learnRun, type FinishedRun, type RunLessons } from './learn.js';
+export type { HeatingFacts } from './learn-kettle.js';
+export type { Learned, Lesson, LessonGap } from './learn-lesson.js';
+export {
+  learnedReach,
+  LONGEST_REACH_S,
+  SHORTEST_REACH_S,
+  type AnsweredCall,
+  type LearnedReach,
+} from './learn-reach.js';
 export { startWatch, type WatchState } from './state.js';
 export { startTimerLadder, stepTimerLadder, type TimerLadderState } from './timer-ladder.js';
 export type {
@@ -25,7 +34,6 @@ export type {
   WatchActDone,
   WatchConfig,
   WatchEstimate,
-  WatchLearned,
   WatchMode,
   WatchReading,
   WatchStatus,

@@ -14,12 +14,6 @@ export interface Suspect {
   tempC: number;
 }
 
-/** A running mean. */
-export interface Tally {
-  mean: number;
-  count: number;
-}
-
 /** All that is known after some readings. Plain data: it survives JSON and is never changed in place. */
 export interface WatchState {
   readonly config: WatchConfig;
@@ -41,13 +35,8 @@ export interface WatchState {
   readonly whiteVariance: number;
   readonly whiteCount: number;
   readonly rivals: readonly Rival[];
-  /** Last instant at which the liquid was disturbed or the slope found changed. */
-  readonly disturbedAtMs: number | null;
   /** Last instant at which something went in that may have stepped the liquid by half a kelvin or more. */
   readonly steppedAtMs: number | null;
-  /** Rate constants seen while the liquid was left alone. */
-  readonly lossesPerS: Tally;
-  readonly chillerPerS: Tally;
   /** The estimate so far, thinned, to say when a target was crossed. */
   readonly trail: readonly { atMs: number; tempC: number }[];
 }
@@ -79,10 +68,7 @@ export function startWatch(config: WatchConfig): WatchState {
     whiteVariance: 0.1 ** 2,
     whiteCount: 0,
     rivals: [],
-    disturbedAtMs: null,
     steppedAtMs: null,
-    lossesPerS: { mean: 0, count: 0 },
-    chillerPerS: { mean: 0, count: 0 },
     trail: [],
   };
 }

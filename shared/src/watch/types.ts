@@ -10,20 +10,10 @@ export interface WatchConfig {
   samplePeriodS: number;
   /** The smallest step the probe can show. */
   resolutionC: number;
-  /** How far off `lagS` may be, as a share of it; a quarter unless learned (see `learnedFrom`). */
+  /** How far off `lagS` may be, as a share of it; a quarter unless learned (see `learnRun`). */
   lagErrorRatio?: number | null;
   /** Rate constant of this kettle with its chiller, learned from earlier runs. */
   chillerPerS?: number | null;
-}
-
-/** What a run has taught of its probe and kettle, worth saving for the next one. null where it taught nothing. */
-export interface WatchLearned {
-  lagS: number | null;
-  lagErrorRatio: number | null;
-  /** Rate constant of the kettle's losses to the room. */
-  lossesPerS: number | null;
-  /** Rate constant of the kettle with its chiller on, towards the coolant. */
-  chillerPerS: number | null;
 }
 
 /** Something a person did to the kettle, as tapped on the sheet. */

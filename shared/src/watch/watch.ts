@@ -1,5 +1,4 @@
 import { advanceBank, believe, disturbBank, resettleBank, startBank, updateBank, type Disturbance } from './bank.js';
-import { tallied } from './learn.js';
 import { advanceRivals, updateRivals } from './rivals.js';
 import { CHILLING_C_PER_S, type Surroundings } from './slope-law.js';
 import type { Suspect, WatchState } from './state.js';
@@ -52,7 +51,7 @@ export function watchAct(state: WatchState, done: WatchActDone): WatchState {
   const disturbance = disturbanceOf(done.act, belief, surroundings(state), state.config.chillerPerS ?? null);
   disturbBank(bank, disturbance);
   const steppedAtMs = disturbance.stepC >= STEP_C ? atMs : state.steppedAtMs;
-  return { ...state, kettle, bank, bankAtMs: atMs, disturbedAtMs: atMs, steppedAtMs, rivals: [] };
+  return { ...state, kettle, bank, bankAtMs: atMs, steppedAtMs, rivals: [] };
 }
 
 function kettleAfter({ kettle }: WatchState, act: WatchAct): WatchState['kettle'] {
@@ -204,7 +203,6 @@ function suspected(state: WatchState, bank: number[], suspect: Suspect): WatchSt
       suspects: [],
       recent: suspects,
       lastGoodAtMs: suspect.atMs,
-      disturbedAtMs: suspect.atMs,
       steppedAtMs: suspect.atMs,
       rivals: [],
     },
@@ -237,8 +235,7 @@ function accepted(
       recent,
       suspects: [],
       lastGoodAtMs: good.atMs,
-      disturbedAtMs: contest.winner ? good.atMs : state.disturbedAtMs,
-      ...remembered(state, standing, good.atMs),
+      trail: remembered(state, standing, good.atMs),
     },
     'good',
   );
@@ -260,16 +257,10 @@ function whiteNoise(state: WatchState, recent: readonly Suspect[]): Pick<WatchSt
 const TRAIL_STEP_S = 5;
 const TRAIL_LENGTH = 240;
 
-/** The estimate every few seconds, and what it teaches; when full, every second point of the older half goes. */
-function remembered(
-  state: WatchState,
-  bank: readonly number[],
-  atMs: number,
-): Pick<WatchState, 'trail' | 'lossesPerS' | 'chillerPerS'> {
+/** The estimate every few seconds; when full, every second point of the older half goes. */
+function remembered(state: WatchState, bank: readonly number[], atMs: number): WatchState['trail'] {
   const last = state.trail.at(-1);
-  if (last && atMs - last.atMs < TRAIL_STEP_S * 1000)
-    return { trail: state.trail, lossesPerS: state.lossesPerS, chillerPerS: state.chillerPerS };
+  if (last && atMs - last.atMs < TRAIL_STEP_S * 1000) return state.trail;
   const trail = [...state.trail, { atMs, tempC: believe(bank).tempC }];
-  const thinned = trail.length <= TRAIL_LENGTH ? trail : trail.filter((_, i) => i > TRAIL_LENGTH / 2 || i % 2 === 0);
-  return { ...tallied(state, bank, atMs, surroundings(state)), trail: thinned };
+  return trail.length <= TRAIL_LENGTH ? trail : trail.filter((_, i) => i > TRAIL_LENGTH / 2 || i % 2 === 0);
 }

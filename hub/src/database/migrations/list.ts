@@ -5,6 +5,7 @@ import { recipeDesk } from './0003-recipe-desk.js';
 import { stores } from './0004-stores.js';
 import { kitAndUnits } from './0005-kit-and-units.js';
 import { follow } from './0006-follow.js';
+import { reach } from './0007-reach.js';
 
 export interface Migration {
   name: string;
@@ -12,4 +13,4 @@ export interface Migration {
 }
 
 /** One line, forwards only: a new migration goes to the end. */
-export const migrations: Migration[] = [foundation, runsAndProbes, recipeDesk, stores, kitAndUnits, follow];
+export const migrations: Migration[] = [foundation, runsAndProbes, recipeDesk, stores, kitAndUnits, follow, reach];

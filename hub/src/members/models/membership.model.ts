@@ -25,6 +25,10 @@ export class Membership extends HouseOwnedModel<InferAttributes<Membership>, Inf
   @Column({ type: DataType.JSON })
   declare units: CreationOptional<UnitPreferences | null>;
 
+  /** Seconds from `now` to the act; `null`: the usual. */
+  @Column({ type: DataType.SMALLINT.UNSIGNED })
+  declare reachS: CreationOptional<number | null>;
+
   @Column({ type: DataType.BIGINT, allowNull: false })
   declare createdAtMs: number;
 

@@ -16,6 +16,10 @@ export class Probe extends HouseOwnedModel<InferAttributes<Probe>, InferCreation
   @Column({ type: DataType.DOUBLE, allowNull: false })
   declare lagS: number;
 
+  /** How far off `lagS` may be, as a share of it, where it was learned; `null`: only told. */
+  @Column({ type: DataType.DOUBLE })
+  declare lagErrorRatio: CreationOptional<number | null>;
+
   @Column({ type: DataType.DOUBLE, allowNull: false })
   declare resolutionC: number;
 

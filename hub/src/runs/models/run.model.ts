@@ -40,6 +40,10 @@ export class Run extends HouseOwnedModel<InferAttributes<Run>, InferCreationAttr
   @Column({ type: DataType.DOUBLE, allowNull: false })
   declare probeLagS: number;
 
+  /** Where its lag was learned from earlier runs: how far off it may be. */
+  @Column({ type: DataType.DOUBLE })
+  declare probeLagErrorRatio: CreationOptional<number | null>;
+
   @Column({ type: DataType.DOUBLE, allowNull: false })
   declare probeResolutionC: number;
 
@@ -51,6 +55,10 @@ export class Run extends HouseOwnedModel<InferAttributes<Run>, InferCreationAttr
 
   @Column({ type: DataType.DOUBLE })
   declare coolantC: number | null;
+
+  /** Of the chiller in its kettle, learned from earlier runs. */
+  @Column({ type: DataType.DOUBLE })
+  declare chillerPerS: CreationOptional<number | null>;
 
   @Column({ type: DataType.STRING(20), allowNull: false })
   declare status: RunSummary['status'];

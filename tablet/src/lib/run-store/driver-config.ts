@@ -9,6 +9,8 @@ export function driverConfigOf(summary: RunSummary): DriverConfig {
       lagS: probeLagS,
       resolutionC: probeResolutionC,
       samplePeriodS: probeSamplePeriodS,
+      lagErrorRatio: summary.probeLagErrorRatio,
+      chillerPerS: summary.chillerPerS,
       roomC,
       coolantC,
     },
