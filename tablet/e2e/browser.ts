@@ -15,7 +15,7 @@ export const sizes = {
 const grounds = { day: 'light', night: 'dark' } as const;
 
 /** Debian's Chromium, kept from looking for anything outside this machine. */
-export function openBrowser(): Promise<Browser> {
+export function openBrowser(flags: readonly string[] = []): Promise<Browser> {
   return chromium.launch({
     executablePath: '/usr/bin/chromium',
     args: [
@@ -26,6 +26,7 @@ export function openBrowser(): Promise<Browser> {
       '--disable-background-networking',
       '--disable-component-update',
       '--disable-sync',
+      ...flags,
     ],
   });
 }

@@ -22,6 +22,10 @@ export class HubApi {
     return call(`${this.url}/api/${path}`, body, this.session.accessToken);
   }
 
+  patch<Answer>(path: string, body: unknown): Promise<Answer> {
+    return call(`${this.url}/api/${path}`, body, this.session.accessToken, 'PATCH');
+  }
+
   addProbe(name: string, lagS: number): Promise<ProbeWithToken> {
     return this.post('probes', { name, lagS, resolutionC: 0.0625, samplePeriodS: 1 });
   }
@@ -40,9 +44,14 @@ export class HubApi {
   }
 }
 
-async function call<Answer>(url: string, body: unknown, accessToken?: string): Promise<Answer> {
+async function call<Answer>(
+  url: string,
+  body: unknown,
+  accessToken?: string,
+  method = body === undefined ? 'GET' : 'POST',
+): Promise<Answer> {
   const response = await fetch(url, {
-    method: body === undefined ? 'GET' : 'POST',
+    method,
     headers: {
       'content-type': 'application/json',
       ...(accessToken ? { authorization: `Bearer ${accessToken}` } : {}),

@@ -106,8 +106,11 @@ class AlarmSounds {
     document.addEventListener('visibilitychange', recover);
     addEventListener('pageshow', recover);
     addEventListener('focus', recover);
-    addEventListener('pointerdown', () => void this.recover(true), { capture: true, passive: true });
-    addEventListener('keydown', () => void this.recover(true), { capture: true, passive: true });
+    // A finger counts as a gesture when it lifts, a mouse when it presses; a repair begun too early would be in the way of the right one.
+    const inTap = { capture: true, passive: true };
+    addEventListener('pointerdown', ({ pointerType }) => void this.recover(pointerType === 'mouse'), inTap);
+    addEventListener('pointerup', () => void this.recover(true), inTap);
+    addEventListener('keydown', () => void this.recover(true), inTap);
   }
 
   /** To be called inside a tap: browsers let sound out only then. */
@@ -410,7 +413,7 @@ class AlarmSounds {
 
   private async recover(isInTap: boolean): Promise<void> {
     const { context } = this;
-    if (!context || this.isRepairing) return;
+    if (!context || (this.isRepairing && !isInTap)) return;
     if (isInTap && this.hasLoadFailed) this.reload();
     const repair = nextRepair(this.signs(), this.triedCount, isInTap);
     if (repair === 'none') return;
