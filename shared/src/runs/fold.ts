@@ -1,5 +1,5 @@
 import { runEventTypes, type AlertStage, type LogEntry, type RunEvent, type RunEventOf } from './events.js';
-import type { Alert, RunState, StepProgress } from './state.js';
+import type { Alert, MissedChoiceMade, RunState, StepProgress } from './state.js';
 
 const stages: readonly AlertStage[] = ['coming-up', 'stand-by', 'now', 'missed'];
 
@@ -327,6 +327,12 @@ function applyAlert(state: RunState, event: RunEventOf<'alert.raised'>): void {
   }
 }
 
+/** A step that was taken back calls under a new name, beside the old one: what was chosen about the step answers both. */
+function isAnsweredBy(alert: Alert, { key, crossing, stepId, atMs }: MissedChoiceMade): boolean {
+  if (key === alert.key && crossing === alert.crossing) return true;
+  return alert.stage === 'missed' && stepId === alert.actStepId && alert.raisedAtMs <= atMs;
+}
+
 function markStanding(state: RunState): void {
   for (const alert of state.alerts) {
     const actStep = alert.actStepId === null ? undefined : stepOf(state, alert.actStepId);
@@ -336,7 +342,7 @@ function markStanding(state: RunState): void {
       alert.stepId === null &&
       !state.timers.some((timer) => `timer:${timer.id}` === alert.key);
     // To choose is to answer: a reheat leaves its step open, and calls again at the next crossing.
-    const isChosen = state.choices.some(({ key, crossing }) => key === alert.key && crossing === alert.crossing);
+    const isChosen = state.choices.some((choice) => isAnsweredBy(alert, choice));
     alert.isStanding =
       state.status === 'running' &&
       alert.acknowledgedAtMs === null &&

@@ -108,6 +108,17 @@ describe('a missed catch', () => {
     }
   });
 
+  it('calls under a new name after it was taken back, and one choice answers both calls, not the next one', () => {
+    const log = act(missed(), choose('accept')).done('hops-in');
+    act(log, { type: 'goBack' }).add('alert.raised', buildAlert({ key: 'hops-in~1', stage: 'missed' }));
+    expect(callingAlerts(foldRun(log.entries), START_MS)).toHaveLength(2);
+    expect(missedCatch(foldRun(log.entries))?.alert.key).toBe('hops-in~1');
+    act(log.wait(1), choose('reheat', { key: 'hops-in~1', reheatS: 540 }));
+    expect(callingAlerts(foldRun(log.entries), START_MS)).toEqual([]);
+    log.wait(600).add('alert.raised', buildAlert({ key: 'hops-in~1', crossing: 2, stage: 'now' }));
+    expect(callingAlerts(foldRun(log.entries), START_MS)).toMatchObject([{ crossing: 2 }]);
+  });
+
   it('says what to do when the hold is over', () => {
     const log = act(missed(), choose('hold', { holdS: 240 }));
     const { timers } = foldRun(log.entries);

@@ -51,7 +51,7 @@ function TakeOver({ alert, onComplete, onAct, refusal }: AlertTakeOverProps & { 
   const current = currentStep(state);
   const path = stepsUpTo(state, alert.actStepId);
   const missed = missedCatch(state);
-  const toMakeUpFor = alert.stage === 'missed' && missed?.alert === alert ? missed : null;
+  const toMakeUpFor = alert.stage === 'missed' && missed?.progress.step.id === alert.actStepId ? missed : null;
   const waiting = path.slice(0, -1).filter(({ step }) => step.done.by === 'hand' || step.done.by === 'measurement');
   // What can be made up for is not held up by what was not ticked: it is ticked with it.
   const forgotten = toMakeUpFor ? undefined : waiting[0];
