@@ -55,7 +55,7 @@ export default defineConfig({
         clientsClaim: true,
         // Answers pushes; the browser keeps it with the worker that it belongs to.
         importScripts: ['/push-worker.js'],
-        globIgnores: ['push-worker.js'],
+        globIgnores: ['push-worker.js', 'trust/**'],
         globPatterns: ['**/*.{js,css,html,woff2,mp3,ogg,wav,svg,png}'],
         navigateFallback: '/index.html',
         navigateFallbackDenylist: [/^\/api/, /^\/socket\.io/, /^\/export/],

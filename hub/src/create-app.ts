@@ -8,6 +8,8 @@ import { AppModule } from './app.module.js';
 import type { HubConfig } from './config/environment.js';
 import { serveOpenApi } from './open-api.js';
 import { serveTablet } from './serve-tablet.js';
+import { strictTransport } from './trust/strict-transport.js';
+import { serveTrustCheck } from './trust/trust-check.js';
 
 /**
  * The device door takes ten thousand readings in one call, the runs door five hundred events; the stores take a file of two million
@@ -16,9 +18,16 @@ import { serveTablet } from './serve-tablet.js';
 const WIDE_DOORS = { '/api/device': '2mb', '/api/runs': '2mb', '/api/stores/import': '7mb' };
 const USUAL_BODY = '256kb';
 
-/** The whole hub, ready to listen. Tests start the same one. */
-export async function createApp(config: HubConfig): Promise<NestExpressApplication> {
+/**
+ * The whole hub, ready to listen. Tests start the same one.
+ * @param tls as PEM; with it the hub speaks HTTPS and nothing else
+ */
+export async function createApp(
+  config: HubConfig,
+  tls?: { key: string; cert: string },
+): Promise<NestExpressApplication> {
   const app = await NestFactory.create<NestExpressApplication>(AppModule.forRoot(config), {
+    httpsOptions: tls,
     bodyParser: false,
     abortOnError: false,
     forceCloseConnections: true,
@@ -31,6 +40,7 @@ export async function createApp(config: HubConfig): Promise<NestExpressApplicati
   });
   app.enableShutdownHooks();
   app.set('query parser', 'simple');
+  app.set('trust proxy', config.trustedProxies);
   app.disable('x-powered-by');
   app.use(
     helmet({
@@ -53,13 +63,14 @@ export async function createApp(config: HubConfig): Promise<NestExpressApplicati
           frameAncestors: ["'none'"],
         },
       },
-      // The hub itself speaks HTTP on a local network; whoever puts HTTPS in front of it also sends this header.
+      // Not for every name that leads here: see `strictTransport`.
       strictTransportSecurity: false,
       // Both need a secure context and only warn without one.
       crossOriginOpenerPolicy: false,
       originAgentCluster: false,
     }),
   );
+  app.use(strictTransport);
   // Answers of the API are of this moment and of this member: nothing in between keeps them.
   app.use('/api', (_: Request, response: Response, next: NextFunction) => {
     response.setHeader('Cache-Control', 'no-store');
@@ -69,6 +80,7 @@ export async function createApp(config: HubConfig): Promise<NestExpressApplicati
   app.use(json({ limit: USUAL_BODY }));
   app.use(cookieParser());
   app.setGlobalPrefix('api');
+  if (config.lan !== null) serveTrustCheck(app);
   if (config.tabletDist !== null) serveTablet(app, config.tabletDist);
   serveOpenApi(app);
   return app;

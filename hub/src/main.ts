@@ -1,8 +1,10 @@
 import 'reflect-metadata';
+import type { Server as HttpsServer } from 'node:https';
 import { readProcessEnvironment } from './config/environment.js';
 import { createApp } from './create-app.js';
 import { migrateDatabase } from './database/migrate.js';
 import { ensureDemo } from './demo/demo.js';
+import { Lan } from './trust/lan.js';
 
 /** One line a machine can read: what starts the hub waits for `hub.listening`, or tells the reason of `hub.failed`. */
 function say(event: string, facts: Record<string, unknown>): void {
@@ -24,15 +26,17 @@ async function start(): Promise<void> {
   const ran = await migrateDatabase(config.databaseUrl);
   if (ran.length > 0) say('hub.migrated', { migrations: ran });
   if (config.isDemo && (await ensureDemo(config.databaseUrl, Date.now())) === 'made') say('demo.made', {});
-  const app = await createApp(config);
+  const lan = config.lan && (await Lan.open(config.lan));
+  const app = await createApp(config, lan?.tls);
   try {
     await app.listen(config.port, config.host);
+    const server = app.getHttpServer() as HttpsServer;
+    const facts = lan ? { lan: await lan.attend(server, config.host, config.tabletDist) } : {};
+    say('hub.listening', { port: (server.address() as { port: number }).port, ...facts });
   } catch (error) {
     await app.close();
     throw error;
   }
-  const address = app.getHttpServer().address() as { port: number };
-  say('hub.listening', { port: address.port });
 }
 
 try {

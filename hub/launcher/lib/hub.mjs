@@ -2,6 +2,7 @@ import { spawn } from 'node:child_process';
 import { once } from 'node:events';
 import { readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { createServer } from 'node:net';
+import { networkInterfaces } from 'node:os';
 import { createInterface } from 'node:readline';
 import { LauncherError } from './launcher-error.mjs';
 import { endChild, endingWithParent, endProcess, isAlive, startMark } from './processes.mjs';
@@ -9,24 +10,45 @@ import { endChild, endingWithParent, endProcess, isAlive, startMark } from './pr
 /**
  * @typedef {object} Hub
  * @property {number} pid
+ * @property {LanFacts | null} lan
  * @property {() => Promise<void>} stop
  * @property {(heard: (how: string) => void) => void} onExit hears of an end that nobody asked for
  */
 
-const host = '127.0.0.1';
+/**
+ * @typedef {object} LanFacts What the hub says of its place in the network of the house; see `hub/src/trust/lan.ts`.
+ * @property {string[]} origins
+ * @property {string[]} guides
+ * @property {string} sha256
+ * @property {string} sha1
+ * @property {boolean} isNewAuthority
+ * @property {string[]} outside
+ */
+
+const ownMachine = '127.0.0.1';
 const stopGraceMs = 20_000;
+
+/** Every interface of the machine; the wider one takes IPv4 as well, and is not there on a machine that has only that. */
+export function everywhere() {
+  const hasIPv6 = Object.values(networkInterfaces()).some((addresses) =>
+    addresses?.some(({ family }) => family === 'IPv6'),
+  );
+  return hasIPv6 ? '::' : '0.0.0.0';
+}
 
 /**
  * Looks whether the port can be had before anything slow is begun.
  * @param {number} port
+ * @param {string} [host]
+ * @param {string} [option] by which another one is chosen
  */
-export async function checkPort(port) {
+export async function checkPort(port, host = ownMachine, option = '--port') {
   const listener = createServer();
   const outcome = await new Promise((/** @type {(code: string | null) => void} */ done) => {
     listener.once('error', (error) => done(/** @type {NodeJS.ErrnoException} */ (error).code ?? error.message));
     listener.listen(port, host, () => done(null));
   });
-  if (outcome !== null) throw portError(outcome, port);
+  if (outcome !== null) throw portError(outcome, port, option);
   listener.close();
   await once(listener, 'close');
 }
@@ -34,18 +56,17 @@ export async function checkPort(port) {
 /**
  * @param {string} code
  * @param {number} port
+ * @param {string} [option]
  */
-function portError(code, port) {
-  const other = port === 8080 ? 4680 : 8080;
+function portError(code, port, option = '--port') {
+  const other = `npm start -- ${option === '--port' ? '' : '--lan '}${option} ${port === 8080 ? 4680 : 8080}`;
   if (code === 'EADDRINUSE')
     return new LauncherError(
-      `Port ${port} is taken by another program; stop that one, or choose another port: npm start -- --port ${other}`,
+      `Port ${port} is taken by another program; stop that one, or choose another port: ${other}`,
     );
   if (code === 'EACCES')
-    return new LauncherError(
-      `This user may not open port ${port}; choose one above 1023: npm start -- --port ${other}`,
-    );
-  return new LauncherError(`Port ${port} cannot be opened (${code}); choose another: npm start -- --port ${other}`);
+    return new LauncherError(`This user may not open port ${port}; choose one above 1023: ${other}`);
+  return new LauncherError(`Port ${port} cannot be opened (${code}); choose another: ${other}`);
 }
 
 /**
@@ -55,9 +76,10 @@ function portError(code, port) {
  * @param {string} options.pidFile where the hub is remembered, for a start after a launcher that was killed
  * @param {NodeJS.ProcessEnv} options.env
  * @param {number} options.port
+ * @param {string} [options.host]
  * @returns {Promise<Hub>}
  */
-export async function startHub({ entry, pidFile, env, port }) {
+export async function startHub({ entry, pidFile, env, port, host = ownMachine }) {
   const child = spawn(...endingWithParent(process.execPath, ['--enable-source-maps', entry]), {
     env: { ...process.env, ...env, HOST: host, PORT: String(port) },
     stdio: ['ignore', 'pipe', 'inherit'],
@@ -72,13 +94,17 @@ export async function startHub({ entry, pidFile, env, port }) {
   };
   if (child.pid !== undefined)
     writeFileSync(pidFile, JSON.stringify({ pid: child.pid, startMark: startMark(child.pid) }), { mode: 0o600 });
+  /** @type {LanFacts | null} */
+  let lan = null;
   const failure = await new Promise((/** @type {(error: Error | null) => void} */ done) => {
     /** @type {LauncherError | null} */
     let told = null;
     createInterface({ input: child.stdout }).on('line', (line) => {
       const event = eventOf(line);
-      if (event?.event === 'hub.listening') done(null);
-      else if (event?.event === 'hub.failed') told = failureOf(event, port);
+      if (event?.event === 'hub.listening') {
+        lan = event.lan ?? null;
+        done(null);
+      } else if (event?.event === 'hub.failed') told = failureOf(event, port);
       else if (event === null) process.stdout.write(`${line}\n`);
     });
     child.once('error', done);
@@ -97,6 +123,7 @@ export async function startHub({ entry, pidFile, env, port }) {
   }
   return {
     pid: /** @type {number} */ (child.pid),
+    lan,
     stop,
     onExit: (heard) => {
       child.once('exit', (code, signal) => {
@@ -129,7 +156,7 @@ export async function stopLeftoverHub(pidFile, log) {
 /**
  * What the hub tells its launcher, one object a line; null for a line that is meant for people.
  * @param {string} line
- * @returns {{ event?: string, reason?: string, detail?: string } | null}
+ * @returns {{ event?: string, reason?: string, detail?: string, lan?: LanFacts } | null}
  */
 function eventOf(line) {
   if (!/^\{"event":"(hub|demo)\./.test(line)) return null;

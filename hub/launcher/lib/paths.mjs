@@ -6,6 +6,9 @@ export const root = resolve(import.meta.dirname, '../../..');
 /** Everything that is stored; git-ignored. Tests point it elsewhere. */
 export const dataDir = resolve(process.env['STEEPFALL_DATA_DIR'] ?? join(root, '.data'));
 
+/** The certificate authority of this machine, and what it has signed. */
+export const tlsFolder = join(dataDir, 'tls');
+
 /** Scratch files of tests; git-ignored. */
 export const testDataDir = join(root, '.test-data');
 

@@ -1,10 +1,11 @@
 import { ensureBuilt } from './build.mjs';
-import { checkPort, startHub, stopLeftoverHub } from './hub.mjs';
+import { checkPort, everywhere, startHub, stopLeftoverHub } from './hub.mjs';
 import { ensurePackages } from './install.mjs';
 import { LauncherError } from './launcher-error.mjs';
+import { lanWords } from './lan-words.mjs';
 import { ensureMariadbInstalled } from './mariadb.mjs';
 import { readStartOptions, startHelp } from './options.mjs';
-import { hubCli, hubEntry, isHubBuilt, tabletDist } from './paths.mjs';
+import { hubCli, hubEntry, isHubBuilt, tabletDist, tlsFolder } from './paths.mjs';
 import { run } from './processes.mjs';
 import { hubPidFile, startDatabaseOfProduct, takeDataFolder } from './product.mjs';
 import { Session } from './session.mjs';
@@ -30,11 +31,14 @@ export async function startProduct(args) {
  * @param {Session} session
  * @param {ReturnType<typeof readStartOptions>} options
  */
-async function start(session, { port, isDemo, isResetDemo }) {
+async function start(session, { port, guidePort, isDemo, isResetDemo }) {
   const { log, signal } = session;
+  const isLan = guidePort !== null;
+  const host = isLan ? everywhere() : undefined;
   session.keep(takeDataFolder(), (release) => release());
   await stopLeftoverHub(hubPidFile, log);
-  await checkPort(port);
+  await checkPort(port, host);
+  if (isLan) await checkPort(guidePort, host, '--guide-port');
   if (isHubBuilt) await ensurePackages(log, signal);
   signal.throwIfAborted();
   await ensureMariadbInstalled(log, signal);
@@ -47,6 +51,7 @@ async function start(session, { port, isDemo, isResetDemo }) {
     DEMO: isDemo ? 'on' : 'off',
     NODE_ENV: 'production',
     LOG_LEVEL: process.env['LOG_LEVEL'] ?? 'warn',
+    ...(isLan ? { TLS_FOLDER: tlsFolder, GUIDE_PORT: String(guidePort) } : {}),
   };
   signal.throwIfAborted();
   if (isResetDemo) {
@@ -57,7 +62,7 @@ async function start(session, { port, isDemo, isResetDemo }) {
   // Asked beside the start of the hub, which takes as long.
   const signIns = isDemo ? demoSignIns(env) : Promise.resolve('');
   signIns.catch(() => {});
-  const hub = session.keep(await startHub({ entry: hubEntry, pidFile: hubPidFile, env, port }), (started) =>
+  const hub = session.keep(await startHub({ entry: hubEntry, pidFile: hubPidFile, env, port, host }), (started) =>
     started.stop(),
   );
   hub.onExit((how) =>
@@ -65,10 +70,18 @@ async function start(session, { port, isDemo, isResetDemo }) {
       `The hub ended by itself (${how}), so Steepfall stops; what was confirmed is on disk. Start again; the reason is printed above.`,
     ),
   );
-  const printed = await signIns;
+  const printed = (await signIns) + (isLan && isDemo ? '\n' + demoOnLan : '');
   signal.throwIfAborted();
-  log(`\nSteepfall is ready: http://localhost:${port}\n${printed}\nCtrl-C stops it.`);
+  const address = process.env['PUBLIC_ORIGIN'] || `http://localhost:${port}`;
+  const place = hub.lan
+    ? await lanWords(hub.lan, port, tlsFolder)
+    : `Steepfall is ready: ${address}\nFor tablets in the kitchen: npm start -- --lan`;
+  log(`\n${place}\n${printed}\nCtrl-C stops it.`);
 }
+
+/** A house that was made once stays, whatever the later starts are told. */
+const demoOnLan =
+  'Everyone knows these passwords, and now the whole network can use them: for real brews start on a fresh data folder with --lan --no-demo.\n';
 
 /**
  * @param {string} command

@@ -1,3 +1,4 @@
+import { isIP } from 'node:net';
 import { z } from 'zod';
 
 const logLevels = ['fatal', 'error', 'warn', 'log', 'debug', 'verbose'] as const;
@@ -10,6 +11,36 @@ function isContact(contact: string): boolean {
   return /\.[a-z]{2,}$/i.test(host) && !/\.(local|localhost|invalid|test|example)$/i.test(host);
 }
 
+const proxyWords =
+  'Give "on" for one proxy, the number of proxies, or their addresses and networks with commas between, such as 10.0.0.5, 10.1.0.0/16.';
+
+function isNetwork(text: string): boolean {
+  const [address = '', bits, ...more] = text.split('/');
+  const family = isIP(address);
+  if (family === 0 || more.length > 0) return false;
+  return bits === undefined || (/^\d{1,3}$/.test(bits) && Number(bits) <= (family === 4 ? 32 : 128));
+}
+
+/** How far the hub believes what a request says about where it comes from: not at all, through so many proxies, or from these. */
+export type TrustedProxies = false | number | string[];
+
+const trustedProxiesSchema = z.string().transform((text, context): TrustedProxies => {
+  const given = text.trim();
+  if (given === '' || given === 'off') return false;
+  if (given === 'on') return 1;
+  if (/^[1-9]$/.test(given)) return Number(given);
+  const networks = given.split(',').map((part) => part.trim());
+  if (networks.every(isNetwork)) return networks;
+  context.addIssue({ code: 'custom', message: proxyWords });
+  return z.NEVER;
+});
+
+/** Scheme, host and port, as browsers write them. */
+const originSchema = z
+  .url({ protocol: /^https?$/, error: 'Give it as https://name or https://name:port.' })
+  .refine((text) => new URL(text).href === `${new URL(text).origin}/`, 'Give the address without a path.')
+  .transform((text) => new URL(text).origin);
+
 /** Everything the hub reads from its environment. A wrong value stops the start, with every mistake named. */
 export const environmentSchema = z.object({
   NODE_ENV: z.enum(['production', 'development', 'test']).default('production'),
@@ -20,6 +51,14 @@ export const environmentSchema = z.object({
   }),
   HOST: z.string().min(1).default('127.0.0.1'),
   PORT: z.coerce.number().int().min(0).max(65_535).default(4680),
+  /** Folder of the certificates for HTTPS on the network of the house; left out, the hub speaks plain HTTP. */
+  TLS_FOLDER: z.string().min(1).optional(),
+  /** Port of the page that helps tablets to trust them. */
+  GUIDE_PORT: z.coerce.number().int().min(0).max(65_535).default(4644),
+  /** Proxies in front of the hub whose word about the client counts; left out, nobody's does. */
+  TRUST_PROXY: trustedProxiesSchema.default(false),
+  /** Where people find the hub when something stands in front of it; left out, it looks at its own addresses. */
+  PUBLIC_ORIGIN: originSchema.optional(),
   JWT_SECRET: z.string().min(32, 'Use at least 32 characters.'),
   /** Folder of the built tablet; left out, the hub serves the API only. */
   TABLET_DIST: z.string().min(1).optional(),
@@ -45,6 +84,10 @@ export class HubConfig {
   readonly databaseUrl: string;
   readonly host: string;
   readonly port: number;
+  /** HTTPS on the network of the house. */
+  readonly lan: { folder: string; guidePort: number } | null;
+  readonly trustedProxies: TrustedProxies;
+  readonly publicOrigin: string | null;
   readonly jwtSecret: string;
   readonly tabletDist: string | null;
   readonly isDemo: boolean;
@@ -58,6 +101,10 @@ export class HubConfig {
     this.databaseUrl = environment.DATABASE_URL;
     this.host = environment.HOST;
     this.port = environment.PORT;
+    const { TLS_FOLDER: folder, GUIDE_PORT: guidePort } = environment;
+    this.lan = folder === undefined ? null : { folder, guidePort };
+    this.trustedProxies = environment.TRUST_PROXY;
+    this.publicOrigin = environment.PUBLIC_ORIGIN ?? null;
     this.jwtSecret = environment.JWT_SECRET;
     this.tabletDist = environment.TABLET_DIST ?? null;
     this.isDemo = environment.DEMO === 'on';

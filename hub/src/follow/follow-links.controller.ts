@@ -28,10 +28,11 @@ export class FollowLinksController {
   @Requires('runs:act')
   @Answers(followLinksSchema)
   async list(@Actor() actor: Actor, @Param('id', { schema: idSchema }) runId: string): Promise<FollowLinks> {
-    const { host, port } = this.config;
+    const { host, port, lan, publicOrigin } = this.config;
+    const scheme = lan ? 'https' : 'http';
     return {
       links: await this.links.list(actor.houseId, runId),
-      origins: lanOrigins(host, port, networkInterfaces()),
+      origins: publicOrigin ? [publicOrigin] : lanOrigins({ scheme, host, port }, networkInterfaces()),
     };
   }
 

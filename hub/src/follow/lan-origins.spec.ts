@@ -11,11 +11,16 @@ const interfaces = {
 
 describe(lanOrigins, () => {
   it('knows none for a hub that keeps to its own machine', () => {
-    for (const host of ['127.0.0.1', 'localhost', '::1']) expect(lanOrigins(host, 4680, interfaces)).toEqual([]);
+    for (const host of ['127.0.0.1', 'localhost', '::1'])
+      expect(lanOrigins({ scheme: 'http', host, port: 4680 }, interfaces)).toEqual([]);
   });
 
   it('names every address of a hub that listens everywhere, and the one of a hub that listens on one', () => {
-    expect(lanOrigins('0.0.0.0', 4680, interfaces)).toEqual(['http://192.168.1.20:4680']);
-    expect(lanOrigins('192.168.1.20', 80, interfaces)).toEqual(['http://192.168.1.20:80']);
+    expect(lanOrigins({ scheme: 'https', host: '0.0.0.0', port: 4680 }, interfaces)).toEqual([
+      'https://192.168.1.20:4680',
+    ]);
+    expect(lanOrigins({ scheme: 'http', host: '192.168.1.20', port: 80 }, interfaces)).toEqual([
+      'http://192.168.1.20:80',
+    ]);
   });
 });
