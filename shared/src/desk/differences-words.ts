@@ -105,3 +105,13 @@ function outTexts(condition: AdditionOut, { temp, duration }: Quantities): Texts
       return ['at the transfer'];
   }
 }
+
+/** The first way of saying the two that tells them apart. */
+export function apart(from: Texts, to: Texts): [string, string] {
+  const at = (texts: Texts, level: number) => texts[Math.min(level, texts.length - 1)] ?? '';
+  const levels = Math.max(from.length, to.length);
+  for (let level = 0; level < levels; level += 1) {
+    if (at(from, level) !== at(to, level)) return [at(from, level), at(to, level)];
+  }
+  return [at(from, levels), at(to, levels)];
+}

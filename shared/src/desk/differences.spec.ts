@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import type { RecipeDocument } from '../sheets/index.js';
+import { compileSheet, type OwnStep, type RecipeDocument } from '../sheets/index.js';
 import { buildDocument, buildHops, buildTea } from '../testing/index.js';
 import { recipeDocuments, revisedDocuments } from '../testing/recipe-arbitraries.js';
 import { metricPreferences } from '../units/index.js';
@@ -99,8 +99,35 @@ describe(revisionDifferences, () => {
       'Let it rest added: after tea out',
       'order of the steps as it follows from the recipe → fill, acid, salts, ph',
     ]);
-    const swapped = { ...after, steps: { ...after.steps, order: ['fill', 'salts', 'acid', 'ph'] } };
-    expect(wordsOf(swapped, after)).toEqual(['order of the steps acid, salts → salts, acid']);
+  });
+
+  it('says of a step that was moved what it follows now, and of nothing else', () => {
+    const rest: OwnStep = { id: 'rest', title: 'Rinse the hoses', afterStepId: 'fill', done: { by: 'hand' } };
+    const ordered = (order?: string[]) => buildDocument({ steps: { own: [rest], order } });
+    const usual = compileSheet(ordered(), { altitudeM: 0, reachS: 10 }).steps.map(({ id }) => id);
+    const to = (id: string, afterId: string) => {
+      const others = usual.filter((one) => one !== id);
+      others.splice(others.indexOf(afterId) + 1, 0, id);
+      return others;
+    };
+    expect(wordsOf(ordered(to('rest', 'light-heat')), ordered())).toEqual([
+      'Rinse the hoses after Fill the kettle → after Light the heat',
+    ]);
+    expect(wordsOf(ordered(), ordered(to('rest', 'light-heat')))).toEqual([
+      'Rinse the hoses after Light the heat → after Fill the kettle',
+    ]);
+    // Written down as it was anyway: the sheet is the same, the document is not.
+    expect(wordsOf(ordered(usual), ordered())).toHaveLength(1);
+  });
+
+  it('says once what was moved together', () => {
+    const { steps } = compileSheet(buildDocument(), { altitudeM: 0, reachS: 10 });
+    const ids = steps.map(({ id }) => id);
+    const order = [...ids.slice(2), ...ids.slice(0, 2)];
+    const last = steps.at(-1)?.title ?? '';
+    expect(wordsOf(buildDocument({ steps: { own: [], order } }), buildDocument())).toEqual([
+      `Check the kit, Fill the kettle at the head → after ${last}`,
+    ]);
   });
 
   it('shows a difference that rounding would hide', () => {

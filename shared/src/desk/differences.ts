@@ -1,25 +1,13 @@
 import type { Addition, OwnStep, RecipeDocument, WaterPart } from '../sheets/index.js';
 import { NO_BREAK_SPACE, type UnitPreferences } from '../units/index.js';
+import type { Change, Difference } from './difference.js';
 import { additionFacts, documentFacts, ownStepFacts, waterFacts, type Fact, type Place } from './differences-facts.js';
 import { labelsOf, matchLists, type Alike } from './differences-match.js';
-import { inWords, wordsIn, type Texts, type Words } from './differences-words.js';
+import { orderChanges } from './differences-order.js';
+import { apart, inWords, wordsIn, type Texts, type Words } from './differences-words.js';
 import { canonical, isSame } from './same-value.js';
 
-/** One thing that is not the same in two documents, in a person's words and units. */
-export interface Difference {
-  /** In the later document, as a form names it: 'additions.2.massG'; of what is gone, in the earlier one. */
-  path: string;
-  what: string;
-  /** Null: it was not there. */
-  from: string | null;
-  /** Null: it is gone. */
-  to: string | null;
-}
-
-/** A difference with the stable name of what it is about. */
-export interface Change extends Difference {
-  key: string;
-}
+export type { Change, Difference } from './difference.js';
 
 /**
  * Everything that differs between two documents, in the order of the recipe: the drink, what goes in, the waters, the steps. Additions
@@ -47,7 +35,7 @@ export function changesOf(before: RecipeDocument, after: RecipeDocument, units: 
       ...ownStepsAlike,
       facts: (step, at) => ownStepFacts(step, at, say),
     }),
-    ...orderChanges(before.steps, after.steps),
+    ...orderChanges(before, after),
   ];
 }
 
@@ -69,16 +57,6 @@ function changeOf({ key, path, what, absent }: Fact, from?: Fact, to?: Fact): Ch
   ];
   const [fromText, toText] = apart(textsOf(from), textsOf(to));
   return { key, path, what: (isBrief ? to?.brief?.what : undefined) ?? what, from: fromText, to: toText };
-}
-
-/** The first way of saying the two that tells them apart. */
-function apart(from: Texts, to: Texts): [string, string] {
-  const at = (texts: Texts, level: number) => texts[Math.min(level, texts.length - 1)] ?? '';
-  const levels = Math.max(from.length, to.length);
-  for (let level = 0; level < levels; level += 1) {
-    if (at(from, level) !== at(to, level)) return [at(from, level), at(to, level)];
-  }
-  return [at(from, levels), at(to, levels)];
 }
 
 interface ListOf<T> extends Alike<T> {
@@ -171,31 +149,6 @@ function additionChanges(before: RecipeDocument, after: RecipeDocument, say: Wor
       additionFacts(addition, place, { say, waterL: isWaterSame ? null : waterL }),
     whole: say.addition,
   });
-}
-
-/** The order of the steps: only the stretch that is not the same. */
-function orderChanges(before: RecipeDocument['steps'], after: RecipeDocument['steps']): Change[] {
-  if (isSame(before.order, after.order)) return [];
-  const [from, to] = stretch(before.order ?? [], after.order ?? []);
-  const titles = new Map([...before.own, ...after.own].map(({ id, title }) => [id, title]));
-  const texts = (order: readonly string[] | undefined, part: readonly string[]): Texts => [
-    order ? part.map((id) => titles.get(id) ?? inWords(id)).join(', ') || 'nothing' : 'as it follows from the recipe',
-    order ? part.join(', ') : 'as it follows from the recipe',
-    canonical(order),
-  ];
-  const [fromText, toText] = apart(texts(before.order, from), texts(after.order, to));
-  const path = 'steps.order';
-  return [{ key: path, path, what: 'order of the steps', from: fromText, to: toText }];
-}
-
-/** Two lists without the head and the tail that they share. */
-function stretch<T>(one: readonly T[], other: readonly T[]): [T[], T[]] {
-  const shorter = Math.min(one.length, other.length);
-  let head = 0;
-  while (head < shorter && one[head] === other[head]) head += 1;
-  let tail = 0;
-  while (tail < shorter - head && one.at(-1 - tail) === other.at(-1 - tail)) tail += 1;
-  return [one.slice(head, one.length - tail), other.slice(head, other.length - tail)];
 }
 
 /** Conditions that all hops, or all teas, share are said once: "hops in 62 → 60 °C". */

@@ -16,7 +16,7 @@ const coldSteps = { salt: 'salts', acid: 'acid', tea: 'tea-cold', hops: 'hops-co
  * same steps. A sheet that was edited by hand may have lost such a step.
  */
 export function additionSteps(document: RecipeDocument): ReadonlyMap<string, AdditionSteps> {
-  const name = namer();
+  const names = { name: namer(), several: new Set<string>() };
   const ins = new Map<string, string>();
   const outs = new Map<string, string>();
   const note = (steps: Map<string, string>, additions: readonly Addition[], stepId: string) => {
@@ -29,8 +29,8 @@ export function additionSteps(document: RecipeDocument): ReadonlyMap<string, Add
     if ('out' in addition && addition.out.at === 'timer') note(outs, [addition], 'keg-out');
   }
   for (const [kind, additions] of namedEvents(document)) {
-    if (kind === 'in') note(ins, additions, inStep(additions, name).id);
-    else note(outs, additions, outStep(additions, name).id);
+    if (kind === 'in') note(ins, additions, inStep(additions, names).id);
+    else note(outs, additions, outStep(additions, names).id);
   }
   return new Map([...ins].map(([id, inStepId]) => [id, { inStepId, outStepId: outs.get(id) ?? null }]));
 }

@@ -85,7 +85,7 @@ function coldOuts(document: RecipeDocument, name: Namer): StepDraft[] {
   return timedFromFill(document).flatMap(({ afterS, additions }) => {
     const stand = standStep(name('cold-stand'), afterS - atS);
     atS = afterS;
-    return [stand, outStep(additions, name)];
+    return [stand, outStep(additions, { name, several: new Set() })];
   });
 }
 

@@ -1,4 +1,4 @@
-import { inStep, outStep, standStep } from './compile-event.js';
+import { inStep, outStep, severalOf, standStep, type DayNames } from './compile-event.js';
 import { isInBag, type Namer } from './compile-words.js';
 import { dayOrder, isColdSteep, type ClockEvent, type FallEvent } from './day-order.js';
 import type { RecipeDocument } from './recipe.js';
@@ -8,9 +8,10 @@ import type { VesselAct } from './step.js';
 /** From the steep temperature to the keg: what goes in and comes out, by clock first, then by the falling temperature. */
 export function theDay(document: RecipeDocument, name: Namer): StepDraft[] {
   const { byClock, byFall } = dayOrder(document);
-  const steeps = steeping(document, byClock, name);
-  if (isColdSteep(document)) return [...steeps, ...byFall.flatMap((event) => fallSteps(event, name))].map(cold);
-  return [...steeps, chill(byClock.length === 0), ...byFall.flatMap((event) => caughtSteps(event, name))];
+  const names = { name, several: severalOf(document) };
+  const steeps = steeping(document, byClock, names);
+  if (isColdSteep(document)) return [...steeps, ...byFall.flatMap((event) => fallSteps(event, names))].map(cold);
+  return [...steeps, chill(byClock.length === 0), ...byFall.flatMap((event) => caughtSteps(event, names))];
 }
 
 /** What is not hot does not scald. */
@@ -18,16 +19,16 @@ function cold(step: StepDraft): StepDraft {
   return { ...step, cautions: step.cautions?.filter((caution) => caution !== 'scald') };
 }
 
-function steeping(document: RecipeDocument, events: readonly ClockEvent[], name: Namer): StepDraft[] {
+function steeping(document: RecipeDocument, events: readonly ClockEvent[], names: DayNames): StepDraft[] {
   const isCold = isColdSteep(document);
   let atS = 0;
   return events.flatMap((event, index) => {
     const waitS = event.atS - atS;
     atS = event.atS;
     const isFirst = index === 0;
-    const step = event.kind === 'in' ? inStep(event.additions, name) : outStep(event.additions, name);
+    const step = event.kind === 'in' ? inStep(event.additions, names) : outStep(event.additions, names);
     return [
-      ...(waitS > 0 ? [isFirst && !isCold ? holdStep(name, waitS) : steepStep(document, name, waitS)] : []),
+      ...(waitS > 0 ? [isFirst && !isCold ? holdStep(names.name, waitS) : steepStep(document, names.name, waitS)] : []),
       isFirst && !isCold ? withHeatOff(step, event) : step,
     ];
   });
@@ -73,22 +74,22 @@ function chill(isHeatStillOn: boolean): StepDraft {
 }
 
 /** What goes in or comes out, and what of it comes out again by the clock. */
-function fallSteps({ kind, additions, outs }: FallEvent, name: Namer): [StepDraft, ...StepDraft[]] {
-  if (kind === 'out') return [outStep(additions, name)];
+function fallSteps({ kind, additions, outs }: FallEvent, names: DayNames): [StepDraft, ...StepDraft[]] {
+  if (kind === 'out') return [outStep(additions, names)];
   let atS = 0;
   return [
-    inStep(additions, name),
+    inStep(additions, names),
     ...outs.flatMap(({ afterS, additions: done }) => {
       const waitS = afterS - atS;
       atS = afterS;
-      return [...(waitS > 0 ? [standStep(name('contact'), waitS)] : []), outStep(done, name)];
+      return [...(waitS > 0 ? [standStep(names.name('contact'), waitS)] : []), outStep(done, names)];
     }),
   ];
 }
 
 /** The same, called for by the falling temperature. Leaf and hops are caught; a dose can wait for its hand. */
-function caughtSteps(event: FallEvent, name: Namer): StepDraft[] {
-  const [first, ...rest] = fallSteps(event, name);
+function caughtSteps(event: FallEvent, names: DayNames): StepDraft[] {
+  const [first, ...rest] = fallSteps(event, names);
   return [
     {
       ...first,

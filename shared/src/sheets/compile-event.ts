@@ -1,5 +1,6 @@
-import { isInBag, amountsOf, clipped, namesOf, titleOf, type Namer } from './compile-words.js';
-import type { Addition, IngredientKind } from './recipe.js';
+import { amountsOf, chargeTitle, clipped, isInBag, namesOf, type Namer } from './compile-words.js';
+import type { Addition, IngredientKind, RecipeDocument } from './recipe.js';
+import { dayOrder, type DayEvent } from './day-order.js';
 import type { StepDraft } from './step-order.js';
 import type { VesselAct } from './step.js';
 
@@ -12,6 +13,25 @@ function kindsOf(additions: readonly Addition[]): IngredientKind[] {
   return [...new Set(additions.map(({ kind }) => kind))];
 }
 
+const stemOfEvent = (way: DayEvent['kind'], additions: readonly Addition[]) => `${stemOf(kindsOf(additions))}-${way}`;
+
+/** What goes in, or comes out, at more than one moment of the day: "hops-in". A step of it is titled by name. */
+export function severalOf(document: RecipeDocument): ReadonlySet<string> {
+  const { byClock, byFall } = dayOrder(document);
+  const stems = [
+    ...byClock,
+    ...byFall,
+    ...byFall.flatMap(({ outs }) => outs.map((out) => ({ ...out, kind: 'out' as const }))),
+  ].map(({ kind, additions }) => stemOfEvent(kind, additions));
+  return new Set(stems.filter((stem, index) => stems.indexOf(stem) !== index));
+}
+
+/** What names the steps of a day. */
+export interface DayNames {
+  name: Namer;
+  several: ReadonlySet<string>;
+}
+
 function actsOf(kinds: readonly IngredientKind[], way: 'in' | 'out'): VesselAct[] {
   return kinds.flatMap((kind): VesselAct[] => (kind === 'tea' || kind === 'hops' ? [`${kind}-${way}`] : []));
 }
@@ -22,13 +42,14 @@ const whileHopsStand = [
 ];
 
 /** What goes into the hot liquid together. */
-export function inStep(additions: readonly Addition[], name: Namer): StepDraft {
+export function inStep(additions: readonly Addition[], { name, several }: DayNames): StepDraft {
   const kinds = kindsOf(additions);
-  const id = name(`${stemOf(kinds)}-in`);
+  const stem = stemOfEvent('in', additions);
+  const id = name(stem);
   return {
     id,
     kind: additions.some(isInBag) ? 'add' : 'dose',
-    title: `${titleOf(kinds)} in`,
+    title: `${chargeTitle(additions, several.has(stem))} in`,
     amounts: amountsOf(additions),
     acts: actsOf(kinds, 'in'),
     cautions: kinds.includes('acid') ? ['scald', 'acid'] : ['scald'],
@@ -37,15 +58,15 @@ export function inStep(additions: readonly Addition[], name: Namer): StepDraft {
 }
 
 /** What comes out together; named where it is not all that there is of its kind. */
-export function outStep(additions: readonly Addition[], name: Namer): StepDraft {
+export function outStep(additions: readonly Addition[], { name, several }: DayNames): StepDraft {
   const kinds = kindsOf(additions);
-  const stem = `${stemOf(kinds)}-out`;
+  const stem = stemOfEvent('out', additions);
   const id = name(stem);
   const names = additions.length > 1 || id !== stem ? `${clipped(namesOf(additions))}. ` : '';
   return {
     id,
     kind: 'remove',
-    title: `${titleOf(kinds)} out`,
+    title: `${chargeTitle(additions, several.has(stem))} out`,
     detail: `${names}Lift, let it drain, do not squeeze.`,
     acts: actsOf(kinds, 'out'),
     cautions: kinds.includes('hops') ? ['scald', 'dogs'] : ['scald'],

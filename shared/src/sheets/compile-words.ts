@@ -35,6 +35,16 @@ export function titleOf(kinds: readonly IngredientKind[]): string {
   return kinds.map((kind, index) => (index === 0 ? kindTitle[kind] : kindTitle[kind].toLowerCase())).join(' and ');
 }
 
+/** Longer names stand with the amounts; a title is read from two metres. */
+const MOST_TITLE_NAMES = 32;
+
+/** The same, or by name, "Saaz", where the day has more than one charge of the kind. */
+export function chargeTitle(additions: readonly Addition[], isOneOfSeveral: boolean): string {
+  const kinds = [...new Set(additions.map(({ kind }) => kind))];
+  const names = [...new Set(additions.map(({ name }) => name))].join(' and ');
+  return isOneOfSeveral && names.length <= MOST_TITLE_NAMES ? names : titleOf(kinds);
+}
+
 /** "60 % Reverse-osmosis water, 40 % Tap water". */
 export function watersInWords({ waters }: RecipeDocument): string {
   const [only, ...rest] = waters.filter(({ percent }) => percent > 0);

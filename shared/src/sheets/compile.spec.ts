@@ -101,6 +101,22 @@ describe(compileSheet, () => {
     ]);
   });
 
+  it('calls each charge by its name where there are several', () => {
+    const charges = [
+      buildHops({ name: 'Saaz' }),
+      buildHops({ id: 'two', name: 'Cascade', in: { at: 'falling', tempC: 50 } }),
+      buildHops({ id: 'three', name: 'Hallertau', in: { at: 'falling', tempC: 50 } }),
+    ];
+    const titled = (additions: RecipeDocument['additions']) =>
+      compileSheet(buildDocument({ additions }), kit)
+        .steps.filter(({ id }) => /^(hops|tea)-/.test(id))
+        .map(({ title }) => title);
+    expect(titled(charges)).toEqual(['Saaz in', 'Cascade and Hallertau in', 'Hops out']);
+    expect(titled([buildTea(), ...charges.slice(0, 1)])).toEqual(['Tea in', 'Tea out', 'Hops in', 'Hops out']);
+    const long = charges.map((one) => ({ ...one, name: one.name.repeat(9) }));
+    expect(titled(long)).toEqual(['Hops in', 'Hops in', 'Hops out']);
+  });
+
   it('catches hops in charges, with times and levels of their own', () => {
     const lines = linesOf([
       buildHops({ in: { at: 'falling', tempC: 62 }, out: { at: 'timer', durationS: 600 } }),

@@ -3,7 +3,7 @@ import { beforeTheHeat, theHeat } from './compile-before.js';
 import { theDay } from './compile-day.js';
 import { namer } from './compile-words.js';
 import type { RecipeDocument } from './recipe.js';
-import { inStepOrder } from './step-order.js';
+import { inStepOrder, type StepDraft } from './step-order.js';
 import { runSheetSchema, type RunSheet } from './step.js';
 
 /** What the sheet needs to know of the kit it is brewed on. */
@@ -22,18 +22,27 @@ export interface SheetKit {
  * @throws RangeError when no pressure gives the gas that is asked for; nothing else of a document keeps it from its sheet.
  */
 export function compileSheet(document: RecipeDocument, kit: SheetKit): RunSheet {
-  const name = namer();
-  const drafts = [
-    ...beforeTheHeat(document, name),
-    ...theHeat(document),
-    ...theDay(document, name),
-    ...afterTheDay(document, kit.altitudeM),
-  ];
-  const steps = inStepOrder(drafts, document.steps).map((draft) => ({
+  const steps = draftSteps(document, kit.altitudeM).map((draft) => ({
     start: { by: 'hand' },
     done: { by: 'hand' },
     reachS: kit.reachS,
     ...draft,
   }));
   return runSheetSchema.parse({ steps, volumeL: document.volumeL });
+}
+
+/**
+ * The same steps in their order, unchecked and without their defaults: to compare what two documents would ask for.
+ *
+ * @throws RangeError as `compileSheet`.
+ */
+export function draftSteps(document: RecipeDocument, altitudeM: number): StepDraft[] {
+  const name = namer();
+  const drafts = [
+    ...beforeTheHeat(document, name),
+    ...theHeat(document),
+    ...theDay(document, name),
+    ...afterTheDay(document, altitudeM),
+  ];
+  return inStepOrder(drafts, document.steps);
 }

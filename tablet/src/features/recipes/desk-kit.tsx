@@ -6,15 +6,14 @@ import { Disclosure, DisclosureButton, DisclosurePanel } from '@headlessui/react
 import { SelectField } from '#components/field.tsx';
 import { equipmentQuery } from '#lib/hub-queries.ts';
 import { useKnown } from '#lib/session.ts';
-import { useStored, ValueStore } from '#lib/value-store.ts';
+import { useStored } from '#lib/value-store.ts';
 import { Chevron } from './chevron.tsx';
+import { chooseKit, chosenKit } from './chosen-kit.ts';
 import { SmallLabel } from './number-field.tsx';
 
 type Kettle = Extract<Equipment, { kind: 'kettle' }>;
 type Chiller = Extract<Equipment, { kind: 'chiller' }>;
 
-/** What this station looked at last, so that the next recipe opens on the same kit. `null`: the usual one on purpose. */
-const chosen = new ValueStore<{ kettleId?: string | null; chillerId?: string | null }>({});
 const none: Equipment[] = [];
 
 interface KitChoice {
@@ -31,7 +30,7 @@ interface KitChoice {
 /** The kit that the figures are worked out on: what was chosen, or the first of each kind. */
 export function useDeskKit(): KitChoice {
   const { house } = useKnown();
-  const choice = useStored(chosen);
+  const choice = useStored(chosenKit);
   const { data = none, isLoading, failureCount } = useQuery(equipmentQuery);
   const isAwaited = isLoading && failureCount === 0;
   return useMemo(() => {
@@ -76,7 +75,7 @@ export function KitChooser() {
         <SelectField
           label={<SmallLabel>Kettle</SmallLabel>}
           value={kettleId}
-          onChange={({ target }) => chosen.set({ ...chosen.get(), kettleId: target.value || null })}
+          onChange={({ target }) => chooseKit({ kettleId: target.value || null })}
         >
           {kettles.map(({ id, name }) => (
             <option key={id} value={id}>
@@ -88,7 +87,7 @@ export function KitChooser() {
         <SelectField
           label={<SmallLabel>Chiller</SmallLabel>}
           value={chillerId}
-          onChange={({ target }) => chosen.set({ ...chosen.get(), chillerId: target.value || null })}
+          onChange={({ target }) => chooseKit({ chillerId: target.value || null })}
         >
           {chillers.map(({ id, name }) => (
             <option key={id} value={id}>

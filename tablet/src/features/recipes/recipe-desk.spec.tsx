@@ -224,6 +224,15 @@ describe('somebody saved meanwhile', () => {
     expect(hub.revisions).toHaveLength(2);
   });
 
+  it('does not take its own revision, whose answer was lost, for that of another', async () => {
+    openDesk();
+    await field('Amount of Cascade');
+    hub.save({ ...hub.newest.document, additions: [buildTea({ massG: 90 }), buildHops({ massG: 48 })] }, '', 'Brewer');
+    await saveWith('48');
+    expect(await screen.findByText('the page of the recipe')).toBeTruthy();
+    expect(hub.revisions).toHaveLength(2);
+  });
+
   it('goes on editing with nothing lost', async () => {
     openDesk();
     await field('Amount of Cascade');

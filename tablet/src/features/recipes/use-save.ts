@@ -57,13 +57,17 @@ export function useSave({ recipe, base, onSaved, onRefused }: SaveOptions) {
     onSaved(saved);
   };
 
-  /** Somebody was faster: what they saved is fetched, so that there is something to choose between. */
-  const meet = async (error: unknown, { form, note }: Wanted): Promise<null> => {
+  /**
+   * Somebody was faster: what they saved is fetched, so that there is something to choose between. When it is the same, it was most
+   * likely this desk, whose answer was lost or whose new name was refused: then only the name is left to do.
+   */
+  const meet = async (error: unknown, { form, note }: Wanted, sent = form.document): Promise<Recipe | null> => {
     const isChanged = error instanceof HubProblemError && error.type === 'changed-meanwhile';
     if (!isChanged || !recipe || !base) throw error;
     const fresh = await client.fetchQuery({ ...recipeQuery(recipe.id), staleTime: 0 });
     const theirs = fresh.revisions.toSorted((a, b) => b.number - a.number)[0];
     if (!theirs || theirs.id === base.id) throw error;
+    if (isSameJson(theirs.document, sent)) return rename(fresh, form);
     setConflict({ base, theirs, mine: form.document, note, form });
     return null;
   };
@@ -76,7 +80,7 @@ export function useSave({ recipe, base, onSaved, onRefused }: SaveOptions) {
         const saved = isSame ? recipe : await addRevision(recipe.id, base.id, wanted.form.document, wanted.note);
         return await rename(saved, wanted.form);
       } catch (error) {
-        return meet(error, wanted);
+        return await meet(error, wanted);
       }
     },
     onSuccess: (saved) => saved && done(saved),
@@ -95,7 +99,7 @@ export function useSave({ recipe, base, onSaved, onRefused }: SaveOptions) {
       try {
         return await rename(await addRevision(recipe.id, theirs.id, document, words), form);
       } catch (error) {
-        return meet(error, { form, note });
+        return await meet(error, { form, note }, document);
       }
     },
     onSuccess: (saved) => saved && done(saved),
