@@ -10,6 +10,7 @@ import {
   probeSchema,
   recipeSchema,
   recipeSummarySchema,
+  runLearnedSchema,
   runReadingsSchema,
   runSummarySchema,
   type RunReadingsQuery,
@@ -48,6 +49,12 @@ export const membersQuery = queryOptions({
 export const equipmentQuery = queryOptions({
   queryKey: ['equipment'],
   queryFn: ({ signal }) => callHubFor(z.array(equipmentSchema), 'equipment', { signal }),
+});
+
+/** What was removed from the house, and can come back. */
+export const removedEquipmentQuery = queryOptions({
+  queryKey: ['equipment', 'removed'],
+  queryFn: ({ signal }) => callHubFor(z.array(equipmentSchema), 'equipment', { signal, query: { removed: 'true' } }),
 });
 
 export const probesQuery = queryOptions({
@@ -145,6 +152,14 @@ export function runLogQuery(runId: string) {
       const { events } = await callHubFor(logSchema, `runs/${runId}/events`, { signal });
       return events;
     },
+  });
+}
+
+/** What a run that is over teaches; it stays the same, save what its people are told by now. */
+export function runLearnedQuery(runId: string) {
+  return queryOptions({
+    queryKey: ['runs', runId, 'learned'],
+    queryFn: ({ signal }) => callHubFor(runLearnedSchema, `runs/${runId}/learned`, { signal }),
   });
 }
 

@@ -88,6 +88,8 @@ export class FakeHub {
       probeLagS: 6,
       probeResolutionC: 0.0625,
       probeSamplePeriodS: 1,
+      probeLagErrorRatio: null,
+      chillerPerS: null,
       roomC: 21,
       coolantC: 12,
       startedAtMs: state.startedAtMs ?? 0,

@@ -71,7 +71,7 @@ export function BatchPage({ startRun }: BatchPageProps) {
       {run ? (
         <div className="grid gap-12 print:hidden">
           {may('runs:read') ? (
-            <RunRecord run={run} />
+            <RunRecord run={run} kit={batch.data} />
           ) : (
             <p className="max-w-prose text-lead text-soft">How the day went is shown to those who brew.</p>
           )}

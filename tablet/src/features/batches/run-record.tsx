@@ -14,6 +14,8 @@ import { useUnits } from '#lib/units.ts';
 import { clockTime, failureWords } from '#lib/words.ts';
 import { Account } from './account.tsx';
 import { FiguresAccount } from './figures-account.tsx';
+import { Learned } from './learned.tsx';
+import type { BatchKit } from './learned-save.ts';
 import { LineTable } from './line-table.tsx';
 import { flagsOf, inOrder, levelsOf, windowsOf, type Span, type Window } from './record-view.ts';
 import { summaryOf } from './run-account.ts';
@@ -27,7 +29,7 @@ const noEntries: StoredEntry[] = [];
 const noMembers: Member[] = [];
 
 /** A run to look at afterwards: its line, what was planned and what came, its alerts, its log. */
-export function RunRecord({ run }: { run: RunSummary }) {
+export function RunRecord({ run, kit = null }: { run: RunSummary; kit?: BatchKit | null }) {
   const may = useMay();
   const isOver = run.status === 'ended';
   const refetchInterval = isOver ? (false as const) : 10_000;
@@ -50,6 +52,7 @@ export function RunRecord({ run }: { run: RunSummary }) {
       <FiguresAccount run={run} state={state} />
       <Account state={state} members={members.data ?? noMembers} />
       <RunAlerts log={entries} state={state} />
+      <Learned run={run} kit={kit} />
       <Section id="log" title="The log">
         <RunLog log={entries} state={state} flags={flagsOf(state)} members={members.data ?? noMembers} />
       </Section>
