@@ -198,7 +198,7 @@ describe('a sheet that is worked from afar', () => {
     ]);
     expect(await page.locator('.chip[data-name="wave"]').count()).toBe(0);
     await page.goto(`${product.url}/about`);
-    await page.getByRole('radiogroup', { name: 'Wave for done' }).getByRole('radio', { name: 'On' }).click();
+    await page.getByRole('radio', { name: 'On', exact: true }).first().click();
     await page.goto(`${product.url}${rehearsal.path}`);
     await page.locator('.chip[data-name="wave"]', { hasText: 'looking' }).waitFor();
     await page.waitForTimeout(9_000);

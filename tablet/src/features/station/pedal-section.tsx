@@ -54,13 +54,13 @@ export function PedalSection() {
         A page-turner pedal or a clicker does the run sheet’s “done” and “back one”. Most work as they are; one that
         does not is taught here.
       </p>
-      <dl className="grid gap-4">
+      <ul className="grid gap-4">
         {acts.map(({ act, title, usual }) => {
           const key = Object.keys(learned).find((known) => learned[known] === act);
           return (
-            <div key={act} className="flex flex-wrap items-center gap-x-6 gap-y-2">
-              <dt className="min-w-28 text-lead font-semibold">{title}</dt>
-              <dd className="min-w-60 flex-1 text-body">
+            <li key={act} className="flex flex-wrap items-center gap-x-6 gap-y-2">
+              <h3 className="min-w-28 text-lead font-semibold">{title}</h3>
+              <p className="min-w-60 flex-1 text-body">
                 {key ? (
                   <>
                     <strong>{keyName(key)}</strong> <span className="text-soft">· learned here; and {usual}</span>
@@ -68,7 +68,7 @@ export function PedalSection() {
                 ) : (
                   usual
                 )}
-              </dd>
+              </p>
               <Button
                 onClick={() => {
                   setSaid('');
@@ -78,10 +78,10 @@ export function PedalSection() {
               >
                 {asked === act ? 'Press your pedal now' : `Teach “${title.toLowerCase()}”`}
               </Button>
-            </div>
+            </li>
           );
         })}
-      </dl>
+      </ul>
       <p role="status" className="min-h-7 max-w-prose text-body">
         {asked ? 'Press your pedal now. Escape leaves it as it is.' : said}
       </p>
