@@ -1,4 +1,4 @@
-import { Body, Controller, Delete, Get, Param, Patch, Post } from '@nestjs/common';
+import { Body, Controller, Delete, Get, Param, Patch, Post, Query } from '@nestjs/common';
 import { ApiBearerAuth, ApiTags } from '@nestjs/swagger';
 import {
   createEquipmentSchema,
@@ -8,11 +8,14 @@ import {
   type Equipment,
   type UpdateEquipment,
 } from '@steepfall/shared/contracts';
+import { z } from 'zod';
 import { Requires } from '../common/access/access.decorators.js';
 import { Actor } from '../common/access/actor.js';
 import { Answers, AnswersList, AnswersNothing } from '../common/http/answers.decorator.js';
 import { idSchema } from '../common/http/id-param.js';
 import { EquipmentService } from './equipment.service.js';
+
+const listQuerySchema = z.strictObject({ removed: z.stringbool().default(false) });
 
 @ApiTags('equipment')
 @ApiBearerAuth()
@@ -23,8 +26,11 @@ export class EquipmentController {
   @Get()
   @Requires('equipment:read')
   @AnswersList(equipmentSchema)
-  list(@Actor() actor: Actor): Promise<Equipment[]> {
-    return this.equipment.list(actor.houseId);
+  list(
+    @Actor() actor: Actor,
+    @Query({ schema: listQuerySchema }) { removed }: z.infer<typeof listQuerySchema>,
+  ): Promise<Equipment[]> {
+    return this.equipment.list(actor.houseId, { isRemoved: removed });
   }
 
   @Post()

@@ -58,6 +58,11 @@ describe('/api/equipment', () => {
     await call('delete', `/${id}`).expect(204);
     expectProblem(await call('delete', `/${id}`), 'not-found');
     expect((await call('get')).body).not.toContainEqual(expect.objectContaining({ id }));
+    expect((await call('get', '?removed=true')).body).toContainEqual(expect.objectContaining({ id }));
+    const { bearer } = await signInAs(testApp, 'brewer');
+    const elsewhere = await request(testApp.url).get('/api/equipment?removed=true').set('authorization', bearer);
+    expect(elsewhere.body).toEqual([]);
+    expectProblem(await call('get', '?removed=perhaps'), 'not-valid');
   });
 
   it('brings back what was removed, as it was, twice the same way', async () => {

@@ -2,6 +2,7 @@ import { Injectable } from '@nestjs/common';
 import { InjectConnection, InjectModel } from '@nestjs/sequelize';
 import type { CreateEquipment, Equipment as EquipmentAnswer, UpdateEquipment } from '@steepfall/shared/contracts';
 import { ProblemError } from '@steepfall/shared/problems';
+import { Op } from 'sequelize';
 import { Sequelize } from 'sequelize-typescript';
 import { AuditService } from '../audit/audit.service.js';
 import type { Actor } from '../common/access/actor.js';
@@ -25,10 +26,10 @@ export class EquipmentService {
     private readonly clock: Clock,
   ) {}
 
-  /** What can be brewed on today. */
-  async list(houseId: string): Promise<EquipmentAnswer[]> {
+  /** What can be brewed on today, or what was removed and can come back. */
+  async list(houseId: string, { isRemoved } = { isRemoved: false }): Promise<EquipmentAnswer[]> {
     const rows = await this.rows(houseId).findAll(
-      { removedAtMs: null },
+      { removedAtMs: isRemoved ? { [Op.not]: null } : null },
       {
         order: [
           ['kind', 'ASC'],

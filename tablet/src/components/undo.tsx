@@ -7,13 +7,13 @@ import { Button } from './button.tsx';
 /** Long enough to read it, think, and get there with a keyboard; it waits while somebody is at it. */
 const STAYS_MS = 20_000;
 
-/** "Keg B removed. Undo": mounted once, so that a screen reader hears what appears in it. Filled by `offerUndo`. */
+/** "Keg B removed. Undo": mounted once, so that a screen reader hears what appears in it. Filled by `offerUndo`. It stands above what a page has at its foot. */
 export function UndoStrip() {
   const offer = useStored(undoable);
   return (
     <div
       role="status"
-      className="pointer-events-none fixed inset-x-0 bottom-22 z-30 grid justify-items-center px-4 md:bottom-6"
+      className="pointer-events-none fixed inset-x-0 bottom-22 z-30 grid justify-items-center px-4 md:bottom-6 max-xl:[body:has([data-foot])_&]:bottom-38 md:max-xl:[body:has([data-foot])_&]:bottom-20"
     >
       {offer ? <Offer key={offer.key} offer={offer} /> : null}
     </div>

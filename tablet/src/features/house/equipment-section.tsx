@@ -15,12 +15,14 @@ import { useUnits } from '#lib/units.ts';
 import { failureWords } from '#lib/words.ts';
 import { EquipmentDialog } from './equipment-dialog.tsx';
 import { factWords, kindWords, learnedWords } from './equipment-facts.ts';
+import { RemovedEquipmentDialog } from './removed-equipment-dialog.tsx';
 
 /** Kettles, chillers, kegs and scales of the house. */
 export function EquipmentSection() {
   const mayManage = useMay()('equipment:manage');
   const units = useUnits();
   const [open, setOpen] = useState<Equipment | 'new' | null>(null);
+  const [isLookingBack, setIsLookingBack] = useState(false);
   const equipment = useQuery(equipmentQuery);
   const remove = useRemove();
   const add = mayManage ? <Button onClick={() => setOpen('new')}>Add equipment</Button> : null;
@@ -78,6 +80,14 @@ export function EquipmentSection() {
           </li>
         ))}
       </ul>
+      {mayManage ? (
+        <div>
+          <Button look="quiet" className="-ml-5" onClick={() => setIsLookingBack(true)}>
+            Removed<span className="sr-only"> equipment</span>
+          </Button>
+        </div>
+      ) : null}
+      {isLookingBack ? <RemovedEquipmentDialog onClose={() => setIsLookingBack(false)} /> : null}
       {open ? <EquipmentDialog item={open === 'new' ? null : open} onClose={() => setOpen(null)} /> : null}
     </section>
   );

@@ -34,7 +34,10 @@ export function LeadsStrip({ desk, children }: LeadsStripProps) {
   const close = () => setIsOpen(false);
   return (
     <>
-      <div className="fixed inset-x-0 bottom-18 z-20 border-t-2 border-text bg-ground pb-[env(safe-area-inset-bottom)] md:bottom-0 md:left-28 xl:hidden">
+      <div
+        data-foot
+        className="fixed inset-x-0 bottom-18 z-20 border-t-2 border-text bg-ground pb-[env(safe-area-inset-bottom)] md:bottom-0 md:left-28 xl:hidden"
+      >
         <button
           type="button"
           aria-haspopup="dialog"
