@@ -16,7 +16,7 @@ import {
   type X509Certificate,
 } from '@peculiar/x509';
 import { BlockList, isIPv4 } from 'node:net';
-import { exportKey, makeKeys, type KeyedCertificate } from './keys.js';
+import { keyed, makeKeys, type KeyedCertificate } from './keys.js';
 import type { Machine } from './machine.js';
 
 const DAY_MS = 24 * 60 * 60 * 1000;
@@ -95,7 +95,7 @@ export async function makeAuthority(machine: Machine, nowMs: number): Promise<Ke
       new Extension(id_ce_nameConstraints, false, AsnConvert.serialize(constraintsOf(scopeOf(machine)))),
     ],
   });
-  return { certificate: certificate.toString('pem'), key: await exportKey(keys.privateKey) };
+  return keyed(certificate, keys);
 }
 
 function constraintsOf({ names, networks }: Scope): NameConstraints {

@@ -10,7 +10,7 @@ import {
   X509Certificate,
   X509CertificateGenerator,
 } from '@peculiar/x509';
-import { exportKey, importKey, makeKeys, type KeyedCertificate } from './keys.js';
+import { importKey, keyed, makeKeys, type KeyedCertificate } from './keys.js';
 import type { Machine } from './machine.js';
 
 const DAY_MS = 24 * 60 * 60 * 1000;
@@ -46,7 +46,7 @@ export async function issueCertificate(
       await SubjectKeyIdentifierExtension.create(keys.publicKey),
     ],
   });
-  return { certificate: certificate.toString('pem'), key: await exportKey(keys.privateKey) };
+  return keyed(certificate, keys);
 }
 
 export function readNames(certificate: X509Certificate): Machine {

@@ -40,7 +40,7 @@ about two minutes, once for each device.</p>
 ${devices.map(deviceSection).join('\n')}
 <h2 id="compare">The fingerprint</h2>
 <p>This page came without protection, so make sure that the certificate is the hub’s. The window in which Steepfall was started prints the same
-fingerprint; compare a few groups at the beginning and at the end. <strong>If they differ, do not install it.</strong></p>
+fingerprint; compare it group by group. <strong>If they differ, do not install it.</strong></p>
 <dl>
 <div><dt>SHA-256</dt><dd class="print">${groups(sha256)}</dd></div>
 <div><dt>SHA-1, which Windows calls thumbprint</dt><dd class="print">${groups(sha1)}</dd></div>

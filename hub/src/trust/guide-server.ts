@@ -17,15 +17,13 @@ export interface GuideOptions {
 interface Answer {
   type: string;
   body: string | Buffer;
-  /** Given when it is to be kept as a file. */
-  fileName?: string;
 }
 
 const headers = {
   'Cache-Control': 'no-store',
   // The one thing that the page asks of others is whether this device trusts the hub.
   'Content-Security-Policy':
-    "default-src 'none'; style-src 'self'; script-src 'self'; font-src 'self'; connect-src https:; base-uri 'none'; form-action 'none'; frame-ancestors 'none'",
+    "default-src 'none'; img-src 'self'; style-src 'self'; script-src 'self'; font-src 'self'; connect-src https:; base-uri 'none'; form-action 'none'; frame-ancestors 'none'",
   'Referrer-Policy': 'no-referrer',
   'X-Content-Type-Options': 'nosniff',
 };
@@ -60,6 +58,7 @@ function pagesOf({
   httpsPort,
   tabletDist,
 }: GuideOptions): ReadonlyMap<string, (request: IncomingMessage) => Answer> {
+  // By this type an iPad knows a profile, as long as nothing calls it a file to keep.
   const certificateType = 'application/x-x509-ca-cert';
   const pages = new Map<string, (request: IncomingMessage) => Answer>([
     [
@@ -69,11 +68,8 @@ function pagesOf({
         body: guidePage({ trust: trust(), host: host ?? '', httpsPort: httpsPort(), checkPath: TRUST_CHECK_PATH }),
       }),
     ],
-    ['/steepfall.crt', () => ({ type: certificateType, body: trust().authority.der, fileName: 'steepfall.crt' })],
-    [
-      '/steepfall.pem',
-      () => ({ type: 'application/x-pem-file', body: trust().authority.pem, fileName: 'steepfall.pem' }),
-    ],
+    ['/steepfall.crt', () => ({ type: certificateType, body: trust().authority.der })],
+    ['/steepfall.pem', () => ({ type: 'application/x-pem-file', body: trust().authority.pem })],
   ]);
   if (tabletDist === null) return pages;
   const add = (path: string, type: string, file: string) => pages.set(path, () => ({ type, body: readFileSync(file) }));
@@ -85,12 +81,11 @@ function pagesOf({
   return pages;
 }
 
-function end(response: ServerResponse, status: number, { type, body, fileName }: Answer, isHead = false): void {
+function end(response: ServerResponse, status: number, { type, body }: Answer, isHead = false): void {
   response.writeHead(status, {
     ...headers,
     'Content-Type': type,
     'Content-Length': Buffer.byteLength(body),
-    ...(fileName ? { 'Content-Disposition': `attachment; filename="${fileName}"` } : {}),
   });
   response.end(isHead ? undefined : body);
 }

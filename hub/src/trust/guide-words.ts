@@ -7,8 +7,7 @@ export interface Device {
 }
 
 const compare = 'Compare the <a href="#compare">fingerprint</a> with the one on the hub’s machine.';
-const get = (file: 'steepfall.crt' | 'steepfall.pem') =>
-  `<a class="button" href="/${file}" download>Get the certificate</a>`;
+const get = (file: string, how = 'download') => `<a class="button" href="/${file}" ${how}>Get the certificate</a>`;
 
 /** Menus are named as they are from memory; makers move them about, so each step says what to look for. */
 export const devices: readonly Device[] = [
@@ -16,7 +15,7 @@ export const devices: readonly Device[] = [
     id: 'ipad',
     name: 'iPad or iPhone',
     steps: [
-      `Open this page in Safari. ${get('steepfall.crt')} Say “Allow” when it asks about a profile.`,
+      `Open this page in Safari. ${get('steepfall.crt', '')} Say “Allow” when it asks about a profile.`,
       'Open <b>Settings</b>. Near the top stands <b>Profile Downloaded</b>; if it does not, look under <b>General, VPN &amp; Device Management</b>.',
       `Tap the profile that begins with “Steepfall on”, then <b>More Details</b>. ${compare} Go back and tap <b>Install</b>.`,
       'Go to <b>Settings, General, About</b>, down to <b>Certificate Trust Settings</b>, and switch the certificate on. Without this step nothing changes.',

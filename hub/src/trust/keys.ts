@@ -1,3 +1,4 @@
+import type { X509Certificate } from '@peculiar/x509';
 import { KeyObject, createPrivateKey, webcrypto } from 'node:crypto';
 
 /** Both as PEM. */
@@ -13,8 +14,12 @@ export function makeKeys(): Promise<webcrypto.CryptoKeyPair> {
   return webcrypto.subtle.generateKey(algorithm, true, ['sign', 'verify']) as Promise<webcrypto.CryptoKeyPair>;
 }
 
-export async function exportKey(key: webcrypto.CryptoKey): Promise<string> {
-  return KeyObject.from(key).export({ type: 'pkcs8', format: 'pem' }).toString();
+export function keyed(certificate: X509Certificate, { privateKey }: webcrypto.CryptoKeyPair): KeyedCertificate {
+  return {
+    certificate: `${certificate.toString('pem')}
+`,
+    key: KeyObject.from(privateKey).export({ type: 'pkcs8', format: 'pem' }).toString(),
+  };
 }
 
 export function importKey(pem: string): Promise<webcrypto.CryptoKey> {

@@ -96,7 +96,7 @@ async function readKeyed(path: string): Promise<KeyedCertificate | null> {
 }
 
 function writeKeyed(path: string, { certificate, key }: KeyedCertificate): Promise<void> {
-  return writeWhole(path, `${certificate.trimEnd()}\n${key.trimEnd()}\n`, 0o600);
+  return writeWhole(path, certificate + key, 0o600);
 }
 
 async function writeWhole(path: string, text: string, mode: number): Promise<void> {
