@@ -14,6 +14,14 @@ export interface Suspect {
   tempC: number;
 }
 
+/** The same number again and again: since when, and what was believed before it came. */
+export interface FlatLine {
+  readonly tempC: number;
+  readonly sinceMs: number;
+  readonly count: number;
+  readonly before: Pick<WatchState, 'bank' | 'bankAtMs' | 'lastGoodAtMs' | 'steppedAtMs'>;
+}
+
 /** All that is known after some readings. Plain data: it survives JSON and is never changed in place. */
 export interface WatchState {
   readonly config: WatchConfig;
@@ -28,6 +36,8 @@ export interface WatchState {
   /** Good readings before the bank is started, then the newest three. */
   readonly recent: readonly { atMs: number; tempC: number }[];
   readonly suspects: readonly Suspect[];
+  /** null before the first number, and after each act. */
+  readonly flat: FlatLine | null;
   /** The filters, flat; null until enough readings agree. Holds at `bankAtMs`. */
   readonly bank: readonly number[] | null;
   readonly bankAtMs: number;
@@ -47,6 +57,7 @@ const NO_VERDICTS: Record<WatchVerdict, number> = {
   'power-on': 0,
   spike: 0,
   implausible: 0,
+  stuck: 0,
   late: 0,
   'no-signal': 0,
 };
@@ -63,6 +74,7 @@ export function startWatch(config: WatchConfig): WatchState {
     lastReadingAtMs: null,
     recent: [],
     suspects: [],
+    flat: null,
     bank: null,
     bankAtMs: 0,
     whiteVariance: 0.1 ** 2,

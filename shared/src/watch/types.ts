@@ -45,7 +45,7 @@ export interface WatchReading {
 }
 
 /** What was thought of a reading; only `good` ones move the estimate. */
-export type WatchVerdict = 'good' | 'open-wire' | 'power-on' | 'spike' | 'implausible' | 'late' | 'no-signal';
+export type WatchVerdict = 'good' | 'open-wire' | 'power-on' | 'spike' | 'implausible' | 'stuck' | 'late' | 'no-signal';
 
 /** `starting`: too few readings to say. `stale`: no good reading for max(3 sample periods, 30 s). `lost`: for ten times that. */
 export type WatchStatus = 'starting' | 'live' | 'stale' | 'lost';

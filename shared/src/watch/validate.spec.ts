@@ -1,8 +1,9 @@
 import { describe, expect, it } from 'vitest';
+import { estimateAt } from './estimate.js';
 import { startWatch } from './state.js';
 import type { WatchReading, WatchVerdict } from './types.js';
 import { isPowerOn, judgeRange } from './validate.js';
-import { watchReading } from './watch.js';
+import { watchAct, watchReading } from './watch.js';
 
 const CONFIG = { lagS: 6, roomC: 22, coolantC: 12, samplePeriodS: 1, resolutionC: 0.0625 };
 
@@ -106,6 +107,36 @@ describe('watchReading', () => {
     expect(found.slice(10)).toEqual(['late', 'late', 'good']);
   });
 
+  describe('a probe that stops while the chiller runs', () => {
+    const fallAt = (s: number) => 82 - Math.max(0, s - 60) * 0.12;
+    const chilled = (stopsAtS: number, endsAtS: number) => {
+      let watch = startWatch(CONFIG);
+      for (let s = 0; s <= endsAtS; s += 1) {
+        if (s === 60) watch = watchAct(watch, { act: 'chiller-on', atMs: 60_000 });
+        const at = Math.min(s, stopsAtS);
+        watch = watchReading(watch, { atMs: s * 1000, tempC: fallAt(at) + dither(at) });
+      }
+      return watch;
+    };
+
+    it('is found out within a minute: its signal is as old as its last change, and the fall goes on', () => {
+      const watch = chilled(120, 165);
+      expect(watch.lastVerdict).toBe('stuck');
+      const estimate = estimateAt(watch, 165_000);
+      expect(estimate.status).toBe('stale');
+      expect(Math.abs(estimate.tempC! - fallAt(170))).toBeLessThan(2);
+    });
+
+    it('is not said of a calm pot whose chiller was tapped and never ran', () => {
+      const calm = Array.from({ length: 240 }, (_, i) => ({ atMs: (60 + i) * 1000, tempC: 82 }));
+      let watch = startWatch({ ...CONFIG, chillerPerS: 2e-3 });
+      for (const reading of pot(60, 82)) watch = watchReading(watch, reading);
+      watch = watchAct(watch, { act: 'chiller-on', atMs: 59_500 });
+      for (const reading of calm) watch = watchReading(watch, reading);
+      expect(watch.verdictCounts.stuck).toBe(0);
+    });
+  });
+
   it('counts what it saw', () => {
     let watch = startWatch(CONFIG);
     for (const reading of [...pot(20, 80), { atMs: 20_000, tempC: -127 }, { atMs: 21_000, tempC: null }]) {
@@ -117,6 +148,7 @@ describe('watchReading', () => {
       'power-on': 0,
       spike: 0,
       implausible: 0,
+      stuck: 0,
       late: 0,
       'no-signal': 1,
     });

@@ -54,3 +54,24 @@ const LEAST_SPIKE_C = 0.6;
 export function isOffTheLine(tempC: number, expectedC: number, sdC: number): boolean {
   return Math.abs(tempC - expectedC) > Math.max(LEAST_SPIKE_C, SPIKE_SDS * sdC);
 }
+
+/** A flat line is one from here on: so long, so many readings, and so far from where the liquid must be by then. */
+const LEAST_FLAT_S = 30;
+const LEAST_FLAT_COUNT = 8;
+const LEAST_FLAT_C = 1.5;
+const FLAT_STEPS = 5;
+
+export interface FlatSpan {
+  spanS: number;
+  /** Readings that said the same. */
+  count: number;
+  /** How fast the liquid fell, or was to fall, when it began, K/s. */
+  fallCPerS: number;
+  resolutionC: number;
+}
+
+/** True when one number has come for so long that the liquid must have left it by many of the probe's steps. */
+export function isStuck({ spanS, count, fallCPerS, resolutionC }: FlatSpan): boolean {
+  if (spanS < LEAST_FLAT_S || count < LEAST_FLAT_COUNT) return false;
+  return fallCPerS * spanS > Math.max(LEAST_FLAT_C, FLAT_STEPS * resolutionC);
+}

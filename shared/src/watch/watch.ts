@@ -1,9 +1,9 @@
 import { advanceBank, believe, disturbBank, resettleBank, startBank, updateBank, type Disturbance } from './bank.js';
 import { advanceRivals, updateRivals } from './rivals.js';
 import { CHILLING_C_PER_S, type Surroundings } from './slope-law.js';
-import type { Suspect, WatchState } from './state.js';
+import type { FlatLine, Suspect, WatchState } from './state.js';
 import type { WatchAct, WatchActDone, WatchReading, WatchVerdict } from './types.js';
-import { FASTEST_C_PER_S, isOffTheLine, isPowerOn, judgeRange } from './validate.js';
+import { FASTEST_C_PER_S, isOffTheLine, isPowerOn, isStuck, judgeRange } from './validate.js';
 
 /** Taken where nobody knows better. */
 const USUAL_ROOM_C = 21;
@@ -51,7 +51,7 @@ export function watchAct(state: WatchState, done: WatchActDone): WatchState {
   const disturbance = disturbanceOf(done.act, belief, surroundings(state), state.config.chillerPerS ?? null);
   disturbBank(bank, disturbance);
   const steppedAtMs = disturbance.stepC >= STEP_C ? atMs : state.steppedAtMs;
-  return { ...state, kettle, bank, bankAtMs: atMs, steppedAtMs, rivals: [] };
+  return { ...state, kettle, bank, bankAtMs: atMs, steppedAtMs, rivals: [], flat: null };
 }
 
 function kettleAfter({ kettle }: WatchState, act: WatchAct): WatchState['kettle'] {
@@ -123,10 +123,11 @@ export function watchReading(state: WatchState, reading: WatchReading): WatchSta
   if (!Number.isFinite(atMs) || (state.lastReadingAtMs !== null && atMs <= state.lastReadingAtMs)) {
     return judged(state, 'late');
   }
-  const seen = { ...state, lastReadingAtMs: atMs };
   const range = judgeRange(reading.tempC);
-  if (range !== 'good' || reading.tempC === null) return judged(seen, range);
+  if (range !== 'good' || reading.tempC === null) return judged({ ...state, lastReadingAtMs: atMs }, range);
   const { tempC } = reading;
+  const flat = flatAfter(state, { atMs, tempC });
+  const seen = { ...state, lastReadingAtMs: atMs, flat };
   const lastGood = state.recent.at(-1) ?? null;
   const powerOn = isPowerOn(
     { atMs, tempC },
@@ -140,6 +141,8 @@ export function watchReading(state: WatchState, reading: WatchReading): WatchSta
   if (powerOn) return judged(seen, 'power-on');
   if (state.bank === null) return starting(seen, { atMs, tempC });
 
+  if (isDead(state, flat, atMs)) return stuck(seen, flat);
+
   const elapsedS = (atMs - state.bankAtMs) / 1000;
   if (elapsedS > LONGEST_BRIDGE_S) return starting({ ...seen, bank: null, recent: [], suspects: [] }, { atMs, tempC });
   const bank = [...state.bank];
@@ -151,6 +154,35 @@ export function watchReading(state: WatchState, reading: WatchReading): WatchSta
     return isOffTheLine(tempC, probeC, Math.sqrt(probeVariance + white));
   });
   return isOff ? suspected(seen, bank, { atMs, tempC }) : accepted(seen, bank, rivals, { atMs, tempC });
+}
+
+/** A slope less sure than this share of itself was not seen but expected. */
+const SURE_FALL_SHARE = 0.2;
+
+/** One more number: the same line, or the beginning of another. */
+function flatAfter(
+  { flat, bank, bankAtMs, lastGoodAtMs, steppedAtMs }: WatchState,
+  { atMs, tempC }: Suspect,
+): FlatLine {
+  if (flat?.tempC === tempC) return { ...flat, count: flat.count + 1 };
+  return { tempC, sinceMs: atMs, count: 1, before: { bank, bankAtMs, lastGoodAtMs, steppedAtMs } };
+}
+
+/** A probe that says one number while a chiller pulls the liquid away from it has died with that number in its mouth. */
+function isDead({ kettle, config }: WatchState, { before, sinceMs, count }: FlatLine, atMs: number): boolean {
+  if (!kettle.chilling || before.bank === null) return false;
+  const { rateCPerS, rateVariance } = believe(before.bank);
+  // Only a fall that was seen: a chiller that was tapped and never ran leaves a calm line too.
+  if (Math.sqrt(Math.max(0, rateVariance)) > SURE_FALL_SHARE * -rateCPerS) return false;
+  const { resolutionC } = config;
+  return isStuck({ spanS: (atMs - sinceMs) / 1000, count, fallCPerS: -rateCPerS, resolutionC });
+}
+
+/** Back to what was believed before: the age of the signal, and the course from there, are then the true ones. */
+function stuck(state: WatchState, { before, sinceMs }: FlatLine): WatchState {
+  if (state.bankAtMs === before.bankAtMs) return judged(state, 'stuck');
+  const trail = state.trail.filter(({ atMs }) => atMs < sinceMs);
+  return judged({ ...state, ...before, rivals: [], suspects: [], trail }, 'stuck');
 }
 
 function judged(state: WatchState, verdict: WatchVerdict): WatchState {
