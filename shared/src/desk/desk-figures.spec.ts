@@ -220,3 +220,20 @@ describe('deskFigures', () => {
     expect(result.path).toBe(path);
   });
 });
+
+describe('what is held back', () => {
+  const held = (id: string, additions: RecipeDocument['additions']) =>
+    rowsOf(buildDocument({ additions })).get(id)?.band.value;
+
+  it('is more in cones than in pellets', () => {
+    expect(held('yield.hops', [buildHops({ massG: 60 })])).toBeCloseTo(0.42, 9);
+    expect(held('yield.hops', [buildHops({ massG: 60, form: 'cones' })])).toBeCloseTo(0.6, 9);
+  });
+
+  it('counts peel and spice in the kettle like leaf', () => {
+    const { kind: _, tea: __, form: ___, ...shape } = buildTea({ id: 'peel', name: 'orange peel', massG: 50 });
+    const peel = { ...shape, kind: 'other' } as const;
+    expect(held('yield.leaf', [buildTea({ massG: 100 }), peel])).toBeCloseTo(0.6, 9);
+    expect(held('yield.leaf', [buildTea({ massG: 100 }), { ...peel, in: { at: 'transfer' } }])).toBeCloseTo(0.4, 9);
+  });
+});

@@ -34,9 +34,18 @@ export function drinkPlanOf(document: RecipeDocument, kit: DeskKit, day: Planned
   });
   const hops = additions.flatMap((one): HopAddition[] => {
     if (one.kind !== 'hops') return [];
-    const { massG, alphaPercent, storageIndex } = one;
+    const { massG, alphaPercent, storageIndex, form } = one;
     const told = storageIndex === undefined ? {} : { storageIndex };
-    return [{ massG, alphaPercent, ...told, ...baseOf(assume.hopBaseRatio), ...contactMs(day, one.id) }];
+    return [
+      {
+        massG,
+        alphaPercent,
+        isCones: form === 'cones',
+        ...told,
+        ...baseOf(assume.hopBaseRatio),
+        ...contactMs(day, one.id),
+      },
+    ];
   });
   const acids = additions.flatMap((one) => (one.kind === 'acid' ? [one] : []));
   const firstHopsMs = Math.min(...hops.map(({ inAtMs }) => inAtMs));
@@ -58,6 +67,10 @@ export function drinkPlanOf(document: RecipeDocument, kit: DeskKit, day: Planned
     acidAfterHops: acids.length > 0 && acids.every(({ id }) => contactMs(day, id).inAtMs > firstHopsMs),
     teas,
     hops,
+    othersG: additions.reduce(
+      (sum, { kind, in: { at }, massG }) => (kind === 'other' && at !== 'transfer' ? sum + massG : sum),
+      0,
+    ),
     curve: day.curve,
     evaporatedL: day.evaporatedL,
     deadSpaceL: kit.kettle?.deadSpaceL ?? 0,

@@ -31,9 +31,8 @@ export function figureRows(context: RowContext): FigureRow[] {
 }
 
 function yieldRows({ document, plan, figures }: RowContext): FigureRow[] {
-  const { low, value, high, leafL, hopsL } = figures.yield;
-  const held = (liters: number, of: { low: number; value: number; high: number }) =>
-    band((liters * of.low) / of.value, liters, (liters * of.high) / of.value, 'judged');
+  const { low, value, high, leafL, hopsL, hopsLowL, hopsHighL } = figures.yield;
+  const { leaf } = heldLPerG;
   const wanted = document.volumeL;
   return [
     row({
@@ -44,8 +43,18 @@ function yieldRows({ document, plan, figures }: RowContext): FigureRow[] {
       isLead: true,
       target: targetOf(value, wanted * (1 - YIELD_SHARE), Math.max(wanted, wanted * (1 + YIELD_SHARE))),
     }),
-    row({ id: 'yield.leaf', label: 'Held by the leaf', quantity: 'volumeL', band: held(leafL, heldLPerG.leaf) }),
-    row({ id: 'yield.hops', label: 'Held by the hops', quantity: 'volumeL', band: held(hopsL, heldLPerG.hops) }),
+    row({
+      id: 'yield.leaf',
+      label: 'Held by the leaf',
+      quantity: 'volumeL',
+      band: band((leafL * leaf.low) / leaf.value, leafL, (leafL * leaf.high) / leaf.value, 'judged'),
+    }),
+    row({
+      id: 'yield.hops',
+      label: 'Held by the hops',
+      quantity: 'volumeL',
+      band: band(hopsLowL, hopsL, hopsHighL, 'judged'),
+    }),
     row({
       id: 'yield.evaporated',
       label: 'Evaporated',

@@ -3,7 +3,6 @@ import {
   boilingPointAtAltitudeC,
   coolingRule,
   coolingRuleLimit,
-  drinkYieldL,
   phBand,
   tubeVolumeL,
   volumeAtTemperatureL,
@@ -183,7 +182,7 @@ function chillerWarnings({ document, kit, day, units }: RowContext): DeskWarning
   ];
 }
 
-function yieldWarnings({ document, plan, figures, units }: RowContext): DeskWarning[] {
+function yieldWarnings({ document, figures, units }: RowContext): DeskWarning[] {
   const { value, low } = figures.yield;
   const { volumeL, waterL } = document;
   const { volume } = wordsIn(units);
@@ -197,20 +196,11 @@ function yieldWarnings({ document, plan, figures, units }: RowContext): DeskWarn
     ];
   }
   if (value >= volumeL * (1 - YIELD_SHARE)) return [];
-  const sumG = (list: readonly { massG: number }[]) => list.reduce((sum, { massG }) => sum + massG, 0);
-  const lost =
-    waterL -
-    drinkYieldL({
-      startL: waterL,
-      leafG: sumG(plan.teas),
-      hopsG: sumG(plan.hops),
-      evaporatedL: plan.evaporatedL,
-      deadSpaceL: plan.deadSpaceL,
-    }).value;
+  const lost = waterL - value;
   return [
     warning('yield-low', 'care', 'waterL', {
       what: `${volume(value)} come out (at least ${volume(low)}); you want ${volume(volumeL)}.`,
-      why: 'Leaf holds 4 times its mass of water, hops 7 times; steam and the kettle keep some.',
+      why: 'Leaf holds 4 times its mass of water, hops 7 times (cones 10); steam and the kettle keep some.',
       act: `Fill about ${volume(volumeL + lost)} of water, or plan less drink.`,
     }),
   ];

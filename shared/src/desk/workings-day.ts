@@ -73,7 +73,7 @@ export const dayWorkings = {
     model: 'Water filled, less what leaf and hops hold, what steams off and what stays in the kettle.',
     source:
       'Volume balance. Held by leaf: a judgement from spent leaf at 75 to 80 % moisture (from memory). Held by hops: common practice, no source.',
-    band: 'Leaf holds 3 to 5.5 mL for each gram, hops 4 to 9.',
+    band: 'Leaf holds 3 to 5.5 mL for each gram, hops 4 to 9, cones 7 to 13.',
     assumptions: ['The dead space of the kettle; none without a kettle.', 'Bags drain and are not squeezed.'],
     defaults: ['lidOn', 'roomC', 'chillerConstantPerS'],
   },
@@ -82,15 +82,15 @@ export const dayWorkings = {
     model: '4 mL for each gram of dry leaf.',
     source: 'A judgement from spent leaf at 75 to 80 % moisture (from memory).',
     band: '3 to 5.5 mL for each gram. Squeezing gives a third back, and tannin with it.',
-    assumptions: ['The bag drains and is not squeezed.'],
+    assumptions: ['The bag drains and is not squeezed.', 'Peel, spice and flowers in the kettle hold as much as leaf.'],
     defaults: [],
   },
   'yield.hops': {
     meaning: 'Drink that leaves with the wet hops.',
-    model: '7 mL for each gram of hops.',
+    model: '7 mL for each gram of pellets, 10 of cones.',
     source: 'Common practice, no source.',
-    band: '4 mL from a drained bag to 9 mL left to settle. Cones hold more.',
-    assumptions: ['Pellets and cones count alike.'],
+    band: 'Pellets: 4 mL from a drained bag to 9 mL left to settle. Cones: 7 to 13 mL, a judgement.',
+    assumptions: ['The bag drains and is not squeezed.'],
     defaults: [],
   },
   'yield.evaporated': {

@@ -9,7 +9,7 @@ import type { IonsMgPerL } from '../water/ions.js';
 import { ionicStrengthMolPerL } from '../water/ionic-strength.js';
 import { salinity, type Salinity } from '../water/salinity.js';
 import { saltedWater } from '../water/salts.js';
-import { concentrationFactor, drinkYieldL, type DrinkYield } from '../yield/drink-yield.js';
+import { concentrationFactor, drinkYieldL, type DrinkYield, type Losses } from '../yield/drink-yield.js';
 import { hazeFlags, type HazeFlag } from '../yield/haze.js';
 import { acidFigures, type AcidFigures } from './acid-figures.js';
 import type { DrinkPlan } from './drink-plan.js';
@@ -59,7 +59,6 @@ export function drinkFigures(plan: DrinkPlan): DrinkFigures {
   const hardness = hardnessAsCaCo3(ions);
   const saltiness = salinity(ions);
   const acid = balance.verdict === 'refused' || saltiness === 'salt' ? null : acidFigures(plan, ions);
-  const sumG = (list: readonly { massG: number }[]) => list.reduce((sum, { massG }) => sum + massG, 0);
   return {
     water: {
       ions,
@@ -74,13 +73,7 @@ export function drinkFigures(plan: DrinkPlan): DrinkFigures {
     acid,
     tea: teaFigures(plan, concentration),
     hops: acid && hopFigures(plan, acid.phAtHops, acid.phStill.value, concentration),
-    yield: drinkYieldL({
-      startL: plan.waterL,
-      leafG: sumG(plan.teas),
-      hopsG: sumG(plan.hops),
-      evaporatedL: plan.evaporatedL,
-      deadSpaceL: plan.deadSpaceL,
-    }),
+    yield: drinkYieldL(lossesOf(plan)),
     haze: hazeFlags({
       caMgPerL: ions.ca,
       hardnessAsCaCo3MgPerL: hardness,
@@ -89,5 +82,18 @@ export function drinkFigures(plan: DrinkPlan): DrinkFigures {
       chilledCold: plan.gas.tempC < COLD_C,
     }),
     gas: { gPerL: co2GPerLFromVolumes(plan.gas.volumes), gaugeKPa: chargeGaugeKPa(plan.gas) },
+  };
+}
+
+/** What of the water does not reach the keg. */
+function lossesOf({ waterL, teas, hops, othersG = 0, evaporatedL, deadSpaceL }: DrinkPlan): Losses {
+  const sumG = (list: readonly { massG: number }[]) => list.reduce((sum, { massG }) => sum + massG, 0);
+  return {
+    startL: waterL,
+    leafG: sumG(teas) + othersG,
+    hopsG: sumG(hops.filter(({ isCones }) => !isCones)),
+    conesG: sumG(hops.filter(({ isCones }) => isCones)),
+    evaporatedL,
+    deadSpaceL,
   };
 }

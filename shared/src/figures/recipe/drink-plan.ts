@@ -30,6 +30,8 @@ export interface HopAddition extends InLiquid {
   /** Alpha acids today, % of mass (alphaNowPercent). */
   alphaPercent: number;
   storageIndex?: number;
+  /** Whole cones hold more of the drink than pellets; pellets unless told. */
+  isCones?: boolean;
 }
 
 /** Everything the figures of one drink need: planned at the desk, or as it happened. */
@@ -43,6 +45,8 @@ export interface DrinkPlan {
   acidAfterHops?: boolean;
   teas: readonly TeaAddition[];
   hops: readonly HopAddition[];
+  /** Peel, spice, flower in the kettle: it holds drink like leaf, and is in no other sum. */
+  othersG?: number;
   /** Planned (planCurve) or recorded. */
   curve: TemperatureCurve;
   evaporatedL: number;

@@ -13,6 +13,14 @@ describe('yield', () => {
     expect(answer.high).toBeGreaterThan(answer.value);
   });
 
+  it('common practice (from memory): cones hold about 10 L/kg', () => {
+    const answer = drinkYieldL({ ...losses, hopsG: 0, conesG: 60 });
+    expect(answer.hopsL).toBeCloseTo(0.6, 9);
+    expect(answer.value).toBeCloseTo(18.95, 9);
+    expect(answer.hopsLowL).toBeLessThan(answer.hopsL);
+    expect(answer.hopsHighL).toBeGreaterThan(answer.hopsL);
+  });
+
   it('is never below nothing, and evaporation makes it stronger', () => {
     expect(drinkYieldL({ ...losses, deadSpaceL: 30 }).value).toBe(0);
     expect(concentrationFactor(20, 1)).toBeCloseTo(20 / 19, 12);

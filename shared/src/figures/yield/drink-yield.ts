@@ -2,17 +2,21 @@ import { notNegative, positive } from '../numeric/guard.js';
 
 /**
  * Liquid kept back, L per g dry. Leaf: drained, a judgement from spent leaf at 75 to 80 % moisture (from memory). Hops: pellets
- * in a drained bag to settled, common practice, no source.
+ * in a drained bag to settled; cones about 10 L/kg (from memory), their band a judgement. Common practice, no source.
  */
 export const heldLPerG = {
   leaf: { low: 0.003, value: 0.004, high: 0.0055 },
   hops: { low: 0.004, value: 0.007, high: 0.009 },
+  cones: { low: 0.007, value: 0.01, high: 0.013 },
 } as const;
 
 export interface Losses {
   startL: number;
   leafG: number;
+  /** Pellets. */
   hopsG: number;
+  /** Whole cones; none unless told. */
+  conesG?: number;
   evaporatedL: number;
   deadSpaceL: number;
 }
@@ -23,6 +27,8 @@ export interface DrinkYield {
   high: number;
   leafL: number;
   hopsL: number;
+  hopsLowL: number;
+  hopsHighL: number;
 }
 
 /**
@@ -37,15 +43,20 @@ export function drinkYieldL(losses: Losses): DrinkYield {
   const start = positive(losses.startL, 'A start volume', 'L');
   const leafG = notNegative(losses.leafG, 'A mass of leaf', 'g');
   const hopsG = notNegative(losses.hopsG, 'A mass of hops', 'g');
+  const conesG = notNegative(losses.conesG ?? 0, 'A mass of cones', 'g');
+  const heldBy = (level: 'low' | 'value' | 'high') => heldLPerG.hops[level] * hopsG + heldLPerG.cones[level] * conesG;
   const gone =
     notNegative(losses.evaporatedL, 'The evaporated water', 'L') + notNegative(losses.deadSpaceL, 'A dead space', 'L');
-  const left = (leaf: number, hops: number) => Math.max(0, start - gone - leaf * leafG - hops * hopsG);
+  const left = (level: 'low' | 'value' | 'high') =>
+    Math.max(0, start - gone - heldLPerG.leaf[level] * leafG - heldBy(level));
   return {
-    low: left(heldLPerG.leaf.high, heldLPerG.hops.high),
-    value: left(heldLPerG.leaf.value, heldLPerG.hops.value),
-    high: left(heldLPerG.leaf.low, heldLPerG.hops.low),
+    low: left('high'),
+    value: left('value'),
+    high: left('low'),
     leafL: heldLPerG.leaf.value * leafG,
-    hopsL: heldLPerG.hops.value * hopsG,
+    hopsL: heldBy('value'),
+    hopsLowL: heldBy('low'),
+    hopsHighL: heldBy('high'),
   };
 }
 
