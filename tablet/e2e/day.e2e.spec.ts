@@ -105,6 +105,9 @@ describe('a whole brew day in a browser', () => {
     const dialog = page.getByRole('dialog');
     await dialog.getByRole('textbox').fill('5.9');
     await dialog.getByRole('button', { name: 'Keep it' }).click();
+    await dialog.getByText(/Add [\d.]+ g citric acid/).waitFor();
+    findings.push(...(await picture(page, 'acid-dose')));
+    await dialog.getByRole('button', { name: 'Not now' }).click();
     await dialog.waitFor({ state: 'hidden' });
     await hand.until('Measure pH');
     await hand.press('Measure');

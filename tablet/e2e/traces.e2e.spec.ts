@@ -3,6 +3,7 @@ import { once } from 'node:events';
 import { readFileSync } from 'node:fs';
 import { join, resolve } from 'node:path';
 import { foldRun, type RunEvent, type StoredRunEvent } from '@steepfall/shared/runs';
+import type { RecipeDocument } from '@steepfall/shared/sheets';
 import { clockAtRate, wallTimeAt, type RunClock } from '@steepfall/shared/timers';
 import type { Recipe, RecipeSummary, RunEvents, RunSummary } from '@steepfall/shared/contracts';
 import type { Browser, BrowserContext } from 'playwright-core';
