@@ -14,10 +14,14 @@ export const sizes = {
 
 const grounds = { day: 'light', night: 'dark' } as const;
 
-/** Debian's Chromium, kept from looking for anything outside this machine. */
-export function openBrowser(flags: readonly string[] = []): Promise<Browser> {
+/**
+ * Debian's Chromium, kept from looking for anything outside this machine.
+ * @param home of the person, where it looks for what they trust
+ */
+export function openBrowser(flags: readonly string[] = [], home?: string): Promise<Browser> {
   return chromium.launch({
     executablePath: '/usr/bin/chromium',
+    env: { ...process.env, ...(home === undefined ? {} : { HOME: home }) },
     args: [
       '--no-sandbox',
       '--disable-gpu',

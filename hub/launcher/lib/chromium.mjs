@@ -6,7 +6,7 @@ import { findProgram } from './programs.mjs';
 const someFont = '/usr/share/fonts/truetype/dejavu/DejaVuSans.ttf';
 
 /**
- * Makes sure that the end-to-end tests have a browser and a font; installs them as root, else says the command.
+ * Makes sure that the end-to-end tests have a browser, a font and a way to trust a certificate; installs them as root, else says the command.
  * @param {(line: string) => void} log
  * @param {AbortSignal} [signal]
  */
@@ -14,6 +14,9 @@ export async function ensureChromiumInstalled(log, signal) {
   const packages = [
     ...(findProgram(['chromium']) ? [] : ['chromium']),
     ...(existsSync(someFont) ? [] : ['fonts-dejavu-core']),
+    // Writes down whom the browser of a test trusts.
+    ...(findProgram(['certutil']) ? [] : ['libnss3-tools']),
   ];
-  if (packages.length > 0) await installDebianPackages({ packages, what: 'Chromium or its font is', log, signal });
+  if (packages.length > 0)
+    await installDebianPackages({ packages, what: 'Chromium, its font or its certificate tool is', log, signal });
 }

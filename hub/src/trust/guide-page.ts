@@ -31,8 +31,10 @@ export function guidePage({ trust, host, httpsPort, checkPath }: GuideFacts): st
 <p class="lead">Browsers keep the screen awake, work without the network and send notifications only where they trust the other end. This takes
 about two minutes, once for each device.</p>
 <section class="state" aria-labelledby="state" data-state="unknown">
-<h2 id="state" role="status">Is it trusted already?</h2>
+<div role="status">
+<h2 id="state">Is it trusted already?</h2>
 <p class="state-words">Open <a href="${escape(origin)}">${escape(origin)}</a>: when the browser warns, it is not.</p>
+</div>
 <p class="state-actions"><a class="button" id="open" href="${escape(origin)}" hidden>Open Steepfall</a>
 <button class="button quiet" id="again" type="button" hidden>Look again</button></p>
 </section>
