@@ -28,7 +28,7 @@ const setReach = (who: SignedInMember, reachS: unknown) =>
 
 /** Calls answered so many seconds after `now`, one after the other. */
 function answeredCalls(run: RunSummary, waitsS: number[]): object[] {
-  const steps = ['tea-in', 'hops-in', 'hops-out', 'coil-in', 'chill'];
+  const steps = ['tea-in', 'tea-out', 'hops-in', 'hops-out'];
   return waitsS.flatMap((waitS, index) => {
     const actStepId = steps[index]!;
     const atMs = run.startedAtMs + index * 100;

@@ -160,7 +160,7 @@ function heat(pot: Pot, { steepC }: RecipeDocument, boilC: number): void {
 }
 
 /** Metal of the coil and the water inside it, J/K. */
-function coilJPerK(chiller: ChillerFacts): number {
+export function coilJPerK(chiller: ChillerFacts): number {
   const metalKg = chiller.lengthM * usual.coilKgPerM[chiller.metal];
   const waterKg = tubeVolumeL(chiller.lengthM, usual.coilBoreMm);
   return metalKg * specificHeatJPerKgK[metalOf[chiller.metal]] + waterKg * specificHeatJPerKgK.water;

@@ -10,6 +10,8 @@ export interface Stretch {
 const Z_90 = 1.6449;
 /** Below this distance to the surroundings the quotient is noise. */
 const LEAST_DRIVE_C = 10;
+/** Near the coolant a coil in still liquid weakens, and nothing is caught there: the constant is that of the fall through the additions. */
+const LEAST_CHILL_DRIVE_C = 30;
 /** What people's word for the room and for the coolant is good to, K. */
 const ROOM_ERROR_C = 3;
 const COOLANT_ERROR_C = 1.5;
@@ -23,14 +25,14 @@ export function learnedCooling(stretches: readonly Stretch[], roomC: number): Le
   const own = stretches.filter(
     ({ kettle, readings }) => kettle.lidOn && !kettle.heating && !kettle.chilling && spanS(readings) >= LEAST_COOLING_S,
   );
-  return fallOf(own, roomC, ROOM_ERROR_C);
+  return fallOf(own, { referenceC: roomC, errorC: ROOM_ERROR_C, leastC: LEAST_DRIVE_C });
 }
 
 /** Rate constant of the kettle with its chiller running, toward the coolant, 1/s; its losses to the room are in it. */
 export function learnedChilling(stretches: readonly Stretch[], coolantC: number | null): Lesson {
   if (coolantC === null) return tooLittle('not-told');
   const own = stretches.filter(({ kettle, readings }) => kettle.chilling && spanS(readings) >= LEAST_CHILLING_S);
-  return fallOf(own, coolantC, COOLANT_ERROR_C);
+  return fallOf(own, { referenceC: coolantC, errorC: COOLANT_ERROR_C, leastC: LEAST_CHILL_DRIVE_C });
 }
 
 function spanS(readings: Stretch['readings']): number {
@@ -42,9 +44,12 @@ function spanS(readings: Stretch['readings']): number {
  * An exponential that a lagging probe follows is the same exponential, later: its constant needs no lag taken out. Several stretches count
  * by how sure each is, and widen the error where they disagree.
  */
-function fallOf(stretches: readonly Stretch[], referenceC: number, referenceErrorC: number): Lesson {
+function fallOf(
+  stretches: readonly Stretch[],
+  { referenceC, errorC, leastC }: { referenceC: number; errorC: number; leastC: number },
+): Lesson {
   const fits = stretches.flatMap(({ readings }) => {
-    const far = readings.filter(({ tempC }) => tempC - referenceC > LEAST_DRIVE_C);
+    const far = readings.filter(({ tempC }) => tempC - referenceC > leastC);
     if (far.length < 8) return [];
     const line = fitLine(far.map(({ atMs, tempC }) => [(atMs - far[0]!.atMs) / 1000, Math.log(tempC - referenceC)]));
     const meanC = far.reduce((sum, { tempC }) => sum + tempC, 0) / far.length;
@@ -57,7 +62,7 @@ function fallOf(stretches: readonly Stretch[], referenceC: number, referenceErro
     fits.reduce((sum, fit, i) => sum + weights[i]! * of(fit), 0) / total;
   const value = mean(({ perS }) => perS);
   const between = Math.sqrt(mean(({ perS }) => (perS - value) ** 2));
-  const known = (value * referenceErrorC) / mean(({ drive }) => drive) / Z_90;
+  const known = (value * errorC) / mean(({ drive }) => drive) / Z_90;
   return surely({ value, error: Z_90 * Math.hypot(Math.sqrt(1 / total), between, known) });
 }
 

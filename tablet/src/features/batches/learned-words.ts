@@ -52,7 +52,7 @@ const gapWords: Record<NonNullable<LessonAnswer['because']>, string> = {
 export function lessonWords(kind: KitLesson, { told, learned, because }: LessonAnswer): LessonWords {
   return {
     name: names[kind],
-    told: told === null ? 'not known' : valueWords[kind](told),
+    told: told === null ? 'not written down yet' : `told ${valueWords[kind](told)}`,
     learned: learned ? valueWords[kind](learned.value) : null,
     note: learned
       ? `give or take ${errorWords[kind](learned)}`
@@ -67,7 +67,7 @@ export function reachWords(lesson: ReachLesson): LessonWords {
   const missed = missedCount > 0 ? `, ${missedCount} missed and left out` : '';
   return {
     name: `From call to act, ${displayName}`,
-    told: `${toldS ?? usualReachS}\u00a0s${toldS === null ? ', the usual' : ''}`,
+    told: `told ${toldS ?? usualReachS}\u00a0s${toldS === null ? ', the usual' : ''}`,
     learned: reachS === null ? null : `${reachS}\u00a0s`,
     note:
       reachS === null

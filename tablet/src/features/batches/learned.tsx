@@ -150,7 +150,7 @@ function Line({ words: { name, told, learned, note }, act }: { words: LessonWord
     <li className="grid gap-x-8 gap-y-1 border-b border-hair py-4 md:grid-cols-[minmax(0,1.1fr)_minmax(0,1.4fr)_13rem] md:items-center">
       <div>
         <p className="text-body font-medium">{name}</p>
-        <p className="text-body text-soft tabular-nums">told {told}</p>
+        <p className="text-body text-soft tabular-nums">{told}</p>
       </div>
       {learned === null ? (
         <p className="max-w-prose text-body text-soft">{note}</p>
