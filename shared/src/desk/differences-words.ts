@@ -56,11 +56,8 @@ export function wordsIn(units: UnitPreferences): Words {
     formatMass(massG, { unit: units.mass }),
     withUnit(inUnit('mass', massG, units.mass), units.mass),
   ];
-  const dose = (gPerL: number): Texts => {
-    const shown = inUnit('mass', gPerL, units.mass) / inUnit('volume', 1, units.volume);
-    const unit = `${units.mass}/${units.volume}`;
-    return [withUnit(formatSignificant(shown, 3), unit), withUnit(shown, unit)];
-  };
+  // A concentration, like mg/L: the same for everybody.
+  const dose = (gPerL: number): Texts => [withUnit(formatSignificant(gPerL, 3), 'g/L'), withUnit(gPerL, 'g/L')];
   const volume = (volumeL: number): Texts => [
     formatVolume(volumeL, { unit: units.volume }),
     withUnit(inUnit('volume', volumeL, units.volume), units.volume),

@@ -63,6 +63,7 @@ describe('formatMass', () => {
     [48, 'g', '48 g'],
     [999.7, 'g', '1 kg'],
     [1250, 'g', '1.25 kg'],
+    [2, 'oz', '0.071 oz'],
     [40, 'oz', '1.41 oz'],
     [500, 'oz', '17.6 oz'],
   ] as const)('%s g in %s is %s', (massG, unit, text) => {

@@ -59,7 +59,7 @@ export function formatDuration(durationS: Shown): string {
 }
 
 /**
- * A mass: "0.35 g", "2.5 g", "48 g", "1.25 kg", or "1.41 oz".
+ * A mass: "0.35 g", "2.5 g", "48 g", "1.25 kg", or "0.071 oz", "1.41 oz".
  *
  * @param massG grams.
  */
@@ -67,11 +67,17 @@ export function formatMass(massG: Shown, { unit }: { unit: UnitPreferences['mass
   if (!isShown(massG)) return NO_VALUE;
   if (unit === 'oz') {
     const massOz = gramsToOunces(massG);
-    return withUnit(upTo(massOz, Math.abs(massOz) < 10 ? 2 : 1), 'oz', true);
+    return withUnit(upTo(massOz, massOzDigits(Math.abs(massOz))), 'oz', true);
   }
   const size = Math.abs(massG);
   if (size >= 999.5) return withUnit(upTo(massG / 1000, 2), 'kg', true);
   return withUnit(upTo(massG, size < 1 ? 2 : size < 99.95 ? 1 : 0), 'g', true);
+}
+
+/** A gram of salt is a thirtieth of an ounce: two digits would be an eighth off. */
+function massOzDigits(sizeOz: number): number {
+  if (sizeOz < 1) return 3;
+  return sizeOz < 10 ? 2 : 1;
 }
 
 /**

@@ -1,28 +1,18 @@
 import type { Cost } from '@steepfall/shared/desk';
-import { LITERS_PER_US_GALLON } from '@steepfall/shared/units';
+import { costParts } from '#lib/cost-parts.ts';
 import { useMoney } from '#lib/money.ts';
 import { useUnits } from '#lib/units.ts';
 import { listWords } from '#lib/words.ts';
 
-const volumes = {
-  L: { word: 'litre', volumeL: 1 },
-  gal: { word: 'gallon', volumeL: LITERS_PER_US_GALLON },
-} as const;
-
 /** What a batch costs in ingredients; what has no price is named, never counted as free. */
-export function CostLine({ cost: { total, perL, perServing, unknown } }: { cost: Cost }) {
+export function CostLine({ cost }: { cost: Cost }) {
   const money = useMoney();
   const { volume } = useUnits();
-  const { word, volumeL } = volumes[volume];
-  const parts = [
-    { label: 'the batch', amount: total },
-    { label: `a ${word}`, amount: perL === null ? null : perL * volumeL },
-    { label: 'a serving', amount: perServing },
-  ];
+  const { unknown } = cost;
   return (
     <div className="grid gap-2">
       <dl className="flex flex-wrap gap-x-10 gap-y-3">
-        {parts.map(({ label, amount }) =>
+        {costParts(cost, volume).map(({ label, amount }) =>
           amount === null ? null : (
             <div key={label} className="flex flex-col-reverse">
               <dt className="text-note text-soft">{label}</dt>

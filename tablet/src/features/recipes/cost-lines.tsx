@@ -3,24 +3,18 @@ import { useQuery } from '@tanstack/react-query';
 import { recipeCost } from '@steepfall/shared/desk';
 import type { RecipeDocument } from '@steepfall/shared/sheets';
 import { LevelRule } from '#components/level-rule.tsx';
+import { costParts } from '#lib/cost-parts.ts';
 import { storesQuery } from '#lib/hub-queries.ts';
-import { useKnown } from '#lib/session.ts';
+import { useMoney } from '#lib/money.ts';
+import { useUnits } from '#lib/units.ts';
 
 /** What the ingredients cost, from the prices in the stores. */
 export function CostLines({ document }: { document: RecipeDocument }) {
-  const { house } = useKnown();
   const { data: stores } = useQuery(storesQuery);
   const cost = useMemo(() => (stores ? recipeCost(document, stores) : null), [document, stores]);
-  const money = useMemo(
-    () => new Intl.NumberFormat(undefined, { style: 'currency', currency: house.currency }),
-    [house.currency],
-  );
+  const money = useMoney();
+  const { volume } = useUnits();
   if (!cost) return null;
-  const lines: [string, number | null][] = [
-    ['a batch', cost.total],
-    ['a litre', cost.perL],
-    ['a serving', cost.perServing],
-  ];
   const isUnknown = cost.total === 0 && cost.unknown.length > 0;
   return (
     <section aria-label="Cost" className="grid">
@@ -30,14 +24,14 @@ export function CostLines({ document }: { document: RecipeDocument }) {
       ) : (
         <>
           <dl>
-            {lines.map(([word, amount]) =>
+            {costParts(cost, volume).map(({ label, amount }) =>
               amount === null ? null : (
                 <div
-                  key={word}
+                  key={label}
                   className="flex items-baseline justify-between gap-4 border-b border-hair py-2.5 pl-4 last:border-b-0"
                 >
-                  <dt className="text-body">{word}</dt>
-                  <dd className="text-body font-medium tabular-nums">{money.format(amount)}</dd>
+                  <dt className="text-body">{label}</dt>
+                  <dd className="text-body font-medium tabular-nums">{money(amount)}</dd>
                 </div>
               ),
             )}
