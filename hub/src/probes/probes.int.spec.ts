@@ -60,6 +60,7 @@ describe('/api/probes', () => {
       lastReadingAtMs: null,
       calibration: null,
       calibratedAtMs: null,
+      lagErrorRatio: null,
       version: 1,
     });
     expect(deviceToken).toMatch(new RegExp(`^${probe.id.replaceAll('-', '')}\\.[\\w-]{43}$`));
