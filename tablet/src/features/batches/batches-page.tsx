@@ -86,7 +86,7 @@ export function BatchesPage() {
       title="Batch book"
       above={house.name}
       lead="Every batch, its line, its numbers and what became of it."
-      action={may('recipes:read') ? <ButtonLink to="/recipes">Plan a batch</ButtonLink> : null}
+      action={may('recipes:read') && may('batches:manage') ? <ButtonLink to="/recipes">Plan a batch</ButtonLink> : null}
     >
       {batches.error ? (
         <Failed title="The book may be old" onRetry={() => void batches.refetch()}>
