@@ -126,7 +126,8 @@ describe('npm start: what it is asked', () => {
   test('--help lists the options and starts nothing', async () => {
     const launcher = launch(['--help']);
     expect(await launcher.ends()).toBe(0);
-    for (const option of ['--port', '--no-demo', '--reset-demo', '--help']) expect(launcher.printed).toContain(option);
+    for (const option of ['--port', '--lan', '--guide-port', '--no-demo', '--reset-demo', '--help'])
+      expect(launcher.printed).toContain(option);
     expect(existsSync(join(dataDir, 'mariadb'))).toBe(false);
   });
 
@@ -136,6 +137,15 @@ describe('npm start: what it is asked', () => {
     [['--port'], '--port needs a value after it; "npm start -- --help" lists what there is.\n'],
     [['--port', 'x'], '"x" is not a port; give a number from 1 to 65535, such as: npm start -- --port 8080\n'],
     [['--port', '0'], '"0" is not a port; give a number from 1 to 65535, such as: npm start -- --port 8080\n'],
+    [
+      ['--lan', '--guide-port', 'x'],
+      '"x" is not a port; give a number from 1 to 65535, such as: npm start -- --lan --guide-port 8081\n',
+    ],
+    [['--guide-port', '8081'], '--guide-port belongs to --lan; give both: npm start -- --lan --guide-port 8081\n'],
+    [
+      ['--lan', '--port', '8081', '--guide-port', '8081'],
+      '--port and --guide-port are both 8081; the two need a port each.\n',
+    ],
     [['--no-demo', '--reset-demo'], '--no-demo and --reset-demo ask for opposite things; give one of them.\n'],
   ])('%j is answered in one sentence', async (args, sentence) => {
     const launcher = launch(args);
@@ -158,6 +168,7 @@ describe('npm start: a stay', () => {
   test('prints the address and the sign-ins, and Ctrl-C leaves nothing running', async () => {
     const launcher = await launchUntilReady();
     expect(launcher.printed).toMatch(/http:\/\/localhost:\d+/);
+    expect(launcher.printed).toContain('For tablets in the kitchen: npm start -- --lan');
     expect(launcher.printed).toContain('brewer@wrenfold.example');
     expect(runningProcesses()).toHaveLength(2);
     launcher.signal('SIGINT');
@@ -205,6 +216,19 @@ describe('npm start: what goes wrong', () => {
     );
     expect(runningProcesses()).toEqual([]);
     other.close();
+  });
+
+  test('a port that is taken on one interface, for the page about trusting', async () => {
+    const other = createServer().listen(0, '127.0.0.1');
+    await once(other, 'listening');
+    const { port } = other.address() as AddressInfo;
+    const launcher = launch(['--lan', '--port', String(await freePort()), '--guide-port', String(port)]);
+    const code = await launcher.ends();
+    other.close();
+    expect(launcher.printed).toMatch(
+      /^Port \d+ is taken by another program; .+: npm start -- --lan --guide-port 8080\n$/,
+    );
+    expect(code).toBe(1);
   });
 
   test('a data folder that cannot be made', async () => {

@@ -7,6 +7,7 @@ import { LauncherError } from './launcher-error.mjs';
 import { ensureMariadbInstalled } from './mariadb.mjs';
 import { packageBin, testDataDir } from './paths.mjs';
 import { run } from './processes.mjs';
+import { ensureProxyInstalled } from './proxy.mjs';
 import { Session } from './session.mjs';
 import { countTests } from './test-report.mjs';
 
@@ -35,6 +36,7 @@ async function prepare({ log, signal }, args) {
   const steps = [
     () => ensurePackages(log, signal),
     () => ensureMariadbInstalled(log, signal),
+    () => (mayRun('hub', args) ? ensureProxyInstalled(log, signal) : undefined),
     () => (mayRun('e2e', args) ? ensureChromiumInstalled(log, signal) : undefined),
     () => ensureBuilt(log, signal),
   ];

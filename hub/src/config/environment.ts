@@ -38,7 +38,10 @@ const trustedProxiesSchema = z.string().transform((text, context): TrustedProxie
 /** Scheme, host and port, as browsers write them. */
 const originSchema = z
   .url({ protocol: /^https?$/, error: 'Give it as https://name or https://name:port.' })
-  .refine((text) => new URL(text).href === `${new URL(text).origin}/`, 'Give the address without a path.')
+  .refine(
+    (text) => !URL.canParse(text) || new URL(text).href === `${new URL(text).origin}/`,
+    'Give the address without a path.',
+  )
   .transform((text) => new URL(text).origin);
 
 /** Everything the hub reads from its environment. A wrong value stops the start, with every mistake named. */
