@@ -4,7 +4,7 @@ import { hostname, networkInterfaces } from 'node:os';
 import type { HubConfig } from '../config/environment.js';
 import { createGuideServer, listenGuide } from './guide-server.js';
 import { describeMachine, reachableFrom } from './machine.js';
-import { keepTrust, type KeptTrust, type Trust } from './trust-folder.js';
+import { keepTrust, renewTrust, type KeptTrust, type Trust } from './trust-folder.js';
 
 /** A machine that moved to another network is in it a minute later. */
 const LOOK_EVERY_MS = 60_000;
@@ -62,15 +62,16 @@ export class Lan {
     };
   }
 
-  close(): void {
+  private close(): void {
     if (this.timer) clearInterval(this.timer);
     this.guide?.close();
     this.guide?.closeAllConnections();
   }
 
-  private async look(): Promise<void> {
+  /** Renews what has to be renewed; whoever connects from then on gets it, and no line that is open is cut. */
+  async look(): Promise<void> {
     try {
-      this.kept = await keepTrust(this.config.folder, thisMachine(), Date.now());
+      this.kept = await renewTrust(this.config.folder, thisMachine(), Date.now());
     } catch {
       // A full disk or a folder that is gone: the certificate in use goes on, and the next look tries again.
       return;

@@ -30,6 +30,25 @@ export interface KeptTrust {
 export async function keepTrust(folder: string, machine: Machine, nowMs: number): Promise<KeptTrust> {
   await mkdir(folder, { recursive: true, mode: 0o700 });
   const { authority, isNew } = await keepAuthority(folder, machine, nowMs);
+  return { ...(await keepCertificate(folder, authority, machine, nowMs)), isNewAuthority: isNew };
+}
+
+/**
+ * The same while tablets are connected: never makes a new authority, which none of them would trust. That waits for a start, where somebody
+ * reads of it.
+ */
+export async function renewTrust(folder: string, machine: Machine, nowMs: number): Promise<KeptTrust> {
+  const authority = await readKeyed(join(folder, 'authority.pem'));
+  if (!authority) throw new Error('There is no authority to renew by.');
+  return { ...(await keepCertificate(folder, authority, machine, nowMs)), isNewAuthority: false };
+}
+
+async function keepCertificate(
+  folder: string,
+  authority: KeyedCertificate,
+  machine: Machine,
+  nowMs: number,
+): Promise<Omit<KeptTrust, 'isNewAuthority'>> {
   const root = new X509Certificate(authority.certificate);
   const { inside, outside } = within(readScope(root), machine);
   const path = join(folder, 'hub.pem');
@@ -40,7 +59,6 @@ export async function keepTrust(folder: string, machine: Machine, nowMs: number)
   if (!isGood) await writeKeyed(path, used);
   const seen = new NodeCertificate(authority.certificate);
   return {
-    isNewAuthority: isNew,
     isNewCertificate: !isGood,
     trust: {
       authority: {
