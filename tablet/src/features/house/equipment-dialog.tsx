@@ -36,7 +36,7 @@ import {
   type FactField,
   type Kind,
 } from './equipment-facts.ts';
-import { useVersion } from './save-at-version.ts';
+import { useVersion } from '#lib/save-at-version.ts';
 import { SendForm } from '#components/send-form.tsx';
 
 /** What the form holds; the contract decides what of it is right. */

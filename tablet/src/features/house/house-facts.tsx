@@ -12,6 +12,7 @@ import { LevelRule } from '#components/level-rule.tsx';
 import { callHubFor } from '#lib/api-client.ts';
 import { houseQuery } from '#lib/hub-queries.ts';
 import { noteHouse, useKnown, useMay } from '#lib/session.ts';
+import { useVersion } from '#lib/save-at-version.ts';
 import { useUnits } from '#lib/units.ts';
 import { SendForm } from '#components/send-form.tsx';
 
@@ -54,13 +55,16 @@ function HouseDialog({ house, onClose }: { house: House; onClose: () => void }) 
       version: house.version,
     },
   });
+  const { version, meet } = useVersion(house.version);
   const save = useMutation({
-    mutationFn: (body: UpdateHouse) => callHubFor(houseSchema, 'house', { method: 'PATCH', body }),
+    mutationFn: (body: UpdateHouse) =>
+      callHubFor(houseSchema, 'house', { method: 'PATCH', body: { ...body, version } }),
     onSuccess: (saved) => {
       client.setQueryData(houseQuery.queryKey, saved);
       noteHouse(saved);
       onClose();
     },
+    onError: (error) => meet(error, async () => (await client.fetchQuery({ ...houseQuery, staleTime: 0 })).version),
   });
   return (
     <Dialog isOpen onClose={onClose} title="The place">

@@ -2,7 +2,7 @@ import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { probeSchema, type Probe, type UpdateProbe } from '@steepfall/shared/contracts';
 import { callHubFor } from '#lib/api-client.ts';
 import { probesQuery } from '#lib/hub-queries.ts';
-import { useVersion } from './save-at-version.ts';
+import { useVersion } from '#lib/save-at-version.ts';
 
 /** Changes some of what is known of a probe, and leaves the rest as it is. */
 export function useSaveProbe(probe: Probe) {

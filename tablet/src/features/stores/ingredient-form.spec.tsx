@@ -20,7 +20,9 @@ beforeEach(async () => {
       facts.name === 'gypsum'
         ? problem('not-valid', 'No.', { errors: [{ pointer: '/facts/name', detail: 'There is a gypsum already.' }] })
         : sencha,
-    [patch]: () => (isChangedMeanwhile ? problem('changed-meanwhile', 'Look again.') : sencha),
+    'GET stores': () => [isChangedMeanwhile ? { ...sencha, version: sencha.version + 1 } : sencha],
+    [patch]: ({ version }: { version: number }) =>
+      isChangedMeanwhile && version === sencha.version ? problem('changed-meanwhile', 'Look again.') : sencha,
   });
   await hub.signIn({ temperature: 'C', mass: 'oz', volume: 'L', pressure: 'kPa' });
 });
@@ -73,13 +75,12 @@ describe(EditIngredientDialog, () => {
     renderAt(<EditIngredientDialog ingredient={sencha} onClose={onClose} />);
     await userEvent.type(screen.getByLabelText('Name'), ' first flush');
     await press('Save');
-    expect((await screen.findByRole('alert')).textContent).toContain('Someone else changed it first');
-    isChangedMeanwhile = false;
+    expect((await screen.findByRole('alert')).textContent).toContain('What you typed still stands here');
     await press('Save mine over theirs');
     await vi.waitFor(() => expect(onClose).toHaveBeenCalledOnce());
     expect(hub.bodiesOf(patch)).toMatchObject([
-      { facts: { name: 'sencha first flush' } },
-      { facts: { name: 'sencha first flush' } },
+      { facts: { name: 'sencha first flush' }, version: sencha.version },
+      { facts: { name: 'sencha first flush' }, version: sencha.version + 1 },
     ]);
   });
 });

@@ -13,7 +13,7 @@ import { Segmented } from '#components/segmented.tsx';
 import { SendForm } from '#components/send-form.tsx';
 import { acidJars, formWords, saltJars, teaWords } from './facts-words.ts';
 import { JarFields } from './jar-fields.tsx';
-import { isProblem, restOf, spreadProblems, useStoresAct } from './use-stores.ts';
+import { restOf, spreadProblems, useStoresAct, useStoresChange } from './use-stores.ts';
 
 const kinds: { value: IngredientKind; label: string }[] = [
   { value: 'tea', label: 'Tea' },
@@ -74,24 +74,20 @@ export function AddIngredientDialog({ onClose }: { onClose: () => void }) {
 }
 
 export function EditIngredientDialog({ ingredient, onClose }: { ingredient: Ingredient; onClose: () => void }) {
-  const save = useStoresAct((body: IngredientDraft) => [
-    `stores/ingredients/${ingredient.id}`,
-    { method: 'PATCH', body: { ...body, version: ingredient.version } },
-  ]);
-  // The newest version is fetched meanwhile, so that a second press is meant.
-  const isConflict = isProblem(save.error, 'changed-meanwhile');
+  const { id, version } = ingredient;
+  const save = useStoresChange<IngredientDraft>(
+    `stores/ingredients/${id}`,
+    version,
+    (stores) => stores.find((each) => each.id === id)?.version,
+  );
   return (
     <Dialog isOpen onClose={onClose} title={`Change ${ingredient.facts.name}`}>
       <IngredientForm
         facts={ingredient.facts}
         act={save}
-        onSend={(body, onError) => save.mutate(body, { onSuccess: onClose, onError })}
+        onSend={(body, onError) => save.send(body, { onSuccess: onClose, onError })}
         onClose={onClose}
-        words={{
-          act: isConflict ? 'Save mine over theirs' : 'Save',
-          busyLabel: 'Saving',
-          failedTitle: 'It was not saved',
-        }}
+        words={{ act: 'Save', busyLabel: 'Saving', failedTitle: 'It was not saved' }}
       />
     </Dialog>
   );

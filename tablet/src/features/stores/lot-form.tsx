@@ -10,7 +10,7 @@ import { SendForm } from '#components/send-form.tsx';
 import { priceMass } from '#lib/money.ts';
 import { useKnown } from '#lib/session.ts';
 import { useUnits } from '#lib/units.ts';
-import { isProblem, restOf, spreadProblems, useStoresAct } from './use-stores.ts';
+import { restOf, spreadProblems, useStoresAct, useStoresChange } from './use-stores.ts';
 
 type HopFacts = NonNullable<LotFacts['hops']>;
 /** What the form holds; the contract decides what of it is right. */
@@ -67,11 +67,11 @@ interface EditLotProps {
 
 export function EditLotDialog({ ingredient, lot, onClose }: EditLotProps) {
   const { code, receivedOn, bestBefore, pricePerKg, note, hops, version } = lot;
-  const save = useStoresAct((body: LotDraft) => [
+  const save = useStoresChange<LotDraft>(
     `stores/lots/${lot.id}`,
-    // The newest version, so that a second press after a conflict is meant.
-    { method: 'PATCH', body: { ...body, version } },
-  ]);
+    version,
+    (stores) => stores.flatMap(({ lots }) => lots).find(({ id }) => id === lot.id)?.version,
+  );
   return (
     <Dialog isOpen onClose={onClose} title={`Change lot ${code}`}>
       <LotForm
@@ -79,13 +79,9 @@ export function EditLotDialog({ ingredient, lot, onClose }: EditLotProps) {
         isHops={ingredient.facts.kind === 'hops'}
         start={{ version, facts: { code, receivedOn, bestBefore, pricePerKg, note, hops } }}
         act={save}
-        onSend={(body, onError) => save.mutate(body, { onSuccess: onClose, onError })}
+        onSend={(body, onError) => save.send(body, { onSuccess: onClose, onError })}
         onClose={onClose}
-        words={{
-          act: isProblem(save.error, 'changed-meanwhile') ? 'Save mine over theirs' : 'Save',
-          busyLabel: 'Saving',
-          failedTitle: 'It was not saved',
-        }}
+        words={{ act: 'Save', busyLabel: 'Saving', failedTitle: 'It was not saved' }}
       />
     </Dialog>
   );

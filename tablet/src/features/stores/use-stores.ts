@@ -5,6 +5,7 @@ import { callHub, callHubFor } from '#lib/api-client.ts';
 import { HubProblemError, type HubRequest } from '#lib/http.ts';
 import { storesQuery } from '#lib/hub-queries.ts';
 import type { ProblemType } from '@steepfall/shared/problems';
+import { useVersion } from '#lib/save-at-version.ts';
 import { offerUndo } from '#lib/undo.ts';
 import { fieldProblems } from '#lib/words.ts';
 
@@ -25,6 +26,31 @@ export function useStoresAct<Input>(ask: (input: Input) => [path: string, reques
     onSuccess: (ingredient) => noteIngredient(client, ingredient),
     onSettled: () => void client.invalidateQueries({ queryKey: storesQuery.queryKey }),
   });
+}
+
+/**
+ * The same for a form that changes something: at the version that the form was opened with, whatever the list has fetched since. When
+ * somebody else was faster, a second press is meant.
+ */
+export function useStoresChange<Input extends object>(
+  path: string,
+  openedAt: number,
+  versionIn: (stores: readonly Ingredient[]) => number | undefined,
+) {
+  const client = useQueryClient();
+  const { version, meet } = useVersion(openedAt);
+  const act = useStoresAct((body: Input) => [path, { method: 'PATCH', body: { ...body, version } }]);
+  return {
+    ...act,
+    send: (body: Input, options: { onSuccess: () => void; onError: (error: Error) => void }) =>
+      act.mutate(body, {
+        onSuccess: options.onSuccess,
+        onError: (error) => {
+          options.onError(error);
+          void meet(error, async () => versionIn(await client.fetchQuery({ ...storesQuery, staleTime: 0 })));
+        },
+      }),
+  };
 }
 
 /** Takes an ingredient or a lot off the shelf, and offers it back. */

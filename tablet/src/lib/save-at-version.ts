@@ -1,5 +1,5 @@
 import { useState } from 'react';
-import { HubProblemError } from '#lib/http.ts';
+import { HubProblemError } from './http.ts';
 
 /**
  * A form saves at the version it was opened with. When somebody else was faster, it says so once with the newest in hand; saving again
