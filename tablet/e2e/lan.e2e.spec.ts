@@ -122,8 +122,8 @@ async function ready(): Promise<void> {
 function trust(home: string, certificate: string): void {
   const database = join(home, '.pki/nssdb');
   mkdirSync(database, { recursive: true });
-  execFileSync('certutil', ['-d', `sql:${database}`, '-N', '--empty-password']);
-  execFileSync('certutil', ['-d', `sql:${database}`, '-A', '-t', 'C,,', '-n', 'steepfall', '-i', certificate]);
+  execFileSync('/usr/bin/certutil', ['-d', `sql:${database}`, '-N', '--empty-password']);
+  execFileSync('/usr/bin/certutil', ['-d', `sql:${database}`, '-A', '-t', 'C,,', '-n', 'steepfall', '-i', certificate]);
 }
 
 async function freePort(): Promise<number> {

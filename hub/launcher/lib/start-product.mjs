@@ -79,9 +79,8 @@ async function start(session, { port, guidePort, isDemo, isResetDemo }) {
   log(`\n${place}\n${printed}\nCtrl-C stops it.`);
 }
 
-/** A house that was made once stays, whatever the later starts are told. */
 const demoOnLan =
-  'Everyone knows these passwords, and now the whole network can use them: for real brews start on a fresh data folder with --lan --no-demo.\n';
+  'Everyone in this network can sign in with these. Where strangers use it too, add your own people under House and take access away from these.\n';
 
 /**
  * @param {string} command
