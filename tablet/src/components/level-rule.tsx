@@ -13,12 +13,12 @@ interface LevelRuleProps {
 export function LevelRule({ children, level = 2, aside, id }: LevelRuleProps) {
   const Heading = level === 2 ? 'h2' : 'h3';
   return (
-    <div className="flex min-h-12 items-center gap-4">
-      <Heading id={id} className="shrink-0 text-lead font-semibold">
+    <div className="flex min-h-12 flex-wrap items-center gap-x-4 gap-y-1">
+      <Heading id={id} className="max-w-full text-lead font-semibold">
         {children}
       </Heading>
       <LevelLine />
-      {aside ? <div className="shrink-0 text-body text-soft">{aside}</div> : null}
+      {aside ? <div className="max-w-full text-body text-soft">{aside}</div> : null}
     </div>
   );
 }

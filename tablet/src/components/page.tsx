@@ -26,7 +26,7 @@ export function Page({ title, tabTitle, above, lead, action, children }: PagePro
           </h1>
           {lead ? <div className="mt-3 max-w-prose text-lead text-soft">{lead}</div> : null}
         </div>
-        {action ? <div className="shrink-0">{action}</div> : null}
+        {action ? <div className="max-w-full">{action}</div> : null}
       </header>
       <div className="mt-9 grid gap-12">{children}</div>
     </div>

@@ -96,7 +96,7 @@ export function AdditionRow(props: AdditionRowProps) {
       </div>
       <div id={detailsId} hidden={!open}>
         {open ? (
-          <div className="grid gap-4 pt-2 pb-1">
+          <div role="group" aria-label={name} className="grid gap-4 pt-2 pb-1">
             <AdditionFacts addition={addition} path={path} stores={stores} errorAt={errorAt} onChange={onChange} />
             <ConditionFields addition={addition} path={path} errorAt={errorAt} onChange={onChange} />
           </div>

@@ -47,7 +47,7 @@ export function ConditionFields({ addition, path, errorAt, onChange }: Condition
         </SelectField>
         {addition.in.at === 'steep' ? (
           <NumberField
-            label="into the steep"
+            label={<Way way="in">into the steep</Way>}
             path={`${path}.in.afterS`}
             scale={minutesScale}
             value={addition.in.afterS}
@@ -56,7 +56,7 @@ export function ConditionFields({ addition, path, errorAt, onChange }: Condition
           />
         ) : addition.in.at === 'falling' ? (
           <NumberField
-            label="at"
+            label={<Way way="in">at</Way>}
             path={`${path}.in.tempC`}
             scale={degrees}
             value={addition.in.tempC}
@@ -110,7 +110,7 @@ function OutFields({ out, path, errorAt, lowestC, onChange }: OutFieldsProps) {
       </SelectField>
       {out.at === 'timer' ? (
         <NumberField
-          label="after"
+          label={<Way way="out">after</Way>}
           path={`${path}.out.durationS`}
           scale={minutesScale}
           value={out.durationS}
@@ -119,7 +119,7 @@ function OutFields({ out, path, errorAt, lowestC, onChange }: OutFieldsProps) {
         />
       ) : out.at === 'falling' ? (
         <NumberField
-          label="at"
+          label={<Way way="out">at</Way>}
           path={`${path}.out.tempC`}
           scale={quantityOf('temperature', units)}
           value={out.tempC}
@@ -128,5 +128,15 @@ function OutFields({ out, path, errorAt, lowestC, onChange }: OutFieldsProps) {
         />
       ) : null}
     </div>
+  );
+}
+
+/** "in at", "out after": what stands beside it on the screen is not heard with it. */
+function Way({ way, children }: { way: 'in' | 'out'; children: string }) {
+  return (
+    <>
+      <span className="sr-only">{way} </span>
+      {children}
+    </>
   );
 }

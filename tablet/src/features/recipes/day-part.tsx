@@ -77,7 +77,7 @@ export function TargetsSection() {
           onChange={(min = Number.NaN) => change({ ...targets, waterPh: { ...waterPh, min } })}
         />
         <NumberField
-          label="to"
+          label={<RangeEnd of="Water, cold" />}
           path="targets.waterPh.max"
           scale={ph}
           value={waterPh.max}
@@ -95,7 +95,7 @@ export function TargetsSection() {
           onChange={(value) => setDrinkPh('min', value)}
         />
         <NumberField
-          label="to"
+          label={<RangeEnd of="Drink, still" />}
           path="targets.drinkPh.max"
           scale={ph}
           isOptional
@@ -116,5 +116,13 @@ export function TargetsSection() {
         onChange={(caffeineMostMgPerL) => change({ ...targets, caffeineMostMgPerL })}
       />
     </section>
+  );
+}
+
+function RangeEnd({ of }: { of: string }) {
+  return (
+    <>
+      <span className="sr-only">{of}: </span>to
+    </>
   );
 }

@@ -80,8 +80,12 @@ export function LotSection({ ingredient, lot, isFirst, mayManage }: LotSectionPr
           <div className="flex flex-wrap gap-3">
             {mayManage ? (
               <>
-                <Button onClick={() => setAsked('count')}>Count</Button>
-                <Button onClick={() => setAsked('use')}>Use some</Button>
+                <Button onClick={() => setAsked('count')}>
+                  Count<span className="sr-only"> lot {lot.code}</span>
+                </Button>
+                <Button onClick={() => setAsked('use')}>
+                  Use some<span className="sr-only"> of lot {lot.code}</span>
+                </Button>
               </>
             ) : null}
             <DisclosureButton className={buttonClass('quiet', 'desk', mayManage ? '' : '-ml-5')}>
