@@ -118,7 +118,7 @@ describe('a whole brew day in a browser', () => {
 
   it('calls for the tea when the liquid gets to the steep', async () => {
     await hand.done('Coil in');
-    await hand.until('Heat to the steep');
+    await hand.until('Heat to steep');
     findings.push(...(await picture(page, 'heating')));
     await hand.doneWhenCalled('Tea in', () => isDone('heat'));
     await agree('Steep');
@@ -156,18 +156,18 @@ describe('a whole brew day in a browser', () => {
 
   it('finishes with the keg filled, and what comes after it', async () => {
     await hand.doneWhenCalled('Hops out');
-    await hand.doneWhenCalled('Transfer to the keg');
-    await hand.done('Purge, close, fridge');
+    await hand.doneWhenCalled('Fill the keg');
+    await hand.done('Purge and close');
     await hand.done('Clean down');
     await hand.until('Set the gas');
     expect(await page.getByRole('region', { name: 'Step' }).textContent()).toMatch(/gauge \d+.kPa/);
     findings.push(...(await picture(page, 'gas')));
     await hand.done('Set the gas');
-    await hand.measure('Look again tomorrow', /^Type the/, '92');
+    await hand.measure('Look again', /^Type the/, '92');
     await hand.press(/^Done/);
     await hand.measure('Taste and note', /^Type the/, '7');
     await hand.press(/^Done/);
-    await hand.until('What to change next time');
+    await hand.until('For next time');
     await hand.note('Hops at 60, all else the same.');
     await hand.press(/^Done/);
     await hand.until('All steps done');

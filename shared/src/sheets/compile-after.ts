@@ -12,7 +12,7 @@ export function afterTheDay(document: RecipeDocument, altitudeM: number): StepDr
     {
       id: 'purge',
       kind: 'transfer',
-      title: 'Purge, close, fridge',
+      title: 'Purge and close',
       detail: 'Purge the headspace three times, then into the fridge.',
       cautions: ['co2', 'pressure', 'lift', 'cold'],
     },
@@ -21,8 +21,8 @@ export function afterTheDay(document: RecipeDocument, altitudeM: number): StepDr
     {
       id: 'look-again',
       kind: 'measure',
-      title: 'Look again tomorrow',
-      detail: 'Does the gauge still stand where you set it? No hiss, no drip?',
+      title: 'Look again',
+      detail: 'Tomorrow: does the gauge still stand where you set it? No hiss, no drip?',
       asks: 'pressureKPa',
       cautions: ['pressure'],
     },
@@ -38,14 +38,14 @@ export function afterTheDay(document: RecipeDocument, altitudeM: number): StepDr
     {
       id: 'next-time',
       kind: 'taste',
-      title: 'What to change next time',
-      detail: 'One change at a time. Write it as a note.',
+      title: 'For next time',
+      detail: 'What would you change? One thing at a time. Write it as a note.',
     },
   ];
 }
 
 function transfer(document: RecipeDocument): StepDraft {
-  const step: StepDraft = { id: 'transfer', kind: 'transfer', title: 'Transfer to the keg', cautions: ['allergens'] };
+  const step: StepDraft = { id: 'transfer', kind: 'transfer', title: 'Fill the keg', cautions: ['allergens'] };
   if (isColdSteep(document)) return { ...step, detail: 'Fill from the bottom, gently.' };
   const lowestC = Math.min(document.transferC, ...dayOrder(document).byFall.map(({ tempC }) => tempC));
   return {

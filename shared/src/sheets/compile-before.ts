@@ -105,7 +105,7 @@ export function theHeat(document: RecipeDocument): StepDraft[] {
     {
       id: 'heat',
       kind: 'heat',
-      title: 'Heat to the steep',
+      title: 'Heat to steep',
       done: { by: 'temperature', direction: 'rising', tempC: document.steepC },
       meanwhile: [
         ...(hasTea ? [{ id: 'weigh-tea', text: 'weigh the tea into its bag' }] : []),

@@ -44,7 +44,7 @@ export function buildSheet(steps?: Step[]): RunSheet {
       buildStep({
         id: 'heat',
         kind: 'heat',
-        title: 'Heat to the steep',
+        title: 'Heat to steep',
         done: { by: 'temperature', direction: 'rising', tempC: 76 },
       }),
       buildStep({
@@ -71,7 +71,7 @@ export function buildSheet(steps?: Step[]): RunSheet {
         amounts: [{ name: 'Cascade', massG: 60, bag: 'bag 2' }],
         acts: ['hops-in'],
       }),
-      buildStep({ id: 'transfer', kind: 'transfer', title: 'Transfer to the keg' }),
+      buildStep({ id: 'transfer', kind: 'transfer', title: 'Fill the keg' }),
     ],
   });
 }
