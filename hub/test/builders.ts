@@ -92,6 +92,7 @@ const usualEquipment = {
   },
   chiller: { kind: 'chiller', name: 'Coil', facts: { metal: 'stainless', lengthM: 7.6, coolantC: 13 } },
   keg: { kind: 'keg', name: 'Keg', facts: { volumeL: 19, tareG: 4200, ratedKPa: 900 } },
+  scale: { kind: 'scale', name: 'Scale', facts: { resolutionG: 0.1, capacityG: 3000 } },
 } satisfies Record<string, CreateEquipment>;
 
 export function usualEquipmentOf<Kind extends keyof typeof usualEquipment>(kind: Kind): (typeof usualEquipment)[Kind] {
