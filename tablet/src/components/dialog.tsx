@@ -26,7 +26,7 @@ export function Dialog({ isOpen, onClose, title, children, actions, role = 'dial
               size === 'wide' ? 'sm:max-w-3xl' : 'sm:max-w-lg',
             )}
           >
-            <DialogTitle className="text-title">{title}</DialogTitle>
+            <DialogTitle className="text-title text-balance">{title}</DialogTitle>
             <div className="mt-4 text-body">{children}</div>
             {actions ? <div className="mt-8 flex flex-wrap gap-3">{actions}</div> : null}
           </DialogPanel>

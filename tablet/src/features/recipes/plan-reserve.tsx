@@ -132,6 +132,8 @@ function LotLine({ name, index, control, groups, onRemove }: LotLineProps) {
               {group.lots.map((lot) => (
                 <option key={lot.id} value={lot.id}>
                   {[
+                    // What is chosen shows no head of its group: a lot of something else must say so itself.
+                    ...(group.name === name ? [] : [group.name]),
                     lot.code,
                     `${formatMass(freeG(lot), { unit })} free`,
                     ...(lot.bestBefore ? [`before ${format(localDate(lot.bestBefore), 'MMM yyyy')}`] : []),

@@ -196,6 +196,9 @@ const byWords: Record<Swap['by'], string> = {
   mass: 'gram for gram',
 };
 
+/** They come the most alike first; a full shelf would make a list that nobody reads. */
+const MOST_SWAPS = 5;
+
 /** "34 g of this tea left: brew 12.4 L, or swap part of it for …". */
 function StoresAnswer({ fit, onSwap }: { fit: StoresFit; onSwap: (swap: Swap) => void }) {
   const units = useUnits();
@@ -219,7 +222,7 @@ function StoresAnswer({ fit, onSwap }: { fit: StoresFit; onSwap: (swap: Swap) =>
       )}
       {fit.swaps.length > 0 ? (
         <ul className="grid">
-          {fit.swaps.map((swap) => (
+          {fit.swaps.slice(0, MOST_SWAPS).map((swap) => (
             <li
               key={`${swap.additionId}${swap.ingredientId}`}
               className="flex flex-wrap items-center justify-between gap-x-6 gap-y-2 border-b border-hair py-2.5"
@@ -241,6 +244,11 @@ function StoresAnswer({ fit, onSwap }: { fit: StoresFit; onSwap: (swap: Swap) =>
             </li>
           ))}
         </ul>
+      ) : null}
+      {fit.swaps.length > MOST_SWAPS ? (
+        <p className="text-note text-soft">
+          The {MOST_SWAPS} most alike of {fit.swaps.length} that could stand in.
+        </p>
       ) : null}
       {fit.notInStores.length > 0 ? (
         <p className="text-note text-soft">
