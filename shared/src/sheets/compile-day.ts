@@ -14,6 +14,9 @@ export function theDay(document: RecipeDocument, name: Namer): StepDraft[] {
   return [...steeps, chill(byClock.length === 0), ...byFall.flatMap((event) => caughtSteps(event, names))];
 }
 
+/** Below it a scald takes minutes (hospital scald tables); the mark on every step would soon be read on none. */
+const SCALDS_ABOVE_C = 49;
+
 /** What is not hot does not scald. */
 function cold(step: StepDraft): StepDraft {
   return { ...step, cautions: step.cautions?.filter((caution) => caution !== 'scald') };
@@ -89,13 +92,14 @@ function fallSteps({ kind, additions, outs }: FallEvent, names: DayNames): [Step
 
 /** The same, called for by the falling temperature. Leaf and hops are caught; a dose can wait for its hand. */
 function caughtSteps(event: FallEvent, names: DayNames): StepDraft[] {
+  const careful = (step: StepDraft) => (event.tempC > SCALDS_ABOVE_C ? step : cold(step));
   const [first, ...rest] = fallSteps(event, names);
   return [
     {
-      ...first,
+      ...careful(first),
       ...(first.kind === 'add' ? { kind: 'catch' } : {}),
       start: { by: 'temperature', direction: 'falling', tempC: event.tempC },
     },
-    ...rest,
+    ...rest.map(careful),
   ];
 }

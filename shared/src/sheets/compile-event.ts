@@ -1,4 +1,4 @@
-import { amountsOf, chargeTitle, clipped, isInBag, namesOf, type Namer } from './compile-words.js';
+import { amountsOf, chargeTitle, clipped, isInBag, namesOf, titleOf, type Namer } from './compile-words.js';
 import type { Addition, IngredientKind, RecipeDocument } from './recipe.js';
 import { dayOrder, type DayEvent } from './day-order.js';
 import type { StepDraft } from './step-order.js';
@@ -62,11 +62,13 @@ export function outStep(additions: readonly Addition[], { name, several }: DayNa
   const kinds = kindsOf(additions);
   const stem = stemOfEvent('out', additions);
   const id = name(stem);
-  const names = additions.length > 1 || id !== stem ? `${clipped(namesOf(additions))}. ` : '';
+  const title = chargeTitle(additions, several.has(stem));
+  const isNamed = title !== titleOf(kinds) || (additions.length === 1 && id === stem);
+  const names = isNamed ? '' : `${clipped(namesOf(additions))}. `;
   return {
     id,
     kind: 'remove',
-    title: `${chargeTitle(additions, several.has(stem))} out`,
+    title: `${title} out`,
     detail: `${names}Lift, let it drain, do not squeeze.`,
     acts: actsOf(kinds, 'out'),
     cautions: kinds.includes('hops') ? ['scald', 'dogs'] : ['scald'],

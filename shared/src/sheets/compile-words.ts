@@ -42,7 +42,8 @@ const MOST_TITLE_NAMES = 32;
 export function chargeTitle(additions: readonly Addition[], isOneOfSeveral: boolean): string {
   const kinds = [...new Set(additions.map(({ kind }) => kind))];
   const names = [...new Set(additions.map(({ name }) => name))].join(' and ');
-  return isOneOfSeveral && names.length <= MOST_TITLE_NAMES ? names : titleOf(kinds);
+  if (!isOneOfSeveral || names.length > MOST_TITLE_NAMES) return titleOf(kinds);
+  return names.charAt(0).toUpperCase() + names.slice(1);
 }
 
 /** "60 % Reverse-osmosis water, 40 % Tap water". */

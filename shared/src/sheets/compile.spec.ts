@@ -72,6 +72,9 @@ describe(compileSheet, () => {
 
   it('warns where the risk is', () => {
     expect(stepOf('tea-out')?.cautions).toContain('scald');
+    expect(stepOf('hops-in')?.cautions).toContain('scald');
+    // 30 °C: warm as a bath.
+    expect(stepOf('hops-out')?.cautions).not.toContain('scald');
     expect(stepOf('hops-out')?.cautions).toContain('dogs');
     expect(stepOf('acid')?.cautions).toContain('acid');
     expect(stepOf('gas')?.cautions).toEqual(expect.arrayContaining(['pressure', 'co2']));
@@ -113,7 +116,7 @@ describe(compileSheet, () => {
         .map(({ title }) => title);
     expect(titled(charges)).toEqual(['Saaz in', 'Cascade and Hallertau in', 'Hops out']);
     expect(titled([buildTea(), ...charges.slice(0, 1)])).toEqual(['Tea in', 'Tea out', 'Hops in', 'Hops out']);
-    const long = charges.map((one) => ({ ...one, name: one.name.repeat(9) }));
+    const long = charges.map((one) => ({ ...one, name: one.name.padEnd(40, '-') }));
     expect(titled(long)).toEqual(['Hops in', 'Hops in', 'Hops out']);
   });
 
