@@ -9,7 +9,6 @@ describe(readEnvironment, () => {
       host: '127.0.0.1',
       port: 4680,
       isDemo: false,
-      isProduction: true,
       tabletDist: null,
       lan: null,
       trustedProxies: false,

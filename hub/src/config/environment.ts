@@ -83,7 +83,6 @@ export type Environment = z.infer<typeof environmentSchema>;
 
 /** The settings of one hub, as the rest of the hub sees them. */
 export class HubConfig {
-  readonly isProduction: boolean;
   readonly databaseUrl: string;
   readonly host: string;
   readonly port: number;
@@ -100,7 +99,6 @@ export class HubConfig {
   readonly logLevels: (typeof logLevels)[number][];
 
   constructor(environment: Environment) {
-    this.isProduction = environment.NODE_ENV === 'production';
     this.databaseUrl = environment.DATABASE_URL;
     this.host = environment.HOST;
     this.port = environment.PORT;

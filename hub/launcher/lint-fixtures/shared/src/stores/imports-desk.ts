@@ -1,0 +1,4 @@
+// planted: boundaries/dependencies
+import { cost } from '../desk/cost.js';
+
+export const found = cost;

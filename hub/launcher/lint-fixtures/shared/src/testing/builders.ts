@@ -1,0 +1,1 @@
+export const built = 1;
