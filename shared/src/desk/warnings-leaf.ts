@@ -15,6 +15,7 @@ export function leafWarnings(context: RowContext): DeskWarning[] {
   const { document } = context;
   return [
     ...teasOf(document).flatMap((leaf, index) => steepWarnings(context, leaf, index)),
+    ...coldTimerWarnings(context),
     ...caffeineWarnings(context),
     ...hopsOf(document).flatMap((hops) => hopWarnings(context, hops)),
     ...orderWarnings(context),
@@ -68,6 +69,24 @@ function steepWarnings({ document, figures, day, units }: RowContext, leaf: Leaf
       act: 'Take it out sooner, or steep it cooler.',
     }),
   ];
+}
+
+/** What went in cold heats up with the water: its clock must not outlast that. */
+function coldTimerWarnings({ document, day, units }: RowContext): DeskWarning[] {
+  return document.additions.flatMap((one) => {
+    if (one.in.at !== 'fill' || !('out' in one) || one.out.at !== 'timer') return [];
+    const { inAtMs, outAtMs } = contactMs(day, one.id);
+    const hotAfterS = (outAtMs - inAtMs) / 1000;
+    if (hotAfterS >= one.out.durationS - 1) return [];
+    const { temp, span } = wordsIn(units);
+    return [
+      warning(`cold-timer.${one.id}`, 'care', pathOf(document, one, 'out'), {
+        what: `${one.name} goes in cold for ${span(one.out.durationS)}, and the water is at ${temp(document.steepC)} after ${span(hotAfterS)}.`,
+        why: 'The heat is lit as soon as the kettle is full. The figures take it out when the steep is reached; the run sheet waits for its clock, over the heat.',
+        act: 'Give it a shorter time, or let it stand cold as a step of your own before the heat is lit.',
+      }),
+    ];
+  });
 }
 
 function caffeineWarnings({ document, figures, units }: RowContext): DeskWarning[] {

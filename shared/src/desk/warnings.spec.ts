@@ -138,6 +138,25 @@ describe('warnings', () => {
     for (const text of [found?.what, found?.why, found?.act]) expect(text).toMatch(/^\S.*\.$/);
   });
 
+  it('tell of a clock that outlasts the heating of what went in cold', () => {
+    const mint = (durationS: number) =>
+      having(
+        (one) => one,
+        [
+          {
+            ...{ id: 'mint', kind: 'other', name: 'mint', massG: 20, keeps: 'g-per-l' },
+            ...{ in: { at: 'fill' }, out: { at: 'timer', durationS } },
+          },
+        ],
+      );
+    const found = (durationS: number) => warningsOf(mint(durationS)).find(({ id }) => id === 'cold-timer.mint');
+    expect(found(600)).toBeUndefined();
+    expect(found(36_000)).toMatchObject({ grade: 'care', path: 'additions.3.out' });
+    expect(found(36_000)?.what).toContain('Mint goes in cold for 10 h 0 min');
+    const cold = { ...mint(36_000), steepC: 8 };
+    expect(warningsOf(cold).some(({ id }) => id === 'cold-timer.mint')).toBe(false);
+  });
+
   it('come gravest first', () => {
     const grades = warningsOf(acidG(1), { ...kit, chiller: { ...chiller, metal: 'copper' } }).map(({ grade }) => grade);
     const order = ['danger', 'care', 'note'];
