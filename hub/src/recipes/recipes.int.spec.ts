@@ -122,6 +122,11 @@ describe('POST /api/recipes', () => {
     expect(await list(author)).toHaveLength(1);
   });
 
+  it('takes as much at one moment as the schema does, and a step of the brewer that is named like another', async () => {
+    const own = [{ id: 'fill', title: 'Fill again', done: { by: 'hand' } }];
+    await create(await brewer(), { ...doc({ additions: manySalts(), steps: { own } }) } as typeof first);
+  });
+
   it.each<[string, Record<string, unknown>, string[]]>([
     ['nothing', {}, ['/name', '/summary', '/note', '/document']],
     ['an empty name', { ...first, name: '  ' }, ['/name']],
@@ -134,12 +139,6 @@ describe('POST /api/recipes', () => {
     ['a mass of nothing', doc({ additions: [buildTea({ massG: 0 })] }), ['/document/additions/0/massG']],
     ['a target upside down', doc({ targets: { waterPh: { min: 5, max: 4 } } }), ['/document/targets/waterPh/max']],
     ['a document of an old build', doc({ v: 1 }), ['/document/v']],
-    ['more in one moment than a step can list', doc({ additions: manySalts() }), ['/document/additions']],
-    [
-      'a step of the brewer with the name of another',
-      doc({ steps: { own: [{ id: 'fill', title: 'Fill again', done: { by: 'hand' } }] } }),
-      ['/document/steps/own'],
-    ],
   ])('refuses %s, at the field', async (_, body, pointers) => {
     const author = await brewer();
     expectProblem(await call('post', author).send(body), 'not-valid', pointers);
@@ -214,7 +213,7 @@ describe('POST /api/recipes/:id/revisions', () => {
     expect(revisions.map(({ number }) => number)).toEqual([2, 1]);
   });
 
-  it('refuses what changes nothing, a revision of another recipe, and what makes no sheet', async () => {
+  it('refuses what changes nothing, and a revision of another recipe', async () => {
     const author = await brewer();
     const recipe = await create(author);
     const body = { baseRevisionId: recipe.latestRevisionId, note: 'Again.', document: stronger };
@@ -223,8 +222,6 @@ describe('POST /api/recipes/:id/revisions', () => {
     expect((same.body as Problem).detail).toContain('Nothing is different from revision 1');
     const another = await create(author, { ...first, name: 'Another' });
     expectProblem(await revise(author, another, body), 'not-valid', ['/baseRevisionId']);
-    const heavy = buildDocument({ additions: manySalts() });
-    expectProblem(await revise(author, recipe, { ...body, document: heavy }), 'not-valid', ['/document/additions']);
     expectProblem(await revise(author, recipe, { ...body, document: null, extra: 1 }), 'not-valid', ['/document', '']);
     expectProblem(await revise(await brewer(), recipe, body), 'not-found');
     const hand = await signInAs(testApp, 'hand', { house: author.house });
@@ -238,7 +235,7 @@ function doc(changes: object): Record<string, unknown> {
 }
 
 function manySalts(): Addition[] {
-  return Array.from({ length: 21 }, (_, index) => ({
+  return Array.from({ length: 40 }, (_, index) => ({
     id: `salt-${index}`,
     kind: 'salt',
     name: 'gypsum',
