@@ -35,8 +35,8 @@ export function titleOf(kinds: readonly IngredientKind[]): string {
   return kinds.map((kind, index) => (index === 0 ? kindTitle[kind] : kindTitle[kind].toLowerCase())).join(' and ');
 }
 
-/** Longer names stand with the amounts; a title is read from two metres. */
-const MOST_TITLE_NAMES = 32;
+/** Letters that still read from two metres with "out" behind them; longer names stand with the amounts. */
+const MOST_TITLE_NAMES = 12;
 
 /** The same, or by name, "Saaz", where the day has more than one charge of the kind. */
 export function chargeTitle(additions: readonly Addition[], isOneOfSeveral: boolean): string {

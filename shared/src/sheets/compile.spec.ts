@@ -114,7 +114,7 @@ describe(compileSheet, () => {
       compileSheet(buildDocument({ additions }), kit)
         .steps.filter(({ id }) => /^(hops|tea)-/.test(id))
         .map(({ title }) => title);
-    expect(titled(charges)).toEqual(['Saaz in', 'Cascade and Hallertau in', 'Hops out']);
+    expect(titled(charges)).toEqual(['Saaz in', 'Hops in', 'Hops out']);
     expect(titled([buildTea(), ...charges.slice(0, 1)])).toEqual(['Tea in', 'Tea out', 'Hops in', 'Hops out']);
     const long = charges.map((one) => ({ ...one, name: one.name.padEnd(40, '-') }));
     expect(titled(long)).toEqual(['Hops in', 'Hops in', 'Hops out']);
