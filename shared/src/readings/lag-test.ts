@@ -56,7 +56,7 @@ interface Point {
  * @param readings in order of time, from before the plunge up to now; as the probe sent them.
  * @param plungedAtMs by the clock of the readings.
  * @param facts smallest step of the probe and time between its readings.
- * @see handbook of sensors: first order with dead time, t50 and t90 (probeLag in figures). The uncertainty joins the hand that
+ * @see a first-order sensor with dead time, t50 and t90 (probeLag in figures). The uncertainty joins the hand that
  * presses, the spacing of the readings and the steps of the probe.
  */
 export function lagTest(

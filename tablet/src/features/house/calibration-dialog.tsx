@@ -28,7 +28,7 @@ const hectopascal: Quantity = { symbol: 'hPa', fromInside: (kPa) => kPa * 10, to
 /** What a barometer in a kitchen can show, from the highest to the lowest house. */
 const LOWEST_KPA = 45;
 const HIGHEST_KPA = 110;
-/** An ice bath in a kitchen, a rolling boil, and the weather where nobody tells the pressure (handbook: about so much). */
+/** An ice bath in a kitchen, a rolling boil, and the weather where nobody tells the pressure (common practice, about so much). */
 const ICE_K = 0.1;
 const BOIL_K = 0.2;
 const WEATHER_K = 0.8;
