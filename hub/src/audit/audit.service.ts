@@ -1,6 +1,7 @@
 import { Injectable } from '@nestjs/common';
 import { InjectModel } from '@nestjs/sequelize';
 import type { Transaction } from 'sequelize';
+import type { Actor } from '../common/access/actor.js';
 import { Clock } from '../common/clock.js';
 import { AuditEntry } from './models/audit-entry.model.js';
 
@@ -22,6 +23,17 @@ export class AuditService {
     @InjectModel(AuditEntry) private readonly entries: typeof AuditEntry,
     private readonly clock: Clock,
   ) {}
+
+  /** What a signed-in member did. */
+  recordAct(
+    { houseId, memberId }: Pick<Actor, 'houseId' | 'memberId'>,
+    action: string,
+    subject: string,
+    facts: Record<string, unknown>,
+    transaction: Transaction,
+  ): Promise<void> {
+    return this.record({ houseId, memberId, action, subject, facts }, transaction);
+  }
 
   async record(act: AuditedAct, transaction?: Transaction): Promise<void> {
     await this.entries.create({ ...act, facts: act.facts ?? {}, atMs: this.clock.nowMs() }, { transaction });

@@ -114,7 +114,7 @@ export class BatchesService {
         { transaction },
       );
       await this.stores.reserve(houseId, batch.id, reserve, { mayGoBelowZero }, transaction);
-      await this.record(actor, 'batch.planned', batch.id, { ...values, reserve, mayGoBelowZero }, transaction);
+      await this.audit.recordAct(actor, 'batch.planned', batch.id, { ...values, reserve, mayGoBelowZero }, transaction);
       return batch;
     });
     return this.get(houseId, row.id);
@@ -182,7 +182,7 @@ export class BatchesService {
         throw new ProblemError('changed-meanwhile', 'Somebody else changed this sheet. Load it again, then change it.');
       refuseBrokenSheet(sheet, row.volumeL);
       await row.update({ sheet, sheetVersion: sheetVersion + 1 }, { transaction });
-      await this.record(actor, 'batch.sheet-changed', id, { sheetVersion: sheetVersion + 1 }, transaction);
+      await this.audit.recordAct(actor, 'batch.sheet-changed', id, { sheetVersion: sheetVersion + 1 }, transaction);
     });
     return this.plan(actor.houseId, id);
   }
@@ -193,7 +193,7 @@ export class BatchesService {
       const row = await this.lockPlanned(actor.houseId, id, transaction);
       await row.update({ cancelledAtMs: this.clock.nowMs() }, { transaction });
       await this.stores.release(actor.houseId, id, transaction);
-      await this.record(actor, 'batch.cancelled', id, {}, transaction);
+      await this.audit.recordAct(actor, 'batch.cancelled', id, {}, transaction);
     });
   }
 
@@ -204,7 +204,7 @@ export class BatchesService {
       if (row.cancelledAtMs === null) return;
       await row.update({ cancelledAtMs: null }, { transaction });
       await this.stores.reserveAgain(actor.houseId, id, transaction);
-      await this.record(actor, 'batch.restored', id, {}, transaction);
+      await this.audit.recordAct(actor, 'batch.restored', id, {}, transaction);
     });
     return this.get(actor.houseId, id);
   }
@@ -221,16 +221,6 @@ export class BatchesService {
     const status = statusOf(row, run);
     if (status !== 'planned') throw new ProblemError('batch-not-planned', notPlanned[status]);
     return row;
-  }
-
-  private record(
-    { houseId, memberId }: Actor,
-    action: string,
-    subject: string,
-    facts: Record<string, unknown>,
-    transaction: Transaction,
-  ): Promise<void> {
-    return this.audit.record({ houseId, memberId, action, subject, facts }, transaction);
   }
 
   /** Looks at every id before anything is refused, so that all that is wrong is said at once. */

@@ -89,7 +89,7 @@ export class RecipesService {
         { id, name, summary, createdAtMs: this.clock.nowMs() },
         { transaction },
       );
-      await this.record(actor, 'recipe.created', id, { name }, transaction);
+      await this.audit.recordAct(actor, 'recipe.created', id, { name }, transaction);
       await this.write(actor, id, 1, first, transaction);
     });
     return this.get(actor.houseId, id);
@@ -102,7 +102,7 @@ export class RecipesService {
       const recipe = await this.lock(actor.houseId, id, transaction);
       const archivedAtMs = isArchived ? (recipe.archivedAtMs ?? this.clock.nowMs()) : null;
       await recipe.update({ ...words, ...(isArchived === undefined ? {} : { archivedAtMs }) }, { transaction });
-      await this.record(actor, 'recipe.changed', id, changes, transaction);
+      await this.audit.recordAct(actor, 'recipe.changed', id, changes, transaction);
     });
     const { revisions: _, ...summary } = await this.get(actor.houseId, id);
     return summary;
@@ -201,17 +201,7 @@ export class RecipesService {
       },
       { transaction },
     );
-    await this.record(actor, 'recipe.revised', recipeId, { number, revisionId: id }, transaction);
-  }
-
-  private record(
-    { houseId, memberId }: Actor,
-    action: string,
-    subject: string,
-    facts: Record<string, unknown>,
-    transaction: Transaction,
-  ): Promise<void> {
-    return this.audit.record({ houseId, memberId, action, subject, facts }, transaction);
+    await this.audit.recordAct(actor, 'recipe.revised', recipeId, { number, revisionId: id }, transaction);
   }
 }
 

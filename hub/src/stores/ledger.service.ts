@@ -2,7 +2,6 @@ import { Injectable } from '@nestjs/common';
 import { InjectConnection, InjectModel } from '@nestjs/sequelize';
 import type { Ingredient as IngredientAnswer, LotMove as LotMoveAnswer, MoveLot } from '@steepfall/shared/contracts';
 import { ProblemError } from '@steepfall/shared/problems';
-import type { Transaction } from 'sequelize';
 import { Sequelize } from 'sequelize-typescript';
 import { AuditService } from '../audit/audit.service.js';
 import type { Actor } from '../common/access/actor.js';
@@ -50,7 +49,13 @@ export class LedgerService {
       const held = await this.book.holdOne(actor.houseId, lotId, transaction);
       const line = move.kind === 'counted' ? countedLine(held, move) : usedLine(held, move);
       await this.book.write(actor, [line], transaction);
-      await this.record(actor, `lot.${move.kind}`, lotId, { massG: line.massG, reason: line.reason }, transaction);
+      await this.audit.recordAct(
+        actor,
+        `lot.${move.kind}`,
+        lotId,
+        { massG: line.massG, reason: line.reason },
+        transaction,
+      );
       return held.lot.ingredientId;
     });
     return this.shelf.get(actor.houseId, ingredientId);
@@ -69,20 +74,10 @@ export class LedgerService {
       if (counter) throw new ProblemError('nothing-to-undo', 'This line was taken back already.');
       const line = counterLine(held, move);
       await this.book.write(actor, [line], transaction);
-      await this.record(actor, 'lot.undone', lotId, { moveId, massG: line.massG }, transaction);
+      await this.audit.recordAct(actor, 'lot.undone', lotId, { moveId, massG: line.massG }, transaction);
       return held.lot.ingredientId;
     });
     return this.shelf.get(houseId, ingredientId);
-  }
-
-  private record(
-    { houseId, memberId }: Actor,
-    action: string,
-    subject: string,
-    facts: Record<string, unknown>,
-    transaction: Transaction,
-  ): Promise<void> {
-    return this.audit.record({ houseId, memberId, action, subject, facts }, transaction);
   }
 }
 

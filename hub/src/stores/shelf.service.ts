@@ -52,7 +52,7 @@ export class ShelfService {
         { id, ...columnsOf(facts), createdAtMs: this.clock.nowMs() },
         { transaction },
       );
-      await this.record(actor, 'ingredient.added', id, facts, transaction);
+      await this.audit.recordAct(actor, 'ingredient.added', id, facts, transaction);
     });
     return this.get(actor.houseId, id);
   }
@@ -63,7 +63,7 @@ export class ShelfService {
       if (row.kind !== facts.kind) throw notValid('/facts/kind', `${row.name} is of the kind "${row.kind}".`);
       if (row.version !== version) throw changedMeanwhile();
       await row.update({ ...columnsOf(facts), version: version + 1 }, { transaction });
-      await this.record(actor, 'ingredient.changed', id, facts, transaction);
+      await this.audit.recordAct(actor, 'ingredient.changed', id, facts, transaction);
     });
     return this.get(actor.houseId, id);
   }
@@ -72,7 +72,7 @@ export class ShelfService {
     await inTransaction(this.sequelize, async (transaction) => {
       const row = await this.getKept(actor.houseId, id, transaction);
       await row.update({ removedAtMs: this.clock.nowMs() }, { transaction });
-      await this.record(actor, 'ingredient.removed', id, {}, transaction);
+      await this.audit.recordAct(actor, 'ingredient.removed', id, {}, transaction);
     });
   }
 
@@ -83,7 +83,7 @@ export class ShelfService {
       const row = await rows.get(id, 'ingredient', { transaction, lock: true });
       if (row.removedAtMs === null) return;
       await row.update({ removedAtMs: null }, { transaction });
-      await this.record(actor, 'ingredient.restored', id, {}, transaction);
+      await this.audit.recordAct(actor, 'ingredient.restored', id, {}, transaction);
     });
     return this.get(actor.houseId, id);
   }
@@ -99,7 +99,7 @@ export class ShelfService {
       );
       const line = { lotId: id, kind: 'received', massG: inMilligrams(massG), reason: '' } as const;
       await this.book.write(actor, [line], transaction);
-      await this.record(actor, 'lot.received', id, { ...facts, massG }, transaction);
+      await this.audit.recordAct(actor, 'lot.received', id, { ...facts, massG }, transaction);
     });
     return this.get(actor.houseId, ingredientId);
   }
@@ -110,7 +110,7 @@ export class ShelfService {
       checkHops(await this.ingredientOf(row, transaction), facts);
       if (row.version !== version) throw changedMeanwhile();
       await row.update({ ...facts, version: version + 1 }, { transaction });
-      await this.record(actor, 'lot.changed', id, facts, transaction);
+      await this.audit.recordAct(actor, 'lot.changed', id, facts, transaction);
       return row.ingredientId;
     });
     return this.get(actor.houseId, ingredientId);
@@ -120,7 +120,7 @@ export class ShelfService {
     await inTransaction(this.sequelize, async (transaction) => {
       const row = await this.getKeptLot(actor.houseId, id, transaction);
       await row.update({ removedAtMs: this.clock.nowMs() }, { transaction });
-      await this.record(actor, 'lot.removed', id, {}, transaction);
+      await this.audit.recordAct(actor, 'lot.removed', id, {}, transaction);
     });
   }
 
@@ -131,7 +131,7 @@ export class ShelfService {
       const row = await rows.get(id, 'lot', { transaction, lock: true });
       if (row.removedAtMs === null) return;
       await row.update({ removedAtMs: null }, { transaction });
-      await this.record(actor, 'lot.restored', id, {}, transaction);
+      await this.audit.recordAct(actor, 'lot.restored', id, {}, transaction);
     });
     return this.get(actor.houseId, ingredientId);
   }
@@ -182,16 +182,6 @@ export class ShelfService {
     const row = await inHouse(this.lots, houseId).findOne({ id, removedAtMs: null }, { transaction, lock: true });
     if (!row) throw new ProblemError('not-found', 'There is no such lot.');
     return row;
-  }
-
-  private record(
-    { houseId, memberId }: Actor,
-    action: string,
-    subject: string,
-    facts: Record<string, unknown>,
-    transaction: Transaction,
-  ): Promise<void> {
-    return this.audit.record({ houseId, memberId, action, subject, facts }, transaction);
   }
 }
 
