@@ -18,7 +18,12 @@ import { roleSchema } from './roles.js';
 
 const id = z.uuid();
 const atMs = z.int().nonnegative();
-const name = z.string().trim().min(1, 'Give it a name.').max(80, 'Use 80 characters or fewer.');
+const name = z
+  .string()
+  .trim()
+  .min(1, 'Give it a name.')
+  .max(80, 'Use 80 characters or fewer.')
+  .refine((text) => text === '' || /[^\p{C}\p{Z}]/u.test(text), 'Give it a name that can be seen.');
 const email = z.email('This is not an e-mail address.').max(190);
 /** ISO 4217. */
 const currency = z.string().regex(/^[A-Z]{3}$/, 'Three capital letters, such as EUR or USD.');

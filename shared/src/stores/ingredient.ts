@@ -2,7 +2,12 @@ import { z } from 'zod';
 import { acidSchema, hopFormSchema, leafFormSchema, saltSchema, teaKindSchema } from '../sheets/index.js';
 
 const number = () => z.number('Type a number.');
-const name = z.string('Give it a name.').trim().min(1, 'Give it a name.').max(80, 'Use 80 characters or fewer.');
+const name = z
+  .string('Give it a name.')
+  .trim()
+  .min(1, 'Give it a name.')
+  .max(80, 'Use 80 characters or fewer.')
+  .refine((text) => text === '' || /[^\p{C}\p{Z}]/u.test(text), 'Give it a name that can be seen.');
 const percent = number().min(1, 'From 1 %.').max(100, 'At most 100 %.');
 
 const common = {
