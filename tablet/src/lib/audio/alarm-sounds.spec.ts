@@ -225,6 +225,19 @@ describe('a ring that is known to come', () => {
     expect([heard().length, waiting().length]).toEqual([1, 0]);
   });
 
+  it('is taken over a blink before its moment: it is neither begun twice nor planned again', async () => {
+    const { sounds, context } = await unlockedSounds();
+    sounds.plan({ ring: call, inS: 5 });
+    context.currentTime = 4.9;
+    sounds.ring(call);
+    sounds.plan({ ring: call, inS: 0.1 });
+    expect(StubSource.all).toHaveLength(1);
+    context.currentTime = 5.1;
+    expect(heard()).toHaveLength(1);
+    sounds.ring(null);
+    expect(heard()).toEqual([]);
+  });
+
   it('moves with the plan, goes with it, and lets small changes be', async () => {
     const { sounds } = await unlockedSounds();
     sounds.plan({ ring: call, inS: 20 });

@@ -45,6 +45,8 @@ const CLOCK_LOOK_MS = 240;
 const ASK_AGAIN_MS = 5_000;
 /** A glitch is over before anybody could miss an alarm; what lasts longer may have gone to another speaker. */
 const INTERRUPTED_MS = 2_000;
+/** A plan that starts so soon is the ring itself: the clocks of page and output agree no better, and nobody misses it. */
+const ADOPT_AHEAD_S = 0.25;
 /** A plan that moves by less stays as it is. */
 const PLAN_SLACK_S = 0.25;
 /** Further ahead a plan only waits: it will have changed by then. */
@@ -320,14 +322,14 @@ class AlarmSounds {
     this.state.set({ ...this.state.get(), ringing: ring.id });
   }
 
-  /** The planned ring for this alarm, when it sounds already. */
+  /** The planned ring for this alarm, when it sounds already or is about to: to start anew would be heard as a stumble. */
   private adopt(ring: Ring): Voice | null {
     const { planned, context } = this;
     if (!planned || !context || planned.ring.id !== ring.id) return null;
-    const hasBegun = planned.startsAtS <= context.currentTime && planned.ring.level === ring.level;
-    if (hasBegun) this.planned = null;
+    const isDue = planned.startsAtS - context.currentTime <= ADOPT_AHEAD_S && planned.ring.level === ring.level;
+    if (isDue) this.planned = null;
     else this.dropPlan();
-    return hasBegun ? planned : null;
+    return isDue ? planned : null;
   }
 
   private applyPlan(): void {
@@ -340,7 +342,8 @@ class AlarmSounds {
       if (hasBegun || movedS < PLAN_SLACK_S) return;
     }
     this.dropPlan();
-    if (!wantedPlan || wantedPlan.inS <= 0 || wantedPlan.inS > PLAN_AHEAD_S) return;
+    // What rings already is planned no more.
+    if (!wantedPlan || wantedPlan.ring.id === this.playing?.id || wantedPlan.inS <= 0 || wantedPlan.inS > PLAN_AHEAD_S) return;
     this.planned = this.speak(wantedPlan.ring, wantedPlan.inS);
   }
 
