@@ -343,7 +343,8 @@ class AlarmSounds {
     }
     this.dropPlan();
     // What rings already is planned no more.
-    if (!wantedPlan || wantedPlan.ring.id === this.playing?.id || wantedPlan.inS <= 0 || wantedPlan.inS > PLAN_AHEAD_S) return;
+    if (!wantedPlan || wantedPlan.ring.id === this.playing?.id || wantedPlan.inS <= 0 || wantedPlan.inS > PLAN_AHEAD_S)
+      return;
     this.planned = this.speak(wantedPlan.ring, wantedPlan.inS);
   }
 
