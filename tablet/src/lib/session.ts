@@ -11,6 +11,7 @@ import {
 } from '@steepfall/shared/contracts';
 import { z } from 'zod';
 import { HubProblemError, requestHub } from './http.ts';
+import { keepValue, readKeptAs } from './kept.ts';
 
 /** Who this station is signed in as. No secret in it: it survives a reload without the hub. */
 export interface Known {
@@ -39,27 +40,9 @@ let retryCount = 0;
 let generation = 0;
 const listeners = new Set<() => void>();
 
-function readKnown(): Known | null {
-  try {
-    const parsed = knownSchema.safeParse(JSON.parse(localStorage.getItem(KEY) ?? 'null'));
-    return parsed.success ? parsed.data : null;
-  } catch {
-    return null;
-  }
-}
-
-function keep(known: Known | null): void {
-  try {
-    if (known) localStorage.setItem(KEY, JSON.stringify(known));
-    else localStorage.removeItem(KEY);
-  } catch {
-    // It holds until the page is closed.
-  }
-}
-
 function become(next: SessionState): void {
   state = next;
-  keep(next.known);
+  keepValue(KEY, next.known);
   for (const listener of listeners) listener();
 }
 
@@ -115,7 +98,7 @@ export function getAccessToken(): string | null {
 
 /** Shows who was signed in at once, then asks the hub. Called once, by main. */
 export function startSession(): void {
-  become({ status: 'starting', known: readKnown() });
+  become({ status: 'starting', known: readKeptAs(knownSchema, KEY) });
   const askAgain = () => {
     if (state.status === 'unconfirmed' && document.visibilityState === 'visible') void refreshSession();
   };

@@ -1,4 +1,5 @@
 import { useSyncExternalStore } from 'react';
+import { keep, readKept } from './kept.ts';
 
 /** What the station was told; `system` follows the device. */
 export type GroundChoice = 'system' | 'night' | 'day';
@@ -26,24 +27,15 @@ function apply(): void {
 
 /** Reads the choice of this station and follows the system from here on. Called once, by main. */
 export function startTheme(): void {
-  try {
-    const kept = localStorage.getItem(KEY);
-    if (kept === 'night' || kept === 'day') choice = kept;
-  } catch {
-    // A browser that keeps nothing follows the system.
-  }
+  const kept = readKept(KEY);
+  if (kept === 'night' || kept === 'day') choice = kept;
   matchMedia(darkQuery).addEventListener('change', apply);
   apply();
 }
 
 export function chooseGround(next: GroundChoice): void {
   choice = next;
-  try {
-    if (next === 'system') localStorage.removeItem(KEY);
-    else localStorage.setItem(KEY, next);
-  } catch {
-    // It holds until the page is closed.
-  }
+  keep(KEY, next === 'system' ? null : next);
   apply();
 }
 

@@ -1,23 +1,15 @@
 import { useState } from 'react';
+import { z } from 'zod';
+import { keepValue, readKeptAs } from '#lib/kept.ts';
 
 const keyOf = (batchId: string) => `steepfall.weighed.${batchId}`;
 
 function readTicks(batchId: string): ReadonlySet<string> {
-  try {
-    const kept: unknown = JSON.parse(localStorage.getItem(keyOf(batchId)) ?? '[]');
-    return new Set(Array.isArray(kept) ? kept.filter((id) => typeof id === 'string') : []);
-  } catch {
-    return new Set();
-  }
+  return new Set(readKeptAs(z.array(z.string()), keyOf(batchId)));
 }
 
 function keepTicks(batchId: string, ticks: ReadonlySet<string>): void {
-  try {
-    if (ticks.size > 0) localStorage.setItem(keyOf(batchId), JSON.stringify([...ticks]));
-    else localStorage.removeItem(keyOf(batchId));
-  } catch {
-    // They hold until the page is closed.
-  }
+  keepValue(keyOf(batchId), ticks.size > 0 ? [...ticks] : null);
 }
 
 /** What was weighed so far, kept on this device only: whoever stands at the scale needs nobody to agree. */

@@ -1,3 +1,5 @@
+import { keep, readKept } from '#lib/kept.ts';
+
 const KEY = 'steepfall.follow';
 const shape = /^[\w-]{20,100}$/;
 
@@ -10,18 +12,10 @@ export function tokenIn(text: string): string | null {
 /** The link this phone was opened with, or the one it followed last: a notification opens the page without it. */
 export function readToken(hash: string): string | null {
   const token = tokenIn(hash);
-  try {
-    if (token) localStorage.setItem(KEY, token);
-    return token ?? tokenIn(localStorage.getItem(KEY) ?? '');
-  } catch {
-    return token;
-  }
+  if (token) keep(KEY, token);
+  return token ?? tokenIn(readKept(KEY) ?? '');
 }
 
 export function forgetToken(): void {
-  try {
-    localStorage.removeItem(KEY);
-  } catch {
-    // It was never kept.
-  }
+  keep(KEY, null);
 }

@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { keepValue, readKeptAs } from '#lib/kept.ts';
 import { ValueStore } from '#lib/value-store.ts';
 
 /** `null`: none of the house's, on purpose; left out: the first there is. */
@@ -16,18 +17,10 @@ export const chosenKit = new ValueStore<Choice>(readChoice());
 export function chooseKit(part: Choice): void {
   const choice = { ...chosenKit.get(), ...part };
   chosenKit.set(choice);
-  try {
-    localStorage.setItem(KEY, JSON.stringify(choice));
-  } catch {
-    // It holds until the page is closed.
-  }
+  keepValue(KEY, choice);
 }
 
 /** As it was kept; nothing where the browser keeps nothing, or something else. Ids of another house find no kit and count for nothing. */
 export function readChoice(): Choice {
-  try {
-    return choiceSchema.parse(JSON.parse(localStorage.getItem(KEY) ?? '{}'));
-  } catch {
-    return {};
-  }
+  return readKeptAs(choiceSchema, KEY) ?? {};
 }

@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { keep, keepValue, readKeptAs } from '#lib/kept.ts';
 import { ValueStore } from '#lib/value-store.ts';
 import type { RecipeForm } from './recipe-form.ts';
 
@@ -42,30 +43,16 @@ interface Person {
 const keyOf = ({ houseId, memberId }: Person, recipeId: string) => `steepfall.draft.${houseId}.${memberId}.${recipeId}`;
 
 export function readDraft(person: Person, recipeId: string): Draft | null {
-  try {
-    const parsed = draftSchema.safeParse(JSON.parse(localStorage.getItem(keyOf(person, recipeId)) ?? 'null'));
-    return parsed.success ? (parsed.data as unknown as Draft) : null;
-  } catch {
-    return null;
-  }
+  return readKeptAs(draftSchema, keyOf(person, recipeId)) as Draft | null;
 }
 
 /** False when the browser keeps nothing (private mode, a full disk): the page then says so. */
 export const draftsAreKept = new ValueStore(true);
 
 export function keepDraft(person: Person, recipeId: string, draft: Draft): void {
-  try {
-    localStorage.setItem(keyOf(person, recipeId), JSON.stringify(draft));
-    draftsAreKept.set(true);
-  } catch {
-    draftsAreKept.set(false);
-  }
+  draftsAreKept.set(keepValue(keyOf(person, recipeId), draft));
 }
 
 export function dropDraft(person: Person, recipeId: string): void {
-  try {
-    localStorage.removeItem(keyOf(person, recipeId));
-  } catch {
-    // What cannot be kept cannot be dropped either.
-  }
+  keep(keyOf(person, recipeId), null);
 }

@@ -4,6 +4,7 @@ import type { RunState } from '@steepfall/shared/runs';
 import { additionSteps, type StepAmount } from '@steepfall/shared/sheets';
 import { formatMass } from '@steepfall/shared/units';
 import { batchPlanQuery } from '#lib/hub-queries.ts';
+import { keepValue, readKeptAs } from '#lib/kept.ts';
 import { queryClient } from '#lib/query-client.ts';
 import { useRunState } from '#lib/run-store/run-context.tsx';
 import { useUnits } from '#lib/units.ts';
@@ -11,34 +12,20 @@ import { useUnits } from '#lib/units.ts';
 const keyOf = (batchId: string) => `steepfall.bags.${batchId}`;
 const weighOutSchema = batchPlanSchema.shape.weighOut;
 
-function keptLines(batchId: string): readonly WeighOutLine[] | null {
-  try {
-    return weighOutSchema.parse(JSON.parse(localStorage.getItem(keyOf(batchId)) ?? 'null'));
-  } catch {
-    return null;
-  }
-}
-
-function keep(batchId: string, lines: readonly WeighOutLine[]): void {
-  try {
-    localStorage.setItem(keyOf(batchId), JSON.stringify(lines));
-  } catch {
-    // They hold until the page is closed.
-  }
-}
-
 /** What was weighed for this run and from which lots: kept on this tablet, so that it is there without the hub. */
 export function useWeighed(): readonly WeighOutLine[] {
   const state = useRunState();
   const { batchId } = state;
-  const [fetched, setFetched] = useState<readonly WeighOutLine[] | null>(() => (batchId ? keptLines(batchId) : null));
+  const [fetched, setFetched] = useState<readonly WeighOutLine[] | null>(() =>
+    batchId ? readKeptAs(weighOutSchema, keyOf(batchId)) : null,
+  );
   useEffect(() => {
     if (batchId === null) return undefined;
     let isCurrent = true;
     queryClient
       .fetchQuery({ ...batchPlanQuery(batchId), staleTime: 60_000, retry: false })
       .then(({ weighOut }) => {
-        keep(batchId, weighOut);
+        keepValue(keyOf(batchId), weighOut);
         if (isCurrent) setFetched(weighOut);
       })
       .catch(() => undefined);

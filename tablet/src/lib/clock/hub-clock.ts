@@ -1,3 +1,4 @@
+import { keep, readKept } from '../kept.ts';
 import type { HubLink } from '../socket/hub-link.ts';
 import { ValueStore } from '../value-store.ts';
 import { estimateOffset, GlidingOffset, type OffsetSample } from './offset.ts';
@@ -128,19 +129,11 @@ const OFFSET_KEY = 'steepfall.clockOffsetMs';
 /** The last offset, so that a tablet that is reloaded without the hub still shows the hub's time. */
 const keptOnStation: KeptOffset = {
   read: () => {
-    try {
-      const kept = Number(localStorage.getItem(OFFSET_KEY) ?? Number.NaN);
-      return Number.isFinite(kept) ? kept : null;
-    } catch {
-      return null;
-    }
+    const kept = Number(readKept(OFFSET_KEY) ?? Number.NaN);
+    return Number.isFinite(kept) ? kept : null;
   },
   write: (offsetMs) => {
-    try {
-      localStorage.setItem(OFFSET_KEY, String(Math.round(offsetMs)));
-    } catch {
-      // It holds until the page is closed.
-    }
+    keep(OFFSET_KEY, String(Math.round(offsetMs)));
   },
 };
 

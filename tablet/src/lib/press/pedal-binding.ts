@@ -1,43 +1,36 @@
+import { z } from 'zod';
+import { keepValue, readKeptAs } from '../kept.ts';
 import { ValueStore } from '../value-store.ts';
 import { isLearnable, withLearned, type PedalAct, type PedalBinding } from './pedal-keys.ts';
 
 const KEY = 'steepfall.pedal';
 
-function readKept(): PedalBinding {
-  try {
-    const kept: unknown = JSON.parse(localStorage.getItem(KEY) ?? '{}');
-    const entries = Object.entries(kept ?? {}).filter(([key, act]) => isLearnable(key) && isAct(act));
-    return Object.fromEntries(entries) as PedalBinding;
-  } catch {
-    return {};
-  }
+function readBinding(): PedalBinding {
+  const entries = Object.entries(readKeptAs(z.record(z.string(), z.unknown()), KEY) ?? {});
+  return Object.fromEntries(entries.filter(([key, act]) => isLearnable(key) && isAct(act))) as PedalBinding;
 }
 
 function isAct(act: unknown): act is PedalAct {
   return act === 'next' || act === 'back';
 }
 
-function keep(binding: PedalBinding): void {
+function choose(binding: PedalBinding): void {
   pedalBinding.set(binding);
-  try {
-    localStorage.setItem(KEY, JSON.stringify(binding));
-  } catch {
-    // It holds until the page is closed.
-  }
+  keepValue(KEY, binding);
 }
 
 /** What the pedal of this station was taught. */
-export const pedalBinding = new ValueStore<PedalBinding>(readKept());
+export const pedalBinding = new ValueStore<PedalBinding>(readBinding());
 
 /** False for a key that cannot be a pedal's. */
 export function learnPedal(act: PedalAct, key: string): boolean {
   if (!isLearnable(key)) return false;
-  keep(withLearned(pedalBinding.get(), act, key));
+  choose(withLearned(pedalBinding.get(), act, key));
   return true;
 }
 
 export function forgetPedal(): void {
-  keep({});
+  choose({});
 }
 
 const names: Record<string, string> = {
