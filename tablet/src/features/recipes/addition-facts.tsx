@@ -3,10 +3,18 @@ import type { AcidKind, LeafForm, Salt, TeaKind } from '@steepfall/shared/figure
 import type { Addition } from '@steepfall/shared/sheets';
 import { SelectField, TextField } from '#components/field.tsx';
 import { Segmented } from '#components/segmented.tsx';
+import {
+  acidNames,
+  choicesOf,
+  hopFormNames,
+  leafFormNames,
+  saltNames,
+  shortName,
+  teaNames,
+} from '#lib/substance-names.ts';
 import { fromStores } from './from-stores.ts';
 import { NameField } from './name-field.tsx';
 import { NumberField, plainScale, SmallLabel } from './number-field.tsx';
-import { acidNames, choicesOf, hopFormNames, leafFormNames, saltNames, shortName, teaNames } from './substances.ts';
 
 interface AdditionFactsProps {
   addition: Addition;

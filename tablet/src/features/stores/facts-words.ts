@@ -1,7 +1,8 @@
-import type { AcidKind, LeafForm, Salt, TeaKind } from '@steepfall/shared/figures';
+import type { AcidKind, Salt } from '@steepfall/shared/figures';
 import type { IngredientKind } from '@steepfall/shared/sheets';
 import type { IngredientFacts } from '@steepfall/shared/stores';
 import { formatMass, type UnitPreferences } from '@steepfall/shared/units';
+import { acidNames, hopFormNames, leafFormNames, saltNames, teaNames } from '#lib/substance-names.ts';
 
 export const kindWords: Record<IngredientKind, string> = {
   tea: 'tea',
@@ -9,20 +10,6 @@ export const kindWords: Record<IngredientKind, string> = {
   salt: 'salt',
   acid: 'acid',
   other: 'other',
-};
-
-export const teaWords: Record<TeaKind, string> = {
-  green: 'green tea',
-  white: 'white tea',
-  oolong: 'oolong',
-  black: 'black tea',
-  herbal: 'herbs, without tea',
-};
-
-export const formWords: Record<LeafForm, string> = {
-  whole: 'whole leaf',
-  broken: 'broken leaf',
-  dust: 'dust, as in tea bags',
 };
 
 /** One name on the shelf, and what may be in the jar under it. */
@@ -34,7 +21,7 @@ export interface Jar<Value extends string> {
 /** Asked in plain words, since the water in the crystal changes what a gram brings. */
 export const saltJars: readonly Jar<Salt>[] = [
   {
-    name: 'Calcium chloride',
+    name: 'calcium chloride',
     variants: [
       {
         value: 'calciumChlorideDihydrate',
@@ -48,20 +35,20 @@ export const saltJars: readonly Jar<Salt>[] = [
       },
     ],
   },
-  jarOf('Gypsum, calcium sulfate', 'gypsum'),
-  jarOf('Magnesium sulfate, the heptahydrate', 'magnesiumSulfateHeptahydrate'),
-  jarOf('Magnesium chloride, the hexahydrate', 'magnesiumChlorideHexahydrate'),
-  jarOf('Table salt, sodium chloride', 'sodiumChloride'),
-  jarOf('Potassium chloride', 'potassiumChloride'),
-  jarOf('Baking soda, sodium bicarbonate', 'sodiumBicarbonate'),
-  jarOf('Potassium bicarbonate', 'potassiumBicarbonate'),
-  jarOf('Chalk, calcium carbonate', 'calciumCarbonate'),
-  jarOf('Slaked lime, calcium hydroxide', 'calciumHydroxide'),
+  jarOf(saltNames, 'gypsum'),
+  jarOf(saltNames, 'magnesiumSulfateHeptahydrate'),
+  jarOf(saltNames, 'magnesiumChlorideHexahydrate'),
+  jarOf(saltNames, 'sodiumChloride'),
+  jarOf(saltNames, 'potassiumChloride'),
+  jarOf(saltNames, 'sodiumBicarbonate'),
+  jarOf(saltNames, 'potassiumBicarbonate'),
+  jarOf(saltNames, 'calciumCarbonate'),
+  jarOf(saltNames, 'calciumHydroxide'),
 ];
 
 export const acidJars: readonly Jar<AcidKind>[] = [
   {
-    name: 'Citric acid',
+    name: 'citric acid',
     variants: [
       {
         value: 'citricAnhydrous',
@@ -75,14 +62,15 @@ export const acidJars: readonly Jar<AcidKind>[] = [
       },
     ],
   },
-  jarOf('Lactic acid', 'lactic'),
-  jarOf('Phosphoric acid', 'phosphoric'),
-  jarOf('Malic acid', 'malic'),
-  jarOf('Tartaric acid', 'tartaric'),
-  jarOf('Ascorbic acid', 'ascorbic'),
+  jarOf(acidNames, 'lactic'),
+  jarOf(acidNames, 'phosphoric'),
+  jarOf(acidNames, 'malic'),
+  jarOf(acidNames, 'tartaric'),
+  jarOf(acidNames, 'ascorbic'),
 ];
 
-function jarOf<Value extends string>(name: string, value: Value): Jar<Value> {
+function jarOf<Value extends string>(names: Record<Value, string>, value: Value): Jar<Value> {
+  const name = names[value];
   return { name, variants: [{ value, label: name, tell: '' }] };
 }
 
@@ -92,30 +80,23 @@ export function jarWith<Value extends string>(jars: readonly Jar<Value>[], value
   return found;
 }
 
-function substanceWords<Value extends string>(jars: readonly Jar<Value>[], value: Value): string {
-  const { name, variants } = jarWith(jars, value);
-  if (variants.length === 1) return name;
-  const variant = variants.find((each) => each.value === value);
-  return variant ? `${name}, ${variant.label.slice(variant.label.indexOf(': ') + 2)}` : name;
-}
-
 /** What is known of an ingredient, by its kind, in a line. */
 export function factsWords(facts: IngredientFacts): string {
   switch (facts.kind) {
     case 'salt':
-      return `${substanceWords(saltJars, facts.salt)} · ${facts.assayPercent} % pure`;
+      return `${saltNames[facts.salt]} · ${facts.assayPercent} % pure`;
     case 'acid':
-      return `${substanceWords(acidJars, facts.acid)} · ${facts.strengthPercent} % strong`;
+      return `${acidNames[facts.acid]} · ${facts.strengthPercent} % strong`;
     case 'tea':
       return [
-        teaWords[facts.tea],
-        formWords[facts.form],
+        teaNames[facts.tea],
+        leafFormNames[facts.form],
         facts.caffeineMgPerG === null
           ? 'caffeine as usual for its kind'
           : `caffeine ${facts.caffeineMgPerG} mg/g, as told`,
       ].join(' · ');
     case 'hops':
-      return facts.form === 'pellets' ? 'pellets' : 'whole cones';
+      return hopFormNames[facts.form];
     case 'other':
       return 'weighed and timed, in no sum but the yield';
   }

@@ -1,7 +1,7 @@
 import { useState } from 'react';
 import { zodResolver } from '@hookform/resolvers/zod';
 import { createIngredientSchema, type Ingredient } from '@steepfall/shared/contracts';
-import type { AcidKind, LeafForm, Salt, TeaKind } from '@steepfall/shared/figures';
+import type { AcidKind, Salt, TeaKind } from '@steepfall/shared/figures';
 import type { IngredientKind } from '@steepfall/shared/sheets';
 import type { IngredientFacts } from '@steepfall/shared/stores';
 import { useForm, useWatch, type Control, type Resolver, type UseFormRegister } from 'react-hook-form';
@@ -11,7 +11,8 @@ import { Dialog } from '#components/dialog.tsx';
 import { SelectField, TextField } from '#components/field.tsx';
 import { Segmented } from '#components/segmented.tsx';
 import { SendForm } from '#components/send-form.tsx';
-import { acidJars, formWords, saltJars, teaWords } from './facts-words.ts';
+import { choicesOf, hopFormNames, leafFormNames, teaNames } from '#lib/substance-names.ts';
+import { acidJars, saltJars } from './facts-words.ts';
 import { JarFields } from './jar-fields.tsx';
 import { restOf, spreadProblems, useStoresAct, useStoresChange } from './use-stores.ts';
 
@@ -156,10 +157,10 @@ function KindFields({ kind, control, register, onSubstance }: KindFieldsProps) {
       return (
         <>
           <SelectField label="Kind of tea" {...register('facts.tea')}>
-            {optionsOf(teaWords)}
+            {optionsOf(teaNames)}
           </SelectField>
           <SelectField label="How it is cut" {...register('facts.form')}>
-            {optionsOf(formWords)}
+            {optionsOf(leafFormNames)}
           </SelectField>
           <ControlledNumber
             control={control}
@@ -173,8 +174,7 @@ function KindFields({ kind, control, register, onSubstance }: KindFieldsProps) {
     case 'hops':
       return (
         <SelectField label="Form" {...register('facts.form')}>
-          <option value="pellets">pellets</option>
-          <option value="cones">whole cones</option>
+          {optionsOf(hopFormNames)}
         </SelectField>
       );
     case 'salt':
@@ -218,10 +218,10 @@ function KindFields({ kind, control, register, onSubstance }: KindFieldsProps) {
   }
 }
 
-function optionsOf(words: Record<TeaKind, string> | Record<LeafForm, string>) {
-  return Object.entries(words).map(([value, word]) => (
+function optionsOf<Key extends string>(names: Record<Key, string>) {
+  return choicesOf(names).map(({ value, label }) => (
     <option key={value} value={value}>
-      {word}
+      {label}
     </option>
   ));
 }

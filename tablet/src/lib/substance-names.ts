@@ -33,7 +33,11 @@ export const teaNames: Record<TeaKind, string> = {
   herbal: 'herbs, rooibos, flowers',
 };
 
-export const leafFormNames: Record<LeafForm, string> = { whole: 'whole leaf', broken: 'broken', dust: 'dust' };
+export const leafFormNames: Record<LeafForm, string> = {
+  whole: 'whole leaf',
+  broken: 'broken leaf',
+  dust: 'dust, as in tea bags',
+};
 
 export const hopFormNames = { pellets: 'pellets', cones: 'whole cones' } as const;
 
