@@ -1,14 +1,12 @@
 import { contrastRatio } from '@steepfall/shared/figures';
 import { describe, expect, it } from 'vitest';
-import runSheet from '#features/run-sheet/run-sheet.css?raw';
 import styles from './styles.css?raw';
 
 type Ground = 'day' | 'night' | 'alert';
 
 function paletteOf(ground: Ground): Map<string, string> {
-  const [sheet, opening] =
-    ground === 'alert' ? [runSheet, '\\.sheet\\[data-alert\\]'] : [styles, `\\[data-ground='${ground}'\\]`];
-  const block = new RegExp(`${opening} \\{([^}]*)\\}`).exec(sheet)?.[1] ?? '';
+  const opening = ground === 'alert' ? 'main\\[data-alert\\]' : `\\[data-ground='${ground}'\\]`;
+  const block = new RegExp(`${opening} \\{([^}]*)\\}`).exec(styles)?.[1] ?? '';
   return new Map([...block.matchAll(/--([\w-]+): (#[0-9a-f]{6});/g)].map(([, name = '', value = '']) => [name, value]));
 }
 
