@@ -1,15 +1,6 @@
-import { useMemo, useState } from 'react';
+import { useState } from 'react';
 import { useQuery } from '@tanstack/react-query';
-import {
-  createColumnHelper,
-  getCoreRowModel,
-  getFilteredRowModel,
-  getPaginationRowModel,
-  getSortedRowModel,
-  useReactTable,
-  type ColumnFiltersState,
-  type SortingState,
-} from '@tanstack/react-table';
+import { createColumnHelper } from '@tanstack/react-table';
 import type { Batch } from '@steepfall/shared/contracts';
 import { formatVolume } from '@steepfall/shared/units';
 import { Link } from 'react-router-dom';
@@ -20,6 +11,7 @@ import { TextField } from '#components/field.tsx';
 import { Page } from '#components/page.tsx';
 import { Failed, Waiting } from '#components/quiet-state.tsx';
 import { Segmented } from '#components/segmented.tsx';
+import { useListTable } from '#components/use-list-table.ts';
 import { batchesQuery, cancelledBatchesQuery } from '#lib/hub-queries.ts';
 import { useKnown, useMay } from '#lib/session.ts';
 import { useUnits } from '#lib/units.ts';
@@ -99,27 +91,14 @@ export function BatchesPage() {
 }
 
 function Book({ batches }: { batches: Batch[] }) {
-  const [sorting, setSorting] = useState<SortingState>([{ id: 'plannedOn', desc: true }]);
-  const [text, setText] = useState('');
   const [status, setStatus] = useState<StatusChoice>('all');
   const cancelled = useQuery({ ...cancelledBatchesQuery, enabled: status === 'cancelled' });
   const shown = status === 'cancelled' ? cancelled.data : batches;
-  const columnFilters = useMemo<ColumnFiltersState>(
-    () => (status === 'all' ? [] : [{ id: 'status', value: status }]),
-    [status],
-  );
-  // eslint-disable-next-line react-hooks/incompatible-library -- its functions are used in this render only
-  const table = useReactTable({
+  const { table, words, setWords } = useListTable({
     data: shown ?? none,
     columns,
-    state: { sorting, columnFilters, globalFilter: text },
-    onSortingChange: setSorting,
-    onGlobalFilterChange: setText,
-    getCoreRowModel: getCoreRowModel(),
-    getSortedRowModel: getSortedRowModel(),
-    getFilteredRowModel: getFilteredRowModel(),
-    getPaginationRowModel: getPaginationRowModel(),
-    initialState: { pagination: { pageSize: 20 } },
+    orderAtFirst: [{ id: 'plannedOn', desc: true }],
+    only: status === 'all' ? null : { id: 'status', value: status },
   });
   if (batches.length === 0) {
     return (
@@ -136,8 +115,8 @@ function Book({ batches }: { batches: Batch[] }) {
             label="Find"
             type="search"
             placeholder="number or recipe"
-            value={text}
-            onChange={(event) => setText(event.target.value)}
+            value={words}
+            onChange={(event) => setWords(event.target.value)}
           />
         </div>
         <Segmented label="State" value={status} onChange={setStatus} segments={statusChoices} />

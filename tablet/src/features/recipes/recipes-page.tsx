@@ -1,14 +1,6 @@
 import { useMemo, useState } from 'react';
 import { useQuery } from '@tanstack/react-query';
-import {
-  createColumnHelper,
-  getCoreRowModel,
-  getFilteredRowModel,
-  getPaginationRowModel,
-  getSortedRowModel,
-  useReactTable,
-  type SortingState,
-} from '@tanstack/react-table';
+import { createColumnHelper } from '@tanstack/react-table';
 import type { RecipeSummary } from '@steepfall/shared/contracts';
 import { formatVolume } from '@steepfall/shared/units';
 import { format } from 'date-fns';
@@ -22,6 +14,7 @@ import { Menu, type MenuChoice } from '#components/menu.tsx';
 import { Page } from '#components/page.tsx';
 import { Failed, Waiting } from '#components/quiet-state.tsx';
 import { Segmented } from '#components/segmented.tsx';
+import { useListTable } from '#components/use-list-table.ts';
 import { recipesQuery } from '#lib/hub-queries.ts';
 import { useKnown, useMay } from '#lib/session.ts';
 import { useUnits } from '#lib/units.ts';
@@ -83,8 +76,6 @@ interface ShelvesProps {
 function Shelves({ recipes, shelf, onShelf, mayEdit }: ShelvesProps) {
   const units = useUnits();
   const archive = useArchive();
-  const [sorting, setSorting] = useState<SortingState>([{ id: 'changedAtMs', desc: true }]);
-  const [text, setText] = useState('');
   const { mutate } = archive;
   const data = useMemo(() => [...recipes], [recipes]);
   const columns = useMemo(
@@ -128,19 +119,7 @@ function Shelves({ recipes, shelf, onShelf, mayEdit }: ShelvesProps) {
     ],
     [units.volume, mayEdit, mutate],
   );
-  // eslint-disable-next-line react-hooks/incompatible-library -- its functions are used in this render only
-  const table = useReactTable({
-    data,
-    columns,
-    state: { sorting, globalFilter: text },
-    onSortingChange: setSorting,
-    onGlobalFilterChange: setText,
-    getCoreRowModel: getCoreRowModel(),
-    getSortedRowModel: getSortedRowModel(),
-    getFilteredRowModel: getFilteredRowModel(),
-    getPaginationRowModel: getPaginationRowModel(),
-    initialState: { pagination: { pageSize: 20 } },
-  });
+  const { table, words, setWords } = useListTable({ data, columns, orderAtFirst: [{ id: 'changedAtMs', desc: true }] });
   return (
     <div className="grid gap-6">
       <div className="flex flex-wrap items-end gap-x-8 gap-y-5">
@@ -149,8 +128,8 @@ function Shelves({ recipes, shelf, onShelf, mayEdit }: ShelvesProps) {
             label="Find"
             type="search"
             placeholder="a name, or a word of it"
-            value={text}
-            onChange={({ target }) => setText(target.value)}
+            value={words}
+            onChange={({ target }) => setWords(target.value)}
           />
         </div>
         <Segmented label="Show" value={shelf} onChange={onShelf} segments={shelves} />

@@ -1,14 +1,5 @@
-import { useEffect, useMemo, useState } from 'react';
-import {
-  createColumnHelper,
-  getCoreRowModel,
-  getFilteredRowModel,
-  getPaginationRowModel,
-  getSortedRowModel,
-  useReactTable,
-  type ColumnFiltersState,
-  type SortingState,
-} from '@tanstack/react-table';
+import { useMemo, useState } from 'react';
+import { createColumnHelper } from '@tanstack/react-table';
 import type { Ingredient } from '@steepfall/shared/contracts';
 import type { IngredientKind } from '@steepfall/shared/sheets';
 import { formatMass } from '@steepfall/shared/units';
@@ -19,6 +10,7 @@ import { DataTable } from '#components/data-table.tsx';
 import { TextField } from '#components/field.tsx';
 import { Segmented } from '#components/segmented.tsx';
 import { StatusChip } from '#components/status-chip.tsx';
+import { useListTable } from '#components/use-list-table.ts';
 import { priceMass, useMoney } from '#lib/money.ts';
 import { useUnits } from '#lib/units.ts';
 import { localDate } from '#lib/words.ts';
@@ -156,43 +148,23 @@ interface StoresTableProps {
 }
 
 export function StoresTable({ ingredients, onReceive }: StoresTableProps) {
-  const [sorting, setSorting] = useState<SortingState>([{ id: 'name', desc: false }]);
-  const [text, setText] = useState('');
   const [kind, setKind] = useState<KindChoice>('all');
   const today = format(new Date(), 'yyyy-MM-dd');
   const rows = useMemo(() => ingredients.map((each) => rowOf(each, today)), [ingredients, today]);
   const columns = useColumns(onReceive);
-  const columnFilters = useMemo<ColumnFiltersState>(
-    () => (kind === 'all' ? [] : [{ id: 'kind', value: kind }]),
-    [kind],
-  );
-  // eslint-disable-next-line react-hooks/incompatible-library -- its functions are used in this render only
-  const table = useReactTable({
+  const { table, words, setWords } = useListTable({
     data: rows,
     columns,
-    state: { sorting, columnFilters, globalFilter: text },
-    onSortingChange: setSorting,
-    onGlobalFilterChange: setText,
+    orderAtFirst: [{ id: 'name', desc: false }],
+    only: kind === 'all' ? null : { id: 'kind', value: kind },
     // Lot numbers and facts are found too, though they have no column.
-    globalFilterFn: ({ original }, _, words: string) =>
-      words
+    globalFilterFn: ({ original }, _, looked: string) =>
+      looked
         .toLowerCase()
         .split(/\s+/)
         .every((word) => original.words.includes(word)),
     getColumnCanGlobalFilter: ({ id }) => id === 'name',
-    getCoreRowModel: getCoreRowModel(),
-    getSortedRowModel: getSortedRowModel(),
-    getFilteredRowModel: getFilteredRowModel(),
-    getPaginationRowModel: getPaginationRowModel(),
-    initialState: { pagination: { pageSize: 20 } },
-    autoResetPageIndex: false,
   });
-  // What is asked for anew must not turn the page; only a page that is gone does.
-  const last = Math.max(0, table.getPageCount() - 1);
-  useEffect(() => {
-    if (table.getState().pagination.pageIndex > last) table.setPageIndex(last);
-  }, [table, last]);
-  const startOver = () => table.setPageIndex(0);
   return (
     <div className="grid gap-6">
       <div className="flex flex-wrap items-end gap-x-8 gap-y-5">
@@ -201,22 +173,11 @@ export function StoresTable({ ingredients, onReceive }: StoresTableProps) {
             label="Find"
             type="search"
             placeholder="name, kind or lot number"
-            value={text}
-            onChange={({ target }) => {
-              setText(target.value);
-              startOver();
-            }}
+            value={words}
+            onChange={({ target }) => setWords(target.value)}
           />
         </div>
-        <Segmented
-          label="Kind"
-          value={kind}
-          onChange={(next) => {
-            setKind(next);
-            startOver();
-          }}
-          segments={kindChoices}
-        />
+        <Segmented label="Kind" value={kind} onChange={setKind} segments={kindChoices} />
       </div>
       {table.getRowModel().rows.length > 0 ? (
         <DataTable table={table} caption="Ingredients in the stores" countWord="ingredients" />
