@@ -12,6 +12,7 @@ export * from './types.js';
 export * from './workings.js';
 export { acidAdvice, baseRatioFromPh, USUAL_DRINK_PH } from './acid-advice.js';
 export { drinkPlanOf } from './drink-plan.js';
+export { filledKettleJPerK } from './kettle-heat.js';
 export { capacityJPerK, chillOfDay, coilJPerK, openEvaporatedL, plannedDay } from './planned-day.js';
 export { acidityOf, leadingAcid, wantedPh } from './acid-advice.js';
 export { figureRows } from './figure-rows.js';

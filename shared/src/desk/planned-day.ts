@@ -11,8 +11,6 @@ import {
   powerLawDurationS,
   specificHeatJPerKgK,
   tubeVolumeL,
-  waterDensityKgPerM3,
-  type HeatedMaterial,
   type TemperatureCurve,
 } from '../figures/index.js';
 import {
@@ -26,15 +24,10 @@ import {
   type RecipeDocument,
 } from '../sheets/index.js';
 import { DayLine } from './day-line.js';
+import { filledKettleJPerK, metalOf } from './kettle-heat.js';
 import type { DayMark, DeskKit, PlannedDay } from './types.js';
 import { altitudeOf, dayKit, usual, type DayKit } from './usual-kit.js';
 
-const metalOf: Record<NonNullable<KettleFacts['metal']> | ChillerFacts['metal'], HeatedMaterial> = {
-  stainless: 'stainlessSteel',
-  aluminium: 'aluminium',
-  copper: 'copper',
-  'enamelled-steel': 'mildSteel',
-};
 /** Weather moves the boiling point by so much: up to here a steep at the boil is meant, K. */
 export const BOIL_SLACK_K = 0.8;
 /** The coil goes in so long before the steep temperature that the heat makes up for it, K. */
@@ -103,11 +96,7 @@ export function plannedDay(document: RecipeDocument, kit: DeskKit): PlannedDay {
 /** Heat that warms the filled kettle, with what lies in it from the start, by one kelvin, J/K. */
 export function capacityJPerK({ waterL, additions }: RecipeDocument, kettle: KettleFacts): number {
   const cold = additions.reduce((sum, one) => sum + (one.in.at === 'fill' ? leafJPerK(one) : 0), 0);
-  return (
-    waterL * (waterDensityKgPerM3(20) / 1000) * specificHeatJPerKgK.water +
-    kettle.massKg * specificHeatJPerKgK[metalOf[kettle.metal ?? 'stainless']] +
-    cold
-  );
+  return filledKettleJPerK(waterL, kettle) + cold;
 }
 
 /** Heat of dry leaf, hops or peel, J/K; salts and acids are too little to count. */

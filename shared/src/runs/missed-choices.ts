@@ -1,13 +1,12 @@
 import {
-  heatCapacityJPerK,
   heatingTime,
   isomerisationPerMin,
   isomerisationTurns,
   newtonDurationS,
   newtonTempC,
-  type HeatedMaterial,
   type TemperatureCurve,
 } from '../figures/index.js';
+import { filledKettleJPerK } from '../desk/index.js';
 import type { KettleFacts } from '../sheets/index.js';
 import type { MissedChoiceKind } from './events.js';
 
@@ -56,13 +55,6 @@ const LEAST_FALL_C_PER_MIN = 0.1;
 const BY_HAND_S = 3600;
 const STEP_K = 0.5;
 
-const metals: Record<NonNullable<KettleFacts['metal']>, HeatedMaterial> = {
-  stainless: 'stainlessSteel',
-  aluminium: 'aluminium',
-  copper: 'copper',
-  'enamelled-steel': 'mildSteel',
-};
-
 function fallPerS({ nowC, surroundC, rateCPerMin }: MissedCatch): number {
   const fallCPerMin = rateCPerMin === null ? 0 : -rateCPerMin;
   if (fallCPerMin < LEAST_FALL_C_PER_MIN || nowC - surroundC < 1) return USUAL_PER_S;
@@ -94,10 +86,7 @@ function reheatSeconds({ targetC, nowC, heat }: MissedCatch): number | null {
   if (!heat) return null;
   const { kettle, waterL, roomC } = heat;
   const time = heatingTime({
-    heatCapacityJPerK: heatCapacityJPerK([
-      { massG: waterL * 1000, material: 'water' },
-      { massG: kettle.massKg * 1000, material: metals[kettle.metal ?? 'stainless'] },
-    ]),
+    heatCapacityJPerK: filledKettleJPerK(waterL, kettle),
     fromC: nowC,
     toC: reheatToC(targetC),
     powerW: kettle.heaterPowerW,
